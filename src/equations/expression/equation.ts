@@ -1,0 +1,85 @@
+import { minus } from './arithmetic.ts'
+import { type Expression, forEachVariable } from './expression.ts'
+import type { Printed } from './operation.ts'
+
+/**
+ * `mass`: sums flows with coefficients of plus or minus one, so that round a closed circuit one of
+ * them follows from the others.
+ */
+export type EquationRole = 'mass' | undefined
+
+/** left = right. */
+export interface Equation {
+  readonly left: Expression
+  readonly right: Expression
+  readonly role?: EquationRole
+}
+
+export function equal(left: Expression, right: Expression): Equation {
+  return { left, right }
+}
+
+/** What flows in flows out. */
+export function massBalance(left: Expression, right: Expression): Equation {
+  return { left, right, role: 'mass' }
+}
+
+/** left - right, zero when the equation holds. */
+export function residual(equation: Equation): Expression {
+  return minus(equation.left, equation.right)
+}
+
+/** Calls `visit` once for each variable of the equation. */
+export function forEachVariableOf(
+  equation: Equation,
+  visit: (index: number) => void,
+): void {
+  const seen = new Set<Expression>()
+  const take = (variable: { readonly index: number }): void => visit(variable.index)
+  forEachVariable(equation.left, take, seen)
+  forEachVariable(equation.right, take, seen)
+}
+
+/** How often a variable occurs, counted along every path; stops counting at 2. */
+function occurrences(expression: Expression, index: number): number {
+  if (expression.kind === 'variable') return expression.index === index ? 1 : 0
+  if (expression.kind === 'constant') return 0
+  let count = 0
+  for (const operand of expression.operands) {
+    count += occurrences(operand, index)
+    if (count > 1) break
+  }
+  return count
+}
+
+/**
+ * The equation solved for a variable, or undefined where the variable occurs more than once or an
+ * operation on the way to it has no inverse.
+ */
+export function solveFor(equation: Equation, index: number): Expression | undefined {
+  const left = occurrences(equation.left, index)
+  const right = left > 1 ? 0 : occurrences(equation.right, index)
+  if (left + right !== 1) return undefined
+  let target = left === 1 ? equation.right : equation.left
+  let side = left === 1 ? equation.left : equation.right
+  while (side.kind === 'application') {
+    const at = side.operands.findIndex((operand) => occurrences(operand, index) === 1)
+    const inverse = side.operation.invert?.(target, side.operands, at)
+    if (inverse === undefined) return undefined
+    target = inverse
+    side = side.operands[at]!
+  }
+  return target
+}
+
+/** Prints an expression with the given text for variables and constants. */
+export function print(
+  expression: Expression,
+  atom: (leaf: Extract<Expression, { kind: 'variable' | 'constant' }>) => string,
+): Printed {
+  if (expression.kind !== 'application') {
+    const text = atom(expression)
+    return { text, strength: text.startsWith('−') ? 1 : 4 }
+  }
+  return expression.operation.print(expression.operands.map((operand) => print(operand, atom)))
+}

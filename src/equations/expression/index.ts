@@ -1,0 +1,5 @@
+export * from './arithmetic.ts'
+export * from './equation.ts'
+export * from './expression.ts'
+export * from './operation.ts'
+export * from './tape.ts'

@@ -1,0 +1,205 @@
+import type { Application, Expression } from './expression.ts'
+import { type Operation, Outcome } from './operation.ts'
+
+/**
+ * Expressions lowered into rows of typed arrays. A slot holds one number: first the variables, then
+ * constants and rows as they came. Row r applies `operations[r]` to the slots
+ * `operands[first[r]] .. operands[first[r + 1] - 1]`, writes `values[slotOf(r)]` and, in parallel
+ * with the operands, the partials. Evaluating allocates nothing.
+ */
+export class Tape {
+  readonly values: Float64Array
+  readonly operations: readonly Operation[]
+  readonly first: Int32Array
+  readonly operands: Int32Array
+  readonly partials: Float64Array
+  readonly slots: Int32Array
+  readonly memory: Float64Array
+  readonly memoryAt: Int32Array
+  /** The row whose evaluation was refused last. */
+  failedRow = -1
+
+  constructor(parts: {
+    values: readonly number[]
+    operations: readonly Operation[]
+    first: readonly number[]
+    operands: readonly number[]
+    slots: readonly number[]
+    memoryAt: readonly number[]
+    memorySize: number
+  }) {
+    this.values = Float64Array.from(parts.values)
+    this.operations = parts.operations
+    this.first = Int32Array.from(parts.first)
+    this.operands = Int32Array.from(parts.operands)
+    this.partials = new Float64Array(parts.operands.length)
+    this.slots = Int32Array.from(parts.slots)
+    this.memory = new Float64Array(parts.memorySize)
+    this.memoryAt = Int32Array.from(parts.memoryAt)
+  }
+
+  slotOf(row: number): number {
+    return this.slots[row]!
+  }
+
+  /** Evaluates rows in order; returns the first outcome that is not fine. */
+  evaluate(rows: Int32Array): number {
+    const { operations } = this
+    for (let k = 0; k < rows.length; k++) {
+      const row = rows[k]!
+      const outcome = operations[row]!.evaluate(this, row)
+      if (outcome !== Outcome.fine) {
+        this.failedRow = row
+        return outcome
+      }
+    }
+    return Outcome.fine
+  }
+}
+
+/** Lowers expressions into a tape; what is shared by identity becomes one row. */
+export class TapeBuilder {
+  private readonly values: number[]
+  private readonly operations: Operation[] = []
+  private readonly first: number[] = [0]
+  private readonly operands: number[] = []
+  private readonly slots: number[] = []
+  private readonly memoryAt: number[] = []
+  private memorySize = 0
+  private readonly slotOfExpression = new Map<Expression, number>()
+  private readonly constants = new Map<number, number>()
+  /** Rows of operations that others read, by operation and operands. */
+  private readonly shared = new Map<Operation, Map<number, number>>()
+  /** By slot: the degree in the variables that the caller calls active. */
+  private readonly degrees: number[]
+  private readonly rowOfSlot: number[]
+
+  constructor(variableCount: number) {
+    this.values = new Array(variableCount).fill(0)
+    this.degrees = new Array(variableCount).fill(0)
+    this.rowOfSlot = new Array(variableCount).fill(-1)
+  }
+
+  /** From now on these variables count as active (degree 1); earlier rows keep their degree 0. */
+  activate(variables: readonly number[]): void {
+    for (const index of variables) this.degrees[index] = 1
+  }
+
+  /** Ends the activity of variables and of all rows from `row` on. */
+  deactivate(variables: readonly number[], row: number): void {
+    for (const index of variables) this.degrees[index] = 0
+    for (let r = row; r < this.slots.length; r++) this.degrees[this.slots[r]!] = 0
+  }
+
+  get rowCount(): number {
+    return this.operations.length
+  }
+
+  degreeOf(slot: number): number {
+    return this.degrees[slot]!
+  }
+
+  /** The row that computes a slot, or -1 for a variable or constant. */
+  rowOf(slot: number): number {
+    return this.rowOfSlot[slot]!
+  }
+
+  slotOfRow(row: number): number {
+    return this.slots[row]!
+  }
+
+  operandsOf(row: number): readonly number[] {
+    return this.operands.slice(this.first[row]!, this.first[row + 1]!)
+  }
+
+  firstOperand(row: number): number {
+    return this.first[row]!
+  }
+
+  /** The slot that will hold the expression's value. */
+  lower(expression: Expression): number {
+    if (expression.kind === 'variable') return expression.index
+    if (expression.kind === 'constant') return this.lowerConstant(expression.value)
+    const known = this.slotOfExpression.get(expression)
+    if (known !== undefined) return known
+    const operandSlots: number[] = []
+    for (const operand of expression.operands) operandSlots.push(this.lower(operand))
+    const slot = this.append(expression, operandSlots)
+    this.slotOfExpression.set(expression, slot)
+    return slot
+  }
+
+  private lowerConstant(value: number): number {
+    const known = this.constants.get(value)
+    if (known !== undefined) return known
+    const slot = this.newSlot(value, -1)
+    this.constants.set(value, slot)
+    return slot
+  }
+
+  private append(expression: Application, operandSlots: readonly number[]): number {
+    const { operation } = expression
+    const source = operation.reads
+    const memory = source === undefined ? -1 : this.memoryOfShared(source, operandSlots)
+    return this.appendRow(operation, operandSlots, memory)
+  }
+
+  private memoryOfShared(operation: Operation, operandSlots: readonly number[]): number {
+    const key = operandSlots[0]! * 0x4000000 + (operandSlots[1] ?? 0)
+    let rows = this.shared.get(operation)
+    if (rows === undefined) {
+      rows = new Map()
+      this.shared.set(operation, rows)
+    }
+    let row = rows.get(key)
+    if (row === undefined) {
+      row = this.operations.length
+      this.appendRow(operation, operandSlots, -1)
+      rows.set(key, row)
+    }
+    return this.memoryAt[row]!
+  }
+
+  private appendRow(operation: Operation, operandSlots: readonly number[], memory: number): number {
+    const row = this.operations.length
+    this.operations.push(operation)
+    let highest = 0
+    for (const operand of operandSlots) {
+      this.operands.push(operand)
+      if (this.degrees[operand]! > highest) highest = this.degrees[operand]!
+    }
+    this.first.push(this.operands.length)
+    const slot = this.newSlot(0, row)
+    this.slots.push(slot)
+    if (memory >= 0) this.memoryAt.push(memory)
+    else {
+      this.memoryAt.push(this.memorySize)
+      this.memorySize += operation.memory ?? 0
+    }
+    if (highest > 0) {
+      this.degrees[slot] =
+        operation.degree?.(operandSlots.map((operand) => this.degrees[operand]!)) ?? 2
+    }
+    return slot
+  }
+
+  private newSlot(value: number, row: number): number {
+    const slot = this.values.length
+    this.values.push(value)
+    this.degrees.push(0)
+    this.rowOfSlot.push(row)
+    return slot
+  }
+
+  finish(): Tape {
+    return new Tape({
+      values: this.values,
+      operations: this.operations,
+      first: this.first,
+      operands: this.operands,
+      slots: this.slots,
+      memoryAt: this.memoryAt,
+      memorySize: this.memorySize,
+    })
+  }
+}

@@ -1,0 +1,171 @@
+import type { Equation, Expression } from '../equations/expression/index.ts'
+import type { Dimension } from '../quantity/dimension.ts'
+
+/** How a kind is grouped in the rail, as the trade groups its equipment. */
+export type KindGroup = 'Heat' | 'Machines' | 'Heaters' | 'Vessels' | 'Lines' | 'Edges'
+
+export interface PortDescription {
+  readonly direction: 'in' | 'out'
+  /** Numbered from 1 without gaps, as many as there are streams: `drain1`, `drain2`. */
+  readonly repeated?: true
+  /** May stay without a stream. */
+  readonly optional?: true
+  /** What may flow here; decides which connections make sense. */
+  readonly carries: 'steam' | 'water' | 'any'
+  /**
+   * `equal`: the stream has the unit's shell or casing pressure. `throttles`: it may arrive at a
+   * higher pressure and is throttled on entry. `own`: the kind's equations say.
+   */
+  readonly pressure: 'equal' | 'throttles' | 'own'
+  readonly label: string
+}
+
+/** Where on a unit quantities come in numbers: `groupEfficiency1..n+1` for n bleeds. */
+export interface Repetition {
+  readonly port: string
+  readonly extra: number
+}
+
+/** What decides which quantities a unit has: its options and how many streams meet each port. */
+export interface Shape {
+  readonly options: Readonly<Record<string, boolean | readonly number[]>>
+  /** By port name without number. */
+  readonly streams: Readonly<Record<string, number>>
+}
+
+export interface QuantityDescription {
+  readonly label: string
+  /** The trade's symbol, shown beside the full name: TTD, DCA, UA. */
+  readonly symbol?: string
+  readonly dimension: Dimension
+  /** One sentence. */
+  readonly help: string
+  /** The usual value, SI. */
+  readonly usual?: number
+  /** A new unit arrives with this quantity given at its usual value. */
+  readonly given?: true
+  /** The usual range, SI; outside it is a caution, never a refusal. */
+  readonly range?: readonly [number, number]
+  /** Where the usual value and range come from. */
+  readonly basis?: string
+  /** What is physically possible, SI, ends included unless `above`; outside it the plant is infeasible. */
+  readonly possible?: { readonly above?: number; readonly least?: number; readonly most?: number; readonly below?: number }
+  /** One practical step, SI: what a change 'by one' means to the trade. */
+  readonly step?: number
+  /** One for each stream of a port, and `extra` more. */
+  readonly each?: Repetition
+  /** Absent: always there. */
+  readonly when?: (shape: Shape) => boolean
+}
+
+export interface OptionDescription {
+  readonly label: string
+  readonly help: string
+}
+
+export type PortTable = Readonly<Record<string, PortDescription>>
+export type QuantityTable = Readonly<Record<string, QuantityDescription>>
+
+/** A stream as the equations of a unit see it. */
+export interface PortExpressions {
+  /** The stream's id. */
+  readonly id: string
+  readonly m: Expression
+  readonly p: Expression
+  readonly h: Expression
+  readonly T: Expression
+  readonly s: Expression
+  readonly v: Expression
+  /** Dryness, (h - h')/(h'' - h'), not clamped. */
+  readonly x: Expression
+}
+
+type PortsOf<P extends PortTable> = {
+  readonly [K in keyof P]: P[K] extends { repeated: true }
+    ? readonly PortExpressions[]
+    : P[K] extends { optional: true }
+      ? PortExpressions | undefined
+      : PortExpressions
+}
+
+type QuantitiesOf<Q extends QuantityTable> = {
+  readonly [K in keyof Q]: Q[K] extends { each: Repetition } ? readonly Expression[] : Expression
+}
+
+/** What `equations` receives: ports and quantities by name, as expressions of this one unit. */
+export interface UnitContext<P extends PortTable, Q extends QuantityTable> {
+  readonly ports: PortsOf<P>
+  readonly quantities: QuantitiesOf<Q>
+  readonly shape: Shape
+  /** The pump is driven by a shaft (kinds that no shaft can drive never ask). */
+  readonly onShaft: boolean
+}
+
+/** What a unit adds to the plant's totals. */
+export type TotalName =
+  | 'heatInput'
+  | 'fuelHeat'
+  | 'recoveredHeat'
+  | 'processHeat'
+  | 'turbinePower'
+  | 'pumpPower'
+  | 'electricPower'
+  | 'heatRejected'
+  | 'boilerSteam'
+  /** Heat taken off turbineHeat: blowdown. */
+  | 'turbineHeatCredit'
+  /** Heat lost by a line; counts where the line joins a fired unit and a turbine. */
+  | 'lineHeatLoss'
+
+/** The path a process takes between two ports, for charts. */
+export interface ProcessPath {
+  readonly from: string
+  readonly to: string
+  /** `line`: p and h change together; `isenthalp`; `expansion` and `compression` by constant efficiency. */
+  readonly course: 'line' | 'isenthalp' | 'expansion' | 'compression'
+}
+
+/** How exergy is accounted: contract, section 3, second law. */
+export type SecondLawRole =
+  | 'adiabatic'
+  | 'losesHeat'
+  | 'fired'
+  | 'heated'
+  | 'delivers'
+  | 'edge'
+
+/**
+ * A kind of unit, declared once: everything that others need to know of it.
+ * Registered in index.ts; nothing outside this folder asks which kind it has in hand.
+ */
+export interface UnitKind<P extends PortTable = PortTable, Q extends QuantityTable = QuantityTable> {
+  readonly name: string
+  readonly label: string
+  /** Two or three letters that new ids and labels start with. */
+  readonly idStem: string
+  readonly group: KindGroup
+  /** One sentence. */
+  readonly help: string
+  readonly ports: P
+  readonly quantities: Q
+  readonly options?: Readonly<Record<string, OptionDescription>>
+  /** The quantity shown beside the symbol. */
+  readonly chief?: string
+  /** Needs to stand on a shaft (turbine), may stand on one (pump). */
+  readonly shaft?: 'driving' | 'driven'
+  readonly equations: (unit: UnitContext<P, Q>) => Readonly<Record<string, Equation>>
+  readonly totals?: (unit: UnitContext<P, Q>) => Partial<Record<TotalName, Expression>>
+  readonly secondLaw: SecondLawRole
+  readonly paths: (shape: Shape) => readonly ProcessPath[]
+  /** May leave at a higher pressure than it receives. */
+  readonly raisesPressure?: true
+  /** Streams of these ports pass through unchanged in kind: how lines are followed from unit to unit. */
+  readonly passes?: readonly (readonly [string, string])[]
+}
+
+/** Gives a kind its exact type, so that port and quantity names are checked in its equations. */
+export function defineUnitKind<const P extends PortTable, const Q extends QuantityTable>(
+  kind: UnitKind<P, Q>,
+): UnitKind<P, Q> {
+  return kind
+}
