@@ -1,0 +1,177 @@
+import { create } from 'zustand'
+import {
+  type BalanceMessage,
+  type DomeMessage,
+  type NamesMessage,
+  phaseNames,
+} from '../../src/messages.ts'
+
+export type Phase = (typeof phaseNames)[number]
+
+/** A balance and the names of what its arrays hold. */
+export interface Snapshot {
+  readonly names: NamesMessage
+  readonly balance: BalanceMessage
+}
+
+/** Index of each path and stream in the arrays of a structure. */
+interface Index {
+  readonly paths: ReadonlyMap<string, number>
+  readonly streams: ReadonlyMap<string, number>
+}
+
+interface BalanceState {
+  readonly names: NamesMessage | null
+  readonly balance: BalanceMessage | null
+  readonly dome: DomeMessage | null
+  readonly index: Index
+  /** A newer plant is being solved; what is shown belongs to the one before. */
+  readonly stale: boolean
+  /** The solved balance before the last edit, to show what the edit did; null where there is none. */
+  readonly before: Snapshot | null
+  /** Edits between `before` and the balance shown. */
+  readonly editsSince: number
+  /** Lowest and highest temperature of the plant's streams, K: the scale of the temperature ramp. */
+  readonly coldest: number
+  readonly hottest: number
+  /** Largest mass flow, kg/s: the scale of stream widths. */
+  readonly largestFlow: number
+  /** Why there is no balance, as a sentence: the layout cannot be read, or the solver gave up. */
+  readonly trouble: string | null
+  /** `step` and `opened` are those of the plant store when the request was made. */
+  show(names: NamesMessage, balance: BalanceMessage, step: number, opened: number): void
+  showDome(dome: DomeMessage): void
+  showTrouble(message: string | null): void
+  setStale(stale: boolean): void
+}
+
+const noIndex: Index = { paths: new Map(), streams: new Map() }
+const indexes = new WeakMap<NamesMessage, Index>()
+
+function indexOf(names: NamesMessage): Index {
+  let index = indexes.get(names)
+  if (!index) {
+    index = {
+      paths: new Map(names.paths.map((path, i) => [path, i])),
+      streams: new Map(names.streams.map((id, i) => [id, i])),
+    }
+    indexes.set(names, index)
+  }
+  return index
+}
+
+function valueIn(index: Index, balance: BalanceMessage | null, path: string): number | null {
+  const at = index.paths.get(path)
+  if (at === undefined || !balance) return null
+  const value = balance.values[at]
+  return value === undefined || !Number.isFinite(value) ? null : value
+}
+
+function scales(names: NamesMessage, index: Index, balance: BalanceMessage) {
+  let coldest = Number.POSITIVE_INFINITY
+  let hottest = Number.NEGATIVE_INFINITY
+  let largestFlow = 0
+  for (const id of names.streams) {
+    const T = valueIn(index, balance, `${id}.T`)
+    const m = valueIn(index, balance, `${id}.m`)
+    if (T !== null && T < coldest) coldest = T
+    if (T !== null && T > hottest) hottest = T
+    if (m !== null && Math.abs(m) > largestFlow) largestFlow = Math.abs(m)
+  }
+  return hottest > coldest ? { coldest, hottest, largestFlow } : { largestFlow }
+}
+
+let shownStep = 0
+let shownOpened = -1
+let beforeStep = 0
+
+export const useBalanceStore = create<BalanceState>()((set, get) => ({
+  names: null,
+  balance: null,
+  dome: null,
+  index: noIndex,
+  stale: false,
+  before: null,
+  editsSince: 0,
+  coldest: 300,
+  hottest: 820,
+  largestFlow: 0,
+  trouble: null,
+
+  show(names, balance, step, opened) {
+    const state = get()
+    let { before } = state
+    if (opened !== shownOpened) before = null
+    else if (
+      step !== shownStep &&
+      state.names &&
+      state.balance &&
+      state.balance.status === 'solved'
+    ) {
+      before = { names: state.names, balance: state.balance }
+      beforeStep = shownStep
+    }
+    shownStep = step
+    shownOpened = opened
+    const index = indexOf(names)
+    set({
+      names,
+      balance,
+      index,
+      before,
+      editsSince: before ? step - beforeStep : 0,
+      trouble: null,
+      ...scales(names, index, balance),
+    })
+  },
+  showDome(dome) {
+    set({ dome })
+  },
+  showTrouble(message) {
+    if (message !== get().trouble) set({ trouble: message })
+  },
+  setStale(stale) {
+    if (stale !== get().stale) set({ stale })
+  },
+}))
+
+/** A solved quantity, SI, or null while nothing fixes it. Redraws only when this number changed. */
+export function useValue(path: string): number | null {
+  return useBalanceStore((state) => valueIn(state.index, state.balance, path))
+}
+
+/** As `useValue`, for use outside React. */
+export function readValue(path: string): number | null {
+  const { index, balance } = useBalanceStore.getState()
+  return valueIn(index, balance, path)
+}
+
+/** The same quantity in the solved balance before the last edit. */
+export function useValueBefore(path: string): number | null {
+  return useBalanceStore(({ before }) =>
+    before ? valueIn(indexOf(before.names), before.balance, path) : null,
+  )
+}
+
+function phaseIn(state: BalanceState, streamId: string): Phase {
+  const at = state.index.streams.get(streamId)
+  return at === undefined ? 'none' : (phaseNames[state.balance?.phases[at] ?? 0] ?? 'none')
+}
+
+export function usePhase(streamId: string): Phase {
+  return useBalanceStore((state) => phaseIn(state, streamId))
+}
+
+export function readPhase(streamId: string): Phase {
+  return phaseIn(useBalanceStore.getState(), streamId)
+}
+
+/** True where the balance shown has a finding that a given too many stands in. */
+export function useConflicting(path: string): boolean {
+  return useBalanceStore(({ balance }) => {
+    if (balance?.status !== 'overspecified') return false
+    return balance.findings.some(
+      (finding) => finding.excess !== undefined && finding.quantities.includes(path),
+    )
+  })
+}

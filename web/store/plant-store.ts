@@ -1,0 +1,217 @@
+import { create } from 'zustand'
+import {
+  applyDifference,
+  type Case,
+  type Difference,
+  difference,
+  emptyPlant,
+  invertDifference,
+  type Layout,
+  type Plant,
+} from '../../src/document.ts'
+
+/** One undo step: a named difference between two states of the plant. */
+export interface Step {
+  /** What the step did, as it reads after 'Undo': 'Move heater 5'. */
+  readonly name: string
+  readonly difference: Difference
+  /** The layout in which it happened: undoing shows it again. */
+  readonly layoutId: string
+  readonly merge?: string
+}
+
+export interface EditOptions {
+  /** Consecutive edits with the same key become one undo step: give each drag a key of its own. */
+  readonly merge?: string
+}
+
+interface PlantState {
+  readonly plant: Plant
+  readonly layoutId: string
+  /** Null: the layout's own givens hold. */
+  readonly caseId: string | null
+  /** Oldest first. */
+  readonly past: readonly Step[]
+  /** The next to redo last. */
+  readonly future: readonly Step[]
+  /** Counts steps done and undone, so that two balances can tell whether an edit lies between them. */
+  readonly step: number
+  /** Counts plants opened: balances of different plants are never compared. */
+  readonly opened: number
+  edit(name: string, change: (plant: Plant) => Plant, options?: EditOptions): void
+  undo(): void
+  redo(): void
+  /** Shows another plant; the undo stack starts anew. */
+  open(plant: Plant): void
+  showLayout(id: string): void
+  showCase(id: string | null): void
+}
+
+/** Steps kept. A difference holds only what changed, so this is some hundred kilobytes at most. */
+const deepest = 500
+
+/** The plant before the newest step, against which merged edits are taken anew. */
+let beforeNewest: Plant | null = null
+
+/** Shown at first: the case that changes nothing, so that what is given in the layout is what is solved. */
+function firstCase(layout: Layout | undefined): string | null {
+  const first = layout?.cases[0]
+  return first && changesNothing(first) ? first.id : null
+}
+
+function changesNothing(one: Case): boolean {
+  return (
+    !one.frozen &&
+    !one.loadControl &&
+    Object.keys(one.given ?? {}).length === 0 &&
+    (one.free ?? []).length === 0 &&
+    (one.outOfService ?? []).length === 0
+  )
+}
+
+function layoutOf(plant: Plant, wanted: string): string {
+  if (plant.layouts.some((layout) => layout.id === wanted)) return wanted
+  return plant.layouts[0]?.id ?? wanted
+}
+
+function caseOf(plant: Plant, layoutId: string, wanted: string | null): string | null {
+  const layout = plant.layouts.find((one) => one.id === layoutId)
+  return wanted !== null && layout?.cases.some((one) => one.id === wanted) ? wanted : null
+}
+
+const untitled = emptyPlant()
+
+export const usePlantStore = create<PlantState>()((set, get) => {
+  /** Shows `plant` in the layout wanted, or in the nearest that exists. */
+  const place = (plant: Plant, wanted: string) => {
+    const layoutId = layoutOf(plant, wanted)
+    const caseId =
+      layoutId === get().layoutId
+        ? caseOf(plant, layoutId, get().caseId)
+        : firstCase(plant.layouts.find((layout) => layout.id === layoutId))
+    return { plant, layoutId, caseId }
+  }
+  return {
+    plant: untitled,
+    layoutId: untitled.layouts[0]?.id ?? '',
+    caseId: firstCase(untitled.layouts[0]),
+    past: [],
+    future: [],
+    step: 0,
+    opened: 0,
+
+    edit(name, change, options) {
+      const state = get()
+      const after = change(state.plant)
+      if (after === state.plant) return
+      const newest = state.past.at(-1)
+      const merge = options?.merge
+      const joins =
+        merge !== undefined && newest?.merge === merge && state.future.length === 0 && beforeNewest
+      const before = joins ? beforeNewest : state.plant
+      const change_ = difference(before as Plant, after)
+      const earlier = joins ? state.past.slice(0, -1) : state.past.slice(-(deepest - 1))
+      beforeNewest = before as Plant
+      set({
+        ...place(after, state.layoutId),
+        past: [
+          ...earlier,
+          {
+            name,
+            difference: change_,
+            layoutId: state.layoutId,
+            ...(merge === undefined ? {} : { merge }),
+          },
+        ],
+        future: [],
+        step: joins ? state.step : state.step + 1,
+      })
+    },
+
+    undo() {
+      const { past, future, plant, step } = get()
+      const newest = past.at(-1)
+      if (!newest) return
+      beforeNewest = null
+      set({
+        ...place(applyDifference(plant, invertDifference(newest.difference)), newest.layoutId),
+        past: past.slice(0, -1),
+        future: [...future, newest],
+        step: step + 1,
+      })
+    },
+
+    redo() {
+      const { past, future, plant, step } = get()
+      const next = future.at(-1)
+      if (!next) return
+      beforeNewest = null
+      set({
+        ...place(applyDifference(plant, next.difference), next.layoutId),
+        past: [...past, next],
+        future: future.slice(0, -1),
+        step: step + 1,
+      })
+    },
+
+    open(plant) {
+      beforeNewest = null
+      const layout = plant.layouts[0]
+      set({
+        plant,
+        layoutId: layout?.id ?? '',
+        caseId: firstCase(layout),
+        past: [],
+        future: [],
+        step: get().step + 1,
+        opened: get().opened + 1,
+      })
+    },
+
+    showLayout(id) {
+      const { plant, layoutId } = get()
+      if (id !== layoutId) set(place(plant, id))
+    },
+
+    showCase(id) {
+      const { plant, layoutId } = get()
+      set({ caseId: caseOf(plant, layoutId, id) })
+    },
+  }
+})
+
+const noLayout: Layout = {
+  id: '',
+  name: '',
+  ambient: { T: 298.15, p: 101325 },
+  units: [],
+  streams: [],
+  shafts: [],
+  plant: { given: {} },
+  cases: [],
+  stated: [],
+}
+
+function currentLayout(state: Pick<PlantState, 'plant' | 'layoutId'>): Layout {
+  return state.plant.layouts.find((layout) => layout.id === state.layoutId) ?? noLayout
+}
+
+/** The layout shown. */
+export function useLayout(): Layout {
+  return usePlantStore(currentLayout)
+}
+
+/** The layout shown, for use outside React. */
+export function readLayout(): Layout {
+  return currentLayout(usePlantStore.getState())
+}
+
+/** Edits the layout shown, for use in handlers: `editLayout('Delete heater 5', (plant, id) => ...)`. */
+export function editLayout(
+  name: string,
+  change: (plant: Plant, layoutId: string) => Plant,
+  options?: EditOptions,
+): void {
+  const { edit, layoutId } = usePlantStore.getState()
+  edit(name, (plant) => change(plant, layoutId), options)
+}
