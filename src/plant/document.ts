@@ -29,6 +29,8 @@ export type PortReference = string
 
 export interface Stream {
   readonly id: string
+  /** The user's own name for it; absent, it is named after the units at its ends. */
+  readonly label?: string
   readonly from: PortReference
   readonly to: PortReference
   readonly given: Givens
@@ -38,6 +40,7 @@ export interface Stream {
 
 export interface Shaft {
   readonly id: string
+  readonly label?: string
   readonly turbines: readonly string[]
   readonly pumps: readonly string[]
   /** Absent means true. */

@@ -58,9 +58,16 @@ export interface QuantityDescription {
   readonly when?: (shape: Shape) => boolean
 }
 
+/**
+ * An option that is a list of whole numbers instead of yes or no. `numbersOf`: numbers of streams at
+ * a repeated port (which bleeds are controlled); `each`: one entry for each (where a group comes from).
+ */
+export type OptionList = { readonly numbersOf: string } | { readonly each: Repetition }
+
 export interface OptionDescription {
   readonly label: string
   readonly help: string
+  readonly list?: OptionList
 }
 
 export type PortTable = Readonly<Record<string, PortDescription>>

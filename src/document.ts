@@ -1,0 +1,39 @@
+/** Door for the window: the plant file, its edits and differences, the catalogue of kinds, quantities. */
+export * from './plant/catalogue.ts'
+export * from './plant/check-plant.ts'
+export * from './plant/difference.ts'
+export * from './plant/document.ts'
+export * from './plant/edit/connect.ts'
+export * from './plant/edit/remove-items.ts'
+export * from './plant/edit/set-given.ts'
+export * from './plant/edit/streams.ts'
+export * from './plant/edit/titles.ts'
+export * from './plant/edit/units.ts'
+export * from './plant/empty-plant.ts'
+export * from './plant/paths.ts'
+export * from './plant/ports.ts'
+export * from './plant/quantities.ts'
+export * from './plant/read-plant.ts'
+export * from './plant/write-plant.ts'
+export type { Dimension } from './quantity/dimension.ts'
+export * from './quantity/format-quantity.ts'
+export * from './quantity/parse-quantity.ts'
+export * from './quantity/unit-set.ts'
+export * from './quantity/units-of-measure.ts'
+export {
+  kindNamed as kindOf,
+  kinds,
+  plantQuantities,
+  shaftQuantities,
+  streamQuantities,
+} from './units/index.ts'
+export type {
+  KindGroup,
+  OptionDescription,
+  OptionList,
+  PortDescription,
+  ProcessPath,
+  QuantityDescription,
+  QuantityTable,
+  Shape,
+} from './units/kind.ts'

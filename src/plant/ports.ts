@@ -1,0 +1,105 @@
+import type { PortDescription, Shape } from '../units/kind.ts'
+import { type Catalogue, type Kind, standardCatalogue } from './catalogue.ts'
+import type { Layout, PortReference, Unit } from './document.ts'
+import { splitPath } from './paths.ts'
+
+/** A port of a unit, found. */
+export interface PortAddress {
+  readonly unit: Unit
+  readonly kind: Kind
+  /** Name in the kind's table, without number. */
+  readonly port: string
+  readonly description: PortDescription
+  /** Of a repeated port; absent where only its bare name was given, and for single ports. */
+  readonly number?: number
+}
+
+/** `drain12` to `['drain', 12]`. Numbers start at 1 and have no leading zero. */
+const numbered = /^(.*?[^0-9])([1-9][0-9]*)$/
+
+/** Name in the kind's table and number of a port, or nothing where the kind has no such port. */
+export function portOfKind(
+  kind: Kind,
+  name: string,
+): { readonly port: string; readonly number?: number } | undefined {
+  if (Object.hasOwn(kind.ports, name)) return { port: name }
+  const match = numbered.exec(name)
+  const [, port, digits] = match ?? []
+  if (port === undefined || !Object.hasOwn(kind.ports, port) || !kind.ports[port]?.repeated) {
+    return undefined
+  }
+  return { port, number: Number(digits) }
+}
+
+/** Finds `hp.bleed2` (or the bare `hp.bleed`) in a layout. */
+export function findPort(
+  layout: Layout,
+  reference: PortReference,
+  catalogue: Catalogue = standardCatalogue,
+): PortAddress | undefined {
+  const [id, name] = splitPath(reference) ?? []
+  const unit = id === undefined ? undefined : layout.units.find((one) => one.id === id)
+  const kind = unit && catalogue.kindNamed(unit.kind)
+  const found = kind && name !== undefined ? portOfKind(kind, name) : undefined
+  const description = found && kind?.ports[found.port]
+  return unit && kind && found && description ? { unit, kind, ...found, description } : undefined
+}
+
+const noOptions = {}
+
+/** What decides which quantities a unit has: its options and how many streams meet each port. */
+export function shapeOf(layout: Layout, unit: Unit, kind: Kind): Shape {
+  const streams: Record<string, number> = {}
+  for (const port of Object.keys(kind.ports)) streams[port] = 0
+  const start = `${unit.id}.`
+  for (const stream of layout.streams) {
+    for (const end of [stream.from, stream.to]) {
+      if (!end.startsWith(start)) continue
+      const found = portOfKind(kind, end.slice(start.length))
+      if (found) streams[found.port] = (streams[found.port] ?? 0) + 1
+    }
+  }
+  return { options: unit.options ?? noOptions, streams }
+}
+
+export interface PortOfUnit {
+  /** `drain2`; with the unit's id before it, a reference. */
+  readonly name: string
+  /** Name in the kind's table: `drain`. */
+  readonly port: string
+  readonly number?: number
+  readonly description: PortDescription
+  /** The stream connected; absent: the port is open. */
+  readonly stream?: string
+}
+
+/** The ports of a unit in the kind's order; of each repeated port the numbers in use and the next free one. */
+export function portsOf(
+  layout: Layout,
+  unit: Unit,
+  catalogue: Catalogue = standardCatalogue,
+): PortOfUnit[] {
+  const kind = catalogue.kindNamed(unit.kind)
+  if (!kind) return []
+  const streams = new Map<string, string>()
+  for (const { id, from, to } of layout.streams) {
+    streams.set(from, id)
+    streams.set(to, id)
+  }
+  const ports: PortOfUnit[] = []
+  for (const [port, description] of Object.entries(kind.ports)) {
+    for (let number = 1; ; number++) {
+      const name = description.repeated ? `${port}${number}` : port
+      const stream = streams.get(`${unit.id}.${name}`)
+      ports.push({
+        name,
+        port,
+        ...(description.repeated ? { number } : {}),
+        description,
+        ...(stream === undefined ? {} : { stream }),
+      })
+      if (!description.repeated || stream === undefined) break
+    }
+  }
+  return ports
+}
