@@ -20,6 +20,15 @@ interface Index {
   readonly streams: ReadonlyMap<string, number>
 }
 
+/** What a balance was asked for. */
+export interface Asked {
+  /** Plant, layout and case: only balances of one subject are compared. */
+  readonly subject: string
+  /** Counts the edits that change a balance. */
+  readonly edit: number
+  readonly editName: string
+}
+
 interface BalanceState {
   readonly names: NamesMessage | null
   readonly balance: BalanceMessage | null
@@ -29,8 +38,9 @@ interface BalanceState {
   readonly stale: boolean
   /** The solved balance before the last edit, to show what the edit did; null where there is none. */
   readonly before: Snapshot | null
-  /** Edits between `before` and the balance shown. */
+  /** Edits between `before` and the balance shown, and the name of the last. */
   readonly editsSince: number
+  readonly lastEdit: string
   /** Lowest and highest temperature of the plant's streams, K: the scale of the temperature ramp. */
   readonly coldest: number
   readonly hottest: number
@@ -38,8 +48,9 @@ interface BalanceState {
   readonly largestFlow: number
   /** Why there is no balance, as a sentence: the layout cannot be read, or the solver gave up. */
   readonly trouble: string | null
-  /** `step` and `opened` are those of the plant store when the request was made. */
-  show(names: NamesMessage, balance: BalanceMessage, step: number, opened: number): void
+  show(names: NamesMessage, balance: BalanceMessage, asked: Asked): void
+  /** Takes the balance away: there is none of this plant. */
+  clear(): void
   showDome(dome: DomeMessage): void
   showTrouble(message: string | null): void
   setStale(stale: boolean): void
@@ -81,9 +92,8 @@ function scales(names: NamesMessage, index: Index, balance: BalanceMessage) {
   return hottest > coldest ? { coldest, hottest, largestFlow } : { largestFlow }
 }
 
-let shownStep = 0
-let shownOpened = -1
-let beforeStep = 0
+let shown: Asked = { subject: '', edit: 0, editName: '' }
+let editBefore = 0
 
 export const useBalanceStore = create<BalanceState>()((set, get) => ({
   names: null,
@@ -93,36 +103,35 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
   stale: false,
   before: null,
   editsSince: 0,
+  lastEdit: '',
   coldest: 300,
   hottest: 820,
   largestFlow: 0,
   trouble: null,
 
-  show(names, balance, step, opened) {
+  show(names, balance, asked) {
     const state = get()
     let { before } = state
-    if (opened !== shownOpened) before = null
-    else if (
-      step !== shownStep &&
-      state.names &&
-      state.balance &&
-      state.balance.status === 'solved'
-    ) {
+    if (asked.subject !== shown.subject) before = null
+    else if (asked.edit !== shown.edit && state.names && state.balance?.status === 'solved') {
       before = { names: state.names, balance: state.balance }
-      beforeStep = shownStep
+      editBefore = shown.edit
     }
-    shownStep = step
-    shownOpened = opened
+    shown = asked
     const index = indexOf(names)
     set({
       names,
       balance,
       index,
       before,
-      editsSince: before ? step - beforeStep : 0,
+      editsSince: before ? asked.edit - editBefore : 0,
+      lastEdit: asked.editName,
       trouble: null,
       ...scales(names, index, balance),
     })
+  },
+  clear() {
+    set({ names: null, balance: null, index: noIndex, before: null, editsSince: 0 })
   },
   showDome(dome) {
     set({ dome })

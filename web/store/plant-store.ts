@@ -5,6 +5,8 @@ import {
   type Difference,
   difference,
   emptyPlant,
+  type Given,
+  givenOf,
   invertDifference,
   type Layout,
   type Plant,
@@ -36,6 +38,8 @@ interface PlantState {
   readonly future: readonly Step[]
   /** Counts steps done and undone, so that two balances can tell whether an edit lies between them. */
   readonly step: number
+  /** What the newest of them did: 'Move heater 5', 'Undo: move heater 5'. */
+  readonly stepName: string
   /** Counts plants opened: balances of different plants are never compared. */
   readonly opened: number
   edit(name: string, change: (plant: Plant) => Plant, options?: EditOptions): void
@@ -98,6 +102,7 @@ export const usePlantStore = create<PlantState>()((set, get) => {
     past: [],
     future: [],
     step: 0,
+    stepName: '',
     opened: 0,
 
     edit(name, change, options) {
@@ -125,6 +130,7 @@ export const usePlantStore = create<PlantState>()((set, get) => {
         ],
         future: [],
         step: joins ? state.step : state.step + 1,
+        stepName: name,
       })
     },
 
@@ -138,6 +144,7 @@ export const usePlantStore = create<PlantState>()((set, get) => {
         past: past.slice(0, -1),
         future: [...future, newest],
         step: step + 1,
+        stepName: `Undo: ${newest.name}`,
       })
     },
 
@@ -151,6 +158,7 @@ export const usePlantStore = create<PlantState>()((set, get) => {
         past: [...past, next],
         future: future.slice(0, -1),
         step: step + 1,
+        stepName: next.name,
       })
     },
 
@@ -164,6 +172,7 @@ export const usePlantStore = create<PlantState>()((set, get) => {
         past: [],
         future: [],
         step: get().step + 1,
+        stepName: '',
         opened: get().opened + 1,
       })
     },
@@ -214,4 +223,25 @@ export function editLayout(
 ): void {
   const { edit, layoutId } = usePlantStore.getState()
   edit(name, (plant) => change(plant, layoutId), options)
+}
+
+/** What is given for a path in the layout and case shown; undefined where it is solved or open. */
+function effectiveGiven(state: PlantState, path: string): Given | undefined {
+  const layout = currentLayout(state)
+  if (state.caseId !== null) {
+    const one = layout.cases.find(({ id }) => id === state.caseId)
+    if (one?.given && Object.hasOwn(one.given, path)) return one.given[path]
+    if (one?.free?.includes(path)) return undefined
+  }
+  return givenOf(layout, path)
+}
+
+/** Redraws only when this given changed. */
+export function useGiven(path: string): Given | undefined {
+  return usePlantStore((state) => effectiveGiven(state, path))
+}
+
+/** As `useGiven`, for use outside React. */
+export function readGiven(path: string): Given | undefined {
+  return effectiveGiven(usePlantStore.getState(), path)
 }

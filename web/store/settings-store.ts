@@ -1,5 +1,5 @@
 import { create } from 'zustand'
-import type { Dimension, UnitSetName } from '../../src/document.ts'
+import type { Dimension, UnitChoice, UnitSetName } from '../../src/document.ts'
 
 export type Theme = 'system' | 'light' | 'dark'
 export type DrawerTab = 'states' | 'units' | 'ledger' | 'findings'
@@ -89,3 +89,25 @@ export const useSettingsStore = create<SettingsState>()((set, get) => ({
     }
   },
 }))
+
+let choice: Exclude<UnitChoice, UnitSetName> = {
+  set: usual.unitSet,
+  overrides: usual.unitOverrides,
+}
+
+function unitChoice({ unitSet, unitOverrides }: Settings): UnitChoice {
+  if (choice.set !== unitSet || choice.overrides !== unitOverrides) {
+    choice = { set: unitSet, overrides: unitOverrides }
+  }
+  return choice
+}
+
+/** The units in force, for `formatQuantity`, `parseQuantity` and `unitOf`. */
+export function useUnitChoice(): UnitChoice {
+  return useSettingsStore(unitChoice)
+}
+
+/** As `useUnitChoice`, for use outside React. */
+export function readUnitChoice(): UnitChoice {
+  return unitChoice(useSettingsStore.getState())
+}

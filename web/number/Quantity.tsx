@@ -1,0 +1,39 @@
+import { type Dimension, describeQuantity, formatQuantity } from '../../src/document.ts'
+import { readLayout } from '../store/plant-store.ts'
+import { useUnitChoice } from '../store/settings-store.ts'
+import { Mark } from './Mark.tsx'
+import { type NumberShown, useNumber } from './use-number.ts'
+
+/** Digits and unit of a number in the units in force; an en dash while it is open. */
+export function useNumberText(
+  path: string,
+  dimension?: Dimension,
+): NumberShown & { readonly text: string; readonly unit: string } {
+  const number = useNumber(path)
+  const units = useUnitChoice()
+  const kind = dimension ?? describeQuantity(readLayout(), path)?.dimension ?? 'number'
+  const { text, unit } = formatQuantity(number.value ?? Number.NaN, kind, units, {
+    digits: typeof number.given === 'number' ? 'given' : 'shown',
+  })
+  return { ...number, text, unit }
+}
+
+interface Props {
+  readonly path: string
+  /** Saves looking the path up. */
+  readonly dimension?: Dimension
+  readonly showUnit?: boolean
+}
+
+/** A number of the plant with its unit, showing at a glance whether it went in or came out. */
+export function Quantity({ path, dimension, showUnit = true }: Props) {
+  const { state, text, unit } = useNumberText(path, dimension)
+  return (
+    <span className="quantity" data-state={state}>
+      {state === 'open' && <Mark name="open" spoken />}
+      {state === 'conflicting' && <Mark name="error" spoken />}
+      <span className="quantity-value">{text}</span>
+      {showUnit && unit !== '' && <span className="quantity-unit">{unit}</span>}
+    </span>
+  )
+}

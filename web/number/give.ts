@@ -1,0 +1,50 @@
+import {
+  describeQuantity,
+  formatQuantity,
+  type Given,
+  labelOf,
+  setGiven,
+} from '../../src/document.ts'
+import { editLayout, readGiven, readLayout } from '../store/plant-store.ts'
+import { readUnitChoice } from '../store/settings-store.ts'
+
+/** 'Terminal difference' within a sentence: terminal difference. 'NPSH available' stays as it is. */
+export function withinSentence(label: string): string {
+  return /^\p{Lu}\p{Ll}/u.test(label) ? label.charAt(0).toLowerCase() + label.slice(1) : label
+}
+
+/** A quantity by name: 'Heater 5, terminal difference'; the path itself where nothing bears it. */
+export function quantityName(path: string): string {
+  const quantity = describeQuantity(readLayout(), path)
+  if (!quantity) return path
+  return quantity.owner === 'plant'
+    ? quantity.label
+    : `${labelOf(readLayout(), quantity.owner)}, ${withinSentence(quantity.label)}`
+}
+
+/** A given in the units in force: '12.82 bar'; a curve by its word. */
+export function givenText(path: string, given: Given): string {
+  const dimension = describeQuantity(readLayout(), path)?.dimension ?? 'number'
+  if (typeof given !== 'number') return 'a curve'
+  const { text, unit } = formatQuantity(given, dimension, readUnitChoice(), { digits: 'given' })
+  return unit ? `${text} ${unit}` : text
+}
+
+/** Gives a quantity a value: an undo step by name. */
+export function give(path: string, given: Given, options?: { readonly merge?: string }): void {
+  const before = readGiven(path)
+  const to = givenText(path, given)
+  const name =
+    before === undefined
+      ? `${quantityName(path)} given as ${to}`
+      : `${quantityName(path)} ${givenText(path, before)} to ${to}`
+  editLayout(name, (plant, layoutId) => setGiven(plant, layoutId, path, given), options)
+}
+
+/** Frees a quantity: from now on it is solved. */
+export function free(path: string): void {
+  if (readGiven(path) === undefined) return
+  editLayout(`${quantityName(path)} freed`, (plant, layoutId) =>
+    setGiven(plant, layoutId, path, undefined),
+  )
+}

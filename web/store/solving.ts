@@ -1,0 +1,48 @@
+import { createSolverClient, type WorkerPort } from '../worker/client.ts'
+import { type Asked, useBalanceStore } from './balance-store.ts'
+import { usePlantStore } from './plant-store.ts'
+import { sameBalance } from './same-balance.ts'
+
+function startWorker(): WorkerPort {
+  return new Worker(new URL('../worker/worker.ts', import.meta.url), {
+    type: 'module',
+    name: 'balance',
+  })
+}
+
+/** From now on every edit that can change the balance is solved, and the balance is shown. */
+export function startSolving(): void {
+  const shown = useBalanceStore.getState()
+  const client = createSolverClient<Asked>(startWorker, {
+    balance: shown.show,
+    dome: shown.showDome,
+    unusable(message) {
+      shown.clear()
+      shown.showTrouble(message)
+    },
+    gaveUp: shown.showTrouble,
+    busy: shown.setStale,
+  })
+
+  let edit = 0
+  let step = -1
+  const ask = () => {
+    const { plant, layoutId, caseId, opened, step: stepNow, stepName } = usePlantStore.getState()
+    if (stepNow !== step) edit += 1
+    step = stepNow
+    const subject = `${opened}/${layoutId}/${caseId ?? ''}`
+    client.solve({ plant, layout: layoutId, case: caseId }, { subject, edit, editName: stepName })
+  }
+
+  usePlantStore.subscribe((now, then) => {
+    if (
+      now.layoutId !== then.layoutId ||
+      now.caseId !== then.caseId ||
+      now.opened !== then.opened ||
+      (now.plant !== then.plant && !sameBalance(now.plant, then.plant))
+    ) {
+      ask()
+    }
+  })
+  ask()
+}

@@ -1,0 +1,197 @@
+import type {
+  Answer,
+  BalanceMessage,
+  DomeMessage,
+  NamesMessage,
+  Request,
+} from '../../src/messages.ts'
+
+/** The part of a Worker that the client needs. */
+export interface WorkerPort {
+  postMessage(request: Request): void
+  terminate(): void
+  onmessage: ((event: MessageEvent<Answer>) => void) | null
+  onerror: ((event: ErrorEvent) => void) | null
+  onmessageerror: ((event: MessageEvent) => void) | null
+}
+
+/** What is to be solved. */
+export type Job = Omit<Request, 'type' | 'sequence'>
+
+export interface Reports<Mark> {
+  /** A balance, newer than any shown before, with the mark of the job that asked for it. */
+  balance(names: NamesMessage, balance: BalanceMessage, mark: Mark): void
+  dome(dome: DomeMessage): void
+  /** The plant as it stands cannot be read; the message is ready to show. */
+  unusable(message: string): void
+  /** The solver gave up on the newest job; the message is ready to show. */
+  gaveUp(message: string): void
+  /** Whether an answer to the newest job is still to come. */
+  busy(busy: boolean): void
+}
+
+export interface Patience {
+  /** How long one job may take, ms. */
+  readonly answer: number
+  /** The same for the first job of a worker, which has to load first. */
+  readonly start: number
+  /** How long a job goes on when a newer one waits behind it, ms. */
+  readonly superseded: number
+}
+
+const usualPatience: Patience = { answer: 5_000, start: 20_000, superseded: 1_000 }
+
+interface Running<Mark> {
+  readonly request: Request
+  readonly mark: Mark
+  readonly since: number
+  /** Workers that died over it. */
+  readonly deaths: number
+}
+
+export interface SolverClient<Mark> {
+  /** Asks for a balance. One job runs at a time; of those that wait only the newest is kept. */
+  solve(job: Job, mark: Mark): void
+  stop(): void
+}
+
+/**
+ * Talks to the worker that solves: starts it, starts it again when it dies or does not answer, and
+ * drops answers that a newer one has overtaken.
+ */
+export function createSolverClient<Mark>(
+  startWorker: () => WorkerPort,
+  reports: Reports<Mark>,
+  patience: Patience = usualPatience,
+): SolverClient<Mark> {
+  let worker: WorkerPort | null = null
+  /** The worker has answered: its code is loaded. */
+  let proven = false
+  let sequence = 0
+  let shown = 0
+  let running: Running<Mark> | null = null
+  let waiting: { request: Request; mark: Mark } | null = null
+  let timer: ReturnType<typeof setTimeout> | undefined
+  /** Names by structure: a worker sends them once. */
+  let names = new Map<number, NamesMessage>()
+
+  const start = (): WorkerPort => {
+    const port = startWorker()
+    port.onmessage = (event) => {
+      if (port === worker) receive(event.data)
+    }
+    port.onerror = (event) => {
+      event.preventDefault?.()
+      if (port === worker) died()
+    }
+    port.onmessageerror = () => {
+      if (port === worker) died()
+    }
+    proven = false
+    names = new Map()
+    return port
+  }
+
+  const end = () => {
+    clearTimeout(timer)
+    const port = worker
+    worker = null
+    port?.terminate()
+  }
+
+  /** Sets the watchdog for what is left of the running job's time. */
+  const watch = () => {
+    clearTimeout(timer)
+    if (!running) return
+    const allowed = !proven ? patience.start : waiting ? patience.superseded : patience.answer
+    timer = setTimeout(overdue, Math.max(0, running.since + allowed - Date.now()))
+  }
+
+  const send = (request: Request, mark: Mark, deaths: number) => {
+    worker ??= start()
+    running = { request, mark, since: Date.now(), deaths }
+    worker.postMessage(request)
+    watch()
+  }
+
+  const next = () => {
+    running = null
+    clearTimeout(timer)
+    if (waiting) {
+      const { request, mark } = waiting
+      waiting = null
+      send(request, mark, 0)
+    } else reports.busy(false)
+  }
+
+  const receive = (answer: Answer) => {
+    proven = true
+    switch (answer.type) {
+      case 'names':
+        names.set(answer.structure, answer)
+        break
+      case 'dome':
+        reports.dome(answer)
+        break
+      case 'balance': {
+        const job = running
+        const its = names.get(answer.structure)
+        if (answer.sequence > shown && its && job?.request.sequence === answer.sequence) {
+          shown = answer.sequence
+          reports.balance(its, answer, job.mark)
+        }
+        if (job?.request.sequence === answer.sequence) next()
+        break
+      }
+      case 'unusable':
+        if (running?.request.sequence === answer.sequence) {
+          if (!waiting) reports.unusable(answer.message)
+          next()
+        }
+        break
+    }
+  }
+
+  const overdue = () => {
+    end()
+    if (!waiting) {
+      reports.gaveUp(
+        `No balance within ${Math.round((proven ? patience.answer : patience.start) / 1000)} s: the solver was stopped. The plant is kept; change a number or undo the last edit, and it tries again.`,
+      )
+    }
+    next()
+  }
+
+  const died = () => {
+    const job = running
+    end()
+    if (!job) return
+    if (waiting) next()
+    else if (job.deaths === 0) send(job.request, job.mark, 1)
+    else {
+      reports.gaveUp(
+        proven
+          ? 'The solver stopped twice over this plant. The plant is kept; undo the last edit, or save it to a file and reload the page.'
+          : 'The solver could not be started. The plant is kept; reload the page.',
+      )
+      next()
+    }
+  }
+
+  return {
+    solve(job, mark) {
+      sequence += 1
+      const request: Request = { type: 'solve', sequence, ...job }
+      reports.busy(true)
+      if (running) {
+        waiting = { request, mark }
+        watch()
+      } else send(request, mark, 0)
+    },
+    stop() {
+      running = null
+      waiting = null
+      end()
+    },
+  }
+}
