@@ -1,0 +1,229 @@
+/** Saturation properties with their derivatives along the saturation line. */
+import {
+  borderPressure13,
+  criticalPressure,
+  criticalTemperature,
+  lowestSaturationPressure,
+  lowestTemperature,
+} from './constants.ts'
+import { POINT_SIZE, region1Point, region2Point } from './if97/point.ts'
+import {
+  saturationPressureOf,
+  saturationSlope,
+  saturationTemperatureOf,
+} from './if97/saturation-line.ts'
+import { Outcome, refuse } from './outcome.ts'
+import { Result, SATURATION_SIZE, Saturation } from './records.ts'
+
+/** The last pressure below the critical one at which saturated states are told apart, Pa. */
+const lastPressure = criticalPressure * (1 - 1e-12)
+
+const liquid = new Float64Array(POINT_SIZE)
+const vapour = new Float64Array(POINT_SIZE)
+
+// Many streams of a plant share a pressure: saturation records already computed, found by a hash of p.
+const CACHE_RECORDS = 512
+const cache = new Float64Array(CACHE_RECORDS * SATURATION_SIZE)
+
+/** Whether a pressure has a saturation state (611.213 Pa to below the critical pressure), else why not. */
+export function checkSaturationPressure(p: number): number {
+  if (p >= lowestSaturationPressure && p < criticalPressure) return Outcome.fine
+  if (!Number.isFinite(p)) return refuse(Outcome.notFinite, p, lowestSaturationPressure)
+  if (p < lowestSaturationPressure) return refuse(Outcome.pressureLow, p, lowestSaturationPressure)
+  return refuse(Outcome.pressureHigh, p, criticalPressure)
+}
+
+/**
+ * The saturation record of a pressure between 611.213 Pa and the critical pressure, left in
+ * `saturationCache`: answers with its offset there. It stays until the next call.
+ */
+export function cachedSaturation(p: number): number {
+  const slot = (Math.imul((p * 64) | 0, 0x9e3779b1) >>> 23) * SATURATION_SIZE
+  if (cache[slot] !== p) computeSaturation(cache, slot, p, saturationTemperatureOf(p))
+  return slot
+}
+
+/** Where `cachedSaturation` leaves its records. */
+export const saturationCache: Float64Array = cache
+
+/** Fills a saturation record from p and the saturation temperature that belongs to it. */
+function computeSaturation(record: Float64Array, at: number, p: number, T: number): void {
+  if (p <= borderPressure13) {
+    region1Point(liquid, p, T)
+    region2Point(vapour, p, T)
+  } else {
+    region1Point(liquid, p, T)
+    region2Point(vapour, p, T)
+  }
+  const slope = saturationSlope(p, T)
+  record[at] = p
+  record[at + Saturation.T] = T
+  record[at + Saturation.Tp] = slope
+  side(record, at, 0, liquid, T, slope)
+  side(record, at, 1, vapour, T, slope)
+}
+
+/** One side of the record: properties of a point and their derivatives along the line. */
+function side(
+  record: Float64Array,
+  at: number,
+  shift: number,
+  point: Float64Array,
+  T: number,
+  slope: number,
+): void {
+  const v = point[2] as number
+  const cp = point[3] as number
+  const vT = point[4] as number
+  const base = at + shift
+  record[base + Saturation.hL] = point[0] as number
+  record[base + Saturation.sL] = point[1] as number
+  record[base + Saturation.vL] = v
+  record[base + Saturation.hLp] = v - T * vT + cp * slope
+  record[base + Saturation.sLp] = (cp / T) * slope - vT
+  record[base + Saturation.vLp] = (point[5] as number) + vT * slope
+}
+
+/**
+ * Fills a saturation record from a pressure (Pa). Returns at once when the record already holds it.
+ * Refused outside 611.213 Pa <= p < 22.064 MPa.
+ */
+export function saturationAtPressure(record: Float64Array, at: number, p: number): number {
+  if (record[at] === p) return Outcome.fine
+  const code = checkSaturationPressure(p)
+  if (code !== Outcome.fine) return code
+  const slot = cachedSaturation(p)
+  for (let i = 0; i < SATURATION_SIZE; i++) record[at + i] = cache[slot + i] as number
+  return Outcome.fine
+}
+
+/**
+ * Fills a saturation record from a temperature (K): p is the saturation pressure and T the temperature
+ * asked for. Refused outside 273.15 K <= T < 647.096 K.
+ */
+export function saturationAtTemperature(record: Float64Array, at: number, T: number): number {
+  const code = checkSaturationTemperature(T)
+  if (code !== Outcome.fine) return code
+  const p = saturationPressureOf(T)
+  if (p >= criticalPressure) return refuse(Outcome.temperatureHigh, T, criticalTemperature)
+  computeSaturation(record, at, p, T)
+  return Outcome.fine
+}
+
+function checkSaturationTemperature(T: number): number {
+  if (T >= lowestTemperature && T < criticalTemperature) return Outcome.fine
+  if (!Number.isFinite(T)) return refuse(Outcome.notFinite, T, lowestTemperature)
+  if (T < lowestTemperature) return refuse(Outcome.temperatureLow, T, lowestTemperature)
+  return refuse(Outcome.temperatureHigh, T, criticalTemperature)
+}
+
+/** Saturation temperature (K) of a pressure (Pa): [T, dT/dp, 0]. */
+export function saturationTemperature(out: Float64Array, at: number, p: number): number {
+  const code = checkSaturationPressure(p)
+  if (code !== Outcome.fine) return code
+  const T = saturationTemperatureOf(p)
+  out[at + Result.value] = T
+  out[at + Result.first] = saturationSlope(p, T)
+  out[at + Result.second] = 0
+  return Outcome.fine
+}
+
+/** Saturation pressure (Pa) of a temperature (K): [p, dp/dT, 0]. */
+export function saturationPressure(out: Float64Array, at: number, T: number): number {
+  const code = checkSaturationTemperature(T)
+  if (code !== Outcome.fine) return code
+  const p = saturationPressureOf(T)
+  out[at + Result.value] = p
+  out[at + Result.first] = 1 / saturationSlope(p, T)
+  out[at + Result.second] = 0
+  return Outcome.fine
+}
+
+// Nodes of s' and s'' against T, closer together towards the critical point where both run steep.
+const NODES = 64
+const nodes = new Float64Array(2 * NODES)
+const nodePressures = new Float64Array(NODES)
+
+function fillNodes(): void {
+  const span = criticalTemperature - lowestTemperature
+  for (let i = 0; i < NODES; i++) {
+    const part = 1 - i / (NODES - 1)
+    const T = i === 0 ? lowestTemperature : criticalTemperature - span * part * part * part
+    const p = i === 0 ? lowestSaturationPressure : Math.min(saturationPressureOf(T), lastPressure)
+    const slot = cachedSaturation(p)
+    nodePressures[i] = p
+    nodes[i] = cache[slot + Saturation.sL] as number
+    nodes[NODES + i] = cache[slot + Saturation.sV] as number
+  }
+}
+
+/**
+ * h'' (J/kg) of the dry saturated steam that has entropy s (J/(kg K)): [h'', dh''/ds, its pressure (Pa)].
+ * Refused outside s'' at the critical point < s <= s'' at 273.15 K.
+ */
+export function drySaturatedEnthalpyAtEntropy(out: Float64Array, at: number, s: number): number {
+  return saturatedEnthalpyAtEntropy(out, at, s, 1)
+}
+
+/**
+ * h' (J/kg) of the saturated liquid that has entropy s (J/(kg K)): [h', dh'/ds, its pressure (Pa)].
+ * Refused outside s' at 273.15 K <= s < s' at the critical point.
+ */
+export function saturatedLiquidEnthalpyAtEntropy(out: Float64Array, at: number, s: number): number {
+  return saturatedEnthalpyAtEntropy(out, at, s, 0)
+}
+
+function saturatedEnthalpyAtEntropy(
+  out: Float64Array,
+  at: number,
+  s: number,
+  side: number,
+): number {
+  if (nodePressures[0] === 0) fillNodes()
+  const first = side * NODES
+  const cold = nodes[first] as number
+  const critical = nodes[first + NODES - 1] as number
+  const low = Math.min(cold, critical)
+  const high = Math.max(cold, critical)
+  if (!(s >= low - 1e-9 * high)) return refuse(Outcome.entropyLow, s, low)
+  if (!(s <= high + 1e-9 * high)) return refuse(Outcome.entropyHigh, s, high)
+  // the node interval, then Newton in p within it
+  let i = 0
+  let j = NODES - 1
+  const rises = critical > cold
+  while (j - i > 1) {
+    const middle = (i + j) >> 1
+    if ((nodes[first + middle] as number) < s === rises) i = middle
+    else j = middle
+  }
+  let below = nodePressures[i] as number
+  let above = nodePressures[j] as number
+  const part =
+    (s - (nodes[first + i] as number)) /
+    ((nodes[first + j] as number) - (nodes[first + i] as number))
+  let p = Math.min(above, Math.max(below, below * (above / below) ** part))
+  let slot = cachedSaturation(p)
+  for (let k = 0; k < 60; k++) {
+    const off = (cache[slot + Saturation.sL + side] as number) - s
+    if (off === 0) break
+    if (off < 0 === rises) below = p
+    else above = p
+    let next = p - off / (cache[slot + Saturation.sLp + side] as number)
+    if (!(next > below && next < above)) {
+      if (above - below <= 1e-14 * above) break
+      next = 0.5 * (below + above)
+    }
+    const step = Math.abs(next - p)
+    p = next
+    slot = cachedSaturation(p)
+    if (step <= 1e-13 * p) break
+  }
+  const slope =
+    (cache[slot + Saturation.hLp + side] as number) /
+    (cache[slot + Saturation.sLp + side] as number)
+  const off = s - (cache[slot + Saturation.sL + side] as number)
+  out[at + Result.value] = (cache[slot + Saturation.hL + side] as number) + off * slope
+  out[at + Result.first] = slope
+  out[at + Result.second] = p
+  return Outcome.fine
+}
