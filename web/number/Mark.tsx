@@ -16,16 +16,16 @@ const words: Record<MarkName, string> = {
   square: 'In order',
 }
 
-/** A mark of state, 12 px; hidden from screen readers where a word stands beside it. */
+/** A mark of state, 12 px; `spoken` where no word stands beside it. */
 export function Mark({ name, spoken = false }: { name: MarkName; spoken?: boolean }) {
-  return (
-    <svg
-      className={`mark mark-${name}`}
-      viewBox="0 0 14 14"
-      width="12"
-      height="12"
-      {...(spoken ? { role: 'img', 'aria-label': words[name] } : { 'aria-hidden': true })}
-    >
+  const className = `mark mark-${name}`
+  return spoken ? (
+    <svg className={className} viewBox="0 0 14 14" width="12" height="12" role="img">
+      <title>{words[name]}</title>
+      {drawings[name]}
+    </svg>
+  ) : (
+    <svg className={className} viewBox="0 0 14 14" width="12" height="12" aria-hidden="true">
       {drawings[name]}
     </svg>
   )
