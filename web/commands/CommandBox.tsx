@@ -1,5 +1,5 @@
 import { useDeferredValue, useEffect, useId, useMemo, useRef, useState } from 'react'
-import { focusNumber } from '../card/focus.ts'
+import { focusNumber } from '../number/focus.ts'
 import { useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { Icon } from '../strip/Icon.tsx'

@@ -16,8 +16,9 @@ function MenuItem({ command, onRun }: { command: Command; onRun(): void }) {
   return (
     <button
       type="button"
-      role={checked === undefined ? 'menuitem' : 'menuitemcheckbox'}
-      aria-checked={checked}
+      {...(checked === undefined
+        ? { role: 'menuitem' }
+        : { role: 'menuitemcheckbox', 'aria-checked': checked })}
       aria-disabled={!isEnabled(command)}
       className="menu-item"
       tabIndex={-1}

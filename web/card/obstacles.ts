@@ -1,0 +1,61 @@
+import type { Box, Obstacle } from './place-card.ts'
+
+/** What is drawn on the canvas, found by the classes that the canvas library gives it. */
+const unitSelector = '.react-flow__node'
+const streamSelector = '.react-flow__edge-path'
+/** Room to be left around things, px. */
+const around = 6
+/** How far apart a stream's line is looked at, px on screen. */
+const pitch = 14
+
+/** Covering the selected thing itself is worst, then symbols, then lines. */
+const weights = { selected: 20, unit: 4, stream: 1 }
+
+function boxOf(element: Element, area: DOMRect): Box {
+  const { left, top, width, height } = element.getBoundingClientRect()
+  return {
+    left: left - area.left - around,
+    top: top - area.top - around,
+    width: width + 2 * around,
+    height: height + 2 * around,
+  }
+}
+
+function alongPath(path: SVGPathElement, area: DOMRect, into: Obstacle[], weight: number): void {
+  const toScreen = path.getScreenCTM()
+  if (!toScreen) return
+  const length = path.getTotalLength()
+  const steps = Math.max(1, Math.ceil((length * toScreen.a) / pitch))
+  for (let i = 0; i <= steps; i++) {
+    const { x, y } = path.getPointAtLength((length * i) / steps).matrixTransform(toScreen)
+    into.push({
+      left: x - area.left - around,
+      top: y - area.top - around,
+      width: 2 * around,
+      height: 2 * around,
+      weight,
+    })
+  }
+}
+
+/** What a card laid over the canvas could hide, in px from the canvas's corner, and the selected thing. */
+export function canvasObstacles(
+  canvas: Element,
+  selected: string,
+): { obstacles: readonly Obstacle[]; anchor: Box | null } {
+  const area = canvas.getBoundingClientRect()
+  const obstacles: Obstacle[] = []
+  let anchor: Box | null = null
+  for (const element of canvas.querySelectorAll(unitSelector)) {
+    const box = boxOf(element, area)
+    const its = element.getAttribute('data-id') === selected
+    if (its) anchor = box
+    obstacles.push({ ...box, weight: its ? weights.selected : weights.unit })
+  }
+  for (const path of canvas.querySelectorAll<SVGPathElement>(streamSelector)) {
+    const its = path.closest('[data-id]')?.getAttribute('data-id') === selected
+    if (its) anchor = boxOf(path, area)
+    alongPath(path, area, obstacles, its ? weights.selected : weights.stream)
+  }
+  return { obstacles, anchor }
+}

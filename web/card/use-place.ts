@@ -1,0 +1,94 @@
+import { type RefObject, useCallback, useLayoutEffect, useRef, useState } from 'react'
+import { canvasObstacles } from './obstacles.ts'
+import { placeCard } from './place-card.ts'
+
+interface Place {
+  readonly left: number
+  readonly top: number
+}
+
+/** Where the user has put the card: it stays there for all that is selected next. */
+let moved: Place | null = null
+
+function within(place: Place, card: HTMLElement, area: HTMLElement): Place {
+  return {
+    left: Math.max(0, Math.min(place.left, area.clientWidth - card.offsetWidth)),
+    top: Math.max(0, Math.min(place.top, area.clientHeight - card.offsetHeight)),
+  }
+}
+
+/** Keeps a card where it covers nothing, or where the user has dragged it. */
+export function usePlace(
+  card: RefObject<HTMLElement | null>,
+  id: string,
+): { readonly place: Place | null; startMove(event: React.PointerEvent): void } {
+  const [place, setPlace] = useState<Place | null>(null)
+  const present = useRef<Place | null>(null)
+
+  const settle = useCallback(() => {
+    const element = card.current
+    const area = element?.parentElement
+    if (!element || !area) return
+    const next = moved
+      ? within(moved, element, area)
+      : freePlace(element, area, id, present.current)
+    present.current = next
+    setPlace((old) => (old?.left === next.left && old.top === next.top ? old : next))
+  }, [card, id])
+
+  useLayoutEffect(() => {
+    settle()
+    const element = card.current
+    const area = element?.parentElement
+    if (!element || !area) return
+    const observer = new ResizeObserver(settle)
+    observer.observe(area)
+    observer.observe(element)
+    return () => observer.disconnect()
+  }, [card, settle])
+
+  const startMove = (event: React.PointerEvent) => {
+    const element = card.current
+    const area = element?.parentElement
+    if (!element || !area || event.button !== 0) return
+    if ((event.target as Element).closest('button, input')) return
+    event.preventDefault()
+    const from = { x: event.clientX, y: event.clientY }
+    const start = present.current ?? { left: element.offsetLeft, top: element.offsetTop }
+    const move = (pointer: PointerEvent) => {
+      moved = within(
+        { left: start.left + pointer.clientX - from.x, top: start.top + pointer.clientY - from.y },
+        element,
+        area,
+      )
+      present.current = moved
+      setPlace(moved)
+    }
+    const end = () => {
+      window.removeEventListener('pointermove', move)
+      window.removeEventListener('pointerup', end)
+      window.removeEventListener('pointercancel', end)
+    }
+    window.addEventListener('pointermove', move)
+    window.addEventListener('pointerup', end)
+    window.addEventListener('pointercancel', end)
+  }
+
+  return { place, startMove }
+}
+
+function freePlace(
+  element: HTMLElement,
+  area: HTMLElement,
+  id: string,
+  present: Place | null,
+): Place {
+  const { obstacles, anchor } = canvasObstacles(area, id)
+  return placeCard(
+    { width: element.offsetWidth, height: element.offsetHeight },
+    { width: area.clientWidth, height: area.clientHeight },
+    obstacles,
+    anchor,
+    present,
+  )
+}

@@ -1,0 +1,166 @@
+import { useId } from 'react'
+import { Mark } from '../number/Mark.tsx'
+import { useBalanceStore } from '../store/balance-store.ts'
+import { type DrawerTab, useSettingsStore } from '../store/settings-store.ts'
+import { Icon } from '../strip/Icon.tsx'
+import { Findings, useFindings } from './Findings.tsx'
+import { Ledger } from './Ledger.tsx'
+import { StatePoints } from './StatePoints.tsx'
+import { UnitBalances } from './UnitBalances.tsx'
+import './drawer.css'
+
+const tabs: readonly DrawerTab[] = ['states', 'units', 'ledger', 'findings']
+const bodies = { states: StatePoints, units: UnitBalances, ledger: Ledger, findings: Findings }
+
+function LedgerTab() {
+  const ledger = useBalanceStore((state) => state.balance?.ledger)
+  if (!ledger) return <>Ledger</>
+  const { unknowns, equations, missing, excess } = ledger
+  return (
+    <>
+      Ledger
+      <span className="tab-detail">
+        {excess > 0 ? (
+          <>
+            <Mark name="error" /> {excess} too many
+          </>
+        ) : missing > 0 ? (
+          <>
+            <Mark name="open" /> {missing} short
+          </>
+        ) : (
+          `${unknowns} = ${equations}`
+        )}
+      </span>
+    </>
+  )
+}
+
+function FindingsTab() {
+  const findings = useFindings()
+  const trouble = useBalanceStore((state) => state.trouble)
+  const worst = (['error', 'caution', 'remark'] as const).find(
+    (severity) =>
+      (severity === 'error' && trouble) || findings.some((one) => one.severity === severity),
+  )
+  return (
+    <>
+      Findings
+      <span className="tab-detail">
+        {worst && worst !== 'remark' && <Mark name={worst} spoken />}{' '}
+        {findings.length + (trouble ? 1 : 0)}
+      </span>
+    </>
+  )
+}
+
+const names = {
+  states: () => <>State points</>,
+  units: () => <>Units</>,
+  ledger: LedgerTab,
+  findings: FindingsTab,
+}
+
+const statusWords = {
+  solved: '',
+  underspecified: 'Not solved: numbers are missing',
+  overspecified: 'Not solved: numbers contradict',
+  infeasible: 'Not possible',
+  notConverged: 'No solution found',
+}
+
+/** '2 × 10⁻¹⁶', as a print would set it. */
+function Power({ value }: { value: number }) {
+  if (value === 0) return <>0</>
+  const exponent = Math.floor(Math.log10(Math.abs(value)))
+  return (
+    <>
+      {(value / 10 ** exponent).toFixed(0)} × 10<sup>{String(exponent).replace('-', '−')}</sup>
+    </>
+  )
+}
+
+function Closure() {
+  const closure = useBalanceStore((state) => state.balance?.closure ?? null)
+  const status = useBalanceStore((state) => state.balance?.status)
+  const trouble = useBalanceStore((state) => state.trouble)
+  if (trouble) return <span className="drawer-state">No balance</span>
+  if (!status) return null
+  if (status !== 'solved') return <span className="drawer-state">{statusWords[status]}</span>
+  if (!closure) return null
+  return (
+    <span
+      className="drawer-state"
+      title="The worst unit's imbalance, worked out anew from the streams alone."
+    >
+      Mass and energy close to <Power value={Math.max(closure.mass, closure.energy)} />
+    </span>
+  )
+}
+
+/** The drawer of tables below the canvas. */
+export function Drawer() {
+  const tab = useSettingsStore((state) => state.drawerTab)
+  const folded = useSettingsStore((state) => state.drawerFolded)
+  const change = useSettingsStore((state) => state.change)
+  const base = useId()
+  const Body = bodies[tab]
+  return (
+    <section className="drawer" aria-label="Tables">
+      <div className="drawer-head">
+        {/* biome-ignore lint/a11y/useFocusableInteractive: the tabs within are what takes the focus. */}
+        <div
+          className="drawer-tabs"
+          role="tablist"
+          aria-label="Tables"
+          onKeyDown={(event) => {
+            const step = { ArrowRight: 1, ArrowLeft: -1 }[event.key]
+            if (!step) return
+            const next = tabs[(tabs.indexOf(tab) + step + tabs.length) % tabs.length] as DrawerTab
+            change({ drawerTab: next })
+            document.getElementById(`${base}-${next}`)?.focus()
+            event.preventDefault()
+          }}
+        >
+          {tabs.map((one) => {
+            const Name = names[one]
+            return (
+              <button
+                key={one}
+                id={`${base}-${one}`}
+                type="button"
+                role="tab"
+                aria-selected={one === tab && !folded}
+                aria-controls={`${base}-body`}
+                tabIndex={one === tab ? 0 : -1}
+                onClick={() => change({ drawerTab: one, drawerFolded: false })}
+              >
+                <Name />
+              </button>
+            )
+          })}
+        </div>
+        <Closure />
+        <button
+          type="button"
+          className="icon-button"
+          aria-expanded={!folded}
+          aria-label={folded ? 'Open the drawer' : 'Fold the drawer'}
+          onClick={() => change({ drawerFolded: !folded })}
+        >
+          <Icon name={folded ? 'up' : 'down'} />
+        </button>
+      </div>
+      {!folded && (
+        <div
+          id={`${base}-body`}
+          className="drawer-body"
+          role="tabpanel"
+          aria-labelledby={`${base}-${tab}`}
+        >
+          <Body />
+        </div>
+      )}
+    </section>
+  )
+}

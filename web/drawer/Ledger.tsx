@@ -1,0 +1,49 @@
+import { Mark } from '../number/Mark.tsx'
+import { useBalanceStore } from '../store/balance-store.ts'
+import { ledgerLines } from './ledger.ts'
+import { Remedies } from './Remedies.tsx'
+
+/** Unknowns against equations, and what to give or to free where they do not match. */
+export function Ledger() {
+  const balance = useBalanceStore((state) => state.balance)
+  const trouble = useBalanceStore((state) => state.trouble)
+  if (!balance) return <p className="drawer-empty">{trouble ?? 'No balance yet.'}</p>
+  const { blocks, iterations } = balance.ledger
+  return (
+    <div className="drawer-scroll ledger">
+      {trouble && (
+        <div className="ledger-line" data-mark="error">
+          <Mark name="error" />
+          <strong>No balance</strong>
+          <span>{trouble}</span>
+        </div>
+      )}
+      {ledgerLines(balance).map((line, i) => (
+        <div
+          // biome-ignore lint/suspicious/noArrayIndexKey: the lines have no name of their own.
+          key={i}
+          className="ledger-line"
+          data-mark={line.mark}
+        >
+          <div>
+            <Mark name={line.mark} />
+            <strong>{line.word}</strong>
+            <span className="muted">{line.text}</span>
+          </div>
+          {line.finding && <Remedies finding={line.finding} />}
+        </div>
+      ))}
+      {balance.status === 'solved' && (
+        <p className="muted ledger-note">
+          Solved in {blocks} blocks, {iterations} {iterations === 1 ? 'iteration' : 'iterations'},{' '}
+          {balance.milliseconds < 10
+            ? balance.milliseconds.toFixed(1)
+            : balance.milliseconds.toFixed(0)}{' '}
+          ms.
+          {balance.undetermined.length > 0 &&
+            ` ${balance.undetermined.length} quantities that nothing else needs are left open.`}
+        </p>
+      )}
+    </div>
+  )
+}

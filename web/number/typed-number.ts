@@ -1,0 +1,65 @@
+import {
+  formatQuantity,
+  parseQuantity,
+  type QuantityDescription,
+  type UnitChoice,
+  whyNotGiven,
+} from '../../src/document.ts'
+import { readLayout } from '../store/plant-store.ts'
+
+export type Typed =
+  | { readonly outcome: 'value'; readonly value: number; readonly note?: string }
+  /** Nothing typed: a given is freed, a solved one stays solved. */
+  | { readonly outcome: 'empty' }
+  | { readonly outcome: 'refused'; readonly message: string }
+
+/** Reads what was typed into a number's field. */
+export function readTyped(
+  text: string,
+  path: string,
+  description: QuantityDescription,
+  units: UnitChoice,
+): Typed {
+  if (text.trim() === '') return { outcome: 'empty' }
+  const parsed = parseQuantity(text, description.dimension, units)
+  if (parsed.outcome === 'unreadable') return { outcome: 'refused', message: parsed.message }
+  const why = whyNotGiven(readLayout(), path, parsed.value)
+  if (why) return { outcome: 'refused', message: why }
+  return {
+    outcome: 'value',
+    value: parsed.value,
+    ...(parsed.note ? { note: parsed.note } : {}),
+  }
+}
+
+/** Digits for a field: all that the value needs when it is given, those shown when it is solved. */
+export function fieldText(
+  value: number,
+  description: QuantityDescription,
+  units: UnitChoice,
+  given: boolean,
+): string {
+  return formatQuantity(value, description.dimension, units, { digits: given ? 'given' : 'shown' })
+    .text
+}
+
+/** What one press of an arrow key changes a value by, SI. */
+export function stepOf(description: QuantityDescription, value: number): number {
+  return description.step ?? (value === 0 ? 1 : Math.abs(value) / 100)
+}
+
+/** 'Usual -3 to 5 K: practice for ...', or nothing where no range is declared. */
+export function usualText(description: QuantityDescription, units: UnitChoice): string | undefined {
+  const { range, usual, basis, dimension } = description
+  const say = (value: number) => formatQuantity(value, dimension, units, { digits: 'given' })
+  const because = basis ? ` (${basis})` : ''
+  if (range) {
+    const [least, most] = [say(range[0]), say(range[1])]
+    return `Usual ${least.text} to ${most.text} ${most.unit}`.trimEnd() + because
+  }
+  if (usual !== undefined) {
+    const { text, unit } = say(usual)
+    return `Usual ${text} ${unit}`.trimEnd() + because
+  }
+  return undefined
+}
