@@ -56,18 +56,23 @@ function alreadyInstalled() {
 }
 
 function installDependencies() {
-  const stamp = createHash('sha256')
-    .update(read(lockFile))
-    .update(`${process.version} ${process.platform} ${process.arch}`)
-    .digest('hex')
+  // Packages hold programs made for one system, so a copied folder is no installation.
+  const system = `${process.platform} ${process.arch} Node ${process.versions.node.split('.')[0]}`
+  const lock = createHash('sha256').update(read(lockFile)).digest('hex')
+  const stamp = `${lock} ${system}\n`
   const former = read(stampFile)
   if (former === stamp) return true
-  if (former !== '' || !alreadyInstalled()) {
+  const sameSystem = former === '' || former.endsWith(` ${system}\n`)
+  if (!sameSystem || !alreadyInstalled()) {
     say('Installing dependencies (once for each change of package-lock.json) ...')
     const parameters = ['ci', '--include=dev', '--ignore-scripts', '--no-audit', '--no-fund']
     const npm = process.env.npm_execpath
-    // A global or dry-run npm call must not pass its settings on to this one.
-    const environment = { npm_config_global: 'false', npm_config_dry_run: 'false' }
+    // What an npm command that calls this was told must not change this one.
+    const environment = {
+      npm_config_global: 'false',
+      npm_config_dry_run: 'false',
+      npm_config_loglevel: 'warn',
+    }
     const installed = npm?.endsWith('.js')
       ? run(process.execPath, [npm, ...parameters], environment)
       : run('npm', parameters, environment)
