@@ -1,12 +1,43 @@
-import type { QuantityTable, UnitKind } from './kind.ts'
+import { boiler } from './boiler.ts'
+import { branch } from './branch.ts'
+import { condenser } from './condenser.ts'
+import { junction } from './junction.ts'
+import type { UnitKind } from './kind.ts'
+import { mixingHeater } from './mixing-heater.ts'
+import { offtake } from './offtake.ts'
+import { pipe } from './pipe.ts'
+import { pump } from './pump.ts'
+import { reheater } from './reheater.ts'
+import { supply } from './supply.ts'
+import { turbine } from './turbine.ts'
+import { valve } from './valve.ts'
 
 /** Every kind of unit, in the order of the rail. */
-export const kinds: readonly Omit<UnitKind, 'equations' | 'totals'>[] = []
+const registry = [
+  boiler,
+  reheater,
+  turbine,
+  pump,
+  mixingHeater,
+  condenser,
+  pipe,
+  valve,
+  branch,
+  junction,
+  supply,
+  offtake,
+] as const
 
-export function kindNamed(name: string): Omit<UnitKind, 'equations' | 'totals'> | undefined {
-  return kinds.find((kind) => kind.name === name)
+export type KindName = (typeof registry)[number]['name']
+
+export const kinds: readonly (UnitKind & { readonly name: KindName })[] = registry
+
+const byName = new Map<string, UnitKind>(registry.map((kind) => [kind.name, kind]))
+
+export function kindNamed(name: string): UnitKind | undefined {
+  return byName.get(name)
 }
 
-export const shaftQuantities: QuantityTable = {}
-export const plantQuantities: QuantityTable = {}
-export const streamQuantities: QuantityTable = {}
+export { plantQuantities } from './plant-totals.ts'
+export { quantitiesOfShaft, shaftQuantities } from './shaft.ts'
+export { streamQuantities } from './stream-quantities.ts'

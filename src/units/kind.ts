@@ -49,7 +49,12 @@ export interface QuantityDescription {
   /** Where the usual value and range come from. */
   readonly basis?: string
   /** What is physically possible, SI, ends included unless `above`; outside it the plant is infeasible. */
-  readonly possible?: { readonly above?: number; readonly least?: number; readonly most?: number; readonly below?: number }
+  readonly possible?: {
+    readonly above?: number
+    readonly least?: number
+    readonly most?: number
+    readonly below?: number
+  }
   /** One practical step, SI: what a change 'by one' means to the trade. */
   readonly step?: number
   /** One for each stream of a port, and `extra` more. */
@@ -128,25 +133,32 @@ export type TotalName =
 export interface ProcessPath {
   readonly from: string
   readonly to: string
-  /** `line`: p and h change together; `isenthalp`; `expansion` and `compression` by constant efficiency. */
-  readonly course: 'line' | 'isenthalp' | 'expansion' | 'compression'
+  /**
+   * `line`: p and h change together; `isenthalp`; `expansion` and `compression` by constant
+   * efficiency; `throttledLine`: first throttled to the end's pressure, then a line.
+   */
+  readonly course: 'line' | 'isenthalp' | 'expansion' | 'compression' | 'throttledLine'
 }
 
+/**
+ * How the enthalpy of what leaves a port is guessed: saturated liquid or dry saturated steam of its
+ * pressure, superheated steam, a turbine's expansion, or what comes in at another port.
+ */
+export type Start = 'liquid' | 'dry' | 'superheated' | 'expanded' | { readonly as: string }
+
 /** How exergy is accounted: contract, section 3, second law. */
-export type SecondLawRole =
-  | 'adiabatic'
-  | 'losesHeat'
-  | 'fired'
-  | 'heated'
-  | 'delivers'
-  | 'edge'
+export type SecondLawRole = 'adiabatic' | 'losesHeat' | 'fired' | 'heated' | 'delivers' | 'edge'
 
 /**
  * A kind of unit, declared once: everything that others need to know of it.
  * Registered in index.ts; nothing outside this folder asks which kind it has in hand.
  */
-export interface UnitKind<P extends PortTable = PortTable, Q extends QuantityTable = QuantityTable> {
-  readonly name: string
+export interface UnitKind<
+  N extends string = string,
+  P extends PortTable = PortTable,
+  Q extends QuantityTable = QuantityTable,
+> {
+  readonly name: N
   readonly label: string
   /** Two or three letters that new ids and labels start with. */
   readonly idStem: string
@@ -160,10 +172,13 @@ export interface UnitKind<P extends PortTable = PortTable, Q extends QuantityTab
   readonly chief?: string
   /** Needs to stand on a shaft (turbine), may stand on one (pump). */
   readonly shaft?: 'driving' | 'driven'
-  readonly equations: (unit: UnitContext<P, Q>) => Readonly<Record<string, Equation>>
-  readonly totals?: (unit: UnitContext<P, Q>) => Partial<Record<TotalName, Expression>>
+  // Methods, so that kinds with exact port names fit where any kind is meant.
+  equations(unit: UnitContext<P, Q>): Readonly<Record<string, Equation>>
+  totals?(unit: UnitContext<P, Q>): Partial<Record<TotalName, Expression>>
   readonly secondLaw: SecondLawRole
   readonly paths: (shape: Shape) => readonly ProcessPath[]
+  /** First guesses of what leaves: where an iteration starts when nothing better is known. */
+  readonly starts: Readonly<Record<string, Start>>
   /** May leave at a higher pressure than it receives. */
   readonly raisesPressure?: true
   /** Streams of these ports pass through unchanged in kind: how lines are followed from unit to unit. */
@@ -171,8 +186,10 @@ export interface UnitKind<P extends PortTable = PortTable, Q extends QuantityTab
 }
 
 /** Gives a kind its exact type, so that port and quantity names are checked in its equations. */
-export function defineUnitKind<const P extends PortTable, const Q extends QuantityTable>(
-  kind: UnitKind<P, Q>,
-): UnitKind<P, Q> {
+export function defineUnitKind<
+  const N extends string,
+  const P extends PortTable,
+  const Q extends QuantityTable,
+>(kind: UnitKind<N, P, Q>): UnitKind<N, P, Q> {
   return kind
 }

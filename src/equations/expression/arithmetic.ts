@@ -115,6 +115,7 @@ const squareOperation: Operation = {
     tape.partials[k] = 2 * a
     return Outcome.fine
   },
+  invert: (target) => squareRoot(target),
   print: ([a]) => ({ text: `${wrap(a!, 4)}²`, strength: 3 }),
 }
 
@@ -212,42 +213,6 @@ const powerOperation: Operation = {
   print: ([a, b]) => ({ text: `${wrap(a!, 4)}^${wrap(b!, 4)}`, strength: 3 }),
 }
 
-/** The operand held between 0 and 1: a share that begins and ends. */
-const shareOperation: Operation = {
-  name: 'share',
-  evaluate(tape, row) {
-    const k = tape.first[row]!
-    const a = tape.values[tape.operands[k]!]!
-    const inside = a > 0 && a < 1
-    tape.values[tape.slotOf(row)] = inside ? a : a >= 1 ? 1 : 0
-    tape.partials[k] = inside ? 1 : 0
-    return Outcome.fine
-  },
-  print: ([a]) => ({ text: `within 0 to 1 (${a!.text})`, strength: 4 }),
-}
-
-/** (a - b)/c held between 0 and 1; 0 where c is 0: the part of a drop that lies beyond a point. */
-const partOperation: Operation = {
-  name: 'part',
-  evaluate(tape, row) {
-    const { values, operands, partials } = tape
-    const k = tape.first[row]!
-    const c = values[operands[k + 1]!]!
-    const quotient = c === 0 ? 0 : values[operands[k]!]! / c
-    if (quotient > 0 && quotient < 1) {
-      values[tape.slotOf(row)] = quotient
-      partials[k] = 1 / c
-      partials[k + 1] = -quotient / c
-    } else {
-      values[tape.slotOf(row)] = quotient >= 1 ? 1 : 0
-      partials[k] = 0
-      partials[k + 1] = 0
-    }
-    return Outcome.fine
-  },
-  print: ([a, b]) => ({ text: `within 0 to 1 (${wrap(a!, 2)}/${wrap(b!, 3)})`, strength: 4 }),
-}
-
 /** Adds terms; constants among them are gathered, zeros left out. */
 export function plus(...terms: Expression[]): Expression {
   let known = 0
@@ -313,12 +278,4 @@ export function power(a: Expression, b: Expression): Expression {
   if (isConstant(b, 1)) return a
   if (isConstant(b, 0)) return constant(1)
   return apply(powerOperation, a, b)
-}
-
-export function share(a: Expression): Expression {
-  return a.kind === 'constant' ? constant(Math.min(1, Math.max(0, a.value))) : apply(shareOperation, a)
-}
-
-export function part(a: Expression, b: Expression): Expression {
-  return apply(partOperation, a, b)
 }

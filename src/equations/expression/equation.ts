@@ -30,10 +30,7 @@ export function residual(equation: Equation): Expression {
 }
 
 /** Calls `visit` once for each variable of the equation. */
-export function forEachVariableOf(
-  equation: Equation,
-  visit: (index: number) => void,
-): void {
+export function forEachVariableOf(equation: Equation, visit: (index: number) => void): void {
   const seen = new Set<Expression>()
   const take = (variable: { readonly index: number }): void => visit(variable.index)
   forEachVariable(equation.left, take, seen)

@@ -65,6 +65,8 @@ export class TapeBuilder {
   private readonly operands: number[] = []
   private readonly slots: number[] = []
   private readonly memoryAt: number[] = []
+  /** By row: the row whose working memory it reads, or -1. */
+  private readonly sources: number[] = []
   private memorySize = 0
   private readonly slotOfExpression = new Map<Expression, number>()
   private readonly constants = new Map<number, number>()
@@ -112,6 +114,11 @@ export class TapeBuilder {
     return this.operands.slice(this.first[row]!, this.first[row + 1]!)
   }
 
+  /** The row whose working memory a row reads, or -1. */
+  sourceOf(row: number): number {
+    return this.sources[row]!
+  }
+
   firstOperand(row: number): number {
     return this.first[row]!
   }
@@ -140,11 +147,14 @@ export class TapeBuilder {
   private append(expression: Application, operandSlots: readonly number[]): number {
     const { operation } = expression
     const source = operation.reads
-    const memory = source === undefined ? -1 : this.memoryOfShared(source, operandSlots)
-    return this.appendRow(operation, operandSlots, memory)
+    return this.appendRow(
+      operation,
+      operandSlots,
+      source === undefined ? -1 : this.sharedRow(source, operandSlots),
+    )
   }
 
-  private memoryOfShared(operation: Operation, operandSlots: readonly number[]): number {
+  private sharedRow(operation: Operation, operandSlots: readonly number[]): number {
     const key = operandSlots[0]! * 0x4000000 + (operandSlots[1] ?? 0)
     let rows = this.shared.get(operation)
     if (rows === undefined) {
@@ -157,10 +167,10 @@ export class TapeBuilder {
       this.appendRow(operation, operandSlots, -1)
       rows.set(key, row)
     }
-    return this.memoryAt[row]!
+    return row
   }
 
-  private appendRow(operation: Operation, operandSlots: readonly number[], memory: number): number {
+  private appendRow(operation: Operation, operandSlots: readonly number[], source: number): number {
     const row = this.operations.length
     this.operations.push(operation)
     let highest = 0
@@ -171,7 +181,8 @@ export class TapeBuilder {
     this.first.push(this.operands.length)
     const slot = this.newSlot(0, row)
     this.slots.push(slot)
-    if (memory >= 0) this.memoryAt.push(memory)
+    this.sources.push(source)
+    if (source >= 0) this.memoryAt.push(this.memoryAt[source]!)
     else {
       this.memoryAt.push(this.memorySize)
       this.memorySize += operation.memory ?? 0

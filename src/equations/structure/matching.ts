@@ -65,7 +65,10 @@ export function maximumMatching(graph: Incidence): Matching {
     if (!reachable) break
     next.set(first.subarray(0, rows))
     for (let r = 0; r < rows; r++) {
-      if (columnOfRow[r]! < 0 && augment(graph, r, columnOfRow, rowOfColumn, distance, next, path)) {
+      if (
+        columnOfRow[r]! < 0 &&
+        augment(graph, r, columnOfRow, rowOfColumn, distance, next, path)
+      ) {
         size++
       }
     }

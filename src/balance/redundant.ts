@@ -1,0 +1,107 @@
+import { type Expression, forEachVariable } from '../equations/expression/index.ts'
+import type { System } from './system.ts'
+
+/** Sets that grow together. */
+class Partition {
+  private readonly parent: Int32Array
+
+  constructor(size: number) {
+    this.parent = Int32Array.from({ length: size }, (_, k) => k)
+  }
+
+  find(k: number): number {
+    let root = k
+    while (this.parent[root] !== root) root = this.parent[root]!
+    while (this.parent[k] !== root) {
+      const next = this.parent[k]!
+      this.parent[k] = root
+      k = next
+    }
+    return root
+  }
+
+  /** False when the two were together already. */
+  join(a: number, b: number): boolean {
+    const rootA = this.find(a)
+    const rootB = this.find(b)
+    if (rootA === rootB) return false
+    this.parent[Math.max(rootA, rootB)] = Math.min(rootA, rootB)
+    return true
+  }
+}
+
+/**
+ * Equations that follow from the others: one mass balance of every closed circuit, and pressure
+ * equalities that only repeat others round a loop. The closure proves that they hold.
+ */
+export function redundantEquations(system: System): ReadonlySet<number> {
+  const redundant = new Set<number>()
+  leaveOutMassBalances(system, redundant)
+  leaveOutPressureEqualities(system, redundant)
+  return redundant
+}
+
+function leaveOutMassBalances(system: System, redundant: Set<number>): void {
+  const { layout, equations, variables } = system
+  const placeOf = new Map(layout.streams.map((stream, k) => [stream.id, k]))
+  const circuits = new Partition(layout.streams.length)
+  /** By stream: how many of its two ends a mass balance closes. */
+  const closedEnds = new Int32Array(layout.streams.length)
+  const open = new Uint8Array(layout.streams.length)
+  const balances: { equation: number; streams: number[] }[] = []
+  equations.forEach(({ equation, owner }, e) => {
+    if (equation.role !== 'mass') return
+    const streams: number[] = []
+    let hasOpenPort = false
+    const placed = system.unitOf.get(owner)!
+    // The ports are asked, not the variables: a flow given as 0 or 1 is folded away.
+    const used = new Set<number>()
+    const take = (expression: Expression): void =>
+      forEachVariable(expression, ({ index }) => used.add(index))
+    take(equation.left)
+    take(equation.right)
+    for (const index of used) if (variables[index]!.isPhantom) hasOpenPort = true
+    for (const id of placed.streams.values()) {
+      const place = placeOf.get(id)!
+      const flow = system.streamBase[place]!
+      if (used.has(flow) || isFolded(system, flow)) streams.push(place)
+    }
+    for (const place of streams) {
+      closedEnds[place]!++
+      circuits.join(streams[0]!, place)
+      if (hasOpenPort) open[place] = 1
+    }
+    if (streams.length > 0) balances.push({ equation: e, streams })
+  })
+  const isOpen = new Map<number, boolean>()
+  for (let place = 0; place < layout.streams.length; place++) {
+    const root = circuits.find(place)
+    if (closedEnds[place]! < 2 || open[place]) isOpen.set(root, true)
+    else if (!isOpen.has(root)) isOpen.set(root, false)
+  }
+  // Of each closed circuit the balance with most streams goes: it is the least telling one.
+  const chosen = new Map<number, { equation: number; streams: number }>()
+  for (const { equation, streams } of balances) {
+    const root = circuits.find(streams[0]!)
+    if (isOpen.get(root) !== false) continue
+    const best = chosen.get(root)
+    if (best === undefined || streams.length > best.streams) {
+      chosen.set(root, { equation, streams: streams.length })
+    }
+  }
+  for (const { equation } of chosen.values()) redundant.add(equation)
+}
+
+function isFolded(system: System, index: number): boolean {
+  return system.given[index] === 0 || system.given[index] === 1
+}
+
+function leaveOutPressureEqualities(system: System, redundant: Set<number>): void {
+  const pressures = new Partition(system.variables.length)
+  system.equations.forEach(({ equation: { left, right } }, e) => {
+    if (left.kind !== 'variable' || right.kind !== 'variable') return
+    if (system.variables[left.index]!.description.dimension !== 'pressure') return
+    if (system.variables[right.index]!.description.dimension !== 'pressure') return
+    if (!pressures.join(left.index, right.index)) redundant.add(e)
+  })
+}

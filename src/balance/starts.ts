@@ -1,0 +1,261 @@
+import {
+  enthalpyAtPressureEntropy,
+  Outcome,
+  RESULT_SIZE,
+  SATURATION_SIZE,
+  Saturation,
+  STATE_SIZE,
+  State,
+  saturationAtPressure,
+  stateAtPressureEnthalpy,
+} from '../steam/index.ts'
+import type { Start } from '../units/kind.ts'
+import { ordinaryValue } from './ranges.ts'
+import type { PlacedUnit, System } from './system.ts'
+
+/** Superheated steam of which nothing is known, J/kg. */
+const superheatedEnthalpy = 3.4e6
+/** Group efficiency while none is known. */
+const expansionEfficiency = 0.85
+
+/**
+ * First values for unknowns that an iteration must start from: pressures spread from where they are
+ * known along the units that keep them, enthalpies follow from what kinds declare of their outlets,
+ * flows are of the size of the largest known one.
+ */
+export class Starts {
+  private readonly system: System
+  private readonly values: Float64Array
+  private readonly known: (index: number) => boolean
+  private readonly place = new Map<string, number>()
+  private readonly saturation = new Float64Array(SATURATION_SIZE)
+  private readonly state = new Float64Array(STATE_SIZE)
+  private readonly result = new Float64Array(RESULT_SIZE + 8)
+
+  /** `known` tells which values are given or solved already; the others are overwritten. */
+  constructor(system: System, values: Float64Array, known: (index: number) => boolean) {
+    this.system = system
+    this.values = values
+    this.known = known
+    system.layout.streams.forEach((stream, k) => {
+      this.place.set(stream.id, system.streamBase[k]!)
+    })
+  }
+
+  fill(): void {
+    const { system, values } = this
+    for (let v = 0; v < system.variables.length; v++) {
+      if (!this.known(v)) values[v] = ordinaryValue(system.variables[v]!)
+    }
+    this.fillPressures()
+    this.fillEnthalpies()
+    this.fillFlows()
+    this.fillQuantities()
+  }
+
+  /** First variable of the stream at a port, or undefined. */
+  private streamAt(placed: PlacedUnit, port: string): number | undefined {
+    const id = placed.streams.get(port)
+    return id === undefined ? undefined : this.place.get(id)
+  }
+
+  private portsOf(
+    placed: PlacedUnit,
+  ): { name: string; base: number; description: PlacedUnit['kind']['ports'][string] }[] {
+    const ports = []
+    for (const [name, id] of placed.streams) {
+      const description = placed.kind.ports[name] ?? placed.kind.ports[name.replace(/\d+$/, '')]
+      const base = this.place.get(id)
+      if (description && base !== undefined) ports.push({ name, base, description })
+    }
+    return ports
+  }
+
+  private fillPressures(): void {
+    const { system, values } = this
+    const done = new Uint8Array(system.variables.length)
+    const isDone = (index: number): boolean => done[index] === 1 || this.known(index)
+    const put = (index: number, p: number): void => {
+      values[index] = Math.min(90e6, Math.max(700, p))
+      done[index] = 1
+    }
+    const spread = (crossing: boolean): boolean => {
+      let changed = false
+      for (const placed of system.units) {
+        const ports = this.portsOf(placed)
+        const isBarrier = placed.kind.raisesPressure === true || placed.kind.shaft === 'driving'
+        if (isBarrier !== crossing) continue
+        const own = system.indexOf.get(`${placed.unit.id}.pressure`)
+        if (crossing) {
+          changed = this.cross(placed, isDone, put) || changed
+          continue
+        }
+        let source = own !== undefined && isDone(own) ? values[own]! : undefined
+        // Ports of a heat exchanging unit are grouped by what passes into what.
+        const groups = this.pressureGroups(placed, ports)
+        for (const group of groups) {
+          const shares = group.filter((port) => port.description.pressure !== 'throttles')
+          const from = shares.find((port) => isDone(port.base + 1))
+          const isShell = shares.some((port) => port.description.pressure === 'equal')
+          const p = isShell && source !== undefined ? source : from && values[from.base + 1]!
+          if (p === undefined) continue
+          if (isShell && own !== undefined && !isDone(own)) {
+            put(own, p)
+            source = p
+            changed = true
+          }
+          for (const port of shares) {
+            if (isDone(port.base + 1)) continue
+            put(port.base + 1, p)
+            changed = true
+          }
+          for (const port of group) {
+            if (port.description.pressure !== 'throttles' || isDone(port.base + 1)) continue
+            // What is throttled on entry arrives somewhat above.
+            if (this.comesFromPump(port.name, placed)) continue
+            put(port.base + 1, 1.2 * p)
+            changed = true
+          }
+        }
+      }
+      return changed
+    }
+    for (let pass = 0; pass < 4 * system.units.length + 4; pass++) {
+      if (!spread(false) && !spread(true)) break
+    }
+  }
+
+  private comesFromPump(_port: string, _placed: PlacedUnit): boolean {
+    return false
+  }
+
+  private pressureGroups<T extends { name: string }>(placed: PlacedUnit, ports: T[]): T[][] {
+    const passes = placed.kind.passes
+    if (passes === undefined || passes.length < 2) return [ports]
+    return passes.map((pair) =>
+      ports.filter((port) => pair.includes(port.name.replace(/\d+$/, ''))),
+    )
+  }
+
+  /** Pressures on the far side of a turbine or pump, when one side is known. */
+  private cross(
+    placed: PlacedUnit,
+    isDone: (index: number) => boolean,
+    put: (index: number, p: number) => void,
+  ): boolean {
+    const { values } = this
+    const inlets = this.portsOf(placed).filter((port) => port.description.direction === 'in')
+    const outlets = this.portsOf(placed).filter((port) => port.description.direction === 'out')
+    const inlet = inlets[0]
+    if (inlet === undefined || outlets.length === 0) return false
+    const inletKnown = isDone(inlet.base + 1)
+    const rises = placed.kind.raisesPressure === true
+    const knownOutlets = outlets.filter((port) => isDone(port.base + 1))
+    if (inletKnown && knownOutlets.length === outlets.length) return false
+    if (!inletKnown && knownOutlets.length === 0) return false
+    const first = inletKnown
+      ? values[inlet.base + 1]!
+      : rises
+        ? 1e5
+        : 4 * Math.max(...knownOutlets.map((port) => values[port.base + 1]!))
+    if (!inletKnown) put(inlet.base + 1, first)
+    // Evenly by logarithm between what is known along the expansion.
+    let previous = first
+    outlets.forEach((port, k) => {
+      if (isDone(port.base + 1)) {
+        previous = values[port.base + 1]!
+        return
+      }
+      const nextKnown = outlets.slice(k + 1).find((other) => isDone(other.base + 1))
+      const steps = nextKnown ? outlets.indexOf(nextKnown) - k + 1 : 1
+      const p = rises
+        ? 10 * first
+        : nextKnown
+          ? previous * (values[nextKnown.base + 1]! / previous) ** (1 / steps)
+          : previous / 3
+      put(port.base + 1, p)
+      previous = p
+    })
+    return true
+  }
+
+  private fillEnthalpies(): void {
+    const { system, values } = this
+    const done = new Uint8Array(system.variables.length)
+    for (let pass = 0; pass < 3; pass++) {
+      for (const placed of system.units) {
+        for (const { name, base, description } of this.portsOf(placed)) {
+          if (description.direction !== 'out' || this.known(base + 2)) continue
+          const bare = name.replace(/\d+$/, '')
+          const start = placed.kind.starts[name] ?? placed.kind.starts[bare]
+          values[base + 2] = this.enthalpyAt(placed, base, start, done)
+          done[base + 2] = 1
+        }
+      }
+    }
+  }
+
+  private enthalpyAt(
+    placed: PlacedUnit,
+    base: number,
+    start: Start | undefined,
+    done: Uint8Array,
+  ): number {
+    const p = this.values[base + 1]!
+    if (typeof start === 'object') {
+      const source = this.streamAt(placed, start.as) ?? this.streamAt(placed, `${start.as}1`)
+      if (source === undefined) return this.saturated(p, Saturation.hL)
+      return this.known(source + 2) || done[source + 2]
+        ? this.values[source + 2]!
+        : this.saturated(p, Saturation.hL)
+    }
+    if (start === 'dry') return this.saturated(p, Saturation.hV)
+    if (start === 'superheated') return superheatedEnthalpy
+    if (start === 'expanded') return this.expanded(placed, p)
+    return this.saturated(p, Saturation.hL)
+  }
+
+  private saturated(p: number, slot: number): number {
+    const outcome = saturationAtPressure(this.saturation, 0, Math.min(21e6, Math.max(700, p)))
+    return outcome === Outcome.fine ? this.saturation[slot]! : slot === Saturation.hL ? 5e5 : 2.7e6
+  }
+
+  private expanded(placed: PlacedUnit, p: number): number {
+    const inlet = this.portsOf(placed).find((port) => port.description.direction === 'in')
+    if (inlet === undefined) return 2.8e6
+    const p1 = this.values[inlet.base + 1]!
+    const h1 = this.known(inlet.base + 2) ? this.values[inlet.base + 2]! : superheatedEnthalpy
+    if (stateAtPressureEnthalpy(this.state, 0, p1, h1) !== Outcome.fine) return 2.8e6
+    const outcome = enthalpyAtPressureEntropy(this.result, 0, p, this.state[State.s]!)
+    if (outcome !== Outcome.fine) return 2.8e6
+    return h1 - expansionEfficiency * (h1 - this.result[0]!)
+  }
+
+  private fillFlows(): void {
+    const { system, values } = this
+    let largest = 0
+    for (const base of system.streamBase) {
+      if (this.known(base) && Math.abs(values[base]!) > largest) largest = Math.abs(values[base]!)
+    }
+    if (largest === 0) largest = 100
+    for (const placed of system.units) {
+      for (const { name, base } of this.portsOf(placed)) {
+        if (this.known(base)) continue
+        const number = /\d+$/.test(name)
+        values[base] = number && placed.kind.shaft === 'driving' ? 0.06 * largest : largest
+      }
+    }
+  }
+
+  /** Pressures and volumes that a unit's own quantities repeat. */
+  private fillQuantities(): void {
+    const { system, values } = this
+    for (let v = 0; v < system.variables.length; v++) {
+      if (this.known(v) || system.variables[v]!.isState) continue
+      const { description } = system.variables[v]!
+      if (description.dimension === 'power' || description.dimension === 'heatFlow') {
+        values[v] = 1e7
+      }
+    }
+  }
+}

@@ -1,0 +1,227 @@
+import { Outcome, type Tape } from '../expression/index.ts'
+import type { GradientProgram } from './gradient.ts'
+import { Factors, SparseLU } from './sparse-lu.ts'
+import { type Bounds, type Step, StepOutcome, stepOutcome } from './step.ts'
+
+/** Newton iterations before giving up. */
+const mostIterations = 60
+/** Step length below which the line search gives up. */
+const shortest = 1 / 4096
+/** Steps below this, relative to the variables' sizes, are close enough to polish. */
+const close = 1e-7
+/** Steps below this are round-off. */
+const roundOff = 1e-14
+/** Residuals, relative to their rows, that still count as agreeing when the block is singular. */
+const agreement = 1e-9
+
+/**
+ * Equations that must be solved together: Newton's method with scaled sparse factors, a line search
+ * that backs off from the range of the steam properties, and polishing to round-off, so that warm
+ * and cold starts give the same digits. A linear block takes one step and its polish.
+ */
+export class BlockStep implements Step {
+  readonly needsGuess: boolean
+  iterations = 0
+  worst = 0
+  readonly variables: readonly number[]
+  readonly gradient: GradientProgram
+  private readonly n: number
+  private readonly prelude: Int32Array
+  private readonly rows: Int32Array
+  private readonly seeds: Int32Array
+  private readonly variableSlots: Int32Array
+  private readonly bounds: Bounds
+  private readonly linear: boolean
+  readonly factors: SparseLU
+  private readonly columnOf: Int32Array
+  private readonly entries: Float64Array
+  private readonly scaled: Float64Array
+  private readonly size: Float64Array
+  private readonly rowScale: Float64Array
+  private readonly residual: Float64Array
+  private readonly step: Float64Array
+  private readonly start: Float64Array
+
+  constructor(
+    prelude: Int32Array,
+    rows: Int32Array,
+    seeds: readonly number[],
+    variables: readonly number[],
+    gradient: GradientProgram,
+    bounds: Bounds,
+    linear: boolean,
+  ) {
+    const n = variables.length
+    this.n = n
+    this.prelude = prelude
+    this.rows = rows
+    this.seeds = Int32Array.from(seeds)
+    this.variables = variables
+    this.variableSlots = Int32Array.from(variables)
+    this.gradient = gradient
+    this.bounds = bounds
+    this.linear = linear
+    this.needsGuess = !linear
+    const place = new Map(variables.map((index, k) => [index, k]))
+    this.columnOf = gradient.entryVariable.map((index) => place.get(index)!)
+    this.factors = new SparseLU(n, gradient.entryFirst, this.columnOf)
+    this.entries = new Float64Array(this.columnOf.length)
+    this.scaled = new Float64Array(this.columnOf.length)
+    this.size = new Float64Array(n)
+    this.rowScale = new Float64Array(n)
+    this.residual = new Float64Array(n)
+    this.step = new Float64Array(n)
+    this.start = new Float64Array(n)
+  }
+
+  run(tape: Tape): number {
+    this.iterations = 0
+    const before = tape.evaluate(this.prelude)
+    if (before !== Outcome.fine) return stepOutcome(before)
+    this.clamp(tape)
+    let outcome = tape.evaluate(this.rows)
+    if (outcome !== Outcome.fine) return stepOutcome(outcome)
+    let previous = Number.POSITIVE_INFINITY
+    let polishing = false
+    while (this.iterations < mostIterations) {
+      this.iterations++
+      if (!this.linearise(tape)) return this.singularOutcome()
+      this.factors.solve(this.residual, this.step)
+      const length = this.unscaleStep()
+      if (!Number.isFinite(length)) return StepOutcome.notConverged
+      if (polishing && (length >= previous || length <= roundOff)) return StepOutcome.solved
+      if (length <= close) polishing = true
+      previous = length
+      outcome = polishing || this.linear ? this.fullStep(tape) : this.search(tape)
+      if (outcome !== StepOutcome.solved) return outcome
+      if (this.linear) polishing = true
+    }
+    return StepOutcome.notConverged
+  }
+
+  /** Recomputes the scaled factors at the present values; false when they are singular. */
+  linearise(tape: Tape): boolean {
+    const { n, entries, scaled, columnOf, gradient, size, rowScale, residual } = this
+    gradient.evaluate(tape, entries)
+    for (let j = 0; j < n; j++) {
+      const index = this.variableSlots[j]!
+      size[j] = Math.max(Math.abs(tape.values[index]!), this.bounds.scale[index]! * 1e-2)
+    }
+    for (let i = 0; i < n; i++) {
+      let largest = 0
+      for (let e = gradient.entryFirst[i]!; e < gradient.entryFirst[i + 1]!; e++) {
+        scaled[e] = entries[e]! * size[columnOf[e]!]!
+        const entry = Math.abs(scaled[e]!)
+        if (entry > largest) largest = entry
+      }
+      const scale = largest > 0 ? 1 / largest : 0
+      rowScale[i] = scale
+      for (let e = gradient.entryFirst[i]!; e < gradient.entryFirst[i + 1]!; e++) {
+        scaled[e]! *= scale
+      }
+      residual[i] = tape.values[this.seeds[i]!]! * scale
+    }
+    return this.factors.factorise(scaled) === Factors.fine
+  }
+
+  private singularOutcome(): number {
+    const row = Math.max(0, this.factors.singularRow)
+    this.worst = row
+    let largest = 0
+    for (let i = 0; i < this.n; i++) largest = Math.max(largest, Math.abs(this.residual[i]!))
+    return largest <= agreement ? StepOutcome.singular : StepOutcome.contradictory
+  }
+
+  /** Turns the scaled solution into a change of the variables; returns its largest scaled part. */
+  private unscaleStep(): number {
+    let length = 0
+    for (let j = 0; j < this.n; j++) {
+      const part = Math.abs(this.step[j]!)
+      if (!(part <= length)) length = part
+      this.step[j] = -this.step[j]! * this.size[j]!
+    }
+    return length
+  }
+
+  private clamp(tape: Tape): void {
+    const { lower, upper } = this.bounds
+    for (let j = 0; j < this.n; j++) {
+      const index = this.variableSlots[j]!
+      const value = tape.values[index]!
+      tape.values[index] = Math.min(upper[index]!, Math.max(lower[index]!, value))
+    }
+  }
+
+  private move(tape: Tape, share: number): void {
+    const { lower, upper } = this.bounds
+    for (let j = 0; j < this.n; j++) {
+      const index = this.variableSlots[j]!
+      const from = this.start[j]!
+      let to = from + share * this.step[j]!
+      // Going half the way to a bound instead of past it keeps every value inside.
+      if (to < lower[index]!) to = from - (from - lower[index]!) / 2
+      else if (to > upper[index]!) to = from + (upper[index]! - from) / 2
+      tape.values[index] = to
+    }
+  }
+
+  private remember(tape: Tape): void {
+    for (let j = 0; j < this.n; j++) this.start[j] = tape.values[this.variableSlots[j]!]!
+  }
+
+  private fullStep(tape: Tape): number {
+    this.remember(tape)
+    this.move(tape, 1)
+    const outcome = tape.evaluate(this.rows)
+    if (outcome === Outcome.fine) return StepOutcome.solved
+    this.move(tape, 0)
+    tape.evaluate(this.rows)
+    return this.search(tape)
+  }
+
+  private merit(tape: Tape): number {
+    let sum = 0
+    for (let i = 0; i < this.n; i++) {
+      const part = tape.values[this.seeds[i]!]! * this.rowScale[i]!
+      sum += part * part
+    }
+    return Math.sqrt(sum)
+  }
+
+  /** Shortens the step until the equations are met better than before. */
+  private search(tape: Tape): number {
+    this.remember(tape)
+    const before = this.merit(tape)
+    let best = -1
+    let bestMerit = Number.POSITIVE_INFINITY
+    let outcome: number = Outcome.fine
+    for (let share = 1; share >= shortest; share /= 2) {
+      this.move(tape, share)
+      outcome = tape.evaluate(this.rows)
+      if (outcome !== Outcome.fine) continue
+      const merit = this.merit(tape)
+      if (merit <= (1 - 1e-4 * share) * before || merit < 1e-13) return StepOutcome.solved
+      if (merit < bestMerit) {
+        bestMerit = merit
+        best = share
+      }
+    }
+    if (best < 0) return stepOutcome(outcome)
+    // Nothing is better: take the least bad step, now and then that leads out of a corner.
+    this.move(tape, best)
+    tape.evaluate(this.rows)
+    this.rememberWorst(tape)
+    return bestMerit > 2 * before ? StepOutcome.notConverged : StepOutcome.solved
+  }
+
+  private rememberWorst(tape: Tape): void {
+    let largest = -1
+    for (let i = 0; i < this.n; i++) {
+      const part = Math.abs(tape.values[this.seeds[i]!]! * this.rowScale[i]!)
+      if (part > largest) {
+        largest = part
+        this.worst = i
+      }
+    }
+  }
+}

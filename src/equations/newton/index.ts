@@ -1,0 +1,2 @@
+export { type Block, Program } from './program.ts'
+export { type Bounds, StepOutcome } from './step.ts'

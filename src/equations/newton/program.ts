@@ -1,0 +1,188 @@
+import {
+  type Equation,
+  forEachVariableOf,
+  residual,
+  solveFor,
+  type Tape,
+  TapeBuilder,
+} from '../expression/index.ts'
+import { BlockStep } from './block.ts'
+import { GradientProgram } from './gradient.ts'
+import { ScalarStep } from './scalar.ts'
+import { type Bounds, ExplicitStep, type Step, StepOutcome } from './step.ts'
+
+/** Equations solved together for as many variables; equation k is matched to variable k. */
+export interface Block {
+  readonly equations: readonly number[]
+  readonly variables: readonly number[]
+}
+
+/**
+ * A structure ready to be solved: blocks in order, lowered into one tape. Explicit equations are
+ * assigned, the others iterated block by block.
+ */
+export class Program {
+  readonly tape: Tape
+  readonly steps: readonly Step[]
+  readonly blocks: readonly Block[]
+  /** By step: how it ended last time. */
+  readonly outcomes: Uint8Array
+  /** By variable: it could not be computed (1), or would have to be unbounded (2). */
+  readonly lost: Uint8Array
+  /** By variable: it changed since the step that needs it last ran. */
+  private readonly changed: Uint8Array
+  private readonly inputs: readonly Int32Array[]
+  private fresh = true
+
+  constructor(
+    equations: readonly Equation[],
+    blocks: readonly Block[],
+    variableCount: number,
+    bounds: Bounds,
+  ) {
+    const builder = new TapeBuilder(variableCount)
+    const drafts = blocks.map((block) => draftStep(builder, equations, block))
+    this.tape = builder.finish()
+    const adjoint = new Float64Array(this.tape.values.length)
+    this.steps = drafts.map((draft) => draft(builder, adjoint, bounds))
+    this.blocks = blocks
+    this.outcomes = new Uint8Array(blocks.length)
+    this.lost = new Uint8Array(variableCount)
+    this.changed = new Uint8Array(variableCount)
+    this.inputs = blocks.map((block) => inputsOf(equations, block))
+  }
+
+  /** Says that a variable the program does not solve for (a given) has a new value. */
+  set(index: number, value: number): void {
+    if (this.tape.values[index] === value) return
+    this.tape.values[index] = value
+    this.changed[index] = 1
+  }
+
+  /** Marks a variable that no block solves for as not known. */
+  lose(index: number): void {
+    this.lost[index] = 1
+  }
+
+  /**
+   * Solves every block that an edit touched, in order, from the values at hand. A block that has
+   * no answer loses its variables; what does not need them is solved all the same.
+   * Returns the number of Newton iterations of the hardest block. `guess` is called once before
+   * the first block that iterates, with a test of which variables are known by then.
+   */
+  solve(guess?: (known: (index: number) => boolean) => void): number {
+    let iterations = 0
+    let guessed = guess === undefined
+    for (let k = 0; k < this.steps.length; k++) {
+      if (!this.fresh && !this.isTouched(k) && this.outcomes[k] === StepOutcome.solved) continue
+      if (!guessed && this.steps[k]!.needsGuess) {
+        guessed = true
+        guess!(this.knownBefore(k))
+      }
+      const used = this.run(k)
+      if (used > iterations) iterations = used
+    }
+    this.changed.fill(0)
+    this.fresh = false
+    return iterations
+  }
+
+  private knownBefore(step: number): (index: number) => boolean {
+    const unknown = new Set<number>()
+    for (let k = step; k < this.blocks.length; k++) {
+      for (const index of this.blocks[k]!.variables) unknown.add(index)
+    }
+    return (index) => !unknown.has(index) && this.lost[index] === 0
+  }
+
+  /** Solves everything again at the next call, whatever has changed. */
+  forget(): void {
+    this.fresh = true
+  }
+
+  private isTouched(k: number): boolean {
+    const inputs = this.inputs[k]!
+    for (let i = 0; i < inputs.length; i++) if (this.changed[inputs[i]!]) return true
+    return false
+  }
+
+  private run(k: number): number {
+    const step = this.steps[k]!
+    const { variables } = this.blocks[k]!
+    const inputs = this.inputs[k]!
+    let missing = false
+    for (let i = 0; i < inputs.length; i++) if (this.lost[inputs[i]!]) missing = true
+    const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape)
+    this.outcomes[k] = outcome
+    const state = outcome === StepOutcome.solved ? 0 : outcome === StepOutcome.unbounded ? 2 : 1
+    for (const index of variables) {
+      this.changed[index] = 1
+      this.lost[index] = state
+    }
+    return step.iterations
+  }
+}
+
+type StepDraft = (builder: TapeBuilder, adjoint: Float64Array, bounds: Bounds) => Step
+
+function draftStep(builder: TapeBuilder, equations: readonly Equation[], block: Block): StepDraft {
+  if (block.equations.length === 1) {
+    const target = block.variables[0]!
+    const explicit = solveFor(equations[block.equations[0]!]!, target)
+    if (explicit !== undefined) {
+      const slot = builder.lower(explicit)
+      const rows = rowsBehind(builder, [slot])
+      return () => new ExplicitStep(rows, slot, target)
+    }
+  }
+  const from = builder.rowCount
+  builder.activate(block.variables)
+  const seeds = block.equations.map((e) => builder.lower(residual(equations[e]!)))
+  const degrees = new Map<number, number>()
+  let linear = true
+  for (const seed of seeds) if (builder.degreeOf(seed) > 1) linear = false
+  const all = rowsBehind(builder, seeds)
+  const prelude = all.filter((row) => builder.degreeOf(builder.slotOfRow(row)) === 0)
+  const iterated = all.filter((row) => builder.degreeOf(builder.slotOfRow(row)) > 0)
+  for (const row of iterated) degrees.set(builder.slotOfRow(row), 1)
+  const active = new Set(block.variables)
+  builder.deactivate(block.variables, from)
+  return (finished, adjoint, bounds) => {
+    const gradient = new GradientProgram(
+      finished,
+      seeds,
+      (slot) => degrees.has(slot) || active.has(slot),
+      adjoint,
+    )
+    return block.variables.length === 1
+      ? new ScalarStep(prelude, iterated, seeds[0]!, block.variables[0]!, gradient, bounds, linear)
+      : new BlockStep(prelude, iterated, seeds, block.variables, gradient, bounds, linear)
+  }
+}
+
+/** Every row that the slots need, in order. */
+function rowsBehind(builder: TapeBuilder, slots: readonly number[]): Int32Array {
+  const rows = new Set<number>()
+  const stack = [...slots]
+  while (stack.length > 0) {
+    const row = builder.rowOf(stack.pop()!)
+    if (row < 0 || rows.has(row)) continue
+    rows.add(row)
+    for (const operand of builder.operandsOf(row)) stack.push(operand)
+    const source = builder.sourceOf(row)
+    if (source >= 0) rows.add(source)
+  }
+  return Int32Array.from(rows).sort()
+}
+
+/** Variables that the block's equations need and that it does not solve for. */
+function inputsOf(equations: readonly Equation[], block: Block): Int32Array {
+  const own = new Set(block.variables)
+  const inputs = new Set<number>()
+  for (const e of block.equations) {
+    forEachVariableOf(equations[e]!, (index) => {
+      if (!own.has(index)) inputs.add(index)
+    })
+  }
+  return Int32Array.from(inputs)
+}

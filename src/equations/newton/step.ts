@@ -1,0 +1,81 @@
+import { Outcome, type Tape } from '../expression/index.ts'
+
+/** How a block ended. Integers; 0 is solved. */
+export const StepOutcome = {
+  solved: 0,
+  /** Something it needs is itself not known. */
+  inputMissing: 1,
+  /** The answer has no bound (a conductance without a temperature difference). */
+  unbounded: 2,
+  /** Pressure and temperature are those of saturation and leave the state open. */
+  onSaturation: 3,
+  /** A steam property would lie outside the formulation. */
+  outsideRange: 4,
+  /** An operation has no value there (a root of a negative number). */
+  outsideDomain: 5,
+  /** The equations do not determine the variables in numbers, and agree. */
+  singular: 6,
+  /** The equations do not determine the variables in numbers, and contradict each other. */
+  contradictory: 7,
+  /** No value within the physical range satisfies the equation. */
+  noAnswer: 8,
+  /** The iteration ended without an answer. */
+  notConverged: 9,
+} as const
+
+/** What an operation's outcome means for the block that needed it. */
+export function stepOutcome(outcome: number): number {
+  switch (outcome) {
+    case Outcome.fine:
+      return StepOutcome.solved
+    case Outcome.unbounded:
+      return StepOutcome.unbounded
+    case Outcome.onSaturation:
+      return StepOutcome.onSaturation
+    case Outcome.outsideRange:
+      return StepOutcome.outsideRange
+    default:
+      return StepOutcome.outsideDomain
+  }
+}
+
+/** By variable, SI: the physical range and a size that makes changes comparable. */
+export interface Bounds {
+  readonly lower: Float64Array
+  readonly upper: Float64Array
+  readonly scale: Float64Array
+}
+
+export interface Step {
+  /** Solves the block from the values at hand; returns a `StepOutcome`. */
+  run(tape: Tape): number
+  /** The answer may depend on where it starts. */
+  readonly needsGuess: boolean
+  /** Newton iterations of the last run. */
+  readonly iterations: number
+  /** Which of the block's equations (its place in the block) missed most when there was no answer. */
+  readonly worst: number
+}
+
+/** A variable that its equation gives outright. */
+export class ExplicitStep implements Step {
+  readonly needsGuess = false
+  readonly iterations = 0
+  readonly worst = 0
+  private readonly rows: Int32Array
+  private readonly slot: number
+  private readonly variable: number
+
+  constructor(rows: Int32Array, slot: number, variable: number) {
+    this.rows = rows
+    this.slot = slot
+    this.variable = variable
+  }
+
+  run(tape: Tape): number {
+    const outcome = tape.evaluate(this.rows)
+    if (outcome !== Outcome.fine) return stepOutcome(outcome)
+    tape.values[this.variable] = tape.values[this.slot]!
+    return StepOutcome.solved
+  }
+}

@@ -1,0 +1,54 @@
+import { divide, equal, massBalance, minus, plus } from '../equations/expression/index.ts'
+import {
+  efficiencyOfFiring,
+  energy,
+  fuelHeat,
+  heat,
+  lossConstant,
+  lossLaw,
+  pressureLoss,
+  pressureLossFraction,
+} from './common.ts'
+import { defineUnitKind } from './kind.ts'
+
+export const reheater = defineUnitKind({
+  name: 'reheater',
+  label: 'Reheater',
+  idStem: 'reheater',
+  group: 'Heat',
+  help: 'Heats steam between two turbine sections by burning fuel.',
+  ports: {
+    inlet: { direction: 'in', carries: 'steam', pressure: 'own', label: 'Inlet' },
+    spray: {
+      direction: 'in',
+      optional: true,
+      carries: 'water',
+      pressure: 'throttles',
+      label: 'Spray',
+    },
+    outlet: { direction: 'out', carries: 'steam', pressure: 'own', label: 'Outlet' },
+  },
+  quantities: {
+    pressureLossFraction: pressureLossFraction(0.08, [0.07, 0.1]),
+    lossConstant,
+    heat: heat('Heat to the steam', 'Heat that the reheated steam takes up.'),
+    efficiency: efficiencyOfFiring,
+    fuelHeat,
+  },
+  chief: 'heat',
+  equations: ({ ports: { inlet, spray, outlet }, quantities: q }) => ({
+    massBalance: massBalance(outlet.m, spray ? plus(inlet.m, spray.m) : inlet.m),
+    pressureLoss: pressureLoss(inlet, outlet, q.pressureLossFraction),
+    lossLaw: lossLaw(inlet, outlet, q.lossConstant),
+    energyBalance: equal(
+      q.heat,
+      minus(energy(outlet), spray ? plus(energy(inlet), energy(spray)) : energy(inlet)),
+    ),
+    fuel: equal(q.fuelHeat, divide(q.heat, q.efficiency)),
+  }),
+  totals: ({ quantities: q }) => ({ heatInput: q.heat, fuelHeat: q.fuelHeat }),
+  secondLaw: 'fired',
+  paths: () => [{ from: 'inlet', to: 'outlet', course: 'line' }],
+  passes: [['inlet', 'outlet']],
+  starts: { outlet: 'superheated' },
+})

@@ -1,0 +1,174 @@
+import {
+  constant,
+  divide,
+  type Equation,
+  type Expression,
+  equal,
+  massBalance,
+  minus,
+  plus,
+  signedSquare,
+  square,
+  times,
+} from '../equations/expression/index.ts'
+import { enthalpyAtEntropy, entropy, moisture, volume, wetPart } from '../steam/operations.ts'
+import { commonPractice, energy, one } from './common.ts'
+import { defineUnitKind } from './kind.ts'
+
+const perGroup = { port: 'bleed', extra: 1 } as const
+
+/** Efficiency factor of a group on its wet part (K. Baumann, J. IEE 59, 1921): see the contract. */
+function wetFactor(
+  factor: Expression,
+  start: { readonly p: Expression; readonly h: Expression },
+  end: { readonly p: Expression; readonly h: Expression },
+  s: Expression,
+  isentropicEnd: Expression,
+): Expression {
+  const yStart = moisture(start.p, start.h)
+  const yEnd = moisture(end.p, end.h)
+  const mean = divide(plus(yStart, yEnd), constant(2))
+  const wet = wetPart(start.p, start.h, s, isentropicEnd)
+  return minus(one, times(factor, times(wet, mean)))
+}
+
+export const turbine = defineUnitKind({
+  name: 'turbine',
+  label: 'Turbine',
+  idStem: 'turbine',
+  group: 'Machines',
+  help: 'Expands steam in stage groups; between them steam is bled to the heaters.',
+  ports: {
+    inlet: { direction: 'in', carries: 'steam', pressure: 'own', label: 'Inlet' },
+    bleed: {
+      direction: 'out',
+      repeated: true,
+      optional: true,
+      carries: 'steam',
+      pressure: 'own',
+      label: 'Bleed',
+    },
+    exhaust: { direction: 'out', carries: 'steam', pressure: 'own', label: 'Exhaust' },
+  },
+  quantities: {
+    groupEfficiency: {
+      label: 'Group efficiency',
+      symbol: 'η',
+      dimension: 'ratio',
+      help: 'Dry isentropic efficiency of the stage group from its own inlet state.',
+      usual: 0.87,
+      given: true,
+      range: [0.75, 0.93],
+      basis: commonPractice,
+      possible: { above: 0, most: 1 },
+      step: 0.01,
+      each: perGroup,
+    },
+    flowConstant: {
+      label: 'Flow constant',
+      symbol: 'K',
+      dimension: 'flowConstant',
+      help: "Stodola's ellipse: flow over the root of p/v and of 1 − (p_out/p_in)²; the group's swallowing capacity.",
+      each: perGroup,
+    },
+    wetnessFactor: {
+      label: 'Wetness factor',
+      symbol: 'a',
+      dimension: 'number',
+      help: 'Loss of efficiency for each unit of mean moisture on the wet part of the expansion (Baumann).',
+      usual: 1,
+      given: true,
+      range: [0.4, 2],
+      basis: 'K. Baumann, J. IEE 59 (1921); spread from practice',
+      possible: { least: 0 },
+      step: 0.1,
+    },
+    exhaustLoss: {
+      label: 'Exhaust loss',
+      symbol: 'ΔhEL',
+      dimension: 'specificEnthalpy',
+      help: 'Leaving and hood losses: what the exhaust keeps above the end of the expansion line.',
+      usual: 0,
+      given: true,
+      range: [0, 60e3],
+      basis: commonPractice,
+      possible: { least: 0 },
+      step: 1e3,
+    },
+    exhaustVolumeFlow: {
+      label: 'Exhaust volume flow',
+      symbol: 'V',
+      dimension: 'volumeFlow',
+      help: 'Volume flow at the end of the expansion line, before the exhaust loss.',
+    },
+    exhaustArea: {
+      label: 'Exhaust area',
+      symbol: 'A',
+      dimension: 'area',
+      help: 'Annulus area of the last stage, all exhaust ends together.',
+      possible: { above: 0 },
+      step: 0.1,
+    },
+    exhaustVelocity: {
+      label: 'Exhaust velocity',
+      symbol: 'c',
+      dimension: 'velocity',
+      help: 'Axial velocity through the annulus.',
+      range: [120, 300],
+      basis: commonPractice,
+      step: 10,
+    },
+    power: {
+      label: 'Power',
+      symbol: 'P',
+      dimension: 'power',
+      help: 'Power of the steam on the shaft, before mechanical losses.',
+      step: 1e6,
+    },
+  },
+  chief: 'power',
+  shaft: 'driving',
+  equations: ({ ports: { inlet, bleed, exhaust }, quantities: q }) => {
+    const equations: Record<string, Equation> = {}
+    const last = bleed.length
+    const outlets = [...bleed, exhaust]
+    equations.massBalance = massBalance(inlet.m, plus(...outlets.map((outlet) => outlet.m)))
+    // The state where the expansion ends, before the exhaust loss is added.
+    const endEnthalpy = minus(exhaust.h, q.exhaustLoss)
+    let start: { readonly p: Expression; readonly h: Expression } = inlet
+    for (let i = 0; i <= last; i++) {
+      const outlet = outlets[i]!
+      const end = { p: outlet.p, h: i === last ? endEnthalpy : outlet.h }
+      const s = entropy(start.p, start.h)
+      const isentropicEnd = enthalpyAtEntropy(end.p, s)
+      const drop = minus(start.h, isentropicEnd)
+      const wet = wetFactor(q.wetnessFactor, start, end, s, isentropicEnd)
+      const efficiency = times(q.groupEfficiency[i]!, wet)
+      equations[`expansion${i + 1}`] = equal(end.h, minus(start.h, times(efficiency, drop)))
+      const through = plus(...outlets.slice(i).map((stream) => stream.m))
+      equations[`flowLaw${i + 1}`] = equal(
+        times(signedSquare(through), times(start.p, volume(start.p, start.h))),
+        times(square(q.flowConstant[i]!), minus(square(start.p), square(end.p))),
+      )
+      start = end
+    }
+    equations.exhaustVolume = equal(
+      q.exhaustVolumeFlow,
+      times(exhaust.m, volume(exhaust.p, endEnthalpy)),
+    )
+    equations.exhaustVelocity = equal(q.exhaustVelocity, divide(q.exhaustVolumeFlow, q.exhaustArea))
+    equations.energyBalance = equal(
+      q.power,
+      minus(energy(inlet), plus(...outlets.map((outlet) => energy(outlet)))),
+    )
+    return equations
+  },
+  totals: ({ quantities: q }) => ({ turbinePower: q.power }),
+  secondLaw: 'adiabatic',
+  paths: (shape) => {
+    const bleeds = shape.streams.bleed ?? 0
+    const ends = ['inlet', ...Array.from({ length: bleeds }, (_, k) => `bleed${k + 1}`), 'exhaust']
+    return ends.slice(1).map((to, k) => ({ from: ends[k]!, to, course: 'expansion' as const }))
+  },
+  starts: { bleed: 'expanded', exhaust: 'expanded' },
+})
