@@ -155,6 +155,7 @@ if (unknown.length > 0) {
   console.error(
     `There is no step ${unknown.join(', ')}; the steps are ${Object.keys(steps).join(', ')}.`,
   )
+  rmSync(scratch, { recursive: true, force: true })
   process.exit(2)
 }
 
