@@ -1,15 +1,32 @@
-import { registerSW } from 'virtual:pwa-register'
 import { StrictMode } from 'react'
 import { createRoot } from 'react-dom/client'
+import { App } from './App.tsx'
+import { useCommandStore } from './commands/command-store.ts'
+import { listenForShortcuts } from './commands/shortcuts.ts'
+import { windowCommands } from './commands/window-commands.ts'
+import { startKeeping } from './files/keeping.ts'
+import { listenForDrops, readExample } from './files/plant-file.ts'
+import { startSolving } from './store/solving.ts'
+import { watchNetwork } from './strip/network-store.ts'
+import { keepOffline } from './strip/offline.ts'
+import './styles/theme.css'
+import './styles/base.css'
+import { followTheme } from './styles/theme.ts'
+
+followTheme()
+useCommandStore.getState().register(windowCommands)
+listenForShortcuts()
+listenForDrops()
+watchNetwork()
 
 const place = document.getElementById('window')
 if (!place) throw new Error('index.html has no element with the id "window".')
 
+await startKeeping(readExample)
+startSolving()
 createRoot(place).render(
   <StrictMode>
-    <h1>Bledsteam</h1>
+    <App />
   </StrictMode>,
 )
-
-// Keeps every file for use without a network. A new version waits until all windows are closed.
-registerSW({ immediate: true })
+keepOffline()

@@ -108,7 +108,6 @@ export function Drawer() {
   return (
     <section className="drawer" aria-label="Tables">
       <div className="drawer-head">
-        {/* biome-ignore lint/a11y/useFocusableInteractive: the tabs within are what takes the focus. */}
         <div
           className="drawer-tabs"
           role="tablist"

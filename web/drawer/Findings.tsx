@@ -69,6 +69,7 @@ export function Findings() {
           .filter((finding) => finding.severity === severity)
           .map((finding, i) => (
             <FindingLine
+              // biome-ignore lint/suspicious/noArrayIndexKey: two findings may be alike but for their text.
               key={`${severity}/${finding.code}/${finding.where.join()}/${i}`}
               finding={finding}
             />

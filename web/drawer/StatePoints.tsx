@@ -1,5 +1,10 @@
 import { type KeyboardEvent, memo, useMemo, useRef } from 'react'
-import { type QuantityDescription, streamQuantities, unitOf } from '../../src/document.ts'
+import {
+  type QuantityDescription,
+  type QuantityTable,
+  streamQuantities,
+  unitOf,
+} from '../../src/document.ts'
 import { Quantity } from '../number/Quantity.tsx'
 import { QuantityField } from '../number/QuantityField.tsx'
 import { usePhase } from '../store/balance-store.ts'
@@ -27,12 +32,14 @@ const volume: QuantityDescription = {
   help: 'Volume per mass.',
 }
 
+const table: QuantityTable = streamQuantities
+
 const columns: readonly Column[] = [
   ...['m', 'p', 'T', 'h', 's', 'x'].flatMap((name) => {
-    const description = streamQuantities[name]
+    const description = table[name]
     return description ? [{ name, symbol: name, description, field: true }] : []
   }),
-  { name: 'v', symbol: 'v', description: streamQuantities.v ?? volume, field: false },
+  { name: 'v', symbol: 'v', description: table.v ?? volume, field: false },
 ]
 
 const phaseWords = {
@@ -165,7 +172,7 @@ export function StatePoints() {
         </thead>
         <tbody>
           {first > 0 && (
-            <tr aria-hidden="true" style={{ height: first * rowHeight }}>
+            <tr style={{ height: first * rowHeight }}>
               <td colSpan={columns.length + 3} />
             </tr>
           )}
@@ -181,7 +188,7 @@ export function StatePoints() {
             ),
           )}
           {end < rows.length && (
-            <tr aria-hidden="true" style={{ height: (rows.length - end) * rowHeight }}>
+            <tr style={{ height: (rows.length - end) * rowHeight }}>
               <td colSpan={columns.length + 3} />
             </tr>
           )}

@@ -133,14 +133,18 @@ export function listenForDrops(): void {
   })
 }
 
-/** The plant that the window shows at first use, or null where it cannot be had. */
-export async function readExample(): Promise<Plant | null> {
+/** Text of the example plant; empty where it cannot be had. */
+export async function readExampleText(): Promise<string> {
   try {
     const response = await fetch('examples/tarn-vale-1.json')
-    if (!response.ok) return null
-    const read = readPlant(await response.text())
-    return read.outcome === 'plant' ? read.plant : null
+    return response.ok ? await response.text() : ''
   } catch {
-    return null
+    return ''
   }
+}
+
+/** The plant that the window shows at first use, or null where it cannot be had. */
+export async function readExample(): Promise<Plant | null> {
+  const read = readPlant(await readExampleText())
+  return read.outcome === 'plant' ? read.plant : null
 }

@@ -29,7 +29,7 @@ export interface Asked {
   readonly editName: string
 }
 
-interface BalanceState {
+export interface BalanceState {
   readonly names: NamesMessage | null
   readonly balance: BalanceMessage | null
   readonly dome: DomeMessage | null

@@ -1,0 +1,124 @@
+import { lazy, Suspense, useEffect, useRef, useState } from 'react'
+import Canvas from './canvas/Canvas.tsx'
+import { Card } from './card/Card.tsx'
+import { runCommand } from './commands/command-store.ts'
+import { Dialogs } from './commands/Dialogs.tsx'
+import { Divider } from './Divider.tsx'
+import { Drawer } from './drawer/Drawer.tsx'
+import { Rail } from './rail/Rail.tsx'
+import { useSettingsStore } from './store/settings-store.ts'
+import { Notices } from './strip/Notices.tsx'
+import { Strip } from './strip/Strip.tsx'
+import './styles/layout.css'
+import { Totals } from './totals/Totals.tsx'
+
+// The chart brings a large library along: the canvas need not wait for it.
+const Chart = lazy(() => import('./chart/TemperatureEntropyChart.tsx'))
+
+/** Below this width the chart folds under the canvas. */
+const narrow = 900
+/** Below this width the rail shows symbols only, unless the user has unfolded it. */
+const narrowRail = 1360
+const drawerHead = 32
+
+function useSize(): { readonly width: number; readonly height: number } {
+  const [size, setSize] = useState({ width: window.innerWidth, height: window.innerHeight })
+  useEffect(() => {
+    const look = () => setSize({ width: window.innerWidth, height: window.innerHeight })
+    window.addEventListener('resize', look)
+    return () => window.removeEventListener('resize', look)
+  }, [])
+  return size
+}
+
+function Sheet({ room }: { room: number }) {
+  const height = useSettingsStore((state) => state.drawerHeight)
+  const folded = useSettingsStore((state) => state.drawerFolded)
+  const change = useSettingsStore((state) => state.change)
+  const most = Math.max(drawerHead + 60, room - 160)
+  const shown = folded ? drawerHead : Math.min(height, most)
+  return (
+    <>
+      <div className="canvas-place">
+        <Canvas
+          onOpenExample={() => runCommand('open-example')}
+          onOpenFile={() => runCommand('open')}
+        />
+        <Card />
+      </div>
+      <Divider
+        orientation="horizontal"
+        label="Height of the drawer"
+        behind
+        size={shown}
+        least={drawerHead}
+        most={most}
+        onSize={(size) =>
+          size < drawerHead + 40
+            ? change({ drawerFolded: true })
+            : change({ drawerFolded: false, drawerHeight: size })
+        }
+      />
+      <div className="drawer-place" style={{ height: shown }}>
+        <Drawer />
+      </div>
+    </>
+  )
+}
+
+function Side() {
+  return (
+    <>
+      <div className="chart-place">
+        <Suspense fallback={<p className="muted chart-wait">The chart is being loaded.</p>}>
+          <Chart />
+        </Suspense>
+      </div>
+      <Totals />
+    </>
+  )
+}
+
+export function App() {
+  const { width, height } = useSize()
+  const chartShare = useSettingsStore((state) => state.chartShare)
+  const chartFolded = useSettingsStore((state) => state.chartFolded)
+  const railFolded = useSettingsStore((state) => state.railFolded)
+  const change = useSettingsStore((state) => state.change)
+  const work = useRef<HTMLElement>(null)
+  const isNarrow = width < narrow
+  const chartWidth = Math.round(Math.min(width - 480, Math.max(240, width * chartShare)))
+  return (
+    <div className="window" data-narrow={isNarrow}>
+      <Strip />
+      <Notices />
+      <main className="work" ref={work}>
+        <Rail folded={railFolded ?? width < narrowRail} />
+        <div className="sheet">
+          <Sheet room={height - 40} />
+        </div>
+        {!chartFolded && !isNarrow && (
+          <Divider
+            orientation="vertical"
+            label="Width of the chart"
+            behind
+            size={chartWidth}
+            least={240}
+            most={Math.max(240, width - 480)}
+            onSize={(size) => change({ chartShare: size / width })}
+          />
+        )}
+        {!chartFolded && (
+          <aside
+            className="side"
+            aria-label="Chart and totals"
+            style={isNarrow ? undefined : { width: chartWidth }}
+          >
+            <Side />
+          </aside>
+        )}
+      </main>
+      <Dialogs />
+    </div>
+  )
+}
