@@ -21,7 +21,7 @@ import {
   type Terminal,
 } from './routing.ts'
 import { symbolOf } from './symbols/index.ts'
-import type { Anchor, Form } from './symbols/symbol.ts'
+import type { Anchor } from './symbols/symbol.ts'
 
 /** A unit as it stands on the sheet. */
 export interface PlacedUnit extends Lie {

@@ -1,0 +1,62 @@
+import type { Form } from './symbols/symbol.ts'
+import { UnitSymbol } from './UnitSymbol.tsx'
+
+interface Props {
+  readonly onOpenExample?: () => void
+  readonly onOpenFile?: () => void
+}
+
+const form: Form = { options: {}, counts: {} }
+const sketch = [
+  ['boiler', 8, 16],
+  ['turbine', 136, 24],
+  ['condenser', 232, 36],
+  ['pump', 176, 124],
+] as const
+
+/** The empty canvas: three steps to a plant, or one that is there. */
+export function EmptyCanvas({ onOpenExample, onOpenFile }: Props) {
+  return (
+    <div className="empty-canvas">
+      <svg width={304} height={168} className="empty-sketch" aria-hidden="true">
+        <path d="M40 16V4H144V30M184 74V96H208V20H264V40M264 96V140H204M180 140H40V120" />
+        {sketch.map(([kind, x, y]) => (
+          <g
+            key={kind}
+            transform={`translate(${x} ${y})${kind === 'pump' ? ' scale(-1 1) translate(-32 0)' : ''}`}
+          >
+            <UnitSymbol kind={kind} form={form} />
+          </g>
+        ))}
+      </svg>
+      <div>
+        <ol className="empty-steps">
+          <li>
+            <strong>Place a boiler</strong>
+            <p>Drag it from the rail, or press B.</p>
+          </li>
+          <li>
+            <span>Connect a turbine, a condenser and a pump</span>
+            <p>Drag from port to port; only what can work lights up.</p>
+          </li>
+          <li>
+            <span>Give what you know</span>
+            <p>The ledger says how many numbers are still missing.</p>
+          </li>
+        </ol>
+        <p className="empty-links">
+          {onOpenExample && (
+            <button type="button" className="link" onClick={onOpenExample}>
+              Open an example plant
+            </button>
+          )}
+          {onOpenFile && (
+            <button type="button" className="link" onClick={onOpenFile}>
+              Open a file
+            </button>
+          )}
+        </p>
+      </div>
+    </div>
+  )
+}

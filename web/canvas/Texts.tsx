@@ -1,0 +1,120 @@
+import { memo } from 'react'
+import { type Dimension, describeQuantity, kindOf } from '../../src/document.ts'
+import { Quantity } from '../number/Quantity.tsx'
+import { usePhase } from '../store/balance-store.ts'
+import { readLayout } from '../store/plant-store.ts'
+import { useSelectionStore } from '../store/selection-store.ts'
+import { useCanvasStore } from './canvas-store.ts'
+import type { PlacedLabel, PlacedTag } from './labelling.ts'
+import { type TagQuantity, useTagStore } from './tag-store.ts'
+
+/** Labels of units with their chief figures, and the tags of streams. */
+export function Texts() {
+  const labels = useCanvasStore((state) => state.labels)
+  const tags = useCanvasStore((state) => state.tags)
+  const scale = useCanvasStore((state) => state.textScale)
+  return (
+    <div className="texts" style={{ '--text-scale': scale } as React.CSSProperties}>
+      <svg className="leaders" aria-hidden="true">
+        {[...tags.values()].map((tag) => (
+          <Leader key={tag.id} tag={tag} />
+        ))}
+      </svg>
+      {[...labels.values()].map((label) => (
+        <UnitLabel key={label.id} label={label} />
+      ))}
+      {[...tags.values()].map((tag) => (
+        <Tag key={tag.id} tag={tag} />
+      ))}
+    </div>
+  )
+}
+
+const place = (box: PlacedLabel | PlacedTag): React.CSSProperties => ({
+  transform: `translate(${box.x}px, ${box.y}px)`,
+  width: box.width,
+  height: box.height,
+  textAlign: box.align === 'centre' ? 'center' : box.align,
+})
+
+const UnitLabel = memo(function UnitLabel({ label }: { readonly label: PlacedLabel }) {
+  const text = useCanvasStore((state) => state.sheet.units.get(label.id)?.label)
+  const kind = useCanvasStore((state) => state.sheet.units.get(label.id)?.kind)
+  const layout = readLayout()
+  const isShaft = kind === undefined && layout.shafts.some((shaft) => shaft.id === label.id)
+  const chief = isShaft ? 'generatorPower' : kind && kindOf(kind)?.chief
+  const path = chief && `${label.id}.${chief}`
+  // A kind may name a quantity that this unit has not got.
+  const described = path ? describeQuantity(layout, path) : undefined
+  return (
+    <div className="unit-label" data-arrangement={label.arrangement} style={place(label)}>
+      {!isShaft && <span className="unit-label-name">{text}</span>}
+      {path && described && (
+        <span className="unit-label-figure">
+          <Quantity path={path} dimension={described.dimension} />
+        </span>
+      )}
+    </div>
+  )
+})
+
+const Leader = memo(function Leader({ tag }: { readonly tag: PlacedTag }) {
+  const [start] = tag.leader
+  if (!start) return null
+  return (
+    <g>
+      <path d={`M${tag.leader.map((point) => point.join(' ')).join('L')}`} />
+      <circle cx={start[0]} cy={start[1]} r={1.5} />
+    </g>
+  )
+})
+
+const Tag = memo(function Tag({ tag }: { readonly tag: PlacedTag }) {
+  const quantities = useTagStore((state) => state.quantities)
+  const phase = usePhase(tag.id)
+  const perLine = Math.ceil(quantities.length / tag.lines)
+  const lines = Array.from({ length: tag.lines }, (_, i) =>
+    quantities.slice(i * perLine, (i + 1) * perLine),
+  )
+  return (
+    // The tag is a larger target for the pointer; the stream itself is reached by keys.
+    // biome-ignore lint/a11y/noStaticElementInteractions: see above
+    // biome-ignore lint/a11y/useKeyWithClickEvents: see above
+    <div
+      className="stream-tag nopan"
+      style={place(tag)}
+      onPointerEnter={() => useSelectionStore.getState().hover(tag.id)}
+      onPointerLeave={() => useSelectionStore.getState().hover(null)}
+      onClick={(event) => {
+        useSelectionStore.getState().select([tag.id], event.shiftKey ? 'toggle' : 'replace')
+      }}
+    >
+      {lines.map((line) => (
+        <div key={line.join()} className="stream-tag-line">
+          {line.map((name) => (
+            <Part key={name} id={tag.id} name={name} wet={phase === 'wet'} />
+          ))}
+        </div>
+      ))}
+    </div>
+  )
+})
+
+const dimensions: Readonly<Record<TagQuantity | 'x', Dimension>> = {
+  p: 'pressure',
+  T: 'temperature',
+  h: 'specificEnthalpy',
+  m: 'massFlow',
+  x: 'dryness',
+}
+
+/** Of wet steam the dryness says what the temperature cannot. */
+function Part(props: { readonly id: string; readonly name: TagQuantity; readonly wet: boolean }) {
+  const name = props.wet && props.name === 'T' ? 'x' : props.name
+  return (
+    <span className="stream-tag-part">
+      <Quantity path={`${props.id}.${name}`} dimension={dimensions[name]} />
+      {name === 'x' && <span className="quantity-unit">dry</span>}
+    </span>
+  )
+}

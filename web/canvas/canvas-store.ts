@@ -1,0 +1,264 @@
+import { create } from 'zustand'
+import { kindOf, type Layout } from '../../src/document.ts'
+import { textWidth } from '../chart/measure-text.ts'
+import { readLayout, usePlantStore } from '../store/plant-store.ts'
+import type { Point } from './geometry.ts'
+import {
+  type Arrangement,
+  type LabelRequest,
+  type PlacedLabel,
+  type PlacedTag,
+  placeLabels,
+  placeTags,
+} from './labelling.ts'
+import { drawSheet, emptySheet, generatorBox, type Sheet } from './sheet.ts'
+import { type TagChoice, useTagStore } from './tag-store.ts'
+
+interface CanvasState {
+  readonly sheet: Sheet
+  readonly labels: ReadonlyMap<string, PlacedLabel>
+  readonly tags: ReadonlyMap<string, PlacedTag>
+  /** Units on their way under the pointer: top left corners, px at 100 %. */
+  readonly moved: ReadonlyMap<string, Point> | null
+  readonly zoom: number
+  /** What text is enlarged by, so that it keeps its size on screen when zoomed out. */
+  readonly textScale: number
+  /** The kind whose symbol is being carried over the canvas. */
+  move(moved: ReadonlyMap<string, Point> | null): void
+  setZoom(zoom: number): void
+}
+
+/** Smallest text on the screen, px, and its size at 100 %. */
+const smallestText = 11.6
+const textSize = 12
+export const lineHeight = 15
+/** Below this zoom tags would crowd the sheet. */
+const tagsFrom = 0.55
+
+export const useCanvasStore = create<CanvasState>()((set, get) => ({
+  sheet: emptySheet,
+  labels: new Map(),
+  tags: new Map(),
+  moved: null,
+  zoom: 1,
+  textScale: 1,
+  move(moved) {
+    const { sheet, textScale, labels, tags, zoom } = get()
+    const layout = readLayout()
+    const next = drawSheet(layout, moved, sheet)
+    set({ moved, sheet: next, ...texts(layout, next, textScale, zoom, { labels, tags }) })
+  },
+  setZoom(zoom) {
+    const wanted = Math.max(1, smallestText / textSize / zoom)
+    // In steps, so that labels are not set anew at every turn of the wheel.
+    const textScale = wanted === 1 ? 1 : Math.ceil(wanted * 8) / 8
+    const { sheet, textScale: earlier, zoom: before } = get()
+    if (textScale === earlier && zoom >= tagsFrom === before >= tagsFrom) {
+      if (zoom !== before) set({ zoom })
+    } else set({ zoom, textScale, ...texts(readLayout(), sheet, textScale, zoom) })
+  },
+}))
+
+let shownOpened = -1
+let shownLayout: Layout | null = null
+
+/** Draws the sheet anew whenever the layout changes; returns what ends that. */
+export function followPlant(): () => void {
+  const follow = () => {
+    const layout = readLayout()
+    const { opened } = usePlantStore.getState()
+    if (layout === shownLayout && opened === shownOpened) return
+    // Another plant or layout is routed from scratch; an edit keeps the routes that it does not touch.
+    const fresh = opened !== shownOpened || layout.id !== shownLayout?.id
+    shownLayout = layout
+    shownOpened = opened
+    const { sheet, textScale, zoom } = useCanvasStore.getState()
+    const next = drawSheet(layout, null, fresh ? emptySheet : sheet)
+    useCanvasStore.setState({
+      sheet: next,
+      moved: null,
+      ...texts(layout, next, textScale, zoom),
+    })
+  }
+  follow()
+  const endPlant = usePlantStore.subscribe(follow)
+  const endTags = useTagStore.subscribe(() => {
+    const { sheet, textScale, zoom } = useCanvasStore.getState()
+    useCanvasStore.setState(texts(readLayout(), sheet, textScale, zoom))
+  })
+  return () => {
+    endPlant()
+    endTags()
+    shownLayout = null
+  }
+}
+
+/** Rooms for numbers are kept at their usual width, so that nothing moves because a digit changed. */
+const usualFigure = '000.0 MW'
+const usualParts: Readonly<Record<string, string>> = {
+  p: '000.0 bar',
+  T: '000.0 °C',
+  h: '0000.0 kJ/kg',
+  m: '000.0 kg/s',
+}
+
+function labelShapes(label: string, figure: boolean, scale: number): LabelRequest['shapes'] {
+  const size = textSize * scale
+  const line = lineHeight * scale
+  const name = textWidth(label, size)
+  const number = figure ? textWidth(usualFigure, size) : 0
+  if (!figure) return [{ arrangement: 'stacked', size: { width: name, height: line } }]
+  const shapes: { arrangement: Arrangement; size: { width: number; height: number } }[] = [
+    { arrangement: 'stacked', size: { width: Math.max(name, number), height: 2 * line } },
+    { arrangement: 'beside', size: { width: name + number + 8 * scale, height: line } },
+  ]
+  const words = label.split(' ')
+  if (words.length > 1 && name > number) {
+    const widest = Math.max(...words.map((word) => textWidth(word, size)))
+    shapes.push({
+      arrangement: 'wrapped',
+      size: { width: Math.max(widest, number), height: (words.length + 1) * line },
+    })
+  }
+  return shapes
+}
+
+function texts(
+  layout: Layout,
+  sheet: Sheet,
+  scale: number,
+  zoom: number,
+  earlier?: {
+    readonly labels: ReadonlyMap<string, PlacedLabel>
+    readonly tags: ReadonlyMap<string, PlacedTag>
+  },
+): Pick<CanvasState, 'labels' | 'tags'> {
+  const occupied = {
+    bodies: [...sheet.units.values()].map((unit) => unit.body),
+    streams: [...sheet.streams.values()],
+  }
+  for (const { generator } of sheet.shafts.values()) {
+    if (generator) occupied.bodies.push(generatorBox(generator))
+  }
+  const requests: LabelRequest[] = []
+  for (const unit of sheet.units.values()) {
+    if (unit.symbol.label !== 'inside' && unit.symbol.label.length === 0) continue
+    if (unit.label === '') continue
+    requests.push({
+      id: unit.id,
+      body: unit.body,
+      wish: unit.symbol.label,
+      shapes: labelShapes(unit.label, kindOf(unit.kind)?.chief !== undefined, scale),
+      anchors: Object.values(unit.anchors),
+    })
+  }
+  for (const shaft of sheet.shafts.values()) {
+    if (!shaft.generator) continue
+    const line = lineHeight * scale
+    requests.push({
+      id: shaft.id,
+      body: generatorBox(shaft.generator),
+      wish: ['bottom', 'top', 'right', 'left'],
+      shapes: [
+        {
+          arrangement: 'stacked',
+          size: { width: textWidth(usualFigure, textSize * scale), height: line },
+        },
+      ],
+      anchors: [],
+    })
+  }
+  // The label inside a turbine has no choice: it is set first.
+  requests.sort((a, b) => Number(b.wish === 'inside') - Number(a.wish === 'inside'))
+  const labels = placeLabels(requests, occupied)
+  const tags =
+    zoom < tagsFrom
+      ? new Map<string, PlacedTag>()
+      : placeTags(tagRequests(layout, sheet, scale), occupied, labels.values())
+  return earlier
+    ? { labels: kept(earlier.labels, labels), tags: kept(earlier.tags, tags) }
+    : { labels, tags }
+}
+
+/** Texts that stand where they stood keep their identity and are not painted again. */
+function kept<T extends PlacedLabel | PlacedTag>(
+  earlier: ReadonlyMap<string, T>,
+  later: Map<string, T>,
+): Map<string, T> {
+  for (const [id, one] of later) {
+    const before = earlier.get(id)
+    if (
+      before &&
+      before.x === one.x &&
+      before.y === one.y &&
+      before.width === one.width &&
+      before.height === one.height &&
+      before.align === one.align &&
+      sameLeader(before, one)
+    ) {
+      later.set(id, before)
+    }
+  }
+  return later
+}
+
+function sameLeader(a: PlacedLabel | PlacedTag, b: PlacedLabel | PlacedTag): boolean {
+  if (!('leader' in a) || !('leader' in b)) return !('leader' in a) && !('leader' in b)
+  return (
+    a.leader.length === b.leader.length &&
+    a.leader.every((point, i) => point[0] === b.leader[i]?.[0] && point[1] === b.leader[i]?.[1])
+  )
+}
+
+/** Which streams carry a tag, those that the user has given numbers for first. */
+function tagRequests(layout: Layout, sheet: Sheet, scale: number) {
+  const choice: TagChoice = useTagStore.getState()
+  if (choice.which === 'none' || choice.quantities.length === 0) return []
+  const size = textSize * scale
+  const parts = choice.quantities.map((name) => textWidth(usualParts[name] ?? '000.0 bar', size))
+  const line = lineHeight * scale
+  const column = Math.max(...parts)
+  const shapes = [1, 2, 3, 4].flatMap((lines) => {
+    if (lines > parts.length) return []
+    const perLine = Math.ceil(parts.length / lines)
+    if (Math.ceil(parts.length / perLine) !== lines) return []
+    let width = 0
+    for (let i = 0; i < parts.length; i += perLine) {
+      const row = parts.slice(i, i + perLine)
+      width = Math.max(
+        width,
+        row.reduce((sum, part) => sum + part + 8 * scale, -8 * scale),
+      )
+    }
+    return [
+      {
+        lines,
+        size: { width: Math.max(width, lines === parts.length ? column : 0), height: lines * line },
+      },
+    ]
+  })
+  // Two lines read best; then three, then one.
+  shapes.sort((a, b) => Math.abs(a.lines - 2) - Math.abs(b.lines - 2))
+  return layout.streams
+    .filter((stream) => {
+      if (choice.which === 'all') return true
+      return (
+        Object.keys(stream.given).length > 0 ||
+        (choice.which === 'chief' && isChief(layout, stream))
+      )
+    })
+    .sort((a, b) => Object.keys(b.given).length - Object.keys(a.given).length)
+    .flatMap(({ id }) => {
+      const route = sheet.streams.get(id)?.route
+      return route ? [{ id, route, shapes }] : []
+    })
+}
+
+/** The streams that a reader looks for first: what single, required ports of chief machines give off. */
+function isChief(layout: Layout, stream: Layout['streams'][number]): boolean {
+  const dot = stream.from.indexOf('.')
+  const unit = layout.units.find((one) => one.id === stream.from.slice(0, dot))
+  const kind = unit && kindOf(unit.kind)
+  const port = kind?.ports[stream.from.slice(dot + 1)]
+  return Boolean(kind?.chief && port && !port.optional && !port.repeated)
+}
