@@ -1,3 +1,6 @@
+import { standardCatalogue } from './plant/catalogue.ts'
+import type { QuantityTable } from './units/kind.ts'
+
 /** Door for the window: the plant file, its edits and differences, the catalogue of kinds, quantities. */
 export * from './plant/catalogue.ts'
 export * from './plant/check-plant.ts'
@@ -20,13 +23,7 @@ export * from './quantity/format-quantity.ts'
 export * from './quantity/parse-quantity.ts'
 export * from './quantity/unit-set.ts'
 export * from './quantity/units-of-measure.ts'
-export {
-  kindNamed as kindOf,
-  kinds,
-  plantQuantities,
-  shaftQuantities,
-  streamQuantities,
-} from './units/index.ts'
+export { kindNamed as kindOf, kinds } from './units/index.ts'
 export type {
   KindGroup,
   OptionDescription,
@@ -37,3 +34,10 @@ export type {
   QuantityTable,
   Shape,
 } from './units/kind.ts'
+
+/** What every stream has; all of these can be given. */
+export const streamQuantities: QuantityTable = standardCatalogue.streamQuantities
+/** What a shaft with a generator has. */
+export const shaftQuantities: QuantityTable = standardCatalogue.shaftQuantities(true)
+/** The plant's totals. */
+export const plantQuantities: QuantityTable = standardCatalogue.plantQuantities

@@ -41,14 +41,6 @@ export function entriesOf(owner: string, table: QuantityTable, shape: Shape): Qu
   return entries
 }
 
-/** The shape that a shaft's quantities ask for: its one option is `generator`. */
-export function shaftShape(shaft: Shaft): Shape {
-  return {
-    options: { generator: shaft.generator !== false },
-    streams: { turbines: shaft.turbines.length, pumps: shaft.pumps.length },
-  }
-}
-
 const noShape: Shape = { options: {}, streams: {} }
 
 /** The quantities that a unit has with its options and streams. */
@@ -72,7 +64,7 @@ export function quantitiesOfShaft(
   shaft: Shaft,
   catalogue: Catalogue = standardCatalogue,
 ): QuantityEntry[] {
-  return entriesOf(shaft.id, catalogue.shaftQuantities, shaftShape(shaft))
+  return entriesOf(shaft.id, catalogue.shaftQuantities(shaft.generator !== false), noShape)
 }
 
 export function quantitiesOfPlant(catalogue: Catalogue = standardCatalogue): QuantityEntry[] {

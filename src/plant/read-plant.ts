@@ -1,22 +1,15 @@
 import { type Catalogue, standardCatalogue } from './catalogue.ts'
-import type { Plant } from './document.ts'
+import { checkPlant, type ReadResult } from './check-plant.ts'
+import { migrate, oneLine } from './migrate.ts'
+import { parseJson } from './parse-json.ts'
 
-/** Something that a file lacked and that was put right without touching its physics. */
-export interface Repair {
-  readonly severity: 'remark'
-  readonly code: 'repaired'
-  /** Ids of units, streams and shafts. */
-  readonly where: readonly string[]
-  readonly quantities: readonly string[]
-  readonly message: string
-}
-
-export type ReadResult =
-  | { readonly outcome: 'plant'; readonly plant: Plant; readonly repairs: readonly Repair[] }
-  /** One line that names the place: line and column, or `layouts[0].units[3].given.foo`. */
-  | { readonly outcome: 'unusable'; readonly message: string }
-
-/** Reads the text of a plant file. Nothing is thrown, whatever the text. */
-export function readPlant(_text: string, _catalogue: Catalogue = standardCatalogue): ReadResult {
-  throw new Error('not there yet')
+/** Reads the text of a plant file: parses, migrates, checks. Nothing is thrown, whatever the text. */
+export function readPlant(text: string, catalogue: Catalogue = standardCatalogue): ReadResult {
+  const parsed = parseJson(text)
+  if (parsed.outcome === 'broken') {
+    const { line, column, message } = parsed
+    return { outcome: 'unusable', message: oneLine(`Line ${line}, column ${column}: ${message}.`) }
+  }
+  const migrated = migrate(parsed.value)
+  return migrated.outcome === 'unusable' ? migrated : checkPlant(migrated.value, catalogue)
 }

@@ -17,33 +17,33 @@ import {
  * NIST Special Publication 811 (2008), appendix B.8: factors to the coherent SI unit, in the printed
  * digits. `exact`: printed in bold, all further digits zero.
  */
-const published: readonly (readonly [Dimension, string, number, 'exact'?])[] = [
+const published: readonly (readonly [Dimension, string, number, 'exact' | 'rounded'])[] = [
   ['pressure', 'bar', 1e5, 'exact'],
   ['pressure', 'mbar', 1e2, 'exact'],
   ['pressure', 'atm', 1.01325e5, 'exact'],
   ['pressure', 'kgf/cm²', 9.80665e4, 'exact'],
-  ['pressure', 'psia', 6.894757e3],
-  ['pressure', 'mmHg', 1.333224e2],
-  ['pressure', 'Torr', 1.333224e2],
-  ['pressure', 'inHg', 3.386389e3],
+  ['pressure', 'psia', 6.894757e3, 'rounded'],
+  ['pressure', 'mmHg', 1.333224e2, 'rounded'],
+  ['pressure', 'Torr', 1.333224e2, 'rounded'],
+  ['pressure', 'inHg', 3.386389e3, 'rounded'],
   ['pressure', 'mmH₂O', 9.80665, 'exact'],
-  ['pressure', 'inH₂O', 2.490889e2],
-  ['pressureDifference', 'psi', 6.894757e3],
-  ['massFlow', 'lb/s', 4.535924e-1],
-  ['massFlow', 'lb/h', 1.259979e-4],
+  ['pressure', 'inH₂O', 2.490889e2, 'rounded'],
+  ['pressureDifference', 'psi', 6.894757e3, 'rounded'],
+  ['massFlow', 'lb/s', 4.535924e-1, 'rounded'],
+  ['massFlow', 'lb/h', 1.259979e-4, 'rounded'],
   ['specificEnthalpy', 'Btu/lb', 2.326e3, 'exact'],
   ['specificEntropy', 'Btu/(lb °R)', 4.1868e3, 'exact'],
   ['specificHeat', 'Btu/(lb °F)', 4.1868e3, 'exact'],
-  ['heatFlow', 'Btu/h', 2.930711e-1],
-  ['power', 'hp', 7.456999e2],
-  ['power', 'PS', 7.354988e2],
+  ['heatFlow', 'Btu/h', 2.930711e-1, 'rounded'],
+  ['power', 'hp', 7.456999e2, 'rounded'],
+  ['power', 'PS', 7.354988e2, 'rounded'],
   ['length', 'ft', 3.048e-1, 'exact'],
   ['length', 'in', 2.54e-2, 'exact'],
   ['velocity', 'ft/s', 3.048e-1, 'exact'],
   ['area', 'ft²', 9.290304e-2, 'exact'],
   ['area', 'in²', 6.4516e-4, 'exact'],
-  ['volumeFlow', 'ft³/s', 2.831685e-2],
-  ['volumeFlow', 'gpm', 6.30902e-5],
+  ['volumeFlow', 'ft³/s', 2.831685e-2, 'rounded'],
+  ['volumeFlow', 'gpm', 6.30902e-5, 'rounded'],
 ]
 
 describe('factors of NIST SP 811, appendix B.8', () => {
@@ -51,7 +51,7 @@ describe('factors of NIST SP 811, appendix B.8', () => {
     const unit = unitNamed(dimension, name)
     // Seven significant digits are printed: half of the last one is what rounding may take.
     const lastDigit = 10 ** (Math.floor(Math.log10(factor)) - 6)
-    const tolerance = exact ? 1e-15 * factor : 0.500001 * lastDigit
+    const tolerance = exact === 'exact' ? 1e-15 * factor : 0.500001 * lastDigit
     expect(Math.abs((unit?.factor ?? 0) - factor)).toBeLessThanOrEqual(tolerance)
   })
 
