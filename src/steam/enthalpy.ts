@@ -15,20 +15,24 @@ import {
   lowestSaturationPressure,
   lowestTemperature,
 } from './constants.ts'
+import { enthalpyAlong, region3Point } from './gap.ts'
+import { borderTemperature23 } from './if97/borders.ts'
 import { POINT_SIZE, Point, region1Point, region2Point, region5Point } from './if97/point.ts'
+import { FIELD_SIZE, pointOfField, region3Field } from './if97/region3.ts'
 import { saturationTemperatureOf } from './if97/saturation-line.ts'
 import { Outcome, refuse } from './outcome.ts'
 import { Result, Saturation } from './records.ts'
 import { cachedSaturation, checkSaturationPressure, saturationCache } from './saturation.ts'
 
 const point = new Float64Array(POINT_SIZE)
+const field = new Float64Array(FIELD_SIZE)
 
 /** Closer than this to the saturation temperature (K) p and T leave h open. */
 export const saturationTemperatureBand = 1e-6
 /** Round-off allowed at the limits of temperature, K. */
 const temperatureSlack = 1e-7
 
-function write(
+export function write(
   out: Float64Array,
   at: number,
   value: number,
@@ -53,15 +57,11 @@ export function enthalpyAtPressureTemperature(
 ): number {
   const code = pointAtPressureTemperature(point, p, T)
   if (code !== Outcome.fine) return code
-  return writeTemperatureForm(out, at, T)
-}
-
-function writeTemperatureForm(out: Float64Array, at: number, T: number): number {
   return write(
     out,
     at,
     point[Point.h] as number,
-    (point[Point.v] as number) - T * (point[Point.vT] as number),
+    point[Point.hp] as number,
     point[Point.cp] as number,
   )
 }
@@ -77,27 +77,47 @@ export function pointAtPressureTemperature(q: Float64Array, p: number, T: number
     region5Point(q, p, T)
     return Outcome.fine
   }
-  if (p > borderPressure13) return refuse(Outcome.pressureHigh, p, borderPressure13)
+  if (p > borderPressure13) return densePoint(q, p, T)
   if (p < lowestSaturationPressure) {
     region2Point(q, p, T)
     return Outcome.fine
   }
   const above = T - saturationTemperatureOf(p)
   if (Math.abs(above) < saturationTemperatureBand) return refuse(Outcome.onSaturation, T, T - above)
-  if (above < 0 && T <= borderTemperature13) region1Point(q, p, T)
+  if (above < 0) region1Point(q, p, T)
   else region2Point(q, p, T)
   return Outcome.fine
 }
 
-function refusePressure(p: number): number {
-  if (!Number.isFinite(p)) return refuse(Outcome.notFinite, p, lowestPressure)
-  if (p < lowestPressure) return refuse(Outcome.pressureLow, p, lowestPressure)
+/** The forward equations above 16.529 MPa and up to 1073.15 K. */
+function densePoint(q: Float64Array, p: number, T: number): number {
+  if (T <= borderTemperature13) {
+    region1Point(q, p, T)
+    return Outcome.fine
+  }
+  if (T >= borderTemperature23(p)) {
+    region2Point(q, p, T)
+    return Outcome.fine
+  }
+  if (p < criticalPressure) {
+    const above = T - saturationTemperatureOf(p)
+    if (Math.abs(above) < saturationTemperatureBand) {
+      return refuse(Outcome.onSaturation, T, T - above)
+    }
+  }
+  region3Point(q, p, T)
+  return Outcome.fine
+}
+
+/** Refuses a pressure outside the formulation. */
+export function refusePressure(p: number): number {
+  if (!(p >= lowestPressure)) return refuse(Outcome.pressureLow, p, lowestPressure)
   return refuse(Outcome.pressureHigh, p, highestPressure)
 }
 
-function refuseTemperature(T: number, low: number, high: number): number {
-  if (!Number.isFinite(T)) return refuse(Outcome.notFinite, T, low)
-  if (T < low) return refuse(Outcome.temperatureLow, T, low)
+/** Refuses a temperature outside the limits given, K. */
+export function refuseTemperature(T: number, low: number, high: number): number {
+  if (!(T >= low)) return refuse(Outcome.temperatureLow, T, low)
   return refuse(Outcome.temperatureHigh, T, high)
 }
 
@@ -137,14 +157,43 @@ export function enthalpyAtPressureSuperheat(
   if (code !== Outcome.fine) return code
   if (!(superheat >= 0)) return refuse(Outcome.differenceLow, superheat, 0)
   const slot = cachedSaturation(p)
-  const T = (saturationCache[slot + Saturation.T] as number) + superheat
-  if (T > highestTemperature) return refuse(Outcome.temperatureHigh, T, highestTemperature)
-  if (T > highestTemperature25) region5Point(point, p, T)
-  else region2Point(point, p, T)
-  const cp = point[Point.cp] as number
+  if (superheat < saturationTemperatureBand && p > borderPressure13) {
+    return besideSaturation(out, at, slot, 1, superheat)
+  }
   const slope = saturationCache[slot + Saturation.Tp] as number
-  const hp = (point[Point.v] as number) - T * (point[Point.vT] as number) + cp * slope
-  return write(out, at, point[Point.h] as number, hp, cp)
+  const T = (saturationCache[slot + Saturation.T] as number) + superheat
+  if (!(T <= highestTemperature)) return refuseTemperature(T, lowestTemperature, highestTemperature)
+  if (T > highestTemperature25) region5Point(point, p, T)
+  else if (p <= borderPressure13 || T >= borderTemperature23(p)) region2Point(point, p, T)
+  else region3Point(point, p, T)
+  return write(
+    out,
+    at,
+    point[Point.h] as number,
+    enthalpyAlong(point, slope),
+    point[Point.cp] as number,
+  )
+}
+
+/**
+ * h within a millionth of a kelvin of saturation in region 3, where the density no longer follows from p
+ * and T: the saturated enthalpy with cp at it.
+ */
+function besideSaturation(
+  out: Float64Array,
+  at: number,
+  slot: number,
+  side: number,
+  above: number,
+): number {
+  const T = saturationCache[slot + Saturation.T] as number
+  const v = saturationCache[slot + Saturation.vL + side] as number
+  region3Field(field, 1 / v, T)
+  pointOfField(point, field, 1 / v, T)
+  const cp = point[Point.cp] as number
+  const h = saturationCache[slot + Saturation.hL + side] as number
+  const hp = saturationCache[slot + Saturation.hLp + side] as number
+  return write(out, at, h + cp * above, hp, side === 0 ? -cp : cp)
 }
 
 /** h (J/kg) of pressure (Pa) and subcooling Tsat(p) - T (K); 0 means saturated liquid. */
@@ -158,120 +207,21 @@ export function enthalpyAtPressureSubcooling(
   if (code !== Outcome.fine) return code
   if (!(subcooling >= 0)) return refuse(Outcome.differenceLow, subcooling, 0)
   const slot = cachedSaturation(p)
-  const T = (saturationCache[slot + Saturation.T] as number) - subcooling
-  if (T < lowestTemperature - temperatureSlack) {
-    return refuse(Outcome.temperatureLow, T, lowestTemperature)
+  if (subcooling < saturationTemperatureBand && p > borderPressure13) {
+    return besideSaturation(out, at, slot, 0, -subcooling)
   }
-  region1Point(point, p, T)
-  const cp = point[Point.cp] as number
   const slope = saturationCache[slot + Saturation.Tp] as number
-  const hp = (point[Point.v] as number) - T * (point[Point.vT] as number) + cp * slope
-  return write(out, at, point[Point.h] as number, hp, -cp)
-}
-
-/**
- * h (J/kg) of pressure (Pa) and entropy (J/(kg K)), in any region; dh/dp at constant s is v, dh/ds at
- * constant p is T, within the wet region those of the mixture of both saturated states.
- */
-export function enthalpyAtPressureEntropy(
-  out: Float64Array,
-  at: number,
-  p: number,
-  s: number,
-): number {
-  if (!(p >= lowestPressure && p < criticalPressure)) return refusePressure(p)
-  let region = 2
-  if (p >= lowestSaturationPressure) {
-    const slot = cachedSaturation(p)
-    const sL = saturationCache[slot + Saturation.sL] as number
-    const sV = saturationCache[slot + Saturation.sV] as number
-    if (s >= sL && s <= sV) return wetEnthalpyAtEntropy(out, at, slot, s)
-    if (s < sL) region = 1
+  const T = (saturationCache[slot + Saturation.T] as number) - subcooling
+  if (!(T >= lowestTemperature - temperatureSlack)) {
+    return refuseTemperature(T, lowestTemperature, highestTemperature)
   }
-  const start =
-    region === 1 || p >= lowestSaturationPressure ? saturationTemperatureOf(p) : lowestTemperature
-  let T = start
-  for (let i = 0; i < 50; i++) {
-    if (region === 1) region1Point(point, p, T)
-    else region2Point(point, p, T)
-    const step = (((point[Point.s] as number) - s) * T) / (point[Point.cp] as number)
-    const before = T
-    T = Math.min(region === 1 ? 640 : 1079, Math.max(265, T - step))
-    if (Math.abs(T - before) < 1e-12 * T) break
-  }
-  if (T > highestTemperature25) return refuse(Outcome.entropyHigh, s, point[Point.s] as number)
-  if (T < lowestTemperature - temperatureSlack) {
-    return refuse(Outcome.entropyLow, s, point[Point.s] as number)
-  }
-  return write(out, at, point[Point.h] as number, point[Point.v] as number, T)
-}
-
-function wetEnthalpyAtEntropy(out: Float64Array, at: number, slot: number, s: number): number {
-  const sL = saturationCache[slot + Saturation.sL] as number
-  const hL = saturationCache[slot + Saturation.hL] as number
-  const sLp = saturationCache[slot + Saturation.sLp] as number
-  const hLp = saturationCache[slot + Saturation.hLp] as number
-  const ds = (saturationCache[slot + Saturation.sV] as number) - sL
-  const dh = (saturationCache[slot + Saturation.hV] as number) - hL
-  const dsp = (saturationCache[slot + Saturation.sVp] as number) - sLp
-  const dhp = (saturationCache[slot + Saturation.hVp] as number) - hLp
-  const x = (s - sL) / ds
-  const xp = -(sLp + x * dsp) / ds
-  return write(out, at, hL + x * dh, hLp + x * dhp + xp * dh, dh / ds)
-}
-
-/**
- * h (J/kg) of pressure (Pa) and specific volume (m3/kg). Cold water has two temperatures for one
- * volume (the density maximum near 277 K): the warmer one is meant.
- */
-export function enthalpyAtPressureVolume(
-  out: Float64Array,
-  at: number,
-  p: number,
-  v: number,
-): number {
-  if (!(p >= lowestPressure && p < criticalPressure)) return refusePressure(p)
-  let region = 2
-  if (p >= lowestSaturationPressure) {
-    const slot = cachedSaturation(p)
-    const vL = saturationCache[slot + Saturation.vL] as number
-    const vV = saturationCache[slot + Saturation.vV] as number
-    if (v >= vL && v <= vV) {
-      const hL = saturationCache[slot + Saturation.hL] as number
-      const dh = (saturationCache[slot + Saturation.hV] as number) - hL
-      const hLp = saturationCache[slot + Saturation.hLp] as number
-      const vLp = saturationCache[slot + Saturation.vLp] as number
-      const dv = vV - vL
-      const x = (v - vL) / dv
-      const xp = -(vLp + x * ((saturationCache[slot + Saturation.vVp] as number) - vLp)) / dv
-      const dhp = (saturationCache[slot + Saturation.hVp] as number) - hLp
-      return write(out, at, hL + x * dh, hLp + x * dhp + xp * dh, dh / dv)
-    }
-    if (v < vL) region = 1
-  }
-  const saturated = p >= lowestSaturationPressure ? saturationTemperatureOf(p) : lowestTemperature
-  let low = region === 1 ? lowestTemperature : saturated
-  let high = region === 1 ? saturated : highestTemperature25
-  let T = 0.5 * (low + high)
-  for (let i = 0; i < 100; i++) {
-    if (region === 1) region1Point(point, p, T)
-    else region2Point(point, p, T)
-    const slope = point[Point.vT] as number
-    const off = (point[Point.v] as number) - v
-    if (slope <= 0 || off < 0) low = T
-    else high = T
-    let next = T - off / slope
-    if (!(next > low && next < high)) next = 0.5 * (low + high)
-    const step = Math.abs(next - T)
-    T = next
-    if (step < 1e-13 * T) break
-  }
-  const off = (point[Point.v] as number) - v
-  if (Math.abs(off) > 1e-9 * v) {
-    return refuse(off > 0 ? Outcome.volumeLow : Outcome.volumeHigh, v, point[Point.v] as number)
-  }
-  const cp = point[Point.cp] as number
-  const vT = point[Point.vT] as number
-  const hp = (point[Point.v] as number) - T * vT - (cp * (point[Point.vp] as number)) / vT
-  return write(out, at, point[Point.h] as number, hp, cp / vT)
+  if (T <= borderTemperature13) region1Point(point, p, T)
+  else region3Point(point, p, T)
+  return write(
+    out,
+    at,
+    point[Point.h] as number,
+    enthalpyAlong(point, slope),
+    -(point[Point.cp] as number),
+  )
 }

@@ -2,13 +2,13 @@
 export * from './constants.ts'
 export {
   enthalpyAtPressureDryness,
-  enthalpyAtPressureEntropy,
   enthalpyAtPressureSubcooling,
   enthalpyAtPressureSuperheat,
   enthalpyAtPressureTemperature,
-  enthalpyAtPressureVolume,
 } from './enthalpy.ts'
+export { enthalpyAtPressureEntropy, enthalpyAtPressureVolume } from './enthalpy-isobar.ts'
 export { Outcome, type RangeProblem, type RangeQuantity, rangeProblem } from './outcome.ts'
+export { type Phase, phaseOf } from './phase.ts'
 export { RESULT_SIZE, Result, SATURATION_SIZE, Saturation, STATE_SIZE, State } from './records.ts'
 export {
   drySaturatedEnthalpyAtEntropy,
@@ -19,3 +19,10 @@ export {
   saturationTemperature,
 } from './saturation.ts'
 export { stateAtPressureEnthalpy } from './state.ts'
+export {
+  type StatePair,
+  type SteamRange,
+  type SteamSeveral,
+  type SteamState,
+  state,
+} from './states.ts'

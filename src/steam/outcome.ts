@@ -1,6 +1,6 @@
 /**
  * Outcomes of the steam functions. The hot functions answer with one of these small integers; 0 is
- * fine, anything else left the outputs as they were and set `rangeProblem`.
+ * fine, anything else left the outputs as they were and set `rangeProblem`. An input that is not a number counts as too low.
  */
 export const Outcome = {
   fine: 0,
@@ -18,8 +18,8 @@ export const Outcome = {
   onSaturation: 11,
   /** A superheat or a subcooling below zero: the state lies on the other side of saturation. */
   differenceLow: 12,
-  /** An input is not a finite number. */
-  notFinite: 13,
+  drynessLow: 13,
+  drynessHigh: 14,
 } as const
 
 /** What the range problem is about. */
@@ -30,6 +30,7 @@ export type RangeQuantity =
   | 'entropy'
   | 'volume'
   | 'difference'
+  | 'dryness'
 
 /** A refusal: the quantity, its value and the nearest limit, in SI units. */
 export interface RangeProblem {
@@ -52,7 +53,8 @@ const quantities: readonly RangeQuantity[] = [
   'volume',
   'temperature',
   'difference',
-  'pressure',
+  'dryness',
+  'dryness',
 ]
 
 // code, value, limit of the last refusal

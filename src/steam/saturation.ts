@@ -1,12 +1,14 @@
 /** Saturation properties with their derivatives along the saturation line. */
 import {
   borderPressure13,
+  criticalDensity,
   criticalPressure,
   criticalTemperature,
   lowestSaturationPressure,
   lowestTemperature,
 } from './constants.ts'
-import { POINT_SIZE, region1Point, region2Point } from './if97/point.ts'
+import { POINT_SIZE, Point, region1Point, region2Point } from './if97/point.ts'
+import { FIELD_SIZE, Field, region3Field, region3SaturatedDensity } from './if97/region3.ts'
 import {
   saturationPressureOf,
   saturationSlope,
@@ -20,6 +22,10 @@ const lastPressure = criticalPressure * (1 - 1e-12)
 
 const liquid = new Float64Array(POINT_SIZE)
 const vapour = new Float64Array(POINT_SIZE)
+const field = new Float64Array(FIELD_SIZE)
+
+/** Pa below the critical pressure from which saturated densities are carried on, see `denseSide`. */
+const lastGap = 100
 
 // Many streams of a plant share a pressure: saturation records already computed, found by a hash of p.
 const CACHE_RECORDS = 512
@@ -28,8 +34,8 @@ const cache = new Float64Array(CACHE_RECORDS * SATURATION_SIZE)
 /** Whether a pressure has a saturation state (611.213 Pa to below the critical pressure), else why not. */
 export function checkSaturationPressure(p: number): number {
   if (p >= lowestSaturationPressure && p < criticalPressure) return Outcome.fine
-  if (!Number.isFinite(p)) return refuse(Outcome.notFinite, p, lowestSaturationPressure)
-  if (p < lowestSaturationPressure) return refuse(Outcome.pressureLow, p, lowestSaturationPressure)
+  if (!(p >= lowestSaturationPressure))
+    return refuse(Outcome.pressureLow, p, lowestSaturationPressure)
   return refuse(Outcome.pressureHigh, p, criticalPressure)
 }
 
@@ -48,19 +54,65 @@ export const saturationCache: Float64Array = cache
 
 /** Fills a saturation record from p and the saturation temperature that belongs to it. */
 function computeSaturation(record: Float64Array, at: number, p: number, T: number): void {
-  if (p <= borderPressure13) {
-    region1Point(liquid, p, T)
-    region2Point(vapour, p, T)
-  } else {
-    region1Point(liquid, p, T)
-    region2Point(vapour, p, T)
-  }
   const slope = saturationSlope(p, T)
   record[at] = p
   record[at + Saturation.T] = T
   record[at + Saturation.Tp] = slope
+  if (p > borderPressure13) {
+    denseSide(record, at, 0, p, T, slope)
+    denseSide(record, at, 1, p, T, slope)
+    return
+  }
+  region1Point(liquid, p, T)
+  region2Point(vapour, p, T)
   side(record, at, 0, liquid, T, slope)
   side(record, at, 1, vapour, T, slope)
+}
+
+/**
+ * One side of the record in region 3: T from the saturation line, the density from the basic equation.
+ * In the last 100 Pa below the critical pressure the two no longer meet to the digits of a double; there
+ * the densities close in on the critical one with the square root of the gap, as they do before.
+ */
+function denseSide(
+  record: Float64Array,
+  at: number,
+  shift: number,
+  p: number,
+  T: number,
+  slope: number,
+): void {
+  const gap = criticalPressure - p
+  const sign = shift === 0 ? 1 : -1
+  let rho: number
+  let rhoP: number
+  if (gap > lastGap) {
+    rho = region3SaturatedDensity(field, p, T, gap, sign)
+    rhoP = (1 - (field[Field.pT] as number) * slope) / (field[Field.pRho] as number)
+  } else {
+    const edge = criticalPressure - lastGap
+    const edgeRho = region3SaturatedDensity(
+      field,
+      edge,
+      saturationTemperatureOf(edge),
+      lastGap,
+      sign,
+    )
+    const off = (edgeRho - criticalDensity) * Math.sqrt(gap / lastGap)
+    rho = criticalDensity + off
+    rhoP = -off / (2 * gap)
+    region3Field(field, rho, T)
+  }
+  const v = 1 / rho
+  const base = at + shift
+  const pT = field[Field.pT] as number
+  record[base + Saturation.hL] = field[Field.h] as number
+  record[base + Saturation.sL] = field[Field.s] as number
+  record[base + Saturation.vL] = v
+  record[base + Saturation.hLp] =
+    (field[Field.hRho] as number) * rhoP + (field[Field.hT] as number) * slope
+  record[base + Saturation.sLp] = -pT * v * v * rhoP + ((field[Field.cv] as number) / T) * slope
+  record[base + Saturation.vLp] = -v * v * rhoP
 }
 
 /** One side of the record: properties of a point and their derivatives along the line. */
@@ -79,7 +131,7 @@ function side(
   record[base + Saturation.hL] = point[0] as number
   record[base + Saturation.sL] = point[1] as number
   record[base + Saturation.vL] = v
-  record[base + Saturation.hLp] = v - T * vT + cp * slope
+  record[base + Saturation.hLp] = (point[Point.hp] as number) + cp * slope
   record[base + Saturation.sLp] = (cp / T) * slope - vT
   record[base + Saturation.vLp] = (point[5] as number) + vT * slope
 }
@@ -112,8 +164,7 @@ export function saturationAtTemperature(record: Float64Array, at: number, T: num
 
 function checkSaturationTemperature(T: number): number {
   if (T >= lowestTemperature && T < criticalTemperature) return Outcome.fine
-  if (!Number.isFinite(T)) return refuse(Outcome.notFinite, T, lowestTemperature)
-  if (T < lowestTemperature) return refuse(Outcome.temperatureLow, T, lowestTemperature)
+  if (!(T >= lowestTemperature)) return refuse(Outcome.temperatureLow, T, lowestTemperature)
   return refuse(Outcome.temperatureHigh, T, criticalTemperature)
 }
 

@@ -1,7 +1,7 @@
 /**
  * The forward equations at one point, in SI units: a POINT holds h (J/kg), s (J/(kg K)), v (m3/kg),
- * cp (J/(kg K)), dv/dT at constant p and dv/dp at constant T. All first partials of a single-phase
- * state follow from these six.
+ * cp (J/(kg K)), dv/dT at constant p, dv/dp and dh/dp at constant T. All first partials of a
+ * single-phase state follow from these.
  */
 import { gasConstant } from '../constants.ts'
 import { region1Potential } from './unrolled-region1.ts'
@@ -9,8 +9,8 @@ import { region2Potential } from './unrolled-region2.ts'
 import { region5Potential } from './unrolled-region5.ts'
 
 /** Slots of a point. */
-export const Point = { h: 0, s: 1, v: 2, cp: 3, vT: 4, vp: 5 } as const
-export const POINT_SIZE = 6
+export const Point = { h: 0, s: 1, v: 2, cp: 3, vT: 4, vp: 5, hp: 6 } as const
+export const POINT_SIZE = 7
 
 const g = new Float64Array(6)
 
@@ -26,6 +26,8 @@ function fromGibbs(point: Float64Array, T: number, Tstar: number, pstar: number)
   point[3] = -gasConstant * tau * tau * (g[5] as number)
   point[4] = volumeScale * (gPi - tau * (g[4] as number))
   point[5] = (volumeScale * T * (g[2] as number)) / pstar
+  // v - T dv/dT without the cancellation that it has in a thin gas
+  point[6] = volumeScale * Tstar * (g[4] as number)
 }
 
 /** Region 1 at p (Pa) and T (K). */

@@ -24,42 +24,75 @@ const settled = 1e-6
 /** Steps before a solution is given up; from the backward equations two are enough. */
 const MOST_STEPS = 30
 
-/** Region 1: T (K) of p (Pa) and h (J/kg); `guess` 0 starts from the backward equation. */
-export function region1TemperatureAtEnthalpy(p: number, h: number, guess: number): number {
+/**
+ * Beyond a border (K) an iterate may stray this far: within the region h rises with T and the answer is
+ * the only one, further out the equations bend back.
+ */
+const stray = 0.5
+
+/**
+ * Region 1: T (K) of p (Pa) and h (J/kg). `guess` 0 starts from the backward equation; `ceiling` (K) is
+ * the saturation temperature or the border to region 3.
+ */
+export function region1TemperatureAtEnthalpy(
+  p: number,
+  h: number,
+  guess: number,
+  ceiling: number,
+): number {
   const x = 7.1 - p / 16.53e6
   const target = h / (gasConstant * 1386)
-  const start =
-    guess > 260 && guess < 640
-      ? guess
-      : Math.min(640, Math.max(265, region1TemperatureFromEnthalpy(p * 1e-6, h / 2.5e6 + 1)))
-  let tau = 1386 / start
+  const most = ceiling + stray
+  let T =
+    guess > 260 && guess < most ? guess : region1TemperatureFromEnthalpy(p * 1e-6, h / 2.5e6 + 1)
+  if (!(T > 265)) T = 265
+  else if (T > most) T = most
+  const least = 1386 / most
+  let tau = 1386 / T
   for (let i = 0; i < MOST_STEPS; i++) {
     region1Slopes(g, x, tau - 1.222)
     const off = (g[0] as number) - target
     const slope = g[1] as number
-    const step = (2 * off * slope) / (2 * slope * slope - off * (g[2] as number))
+    const bend = off * (g[2] as number)
+    const square = slope * slope
+    // Far off, where the curve bends too much for Halley's step, Newton's.
+    const step = bend < square ? (2 * off * slope) / (2 * square - bend) : off / slope
     tau -= step
     if (tau > 5.3) tau = 5.3
-    else if (tau < 2.1) tau = 2.1
+    else if (tau < least) tau = least
     if (Math.abs(step) < settled * tau) break
   }
   return 1386 / tau
 }
 
-/** Region 2: T (K) of p (Pa) and h (J/kg), clamped to 1075 K; `guess` 0 starts from the backward equations. */
-export function region2TemperatureAtEnthalpy(p: number, h: number, guess: number): number {
+/**
+ * Region 2: T (K) of p (Pa) and h (J/kg), never above 1075 K. `guess` 0 starts from the backward
+ * equations; `floor` (K) is the saturation temperature, the border to region 3 or 273.15 K.
+ */
+export function region2TemperatureAtEnthalpy(
+  p: number,
+  h: number,
+  guess: number,
+  floor: number,
+): number {
   const pi = p * 1e-6
   const target = h / (gasConstant * 540)
-  const start =
-    guess > 260 && guess < 1075 ? guess : Math.min(1075, Math.max(265, region2Guess(pi, h)))
-  let tau = 540 / start
+  const least = floor - stray
+  let T = guess > least && guess < 1075 ? guess : region2Guess(pi, h)
+  if (!(T > least)) T = least
+  else if (T > 1075) T = 1075
+  const most = 540 / least
+  let tau = 540 / T
   for (let i = 0; i < MOST_STEPS; i++) {
     region2Slopes(g, pi, tau)
     const off = (g[0] as number) - target
     const slope = g[1] as number
-    const step = (2 * off * slope) / (2 * slope * slope - off * (g[2] as number))
+    const bend = off * (g[2] as number)
+    const square = slope * slope
+    // Far off, where the curve bends too much for Halley's step, Newton's.
+    const step = bend < square ? (2 * off * slope) / (2 * square - bend) : off / slope
     tau -= step
-    if (tau > 2.1) tau = 2.1
+    if (tau > most) tau = most
     else if (tau < 0.5023) tau = 0.5023
     if (Math.abs(step) < settled * tau) break
   }
