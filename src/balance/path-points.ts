@@ -41,8 +41,8 @@ const ENTROPY_SPAN = 10_000
 const TEMPERATURE_SPAN = 600
 const ENTHALPY_SPAN = 4e6
 
-/** Greatest distance of a chord from its path, as a share of the spans: an eighth of a pixel in 500. */
-const flatness = 1 / 4000
+/** Greatest distance of a chord from its path, as a share of the spans: a pixel where the chart is magnified twenty times. */
+const flatness = 1 / 10_000
 
 /** Below this miss, in the same shares, a piece is straight: round-off on a plateau. */
 const STRAIGHT = 1e-9

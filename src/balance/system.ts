@@ -63,6 +63,9 @@ export interface PlacedUnit {
   readonly open: readonly string[]
 }
 
+/** What a unit exchanges with the world beside its streams: plain quantities or constants. */
+export type UnitTotals = Partial<Record<TotalName, Expression>>
+
 /** The equations of a layout and what is given in it. */
 export interface System {
   readonly layout: Layout
@@ -75,6 +78,8 @@ export interface System {
   readonly curved: Uint8Array
   readonly units: readonly PlacedUnit[]
   readonly unitOf: ReadonlyMap<string, PlacedUnit>
+  /** By unit: what it adds to the plant's totals. */
+  readonly totalsOf: ReadonlyMap<string, UnitTotals>
   /** First variable of each stream (m; p and h follow), in the layout's order. */
   readonly streamBase: Int32Array
 }
@@ -95,6 +100,7 @@ class Assembly {
   private readonly ports = new Map<string, PortExpressions>()
   private readonly placed: PlacedUnit[] = []
   private readonly totals = new Map<TotalName, Expression[]>()
+  private readonly totalsOf = new Map<string, UnitTotals>()
   private readonly streamBase: Int32Array
 
   constructor(layout: Layout) {
@@ -104,7 +110,9 @@ class Assembly {
 
   system(): System {
     const { layout } = this
-    layout.streams.forEach((stream, k) => this.addStream(stream, k))
+    layout.streams.forEach((stream, k) => {
+      this.addStream(stream, k)
+    })
     const drivenBy = new Set<string>()
     for (const shaft of layout.shafts) for (const id of shaft.pumps) drivenBy.add(id)
     const streamsAt = this.streamsAtUnits()
@@ -129,6 +137,7 @@ class Assembly {
       ),
       units: this.placed,
       unitOf,
+      totalsOf: this.totalsOf,
       streamBase: this.streamBase,
     }
   }
@@ -305,6 +314,7 @@ class Assembly {
     this.addEquations(unit.id, kind.equations(context))
     const totals = kind.totals?.(context)
     if (totals === undefined) return
+    this.totalsOf.set(unit.id, totals)
     for (const [name, expression] of Object.entries(totals) as [TotalName, Expression][]) {
       if (name === 'lineHeatLoss' && !joinsFiredUnitAndTurbine(placed, unitOf, this.layout))
         continue

@@ -4,7 +4,7 @@ import {
   type Operation,
   Outcome,
   type Printed,
-  type Tape,
+  type Rows,
 } from '../equations/expression/index.ts'
 import {
   drySaturatedEnthalpyAtEntropy,
@@ -223,7 +223,7 @@ function form2(name: string, compute: TwoOperandForm, invert: Operation['invert'
   return {
     name,
     memory: formSize + 2,
-    evaluate(tape: Tape, row: number) {
+    evaluate(tape: Rows, row: number) {
       const k = tape.first[row]!
       const at = tape.memoryAt[row]!
       const { memory } = tape
@@ -249,7 +249,7 @@ function form1(name: string, compute: OneOperandForm, invert?: Operation['invert
   return {
     name,
     memory: formSize,
-    evaluate(tape: Tape, row: number) {
+    evaluate(tape: Rows, row: number) {
       const k = tape.first[row]!
       const at = tape.memoryAt[row]!
       const outcome = compute(tape.memory, at, tape.values[tape.operands[k]!]!)

@@ -102,6 +102,11 @@ export const boiler = defineUnitKind({
     turbineHeatCredit: blowdown ? times(blowdown.m, minus(blowdown.h, feedwater.h)) : constant(0),
   }),
   secondLaw: 'fired',
-  paths: () => [{ from: 'feedwater', to: 'steam', course: 'line' }],
+  paths: (shape) => [
+    { from: 'feedwater', to: 'steam', course: 'line' },
+    ...((shape.streams.spray ?? 0) > 0
+      ? [{ from: 'spray', to: 'steam', course: 'throttledLine' as const }]
+      : []),
+  ],
   starts: { steam: 'superheated', blowdown: 'liquid' },
 })

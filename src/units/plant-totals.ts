@@ -110,7 +110,6 @@ export const plantQuantities = {
     symbol: 'ηc',
     dimension: 'ratio',
     help: 'Cycle power over heat input.',
-    possible: { most: 1 },
     step: 0.01,
   },
   grossTurbineHeatRate: {
@@ -118,7 +117,6 @@ export const plantQuantities = {
     symbol: 'GTHR',
     dimension: 'heatRate',
     help: 'Turbine cycle heat over gross power.',
-    possible: { above: 1 },
     step: 0.01,
   },
   netTurbineHeatRate: {
@@ -126,7 +124,6 @@ export const plantQuantities = {
     symbol: 'NTHR',
     dimension: 'heatRate',
     help: 'Turbine cycle heat over gross power less the electric power of the pumps.',
-    possible: { above: 1 },
     step: 0.01,
   },
   unitHeatRate: {
@@ -134,7 +131,6 @@ export const plantQuantities = {
     symbol: 'HR',
     dimension: 'heatRate',
     help: 'Fuel heat over net power.',
-    possible: { above: 1 },
     step: 0.01,
   },
   unitEfficiency: {
@@ -142,7 +138,6 @@ export const plantQuantities = {
     symbol: 'η',
     dimension: 'ratio',
     help: 'Net power over fuel heat.',
-    possible: { most: 1 },
     step: 0.01,
   },
   backWorkRatio: {

@@ -48,7 +48,12 @@ export const reheater = defineUnitKind({
   }),
   totals: ({ quantities: q }) => ({ heatInput: q.heat, fuelHeat: q.fuelHeat }),
   secondLaw: 'fired',
-  paths: () => [{ from: 'inlet', to: 'outlet', course: 'line' }],
+  paths: (shape) => [
+    { from: 'inlet', to: 'outlet', course: 'line' },
+    ...((shape.streams.spray ?? 0) > 0
+      ? [{ from: 'spray', to: 'outlet', course: 'throttledLine' as const }]
+      : []),
+  ],
   passes: [['inlet', 'outlet']],
   starts: { outlet: 'superheated' },
 })

@@ -1,5 +1,5 @@
-import { apply, constant, type Expression, isConstant } from './expression.ts'
-import { type Operation, Outcome, type Printed } from './operation.ts'
+import { apply, constant, isConstant } from './expression.ts'
+import { type Expression, type Operation, Outcome, type Printed } from './operation.ts'
 
 /*
  * Arithmetic as operations. The constructors fold constants, and a factor of exactly 0 or 1 (a

@@ -1,6 +1,6 @@
 import { minus } from './arithmetic.ts'
-import { type Expression, forEachVariable } from './expression.ts'
-import type { Printed } from './operation.ts'
+import { forEachVariable } from './expression.ts'
+import type { Expression, Printed } from './operation.ts'
 
 /**
  * `mass`: sums flows with coefficients of plus or minus one, so that round a closed circuit one of

@@ -1,25 +1,4 @@
-import type { Operation } from './operation.ts'
-
-/** A quantity of the plant, unknown or given; `index` counts them from 0. */
-export interface Variable {
-  readonly kind: 'variable'
-  readonly index: number
-  readonly name: string
-}
-
-export interface Constant {
-  readonly kind: 'constant'
-  readonly value: number
-}
-
-export interface Application {
-  readonly kind: 'application'
-  readonly operation: Operation
-  readonly operands: readonly Expression[]
-}
-
-/** An expression is shared by identity: the same object is evaluated once. */
-export type Expression = Variable | Constant | Application
+import type { Application, Constant, Expression, Operation, Variable } from './operation.ts'
 
 export function variable(index: number, name: string): Variable {
   return { kind: 'variable', index, name }

@@ -1,5 +1,39 @@
-import type { Expression } from './expression.ts'
-import type { Tape } from './tape.ts'
+/** A quantity of the plant, unknown or given; `index` counts them from 0. */
+export interface Variable {
+  readonly kind: 'variable'
+  readonly index: number
+  readonly name: string
+}
+
+export interface Constant {
+  readonly kind: 'constant'
+  readonly value: number
+}
+
+export interface Application {
+  readonly kind: 'application'
+  readonly operation: Operation
+  readonly operands: readonly Expression[]
+}
+
+/** An expression is shared by identity: the same object is evaluated once. */
+export type Expression = Variable | Constant | Application
+
+/** What an operation sees of the tape that its rows stand on. */
+export interface Rows {
+  /** By slot: its number. */
+  readonly values: Float64Array
+  /** By row: the place of its first operand; the row after it tells where they end. */
+  readonly first: Int32Array
+  /** Slots of the operands, and, in parallel, the row's partials to them. */
+  readonly operands: Int32Array
+  readonly partials: Float64Array
+  /** Working memory, and by row where its own begins. */
+  readonly memory: Float64Array
+  readonly memoryAt: Int32Array
+  /** The slot that a row writes. */
+  slotOf(row: number): number
+}
 
 /** Outcomes of evaluating one operation. Integers, because inner loops hand them on; 0 is fine. */
 export const Outcome = {
@@ -34,7 +68,7 @@ export interface Operation {
    * Writes the value of the row and its partials to each operand into the tape.
    * Returns an `Outcome`; when it is not fine, value and partials stay as they were.
    */
-  readonly evaluate: (tape: Tape, row: number) => number
+  readonly evaluate: (tape: Rows, row: number) => number
   /** The expression that operand `index` must equal for the result to be `target`, where there is one. */
   readonly invert?: (
     target: Expression,

@@ -1,5 +1,10 @@
-import type { Application, Expression } from './expression.ts'
-import { type Operation, Outcome } from './operation.ts'
+import {
+  type Application,
+  type Expression,
+  type Operation,
+  Outcome,
+  type Rows,
+} from './operation.ts'
 
 /**
  * Expressions lowered into rows of typed arrays. A slot holds one number: first the variables, then
@@ -7,7 +12,7 @@ import { type Operation, Outcome } from './operation.ts'
  * `operands[first[r]] .. operands[first[r + 1] - 1]`, writes `values[slotOf(r)]` and, in parallel
  * with the operands, the partials. Evaluating allocates nothing.
  */
-export class Tape {
+export class Tape implements Rows {
   readonly values: Float64Array
   readonly operations: readonly Operation[]
   readonly first: Int32Array

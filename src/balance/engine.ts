@@ -1,0 +1,185 @@
+import type { Answer, BalanceMessage, NamesMessage, ProcessName, Request } from '../messages.ts'
+import type { Layout } from '../plant/document.ts'
+import { curvesOf, isobarsOf } from './chart-data.ts'
+import { Model } from './model.ts'
+import { domePoints } from './paths.ts'
+import { Results } from './results.ts'
+import { type Balance, solve } from './solve.ts'
+
+/** Answers the window's requests; keeps the last model, so that an edit of a value solves warm. */
+export interface Engine {
+  answer(request: Request): Answer[]
+}
+
+/** `clock` tells the time in ms. */
+export function createEngine(clock: () => number = Date.now): Engine {
+  let kept: { model: Model; results: Results; signature: string; number: number } | undefined
+  let counter = 0
+  let domeSent = false
+  let keptNames: Layout | undefined
+
+  function modelFor(layout: Layout): { model: Model; results: Results; number: number } {
+    const signature = signatureOf(layout)
+    if (kept !== undefined && kept.signature === signature && update(kept.model, layout))
+      return kept
+    const model = new Model(layout)
+    counter++
+    kept = { model, results: new Results(model), signature, number: counter }
+    return kept
+  }
+
+  return {
+    answer(request) {
+      const start = clock()
+      const answers: Answer[] = []
+      const layout = request.plant.layouts.find((one) => one.id === request.layout)
+      if (layout === undefined) {
+        return [
+          {
+            type: 'unusable',
+            sequence: request.sequence,
+            message: `The plant has no layout ${request.layout}.`,
+          },
+        ]
+      }
+      if (!domeSent) {
+        domeSent = true
+        answers.push({ type: 'dome', points: domePoints() })
+      }
+      try {
+        const { model, results, number } = modelFor(layout)
+        const balance = solve(model, results)
+        if (keptNames === undefined || kept?.model.system.layout !== keptNames) {
+          keptNames = model.system.layout
+          answers.push(namesOf(balance, number))
+        }
+        answers.push({
+          ...balanceMessage(request, balance, number),
+          milliseconds: clock() - start,
+        })
+      } catch (error) {
+        // A programming mistake must not leave the window waiting for an answer.
+        kept = undefined
+        answers.push({
+          type: 'unusable',
+          sequence: request.sequence,
+          message: `The balance failed: ${error instanceof Error ? error.message : String(error)}`,
+        })
+      }
+      return answers
+    },
+  }
+}
+
+/** What must stay the same for a model to serve a layout with other values. */
+function signatureOf(layout: Layout): string {
+  const givens = (given: Layout['plant']['given']): string =>
+    Object.entries(given)
+      .map(([name, value]) =>
+        typeof value === 'number' ? name : `${name}:${JSON.stringify(value)}`,
+      )
+      .join(',')
+  return [
+    layout.id,
+    `${layout.ambient.T},${layout.ambient.p}`,
+    ...layout.units.map(
+      (unit) =>
+        `${unit.id}|${unit.kind}|${unit.label}|${JSON.stringify(unit.options ?? {})}|${givens(unit.given)}`,
+    ),
+    ...layout.streams.map(
+      (stream) =>
+        `${stream.id}|${stream.from}|${stream.to}|${stream.label ?? ''}|${givens(stream.given)}`,
+    ),
+    ...layout.shafts.map(
+      (shaft) =>
+        `${shaft.id}|${shaft.turbines}|${shaft.pumps}|${shaft.generator}|${shaft.label ?? ''}|${givens(shaft.given)}`,
+    ),
+    givens(layout.plant.given),
+  ].join(';')
+}
+
+/** Takes over the values of a layout with the same signature; false where one folds or unfolds. */
+function update(model: Model, layout: Layout): boolean {
+  const take = (owner: string, given: Layout['plant']['given']): boolean => {
+    for (const [name, value] of Object.entries(given)) {
+      if (typeof value !== 'number') continue
+      const index = model.system.indexOf.get(`${owner}.${name}`)
+      if (index !== undefined && !model.set(index, value)) return false
+    }
+    return true
+  }
+  return (
+    layout.units.every((unit) => take(unit.id, unit.given)) &&
+    layout.streams.every((stream) => take(stream.id, stream.given)) &&
+    layout.shafts.every((shaft) => take(shaft.id, shaft.given)) &&
+    take('plant', layout.plant.given)
+  )
+}
+
+function namesOf({ model, results }: Balance, structure: number): NamesMessage {
+  const processes: ProcessName[] = []
+  for (const { unit, kind, shape, streams } of model.system.units) {
+    for (const { from, to } of kind.paths(shape)) {
+      const first = streams.get(from)
+      const last = streams.get(to)
+      if (first !== undefined && last !== undefined) {
+        processes.push({ unit: unit.id, from: first, to: last })
+      }
+    }
+  }
+  return {
+    type: 'names',
+    structure,
+    paths: results.paths,
+    streams: model.system.layout.streams.map((stream) => stream.id),
+    processes,
+  }
+}
+
+function balanceMessage(
+  request: Request,
+  balance: Balance,
+  structure: number,
+): Omit<BalanceMessage, 'milliseconds'> {
+  const { model, results } = balance
+  const { missing, excess, equationCount, blocks } = model.structure
+  return {
+    type: 'balance',
+    sequence: request.sequence,
+    structure,
+    status: balance.status,
+    values: results.values.slice(),
+    phases: results.states.phases.slice(),
+    findings: balance.findings,
+    ledger: {
+      unknowns: equationCount + missing - excess,
+      equations: equationCount,
+      blocks: blocks.length,
+      iterations: balance.iterations,
+      missing,
+      excess,
+    },
+    closure: balance.closure,
+    undetermined: balance.undetermined,
+    unbounded: balance.unbounded,
+    curves: curvesOf(balance),
+    isobars: isobarsOf(balance),
+  }
+}
+
+/** Buffers that may be handed over instead of copied. */
+export function transferables(answer: Answer): ArrayBuffer[] {
+  if (answer.type === 'dome') return [answer.points.buffer as ArrayBuffer]
+  if (answer.type !== 'balance') return []
+  const { values, phases, curves, isobars } = answer
+  return [
+    values,
+    phases,
+    curves.points,
+    curves.starts,
+    curves.flows,
+    isobars.pressures,
+    isobars.points,
+    isobars.starts,
+  ].map((array) => array.buffer as ArrayBuffer)
+}
