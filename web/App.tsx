@@ -5,7 +5,7 @@ import { runCommand } from './commands/command-store.ts'
 import { Dialogs } from './commands/Dialogs.tsx'
 import { Divider } from './Divider.tsx'
 import { Drawer } from './drawer/Drawer.tsx'
-import { Rail } from './rail/Rail.tsx'
+import Rail from './rail/Rail.tsx'
 import { useSettingsStore } from './store/settings-store.ts'
 import { Notices } from './strip/Notices.tsx'
 import { Strip } from './strip/Strip.tsx'
@@ -36,7 +36,8 @@ function Sheet({ room }: { room: number }) {
   const folded = useSettingsStore((state) => state.drawerFolded)
   const change = useSettingsStore((state) => state.change)
   const most = Math.max(drawerHead + 60, room - 160)
-  const shown = folded ? drawerHead : Math.min(height, most)
+  const usual = Math.round(0.42 * room - 100)
+  const shown = folded ? drawerHead : Math.min(height ?? usual, most)
   return (
     <>
       <div className="canvas-place">

@@ -1,9 +1,9 @@
-import { useLayoutEffect, useRef } from 'react'
+import { useLayoutEffect, useRef, useState } from 'react'
 import type { QuantityEntry } from '../../src/document.ts'
-import { focusNumber } from '../number/focus.ts'
+import { focusNumber, useFocusWantedAmong } from '../number/focus.ts'
 import { free, give } from '../number/give.ts'
 import { QuantityField } from '../number/QuantityField.tsx'
-import { readValue } from '../store/balance-store.ts'
+import { readValue, useBalanceStore } from '../store/balance-store.ts'
 import { readGiven, usePlantStore } from '../store/plant-store.ts'
 import type { CardContent } from './card-content.ts'
 
@@ -46,6 +46,18 @@ function Row({ entry, given }: { entry: QuantityEntry; given: boolean }) {
   )
 }
 
+/**
+ * Which quantities stay open in a solved plant: they only describe, and nothing needs them. One digit
+ * an entry. While the plant is not solved none counts as such: any may be the one that is missing.
+ */
+function useIdle(entries: readonly QuantityEntry[]): string {
+  return useBalanceStore(({ balance }) =>
+    entries
+      .map(({ path }) => (balance?.status === 'solved' && readValue(path) === null ? '1' : '0'))
+      .join(''),
+  )
+}
+
 /** Moves the focus by rows, within its column. */
 function moveFocus(table: HTMLElement, step: number): boolean {
   const here = document.activeElement
@@ -65,13 +77,19 @@ export function CardRows({ content }: { content: CardContent }) {
     content.entries.map(({ path }) => (readGiven(path) === undefined ? '0' : '1')).join(''),
   )
   const given = content.entries.filter((_, i) => sides[i] === '1')
-  const solved = content.entries.filter((_, i) => sides[i] === '0')
+  const idle = useIdle(content.entries)
+  const [all, setAll] = useState(false)
+  const idlePaths = content.entries.filter((_, i) => idle[i] === '1').map(({ path }) => path)
+  const lookedFor = useFocusWantedAmong(idlePaths)
+  if (lookedFor && !all) setAll(true)
+  const solved = content.entries.filter((_, i) => sides[i] === '0' && (all || idle[i] === '0'))
+  const hidden = content.entries.length - given.length - solved.length
 
   // A row that changes sides takes the focus along.
   const focused = useRef<string | null>(null)
   useLayoutEffect(() => {
     const mark = focused.current
-    if (sides === '' || !mark || table.current?.contains(document.activeElement)) return
+    if (sides === '' || !mark || document.activeElement !== document.body) return
     table.current?.querySelector<HTMLElement>(mark)?.focus()
   }, [sides])
 
@@ -85,6 +103,11 @@ export function CardRows({ content }: { content: CardContent }) {
       onFocus={(event) => {
         const { path, turn } = event.target.dataset
         focused.current = turn ? `[data-turn="${turn}"]` : path ? `[data-path="${path}"]` : null
+      }}
+      onBlur={(event) => {
+        if (event.relatedTarget && !table.current?.contains(event.relatedTarget)) {
+          focused.current = null
+        }
       }}
       onKeyDown={(event) => {
         const step = { ArrowDown: 1, ArrowUp: -1 }[event.key]
@@ -116,6 +139,17 @@ export function CardRows({ content }: { content: CardContent }) {
           {solved.map((entry) => (
             <Row key={entry.path} entry={entry} given={false} />
           ))}
+        </tbody>
+      )}
+      {hidden > 0 && (
+        <tbody>
+          <tr>
+            <td colSpan={3} className="card-more">
+              <button type="button" onClick={() => setAll(true)}>
+                and {hidden} open
+              </button>
+            </td>
+          </tr>
         </tbody>
       )}
     </table>

@@ -1,15 +1,16 @@
 import type { Box, Obstacle } from './place-card.ts'
 
-/** What is drawn on the canvas, found by the classes that the canvas library gives it. */
+/** What is drawn on the canvas, found by its classes. */
 const unitSelector = '.react-flow__node'
-const streamSelector = '.react-flow__edge-path'
+const streamSelector = '.stream-line'
+const textSelector = '.unit-label, .stream-tag, .canvas-controls'
 /** Room to be left around things, px. */
 const around = 6
 /** How far apart a stream's line is looked at, px on screen. */
 const pitch = 14
 
-/** Covering the selected thing itself is worst, then symbols, then lines. */
-const weights = { selected: 20, unit: 4, stream: 1 }
+/** Covering the selected thing itself is worst, then symbols, then texts, then lines. */
+const weights = { selected: 20, unit: 4, text: 2, stream: 1 }
 
 function boxOf(element: Element, area: DOMRect): Box {
   const { left, top, width, height } = element.getBoundingClientRect()
@@ -53,9 +54,12 @@ export function canvasObstacles(
     obstacles.push({ ...box, weight: its ? weights.selected : weights.unit })
   }
   for (const path of canvas.querySelectorAll<SVGPathElement>(streamSelector)) {
-    const its = path.closest('[data-id]')?.getAttribute('data-id') === selected
+    const its = path.closest('[data-stream]')?.getAttribute('data-stream') === selected
     if (its) anchor = boxOf(path, area)
     alongPath(path, area, obstacles, its ? weights.selected : weights.stream)
+  }
+  for (const element of canvas.querySelectorAll(textSelector)) {
+    obstacles.push({ ...boxOf(element, area), weight: weights.text })
   }
   return { obstacles, anchor }
 }

@@ -55,13 +55,12 @@ function Phase({ id }: { id: string }) {
 }
 
 const Row = memo(function Row({ row, index }: { row: StreamRow; index: number }) {
-  const { id, name } = row
-  const selected = useSelectionStore((state) => state.selected.includes(id))
+  const { id, name, chosen } = row
   const hovered = useSelectionStore((state) => state.hovered === id)
   const { select, hover } = useSelectionStore.getState()
   return (
     <tr
-      data-selected={selected}
+      data-selected={chosen}
       data-hovered={hovered}
       aria-rowindex={index + 2}
       onPointerEnter={() => hover(id)}

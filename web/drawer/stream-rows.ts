@@ -1,9 +1,12 @@
 import { findPort, type Layout, labelOf, type Stream, splitPath } from '../../src/document.ts'
+import { withinSentence } from '../number/give.ts'
 
 export interface StreamRow {
   readonly type: 'stream'
   readonly id: string
   readonly name: string
+  /** Belongs to what is selected. */
+  readonly chosen: boolean
 }
 
 export interface HeadRow {
@@ -41,7 +44,12 @@ function names(layout: Layout): Map<string, string> {
 /** The rows of the table of state points: what belongs to the selection first, the rest by what it carries. */
 export function stateRows(layout: Layout, selected: readonly string[]): readonly StateRow[] {
   const nameOf = names(layout)
-  const row = ({ id }: Stream): StreamRow => ({ type: 'stream', id, name: nameOf.get(id) ?? id })
+  const row = ({ id }: Stream): StreamRow => ({
+    type: 'stream',
+    id,
+    name: nameOf.get(id) ?? id,
+    chosen: chosen.some((one) => one.id === id),
+  })
   const touches = ({ id, from, to }: Stream) =>
     selected.includes(id) ||
     selected.some((one) => [from, to].some((end) => end.startsWith(`${one}.`)))
@@ -51,7 +59,7 @@ export function stateRows(layout: Layout, selected: readonly string[]): readonly
     const [first] = selected
     const name =
       selected.length === 1 && first !== undefined && layout.units.some(({ id }) => id === first)
-        ? `At ${labelOf(layout, first)}`
+        ? `At ${withinSentence(labelOf(layout, first))}`
         : 'Selected'
     rows.push({ type: 'head', id: 'head/selected', name }, ...chosen.map(row))
   }

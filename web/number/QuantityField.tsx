@@ -26,7 +26,13 @@ interface Props {
   readonly showUnit?: boolean
 }
 
-const words = { given: 'given', solved: 'solved', open: 'open', conflicting: 'given, too many' }
+const words = {
+  given: 'given',
+  solved: 'solved',
+  open: 'open',
+  conflicting: 'given, too many',
+  none: 'has no meaning here',
+}
 
 let openings = 0
 

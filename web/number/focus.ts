@@ -16,6 +16,11 @@ export function focusGranted(): void {
   useFocusStore.setState({ path: null, edit: false })
 }
 
+/** Whether the focus is wanted on one of these numbers. */
+export function useFocusWantedAmong(paths: readonly string[]): boolean {
+  return useFocusStore((state) => state.path !== null && paths.includes(state.path))
+}
+
 /** Whether the focus is wanted here: null no, else whether the field is to open. */
 export function useFocusWanted(path: string): boolean | null {
   return useFocusStore((state) => (state.path === path ? state.edit : null))

@@ -34,6 +34,8 @@ export interface BalanceState {
   readonly balance: BalanceMessage | null
   readonly dome: DomeMessage | null
   readonly index: Index
+  /** Paths that nothing fixes or bounds in the balance shown. */
+  readonly open: ReadonlySet<string>
   /** A newer plant is being solved; what is shown belongs to the one before. */
   readonly stale: boolean
   /** The solved balance before the last edit, to show what the edit did; null where there is none. */
@@ -56,6 +58,7 @@ export interface BalanceState {
   setStale(stale: boolean): void
 }
 
+const nothing: ReadonlySet<string> = new Set()
 const noIndex: Index = { paths: new Map(), streams: new Map() }
 const indexes = new WeakMap<NamesMessage, Index>()
 
@@ -100,6 +103,7 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
   balance: null,
   dome: null,
   index: noIndex,
+  open: nothing,
   stale: false,
   before: null,
   editsSince: 0,
@@ -123,6 +127,7 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
       names,
       balance,
       index,
+      open: new Set([...balance.undetermined, ...balance.unbounded]),
       before,
       editsSince: before ? asked.edit - editBefore : 0,
       lastEdit: asked.editName,
@@ -131,7 +136,7 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
     })
   },
   clear() {
-    set({ names: null, balance: null, index: noIndex, before: null, editsSince: 0 })
+    set({ names: null, balance: null, index: noIndex, open: nothing, before: null, editsSince: 0 })
   },
   showDome(dome) {
     set({ dome })
@@ -173,6 +178,22 @@ export function usePhase(streamId: string): Phase {
 
 export function readPhase(streamId: string): Phase {
   return phaseIn(useBalanceStore.getState(), streamId)
+}
+
+/**
+ * True where a quantity without a value has none to have: the dryness of superheated steam, say.
+ * False while something could still fix it.
+ */
+export function useMeaningless(path: string): boolean {
+  return useBalanceStore((state) => {
+    if (!state.index.paths.has(path) || state.open.has(path)) return false
+    if (valueIn(state.index, state.balance, path) !== null) return false
+    const owner = path.slice(0, path.indexOf('.'))
+    return (
+      state.balance?.status === 'solved' ||
+      valueIn(state.index, state.balance, `${owner}.h`) !== null
+    )
+  })
 }
 
 /** True where the balance shown has a finding that a given too many stands in. */

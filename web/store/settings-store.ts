@@ -11,8 +11,8 @@ interface Settings {
   readonly theme: Theme
   /** Share of the window's width that the chart takes. */
   readonly chartShare: number
-  /** Height of the drawer's open part, px. */
-  readonly drawerHeight: number
+  /** Height of the open drawer, px. Null: as much as suits the window. */
+  readonly drawerHeight: number | null
   readonly drawerTab: DrawerTab
   readonly drawerFolded: boolean
   readonly chartFolded: boolean
@@ -29,7 +29,7 @@ const usual: Settings = {
   unitOverrides: {},
   theme: 'system',
   chartShare: 0.28,
-  drawerHeight: 260,
+  drawerHeight: null,
   drawerTab: 'states',
   drawerFolded: false,
   chartFolded: false,

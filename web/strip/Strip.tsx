@@ -122,7 +122,9 @@ function Units() {
   return (
     <label className="choice">
       <span className="visually-hidden">Units</span>
+      <span aria-hidden="true">{unitSets.find(({ name }) => name === unitSet)?.sample}</span>
       <select
+        className="choice-behind"
         title="Units of measure"
         value={unitSet}
         onChange={(event) => {
@@ -131,8 +133,8 @@ function Units() {
         }}
       >
         {unitSets.map(({ name, label, sample }) => (
-          <option key={name} value={name} label={`${label}: ${sample}`}>
-            {sample}
+          <option key={name} value={name}>
+            {label}: {sample}
           </option>
         ))}
       </select>

@@ -15,12 +15,14 @@ import './totals.css'
 interface Total {
   readonly name: string
   readonly label: string
+  /** What is left away where there is little room; the card of the plant says it. */
+  readonly basis?: string
 }
 
 const chief: readonly Total[] = [
   { name: 'netPower', label: 'Net power' },
-  { name: 'unitHeatRate', label: 'Unit heat rate, net' },
-  { name: 'unitEfficiency', label: 'Unit efficiency, net' },
+  { name: 'unitHeatRate', label: 'Unit heat rate', basis: ', net' },
+  { name: 'unitEfficiency', label: 'Unit efficiency', basis: ', net' },
 ]
 
 const others: readonly Total[] = [
@@ -28,8 +30,8 @@ const others: readonly Total[] = [
   { name: 'heatInput', label: 'Heat to steam' },
   { name: 'auxiliaryPower', label: 'Auxiliaries' },
   { name: 'fuelHeat', label: 'Fuel heat' },
-  { name: 'netTurbineHeatRate', label: 'Net turbine heat rate' },
   { name: 'heatRejected', label: 'Heat rejected' },
+  { name: 'netTurbineHeatRate', label: 'Net turbine heat rate' },
 ]
 
 const table: QuantityTable = plantQuantities
@@ -72,11 +74,14 @@ function Change({ name }: { name: string }) {
   )
 }
 
-function Chief({ name, label }: Total) {
+function Chief({ name, label, basis }: Total) {
   const { state, text, unit } = useNumberText(`plant.${name}`, dimensionOf(name))
   return (
     <div className="total-chief">
-      <span className="total-label">{label}</span>
+      <span className="total-label" title={table[name]?.help}>
+        {label}
+        {basis && <span className="total-basis">{basis}</span>}
+      </span>
       <button type="button" className="total-value" data-state={state} onClick={() => show(name)}>
         {state === 'open' && <Mark name="open" />}
         <span className="quantity" data-state={state}>
@@ -93,7 +98,9 @@ function Other({ name, label }: Total) {
   const { state, text, unit } = useNumberText(`plant.${name}`, dimensionOf(name))
   return (
     <div className="total-other">
-      <span className="total-label">{label}</span>
+      <span className="total-label" title={table[name]?.help}>
+        {label}
+      </span>
       <button type="button" onClick={() => show(name)}>
         <span className="quantity" data-state={state}>
           <span className="quantity-value">{text}</span>

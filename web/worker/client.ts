@@ -72,8 +72,8 @@ export function createSolverClient<Mark>(
   let running: Running<Mark> | null = null
   let waiting: { request: Request; mark: Mark } | null = null
   let timer: ReturnType<typeof setTimeout> | undefined
-  /** Names by structure: a worker sends them once. */
-  let names = new Map<number, NamesMessage>()
+  /** The names of the newest structure: a worker sends them once, before its first balance. */
+  let names: NamesMessage | null = null
 
   const start = (): WorkerPort => {
     const port = startWorker()
@@ -88,7 +88,7 @@ export function createSolverClient<Mark>(
       if (port === worker) died()
     }
     proven = false
-    names = new Map()
+    names = null
     return port
   }
 
@@ -128,14 +128,14 @@ export function createSolverClient<Mark>(
     proven = true
     switch (answer.type) {
       case 'names':
-        names.set(answer.structure, answer)
+        names = answer
         break
       case 'dome':
         reports.dome(answer)
         break
       case 'balance': {
         const job = running
-        const its = names.get(answer.structure)
+        const its = names?.structure === answer.structure ? names : null
         if (answer.sequence > shown && its && job?.request.sequence === answer.sequence) {
           shown = answer.sequence
           reports.balance(its, answer, job.mark)
