@@ -103,3 +103,15 @@ export function portsOf(
   }
   return ports
 }
+
+/** Whether two ports lie on separate lines through a unit, the hot and the cold side of an exchanger. */
+export function separateLines(kind: Kind, one: string, other: string): boolean {
+  const lines: Set<string>[] = []
+  for (const [a, b] of kind.passes ?? []) {
+    const touched = lines.filter((line) => line.has(a) || line.has(b))
+    const joined = new Set([a, b, ...touched.flatMap((line) => [...line])])
+    lines.splice(0, lines.length, ...lines.filter((line) => !touched.includes(line)), joined)
+  }
+  const [first, second] = [one, other].map((port) => lines.find((line) => line.has(port)))
+  return first !== undefined && second !== undefined && first !== second
+}

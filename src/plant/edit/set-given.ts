@@ -1,23 +1,82 @@
 import { type Catalogue, standardCatalogue } from '../catalogue.ts'
-import type { Given, Layout, Plant } from '../document.ts'
+import { givenAt } from '../check-given.ts'
+import { equalParts } from '../difference.ts'
+import type { Given, Givens, Layout, Plant } from '../document.ts'
+import { splitPath } from '../paths.ts'
+import { Unusable } from '../place.ts'
+import { describeQuantity } from '../quantities.ts'
+import { changeEach, changeLayout, EditRefused } from './change-layout.ts'
 
 /** Why a value cannot be given for a path, as a sentence; nothing where it can. */
 export function whyNotGiven(
-  _layout: Layout,
-  _path: string,
-  _given: Given,
-  _catalogue: Catalogue = standardCatalogue,
+  layout: Layout,
+  path: string,
+  given: Given,
+  catalogue: Catalogue = standardCatalogue,
 ): string | undefined {
-  throw new Error('not there yet')
+  if (!describeQuantity(layout, path, catalogue)) return `There is no quantity ${path}.`
+  try {
+    givenAt(given, '')
+  } catch (fault) {
+    if (!(fault instanceof Unusable)) throw fault
+    return fault.message.charAt(0).toUpperCase() + fault.message.slice(1)
+  }
+  if (typeof given === 'number') return undefined
+  if (given.against === path) return 'A curve cannot depend on the quantity that it gives.'
+  return describeQuantity(layout, given.against, catalogue)
+    ? undefined
+    : `There is no quantity ${given.against} for the curve to depend on.`
 }
 
-/** Gives a quantity (`hp.power`, `plant.netPower`), or frees it with undefined. */
+/**
+ * Gives a quantity (`hp.power`, `plant.netPower`), or frees it with undefined. Throws `EditRefused`
+ * where `whyNotGiven` has something to say.
+ */
 export function setGiven(
-  _plant: Plant,
-  _layoutId: string,
-  _path: string,
-  _given: Given | undefined,
-  _catalogue: Catalogue = standardCatalogue,
+  plant: Plant,
+  layoutId: string,
+  path: string,
+  given: Given | undefined,
+  catalogue: Catalogue = standardCatalogue,
 ): Plant {
-  throw new Error('not there yet')
+  return changeLayout(plant, layoutId, (layout) => {
+    const why = given === undefined ? undefined : whyNotGiven(layout, path, given, catalogue)
+    if (why !== undefined) throw new EditRefused(why)
+    const [id, name] = splitPath(path) ?? ['', '']
+    const set = <T extends { readonly id: string; readonly given: Givens }>(owner: T): T => {
+      if (owner.id !== id) return owner
+      const next = withGiven(owner.given, name, given)
+      return next === owner.given ? owner : { ...owner, given: next }
+    }
+    const plantGiven =
+      id === 'plant' ? withGiven(layout.plant.given, name, given) : layout.plant.given
+    const units = changeEach(layout.units, set)
+    const streams = changeEach(layout.streams, set)
+    const shafts = changeEach(layout.shafts, set)
+    return units === layout.units &&
+      streams === layout.streams &&
+      shafts === layout.shafts &&
+      plantGiven === layout.plant.given
+      ? layout
+      : {
+          ...layout,
+          units,
+          streams,
+          shafts,
+          plant: plantGiven === layout.plant.given ? layout.plant : { given: plantGiven },
+        }
+  })
+}
+
+/** Givens with one more, one changed or (undefined) one less; the very same where that changes nothing. */
+export function withGiven(givens: Givens, name: string, given: Given | undefined): Givens {
+  if (given === undefined) {
+    if (!Object.hasOwn(givens, name)) return givens
+    const { [name]: _, ...rest } = givens
+    return rest
+  }
+  // Minus zero is zero: the file cannot tell them apart.
+  const value = given === 0 ? 0 : given
+  if (Object.hasOwn(givens, name) && equalParts(givens[name], value)) return givens
+  return { ...givens, [name]: value }
 }
