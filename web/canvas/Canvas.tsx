@@ -69,8 +69,11 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
 
   const showWhole = useCallback(
     (duration = 0) => {
-      const element = box.current
-      if (element) void flow.setViewport(fitted(element.getBoundingClientRect()), { duration })
+      const canvas = box.current?.getBoundingClientRect()
+      if (!canvas) return
+      // Texts grow as the sheet shrinks: they are set for the new zoom before it is fitted for good.
+      useCanvasStore.getState().setZoom(fitted(canvas).zoom)
+      void flow.setViewport(fitted(canvas), { duration })
     },
     [flow],
   )

@@ -84,7 +84,7 @@ export const StreamEdge = memo(function StreamEdge({ id, source, target }: EdgeP
           strokeDasharray={`0 ${bore < 2.5 ? 4.5 : 5.5}`}
         />
       )}
-      <path className="stream-arrow" d={drawn.arrow} fill={colour} />
+      <path className="stream-arrow" d={drawn.arrow} style={{ fill: colour }} />
       {selected && <BendHandles stream={stream} />}
     </g>
   )

@@ -135,10 +135,11 @@ function texts(
 ): Pick<CanvasState, 'labels' | 'tags'> {
   const occupied = {
     bodies: [...sheet.units.values()].map((unit) => unit.body),
-    streams: [...sheet.streams.values()],
+    streams: [...sheet.streams.values()] as { id: string; route: readonly Point[] }[],
   }
-  for (const { generator } of sheet.shafts.values()) {
+  for (const { id, generator, lines } of sheet.shafts.values()) {
     if (generator) occupied.bodies.push(generatorBox(generator))
+    for (const route of lines) occupied.streams.push({ id, route })
   }
   const requests: LabelRequest[] = []
   for (const unit of sheet.units.values()) {

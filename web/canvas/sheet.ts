@@ -7,7 +7,6 @@ import {
   onGrid,
   overlap,
   type Point,
-  type Side,
   type Size,
 } from './geometry.ts'
 import { bodyOf, type Lie, placesOf, portKey } from './ports.ts'
@@ -338,65 +337,108 @@ function roomBeside(lies: ReadonlyMap<string, Lie>, id: string, lie: Lie): numbe
   return room
 }
 
+/** One end of a stream with the places it may take. */
+interface Ending extends End {
+  readonly places: readonly Anchor[]
+  chosen: Anchor
+}
+
+interface Span {
+  readonly from: Ending
+  readonly to: Ending
+}
+
 /** Chooses among the places of each port those between which the streams run with least strain. */
 function choosePlaces(
   layout: Layout,
   lies: ReadonlyMap<string, Lie>,
   ends: Ends,
 ): Map<string, Record<string, Anchor>> {
-  const chosen = new Map<string, Record<string, Anchor>>()
-  const used = new Map<string, Side[]>()
-  const choices = layout.streams.map((stream) => {
+  const spans = layout.streams.map((stream): Span => {
     const { from, to } = ends.get(stream.id) as { from: End; to: End }
     const fromLie = lies.get(from.unit)
     const toLie = lies.get(to.unit)
+    const sources = (fromLie && placesOf(fromLie, from.port)) ?? [middle(fromLie, toLie)]
+    const targets = (toLie && placesOf(toLie, to.port)) ?? [middle(toLie, fromLie)]
     return {
-      from,
-      to,
-      sources: (fromLie && placesOf(fromLie, from.port)) ?? [middle(fromLie, toLie)],
-      targets: (toLie && placesOf(toLie, to.port)) ?? [middle(toLie, fromLie)],
+      from: { ...from, places: sources, chosen: sources[0] as Anchor },
+      to: { ...to, places: targets, chosen: targets[0] as Anchor },
     }
   })
-  // Ends without a choice first, so that dots have what is left.
-  choices.sort((a, b) => a.sources.length * a.targets.length - b.sources.length * b.targets.length)
-  for (const { from, to, sources, targets } of choices) {
-    const fromUsed = used.get(from.unit) ?? []
-    const toUsed = used.get(to.unit) ?? []
+  for (const { from, to } of spans) {
     let least = Number.POSITIVE_INFINITY
-    let source = sources[0] as Anchor
-    let target = targets[0] as Anchor
-    sources.forEach((s, i) => {
-      targets.forEach((t, j) => {
-        const cost =
-          strain({ point: [s.x, s.y], side: s.side }, { point: [t.x, t.y], side: t.side }) +
-          4 * (i + j) +
-          (sources.length > 2 && fromUsed.includes(s.side) ? 400 : 0) +
-          (targets.length > 2 && toUsed.includes(t.side) ? 400 : 0)
+    for (const [i, source] of from.places.entries()) {
+      for (const [j, target] of to.places.entries()) {
+        const cost = strainBetween(source, target) + 4 * (i + j)
         if (cost < least) {
           least = cost
-          source = s
-          target = t
+          from.chosen = source
+          to.chosen = target
         }
-      })
-    })
-    put(chosen, used, from, source)
-    put(chosen, used, to, target)
+      }
+    }
+  }
+  settleDots(spans)
+  const chosen = new Map<string, Record<string, Anchor>>()
+  for (const { from, to } of spans) {
+    for (const end of [from, to]) {
+      const anchors = chosen.get(end.unit) ?? {}
+      anchors[end.port] = end.chosen
+      chosen.set(end.unit, anchors)
+    }
   }
   return chosen
 }
 
-function put(
-  chosen: Map<string, Record<string, Anchor>>,
-  used: Map<string, Side[]>,
-  end: End,
-  anchor: Anchor,
-): void {
-  const anchors = chosen.get(end.unit) ?? {}
-  anchors[end.port] = anchor
-  chosen.set(end.unit, anchors)
-  const sides = used.get(end.unit) ?? []
-  sides.push(anchor.side)
-  used.set(end.unit, sides)
+const strainBetween = (a: Anchor, b: Anchor): number =>
+  strain({ point: [a.x, a.y], side: a.side }, { point: [b.x, b.y], side: b.side })
+
+/** Streams that meet in a dot share its sides: of all ways to part them the one of least strain. */
+function settleDots(spans: readonly Span[]): void {
+  const meeting = new Map<string, { own: Ending; far: Ending }[]>()
+  for (const { from, to } of spans) {
+    for (const [own, far] of [
+      [from, to],
+      [to, from],
+    ] as const) {
+      if (own.places.length <= 3) continue
+      const there = meeting.get(own.unit)
+      if (there) there.push({ own, far })
+      else meeting.set(own.unit, [{ own, far }])
+    }
+  }
+  // Twice, so that dots beside each other settle together.
+  for (let round = 0; round < 2; round++) {
+    for (const ends of meeting.values()) {
+      if (ends.length <= 4) part(ends)
+    }
+  }
+}
+
+function part(ends: readonly { own: Ending; far: Ending }[]): void {
+  let least = Number.POSITIVE_INFINITY
+  let best: readonly Anchor[] = []
+  const taken: Anchor[] = []
+  const go = (i: number, cost: number) => {
+    if (cost >= least) return
+    const end = ends[i]
+    if (!end) {
+      least = cost
+      best = [...taken]
+      return
+    }
+    for (const [rank, place] of end.own.places.entries()) {
+      if (taken.some((other) => other.side === place.side)) continue
+      taken.push(place)
+      go(i + 1, cost + strainBetween(place, end.far.chosen) + 4 * rank)
+      taken.pop()
+    }
+  }
+  go(0, 0)
+  for (const [i, anchor] of best.entries()) {
+    const end = ends[i]
+    if (end) end.own.chosen = anchor
+  }
 }
 
 /** For a port that the symbol does not know: the middle of the side that faces the other unit. */

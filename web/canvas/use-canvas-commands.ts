@@ -28,7 +28,7 @@ function removeSelected(): void {
 }
 
 /** What the canvas can be told to do, by key, menu or command box. */
-export function useCanvasCommands(_fit: (duration?: number) => void): void {
+export function useCanvasCommands(showWhole: (duration?: number) => void): void {
   const flow = useReactFlow()
   const register = useCommandStore((state) => state.register)
   useEffect(
@@ -111,6 +111,6 @@ export function useCanvasCommands(_fit: (duration?: number) => void): void {
           },
         },
       ]),
-    [register, flow],
+    [register, flow, showWhole],
   )
 }
