@@ -297,17 +297,18 @@ export function isobarPoints(
 const LEAST_RATIO = 1.15
 
 /**
- * The pressures that isobars are drawn at: those of the streams, rising; where several lie within
- * 15 % of each other, that of the greatest flow, and of all the `most` with the greatest flows.
- * Pressures in Pa, flows in kg/s; pairs with a value missing (NaN) or no flow are passed over.
+ * The pressures that isobars are drawn at: those of the streams that are not liquid, rising; where several
+ * lie within 15 % of each other, that of the greatest flow, and of all the `most` with the greatest flows.
+ * Pressures in Pa, flows in kg/s; streams with a value missing (NaN) or without flow are passed over.
  */
 export function isobarPressures(
   pressures: Float64Array,
   flows: Float64Array,
+  isLiquid: (stream: number) => boolean,
   most = 10,
 ): Float64Array {
   const byFlow = Array.from(pressures.keys())
-    .filter((i) => (pressures[i] as number) > 0 && (flows[i] as number) > 0)
+    .filter((i) => !isLiquid(i) && (pressures[i] as number) > 0 && (flows[i] as number) > 0)
     .sort(
       (a, b) =>
         (flows[b] as number) - (flows[a] as number) ||

@@ -361,10 +361,12 @@ describe('an isobar', () => {
 })
 
 describe('the pressures of isobars', () => {
-  it('are those of the greatest flows, near ones joined', () => {
-    const pressures = Float64Array.of(130e5, 138e5, 25e5, 24e5, 5200, 1e5, Number.NaN)
-    const flows = Float64Array.of(120, 121, 100, 110, 80, 2, 50)
-    expect([...isobarPressures(pressures, flows)]).toEqual([5200, 1e5, 24e5, 138e5])
-    expect([...isobarPressures(pressures, flows, 2)]).toEqual([24e5, 138e5])
+  const pressures = Float64Array.of(145e5, 130e5, 138e5, 25e5, 24e5, 5200, 1e5, Number.NaN, 3e5)
+  const flows = Float64Array.of(300, 120, 121, 100, 110, 80, 2, 50, 0)
+  const isLiquid = (stream: number) => stream === 0
+
+  it('are those of steam with the greatest flows, near ones joined', () => {
+    expect([...isobarPressures(pressures, flows, isLiquid)]).toEqual([5200, 1e5, 24e5, 138e5])
+    expect([...isobarPressures(pressures, flows, isLiquid, 2)]).toEqual([24e5, 138e5])
   })
 })

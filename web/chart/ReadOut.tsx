@@ -1,0 +1,110 @@
+import { formatQuantity, labelOf, type UnitChoice } from '../../src/document.ts'
+import { useBalanceStore } from '../store/balance-store.ts'
+import { useLayout } from '../store/plant-store.ts'
+import { useUnitChoice } from '../store/settings-store.ts'
+import { useChart } from './chart-store.ts'
+import type { StreamState } from './stream-states.ts'
+import { useNamedStates, useStates } from './use-named-states.ts'
+
+interface Row {
+  readonly symbol: string
+  readonly text: string
+  readonly unit: string
+}
+
+const quantities = [
+  ['T', 'temperature'],
+  ['p', 'pressure'],
+  ['h', 'specificEnthalpy'],
+  ['s', 'specificEntropy'],
+  ['m', 'massFlow'],
+] as const
+
+function rowsOf(state: Pick<StreamState, 'T' | 'p' | 'h' | 's' | 'm'>, units: UnitChoice): Row[] {
+  return quantities.flatMap(([symbol, dimension]) =>
+    Number.isFinite(state[symbol])
+      ? [{ symbol, ...formatQuantity(state[symbol], dimension, units) }]
+      : [],
+  )
+}
+
+/** Size of the box as it comes out at most, px: it turns to the other side rather than leave the chart. */
+const boxWidth = 176
+const boxHeight = 132
+const gap = 14
+
+/** The numbers of the state or the place on a process that the pointer or the keyboard is on. */
+export function ReadOut({ width, height }: { readonly width: number; readonly height: number }) {
+  const pointed = useChart((chart) => chart.pointed)
+  return pointed && <ReadOutBox width={width} height={height} />
+}
+
+function ReadOutBox({ width, height }: { readonly width: number; readonly height: number }) {
+  const pointed = useChart((chart) => chart.pointed)
+  const geometry = useChart((chart) => chart.geometry)
+  const names = useBalanceStore((state) => state.names)
+  const balance = useBalanceStore((state) => state.balance)
+  const states = useStates()
+  const named = useNamedStates()
+  const layout = useLayout()
+  const units = useUnitChoice()
+  if (!pointed || !geometry || !names || !balance) return null
+
+  let title: string
+  let rows: Row[]
+  let at: { readonly x: number; readonly y: number }
+  if (pointed.kind === 'state') {
+    const state = states.get(pointed.stream)
+    if (!state) return null
+    const { x0, kx, y0, ky } = geometry
+    title = named.find(({ id }) => id === state.id)?.name ?? labelOf(layout, state.id)
+    rows = rowsOf(state, units)
+    if (state.phase === 'wet') {
+      rows.splice(4, 0, { symbol: 'x', ...formatQuantity(state.x, 'dryness', units) })
+    }
+    at = { x: x0 + kx * state.s, y: y0 + ky * state.T }
+  } else {
+    const process = names.processes[pointed.process]
+    if (!process) return null
+    const m = balance.curves.flows[pointed.process] ?? Number.NaN
+    title = labelOf(layout, process.unit)
+    rows = rowsOf({ ...pointed, p: Number.NaN, m }, units)
+    // Along a process the pressure lies between those of its ends.
+    const ends = [process.from, process.to].map((id) => states.get(id)?.p ?? Number.NaN)
+    const [from, to] = ends.map((p) => formatQuantity(p, 'pressure', units))
+    if (from && to && ends.every(Number.isFinite)) {
+      const text =
+        from.text === to.text && from.unit === to.unit
+          ? from.text
+          : from.unit === to.unit
+            ? `${from.text} to ${to.text}`
+            : `${from.text}\u2009${from.unit} to ${to.text}`
+      rows.splice(1, 0, { symbol: 'p', text, unit: to.unit })
+    }
+    at = pointed
+  }
+
+  const left = at.x + gap + boxWidth <= width ? at.x + gap : Math.max(2, at.x - gap - boxWidth)
+  const top = Math.min(Math.max(2, at.y - boxHeight / 2), Math.max(2, height - boxHeight - 2))
+  const flipped = left < at.x
+  return (
+    <div
+      className="chart-read-out"
+      aria-hidden="true"
+      style={flipped ? { right: width - at.x + gap, top } : { left, top }}
+    >
+      <div className="title">{title}</div>
+      <dl>
+        {rows.map(({ symbol, text, unit }) => (
+          <div key={symbol}>
+            <dt>{symbol}</dt>
+            <dd>
+              {text}
+              {unit && <span className="unit">{`\u2009${unit}`}</span>}
+            </dd>
+          </div>
+        ))}
+      </dl>
+    </div>
+  )
+}
