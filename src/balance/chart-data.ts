@@ -1,6 +1,7 @@
 import type { BalanceMessage } from '../messages.ts'
 import { isobarPoints, isobarPressures, PointList, processPoints } from './paths.ts'
 import type { Balance } from './solve.ts'
+import { Phase } from './states.ts'
 
 /** Isobars reach at least this temperature, K. */
 const lowestTop = 620
@@ -56,7 +57,7 @@ export function isobarsOf({ results }: Balance): BalanceMessage['isobars'] {
     const T = states.get(k, 'T')
     if (T + 30 > highest) highest = T + 30
   }
-  const chosen = isobarPressures(pressures, flows)
+  const chosen = isobarPressures(pressures, flows, (k) => states.phases[k] === Phase.liquid)
   const list = new PointList()
   const starts = new Uint32Array(chosen.length + 1)
   chosen.forEach((p, k) => {

@@ -120,6 +120,7 @@ function underspecified(model: Model, parts: readonly Misfit[], wording: Wording
   const quantities = ranked(
     model,
     parts.flatMap((part) => helpful(model, part)),
+    true,
   )
   const first = quantities.slice(0, 3).map((path) => wording.quantity(path))
   return error(

@@ -84,13 +84,17 @@ export interface System {
   readonly streamBase: Int32Array
 }
 
-/** Assembles the equations of a layout. Givens of exactly 0 or 1 are folded into them. */
-export function assemble(layout: Layout): System {
-  return new Assembly(layout).system()
+/**
+ * Assembles the equations of a layout. Givens of exactly 0 or 1 are folded into them, unless asked
+ * otherwise; variables and equations are the same and in the same order either way.
+ */
+export function assemble(layout: Layout, options: { readonly fold?: boolean } = {}): System {
+  return new Assembly(layout, options.fold ?? true).system()
 }
 
 class Assembly {
   private readonly layout: Layout
+  private readonly fold: boolean
   private readonly variables: SystemVariable[] = []
   private readonly expressions: Expression[] = []
   private readonly given: number[] = []
@@ -103,8 +107,9 @@ class Assembly {
   private readonly totalsOf = new Map<string, UnitTotals>()
   private readonly streamBase: Int32Array
 
-  constructor(layout: Layout) {
+  constructor(layout: Layout, fold: boolean) {
     this.layout = layout
+    this.fold = fold
     this.streamBase = new Int32Array(layout.streams.length)
   }
 
@@ -177,7 +182,7 @@ class Assembly {
     this.given.push(number)
     if (given !== undefined && typeof given !== 'number') this.curves.push({ index, given })
     const expression: Expression =
-      number === 0 || number === 1 ? constant(number) : variable(index, path)
+      this.fold && (number === 0 || number === 1) ? constant(number) : variable(index, path)
     this.expressions.push(expression)
     return expression
   }

@@ -209,6 +209,7 @@ function differenceToSaturation(name: string, sign: 1 | -1, form: () => Operatio
       return Outcome.fine
     },
     invert: byEnthalpy(form),
+    solveFor: 1,
     print: called(name),
   }
 }

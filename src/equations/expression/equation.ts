@@ -1,5 +1,5 @@
 import { minus } from './arithmetic.ts'
-import { forEachVariable } from './expression.ts'
+import { forEachVariable, variable } from './expression.ts'
 import type { Expression, Printed } from './operation.ts'
 
 /**
@@ -67,6 +67,29 @@ export function solveFor(equation: Equation, index: number): Expression | undefi
     side = side.operands[at]!
   }
   return target
+}
+
+/** The variable in which an operation of the expression says it is better solved, or undefined. */
+function preferredVariable(expression: Expression): number | undefined {
+  if (expression.kind !== 'application') return undefined
+  const { operation, operands } = expression
+  if (operation.solveFor !== undefined) {
+    const operand = operands[operation.solveFor]!
+    if (operand.kind === 'variable') return operand.index
+  }
+  for (const operand of operands) {
+    const found = preferredVariable(operand)
+    if (found !== undefined) return found
+  }
+  return undefined
+}
+
+/** The residual in the form that iterates best, with the same variables. */
+export function iteratedResidual(equation: Equation): Expression {
+  const index = preferredVariable(equation.left) ?? preferredVariable(equation.right)
+  const explicit = index === undefined ? undefined : solveFor(equation, index)
+  if (index === undefined || explicit === undefined) return residual(equation)
+  return minus(variable(index, ''), explicit)
 }
 
 /** Prints an expression with the given text for variables and constants. */

@@ -76,6 +76,11 @@ export interface Operation {
     index: number,
   ) => Expression | undefined
   /**
+   * Place of an operand in which the equation is better solved than evaluated: the operation itself
+   * is flat there, its inverse is not (a subcooling of 0 says nothing of h inside the dome).
+   */
+  readonly solveFor?: number
+  /**
    * Degree of the result in chosen variables from the operands' degrees (0 constant, 1 linear,
    * 2 anything else). Absent: 0 when all are 0, else 2.
    */

@@ -119,13 +119,23 @@ export class TapeBuilder {
     return this.operands.slice(this.first[row]!, this.first[row + 1]!)
   }
 
-  /** The row whose working memory a row reads, or -1. */
-  sourceOf(row: number): number {
-    return this.sources[row]!
-  }
-
   firstOperand(row: number): number {
     return this.first[row]!
+  }
+
+  /** Every row that the slots need, in an order in which they can be evaluated. */
+  rowsBehind(slots: readonly number[]): Int32Array {
+    const rows = new Set<number>()
+    const stack = [...slots]
+    while (stack.length > 0) {
+      const row = this.rowOfSlot[stack.pop()!]!
+      if (row < 0 || rows.has(row)) continue
+      rows.add(row)
+      for (let k = this.first[row]!; k < this.first[row + 1]!; k++) stack.push(this.operands[k]!)
+      // Working memory is filled before it is read.
+      if (this.sources[row]! >= 0) rows.add(this.sources[row]!)
+    }
+    return Int32Array.from(rows).sort()
   }
 
   /** The slot that will hold the expression's value. */

@@ -1,7 +1,7 @@
 import {
   type Equation,
   forEachVariableOf,
-  residual,
+  iteratedResidual,
   solveFor,
   type Tape,
   TapeBuilder,
@@ -131,17 +131,17 @@ function draftStep(builder: TapeBuilder, equations: readonly Equation[], block: 
     const explicit = solveFor(equations[block.equations[0]!]!, target)
     if (explicit !== undefined) {
       const slot = builder.lower(explicit)
-      const rows = rowsBehind(builder, [slot])
+      const rows = builder.rowsBehind([slot])
       return () => new ExplicitStep(rows, slot, target)
     }
   }
   const from = builder.rowCount
   builder.activate(block.variables)
-  const seeds = block.equations.map((e) => builder.lower(residual(equations[e]!)))
+  const seeds = block.equations.map((e) => builder.lower(iteratedResidual(equations[e]!)))
   const degrees = new Map<number, number>()
   let linear = true
   for (const seed of seeds) if (builder.degreeOf(seed) > 1) linear = false
-  const all = rowsBehind(builder, seeds)
+  const all = builder.rowsBehind(seeds)
   const prelude = all.filter((row) => builder.degreeOf(builder.slotOfRow(row)) === 0)
   const iterated = all.filter((row) => builder.degreeOf(builder.slotOfRow(row)) > 0)
   for (const row of iterated) degrees.set(builder.slotOfRow(row), 1)
@@ -158,21 +158,6 @@ function draftStep(builder: TapeBuilder, equations: readonly Equation[], block: 
       ? new ScalarStep(prelude, iterated, seeds[0]!, block.variables[0]!, gradient, bounds, linear)
       : new BlockStep(prelude, iterated, seeds, block.variables, gradient, bounds, linear)
   }
-}
-
-/** Every row that the slots need, in order. */
-function rowsBehind(builder: TapeBuilder, slots: readonly number[]): Int32Array {
-  const rows = new Set<number>()
-  const stack = [...slots]
-  while (stack.length > 0) {
-    const row = builder.rowOf(stack.pop()!)
-    if (row < 0 || rows.has(row)) continue
-    rows.add(row)
-    for (const operand of builder.operandsOf(row)) stack.push(operand)
-    const source = builder.sourceOf(row)
-    if (source >= 0) rows.add(source)
-  }
-  return Int32Array.from(rows).sort()
 }
 
 /** Variables that the block's equations need and that it does not solve for. */
