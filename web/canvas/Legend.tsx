@@ -39,7 +39,7 @@ export function Legend() {
       <div className="legend-group legend-widths">
         {flows.map((m, i) => {
           const { text, unit } = formatQuantity(m, 'massFlow', units)
-          const plain = text.replace(/\.0+$/, '')
+          const plain = text.replace(/(\.\d*?)0+$/, '$1').replace(/\.$/, '')
           return (
             <div key={m} className="legend-sample">
               <svg width={36} height={8} aria-hidden="true">

@@ -2,7 +2,7 @@ import { create } from 'zustand'
 import { kindOf, type Layout } from '../../src/document.ts'
 import { textWidth } from '../chart/measure-text.ts'
 import { readLayout, usePlantStore } from '../store/plant-store.ts'
-import type { Point } from './geometry.ts'
+import { grown, type Point } from './geometry.ts'
 import {
   type Arrangement,
   type LabelRequest,
@@ -134,7 +134,7 @@ function texts(
   },
 ): Pick<CanvasState, 'labels' | 'tags'> {
   const occupied = {
-    bodies: [...sheet.units.values()].map((unit) => unit.body),
+    bodies: [...sheet.units.values()].map((unit) => grown(unit.body, unit.symbol.overhang ?? 0)),
     streams: [...sheet.streams.values()] as { id: string; route: readonly Point[] }[],
   }
   for (const { id, generator, lines } of sheet.shafts.values()) {
@@ -147,7 +147,7 @@ function texts(
     if (unit.label === '') continue
     requests.push({
       id: unit.id,
-      body: unit.body,
+      body: grown(unit.body, unit.symbol.overhang ?? 0),
       wish: unit.symbol.label,
       shapes: labelShapes(unit.label, kindOf(unit.kind)?.chief !== undefined, scale),
       anchors: Object.values(unit.anchors),

@@ -108,31 +108,32 @@ function candidatesOf(request: LabelRequest): Candidate[] {
   const right = body.x + body.width
   const bottom = body.y + body.height
   const sides = request.wish === 'inside' ? inside(request, found) : request.wish
-  for (const side of sides) {
-    for (const { arrangement, size } of request.shapes) {
-      const { width, height } = size
-      const put = (x: number, y: number, align: PlacedLabel['align']) =>
-        found.push({ x, y, width, height, arrangement, align })
-      if (side === 'top' || side === 'bottom') {
-        const y = side === 'top' ? body.y - gap - height : bottom + gap
+  // Close by on every side first, then farther off.
+  for (const away of [gap, gap + 18, gap + 36]) {
+    for (const side of sides) {
+      for (const { arrangement, size } of request.shapes) {
+        const { width, height } = size
+        const put = (x: number, y: number, align: PlacedLabel['align']) =>
+          found.push({ x, y, width, height, arrangement, align })
         const stems = request.anchors.filter((anchor) => anchor.side === side)
-        const free = stems.length === 0
-        if (free) put(body.x + body.width / 2 - width / 2, y, 'centre')
-        for (const stem of stems) put(stem.x + streamReach + 5, y, 'left')
-        for (const stem of stems) put(stem.x - streamReach - 5 - width, y, 'right')
-        put(body.x, y, 'left')
-        put(right - width, y, 'right')
-      } else {
-        const x = side === 'left' ? body.x - gap - width : right + gap
-        const align = side === 'left' ? 'right' : 'left'
-        const stems = request.anchors.filter((anchor) => anchor.side === side)
-        if (stems.length === 0) put(x, body.y + body.height / 2 - height / 2, align)
-        put(x, bottom - height, align)
-        put(x, body.y, align)
-        for (const stem of stems) put(x, stem.y + streamReach + 3, align)
-        for (const stem of stems) put(x, stem.y - streamReach - 3 - height, align)
-        put(x, bottom + 2, align)
-        put(x, body.y - height - 2, align)
+        if (side === 'top' || side === 'bottom') {
+          const y = side === 'top' ? body.y - away - height : bottom + away
+          if (stems.length === 0) put(body.x + body.width / 2 - width / 2, y, 'centre')
+          for (const stem of stems) put(stem.x + streamReach + 5, y, 'left')
+          for (const stem of stems) put(stem.x - streamReach - 5 - width, y, 'right')
+          put(body.x, y, 'left')
+          put(right - width, y, 'right')
+        } else {
+          const x = side === 'left' ? body.x - away - width : right + away
+          const align = side === 'left' ? 'right' : 'left'
+          if (stems.length === 0) put(x, body.y + body.height / 2 - height / 2, align)
+          put(x, bottom - height, align)
+          put(x, body.y, align)
+          for (const stem of stems) put(x, stem.y + streamReach + 3, align)
+          for (const stem of stems) put(x, stem.y - streamReach - 3 - height, align)
+          put(x, bottom + 2, align)
+          put(x, body.y - height - 2, align)
+        }
       }
     }
   }
@@ -179,8 +180,8 @@ export function placeLabels(
       const covers =
         within && overlap(candidate, request.body)
           ? 0
-          : bodies.covered(candidate) + 2 * streams.covered(candidate)
-      const cost = covers + 4 * texts.covered(candidate) + 6 * i
+          : 4 * bodies.covered(candidate) + 8 * streams.covered(candidate)
+      const cost = covers + 8 * texts.covered(candidate) + 2 * i
       if (cost < least) {
         least = cost
         best = candidate

@@ -21,13 +21,15 @@ export interface Surroundings {
 
 /** Streams keep this far from units they do not belong to, px. */
 const clearance = 8
-/** Length of a stream between its unit and its first corner, px, where there is room. */
+/** Least length of a stream between its unit and its first corner, px: room for the arrow. */
 const stub = 16
+/** Length that looks well there. */
+const easy = 24
 /** Parallel streams keep this far apart, px. */
 const spacing = 12
 
 /** What a route is charged, in px of length. */
-const price = { bend: 40, crossing: 60, beside: 6, through: 4000, hugging: 400 }
+const price = { bend: 40, crossing: 60, beside: 6, through: 4000, hugging: 400, cramped: 2 }
 
 const manhattan = (a: Point, b: Point): number => Math.abs(a[0] - b[0]) + Math.abs(a[1] - b[1])
 
@@ -144,8 +146,16 @@ function conflictPrice(a: Point, b: Point, routes: readonly Route[]): number {
 }
 
 function priceOf(route: Route, from: Terminal, to: Terminal, around: Surroundings, most: number) {
-  let sum = length(route) + price.bend * (route.length - 2)
   const last = route.length - 1
+  let sum = length(route) + price.bend * (last - 1)
+  if (last > 1) {
+    for (const [a, b] of [
+      [route[0], route[1]],
+      [route[last - 1], route[last]],
+    ]) {
+      sum += price.cramped * Math.max(0, easy - manhattan(a as Point, b as Point))
+    }
+  }
   for (let i = 1; i <= last; i++) {
     const a = route[i - 1] as Point
     const b = route[i] as Point
@@ -225,7 +235,10 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
 
   let best: Route | null = null
   let least = Number.POSITIVE_INFINITY
-  const tight = manhattan(a, b) < 4 * stub ? clearance : stub
+  // Between ends that face each other from nearby the corners may come close to the units.
+  const facing = (b[0] - a[0]) * out[0] + (b[1] - a[1]) * out[1]
+  const tight =
+    from.side !== to.side && facing > 0 && facing < 2 * stub ? Math.min(4, facing / 2) : stub
   const consider = (points: readonly Point[]) => {
     const bare = length(points) + price.bend * (points.length - 2)
     if (bare >= least) return

@@ -258,13 +258,10 @@ function spacePorts(
     const spaced = lie.symbol.spaced
     if (!spaced) continue
     const count = lie.form.counts[spaced.port] ?? 0
-    if (count === 0) continue
-    const wanted: (number | null)[] = []
-    for (let number = 1; number <= count; number++) {
-      wanted.push(
-        straightBelow(layout, lies, ends, streamAt.get(`${unit.id}.${spaced.port}${number}`), unit),
-      )
-    }
+    const ports = Array.from({ length: count }, (_, i) => `${spaced.port}${i + 1}`)
+    const wanted = [...ports, spaced.last].map((port) =>
+      straightBelow(lies, ends, streamAt.get(`${unit.id}.${port}`), unit),
+    )
     const usual = lie.symbol.size(lie.form).width
     const room = roomBeside(lies, unit.id, lie)
     // Mirrored, the far edge stays where it is while the width is not known: two rounds settle it.
@@ -277,7 +274,7 @@ function spacePorts(
         ),
         spaced.least,
         spaced.usual,
-        Math.max(usual, room) - 24,
+        Math.max(usual, room) - 8,
       )
       width = pitches.reduce((sum, pitch) => sum + pitch, 16)
     }
@@ -285,7 +282,7 @@ function spacePorts(
   }
 }
 
-/** Pitches from the inlet at 8 to each port, then to the last one; all multiples of 8. */
+/** Pitches from the inlet at 8 to each port in turn; all multiples of 8. */
 function stretched(
   wanted: readonly (number | null)[],
   least: number,
@@ -295,20 +292,18 @@ function stretched(
   const pitches: number[] = []
   let x = 8
   wanted.forEach((want, i) => {
-    const after = (wanted.length - i) * least
+    const after = (wanted.length - 1 - i) * least
     const fits =
       want !== null && want - x >= least && want - x <= widestPitch && want + after <= room
     const next = fits ? want : x + usual
     pitches.push(next - x)
     x = next
   })
-  pitches.push(usual)
   return pitches
 }
 
 /** Where the far end of a stream lies below or above, so that it could fall straight: its x. */
 function straightBelow(
-  _layout: Layout,
   lies: ReadonlyMap<string, Lie>,
   ends: Ends,
   stream: Stream | undefined,

@@ -1,20 +1,33 @@
-import { useMemo, useRef, useState } from 'react'
+import { useMemo, useRef, useState, useSyncExternalStore } from 'react'
 import { type KindGroup, kinds } from '../../src/document.ts'
 import { useCanvasStore } from '../canvas/canvas-store.ts'
 import { carry, placeFreely, usePlacingStore } from '../canvas/placing.ts'
 import { symbolOf } from '../canvas/symbols/index.ts'
 import { SymbolIcon, UnitSymbol } from '../canvas/UnitSymbol.tsx'
+import { useSettingsStore } from '../store/settings-store.ts'
 import './rail.css'
 
 const groups: readonly KindGroup[] = ['Heat', 'Machines', 'Heaters', 'Vessels', 'Lines', 'Edges']
 
-interface Props {
-  /** Icons only, 44 px wide; else 120 with names. */
-  readonly folded?: boolean
+/** Below this width of the window the names give their room to the canvas. */
+const roomForNames = window.matchMedia('(min-width: 1360px)')
+
+function useRoomForNames(): boolean {
+  return useSyncExternalStore(
+    (tell) => {
+      roomForNames.addEventListener('change', tell)
+      return () => roomForNames.removeEventListener('change', tell)
+    },
+    () => roomForNames.matches,
+  )
 }
 
 /** The kinds of unit, as the trade groups them: drag one onto the canvas, or press Enter. */
-export default function Rail({ folded = false }: Props) {
+export default function Rail() {
+  const chosen = useSettingsStore((state) => state.railFolded)
+  const change = useSettingsStore((state) => state.change)
+  const room = useRoomForNames()
+  const folded = chosen ?? !room
   const [filter, setFilter] = useState('')
   const list = useRef<HTMLDivElement>(null)
   const shown = useMemo(() => {
@@ -94,6 +107,18 @@ export default function Rail({ folded = false }: Props) {
         ))}
         {shown.length === 0 && <p className="rail-none">No kind has this name.</p>}
       </div>
+      <button
+        type="button"
+        className="rail-fold"
+        aria-expanded={!folded}
+        title={folded ? 'Show the names' : 'Icons only'}
+        aria-label={folded ? 'Show the names' : 'Icons only'}
+        onClick={() => change({ railFolded: !folded })}
+      >
+        <svg width={16} height={16} className="icon" aria-hidden="true">
+          <path d={folded ? 'M6 4l4 4-4 4' : 'M10 4l-4 4 4 4'} />
+        </svg>
+      </button>
       <Carried />
     </nav>
   )

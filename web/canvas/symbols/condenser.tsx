@@ -36,5 +36,6 @@ export const condenser: SymbolDrawing = {
       <path className="detail open" d="M-5 32H15M49 32H69M63 28L69 32L63 36" />
     </>
   ),
+  overhang: 8,
   label: ['left', 'right', 'bottom', 'top'],
 }

@@ -38,8 +38,18 @@ export interface SymbolDrawing {
   readonly label: 'inside' | readonly Side[]
   /** Turns upright where its streams run upright. */
   readonly turns?: true
-  /** Spaces a repeated port so that its streams fall straight: the port, and what it asks of the pitch. */
-  readonly spaced?: { readonly port: string; readonly least: number; readonly usual: number }
+  /**
+   * Spaces a repeated port, and the single one behind it, so that their streams fall straight; what
+   * it asks of the pitch, px.
+   */
+  readonly spaced?: {
+    readonly port: string
+    readonly last: string
+    readonly least: number
+    readonly usual: number
+  }
+  /** How far strokes reach beyond the body, px: labels keep clear of them. */
+  readonly overhang?: number
   /** Height of the shaft's axis, px from the top. */
   readonly axis?: (form: Form) => number
 }

@@ -77,6 +77,6 @@ export const turbine: SymbolDrawing = {
     )
   },
   label: 'inside',
-  spaced: { port: 'bleed', least: 24, usual: usualPitch },
+  spaced: { port: 'bleed', last: 'exhaust', least: 24, usual: usualPitch },
   axis,
 }
