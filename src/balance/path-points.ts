@@ -41,14 +41,20 @@ const ENTROPY_SPAN = 10_000
 const TEMPERATURE_SPAN = 600
 const ENTHALPY_SPAN = 4e6
 
-/** Greatest distance of a chord from its path, as a share of the spans: a pixel where the chart is magnified twenty times. */
-const flatness = 1 / 10_000
+/**
+ * Greatest distance of a chord from its path, as a share of the spans: a pixel where the chart is
+ * magnified twenty times.
+ */
+const PATH_FLATNESS = 1 / 10_000
 
 /** Below this miss, in the same shares, a piece is straight: round-off on a plateau. */
 const STRAIGHT = 1e-9
 
 /** The most points that one path takes. */
-const MOST_POINTS = 48
+const MOST_PATH_POINTS = 48
+
+/** The most points that any curve takes. */
+const MOST_POINTS = 160
 
 /** Finds the state at t and leaves it in `reached`; false where there is none. */
 export type Evaluate = (t: number) => boolean
@@ -142,10 +148,15 @@ function split(node: number): number {
   )
 }
 
-/** Splits the worst chord until all are flat or the points are used up. */
-export function refine(first: number, evaluate: Evaluate): void {
+/** Splits the worst chord until all are flat or the points are used up; `most` is 160 or fewer. */
+export function refine(
+  first: number,
+  evaluate: Evaluate,
+  flatness = PATH_FLATNESS,
+  most = MOST_PATH_POINTS,
+): void {
   let node = first
-  while ((nodes.next[node] as number) >= 0 && nodes.count < MOST_POINTS) {
+  while ((nodes.next[node] as number) >= 0 && nodes.count < most) {
     const next = nodes.next[node] as number
     measure(node, evaluate)
     // Every curved piece is halved once: an inflection may put its middle on the chord by chance.
@@ -156,7 +167,7 @@ export function refine(first: number, evaluate: Evaluate): void {
     }
     node = next
   }
-  while (nodes.count < MOST_POINTS) {
+  while (nodes.count < most) {
     let worst = -1
     let miss = flatness
     for (let candidate = 0; candidate < nodes.count; candidate += 1) {

@@ -268,7 +268,8 @@ export function domePoints(): Float64Array {
     if (first < 0) first = node
   }
   if (first < 0) return new Float64Array(0)
-  refine(first, stateOnDome)
+  // Sent once and seen at every magnification, the dome may cost more than a path.
+  refine(first, stateOnDome, 1 / 100_000, 160)
   const out = new PointList()
   write(first, out)
   return out.copy()

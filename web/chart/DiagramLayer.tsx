@@ -110,10 +110,6 @@ function Diagram({
     <g>
       <defs>
         <clipPath id={`${id}-plot`}>
-          {/* A line along the axis or the top keeps its full width. */}
-          <rect x={plot.x - 3} y={plot.y - 3} width={plot.width + 6} height={plot.height + 6} />
-        </clipPath>
-        <clipPath id={`${id}-exact`}>
           <rect x={plot.x} y={plot.y} width={plot.width} height={plot.height} />
         </clipPath>
         {/* Temperature is the upright axis, so one gradient over the plot colours every process. */}
@@ -130,7 +126,7 @@ function Diagram({
           ))}
         </linearGradient>
       </defs>
-      <g clipPath={`url(#${id}-exact)`}>
+      <g clipPath={clip}>
         <Dome geometry={geometry} />
         {balance && isobarsShown && <Isobars isobars={balance.isobars} geometry={geometry} />}
       </g>

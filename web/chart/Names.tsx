@@ -4,6 +4,7 @@ import type { BalanceMessage, NamesMessage } from '../../src/messages.ts'
 import { useBalanceStore } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
+import { useChart } from './chart-store.ts'
 import type { Geometry } from './geometry.ts'
 import { lineWidth } from './Lines.tsx'
 import type { Mark } from './Marks.tsx'
@@ -42,8 +43,11 @@ function named(
   return { id, x, y, width: width + 2, height: boxHeight, text, detail, active }
 }
 
-/** The middle of a unit's longest line, px: where its name belongs; undefined where that is out of sight. */
-function middleOf(
+/**
+ * The end of a unit's longest line on the side of lower entropy, px, where there is room for its name;
+ * undefined where that is out of sight.
+ */
+function coldEndOf(
   unit: string,
   names: NamesMessage,
   { points, starts }: BalanceMessage['curves'],
@@ -53,22 +57,27 @@ function middleOf(
   let place: { readonly x: number; readonly y: number } | undefined
   for (const [i, process] of names.processes.entries()) {
     if (process.unit !== unit) continue
-    const start = starts[i] as number
-    const end = starts[i + 1] as number
     let length = 0
-    for (let k = start + 1; k < end; k += 1) {
-      length += Math.hypot(
-        kx * ((points[3 * k] as number) - (points[3 * k - 3] as number)),
-        ky * ((points[3 * k + 1] as number) - (points[3 * k - 2] as number)),
-      )
+    let leftmost: { readonly x: number; readonly y: number } | undefined
+    const end = starts[i + 1] as number
+    for (let k = starts[i] as number; k < end; k += 1) {
+      const s = points[3 * k] as number
+      const T = points[3 * k + 1] as number
+      if (k + 1 < end) {
+        length += Math.hypot(
+          kx * ((points[3 * k + 3] as number) - s),
+          ky * ((points[3 * k + 4] as number) - T),
+        )
+      }
+      const x = x0 + kx * s
+      const y = y0 + ky * T
+      const inside =
+        x >= plot.x && x <= plot.x + plot.width && y >= plot.y && y <= plot.y + plot.height
+      if (inside && (!leftmost || x < leftmost.x)) leftmost = { x, y }
     }
-    if (length <= longest) continue
-    const middle = start + Math.floor((end - start) / 2)
-    const x = x0 + kx * (points[3 * middle] as number)
-    const y = y0 + ky * (points[3 * middle + 1] as number)
-    if (x < plot.x || x > plot.x + plot.width || y < plot.y || y > plot.y + plot.height) continue
+    if (!leftmost || length < longest) continue
     longest = length
-    place = { x, y }
+    place = leftmost
   }
   return place
 }
@@ -123,6 +132,14 @@ export function Names({
   const chosen = useNamedStates()
   const layout = useLayout()
   const units = useUnitChoice()
+  // The read-out names what it stands beside.
+  const readOut = useChart(({ pointed }) =>
+    pointed?.kind === 'state'
+      ? pointed.stream
+      : pointed
+        ? names?.processes[pointed.process]?.unit
+        : undefined,
+  )
   const before = useRef<readonly PlacedLabel[]>([])
 
   const bounds = useMemo(() => {
@@ -138,8 +155,9 @@ export function Names({
   const at = new Map(marks.map((mark) => [mark.id, mark]))
   const requests: Name[] = []
   for (const id of active) {
+    if (id === readOut) continue
     const mark = at.get(id)
-    const place = mark ?? middleOf(id, names, balance.curves, geometry)
+    const place = mark ?? coldEndOf(id, names, balance.curves, geometry)
     if (!place) continue
     const text = chosen.find((one) => one.id === id)?.name ?? labelOf(layout, id)
     requests.push(named(id, place, text, '', true))

@@ -3,6 +3,7 @@ import { useBalanceStore } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { useChart } from './chart-store.ts'
+import { textWidth } from './measure-text.ts'
 import type { StreamState } from './stream-states.ts'
 import { useNamedStates, useStates } from './use-named-states.ts'
 
@@ -28,10 +29,22 @@ function rowsOf(state: Pick<StreamState, 'T' | 'p' | 'h' | 's' | 'm'>, units: Un
   )
 }
 
-/** Size of the box as it comes out at most, px: it turns to the other side rather than leave the chart. */
-const boxWidth = 176
-const boxHeight = 132
+/** Between the box and what it is about, px. */
 const gap = 14
+const lineHeight = 15
+/** Symbols, borders and padding beside and above the numbers, px. */
+const beside = 36
+const above = 28
+const widest = 190
+
+/** Size of the box, px: it turns to the other side rather than leave the chart. */
+function sizeOf(title: string, rows: readonly Row[]): { width: number; height: number } {
+  const texts = rows.map(({ text, unit }) => textWidth(`${text} ${unit}`, 11) + beside)
+  return {
+    width: Math.min(widest, Math.max(textWidth(title, 12) + 20, ...texts)),
+    height: above + lineHeight * rows.length,
+  }
+}
 
 /** The numbers of the state or the place on a process that the pointer or the keyboard is on. */
 export function ReadOut({ width, height }: { readonly width: number; readonly height: number }) {
@@ -84,14 +97,14 @@ function ReadOutBox({ width, height }: { readonly width: number; readonly height
     at = pointed
   }
 
-  const left = at.x + gap + boxWidth <= width ? at.x + gap : Math.max(2, at.x - gap - boxWidth)
-  const top = Math.min(Math.max(2, at.y - boxHeight / 2), Math.max(2, height - boxHeight - 2))
-  const flipped = left < at.x
+  const box = sizeOf(title, rows)
+  const flipped = at.x + gap + box.width > width && at.x > width / 2
+  const top = Math.max(2, Math.min(at.y - box.height / 2, height - box.height - 2))
   return (
     <div
       className="chart-read-out"
       aria-hidden="true"
-      style={flipped ? { right: width - at.x + gap, top } : { left, top }}
+      style={flipped ? { right: width - at.x + gap, top } : { left: at.x + gap, top }}
     >
       <div className="title">{title}</div>
       <dl>

@@ -87,7 +87,7 @@ function inside(box: Rectangle, bounds: Rectangle): boolean {
 }
 
 /** A label that was there before stays unless another place is better by this much. */
-const habit = 30
+const habit = 14
 
 /**
  * Places labels in the order given; one that finds no free place is left out rather than laid over
