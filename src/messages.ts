@@ -27,6 +27,27 @@ export interface Finding {
   readonly remedies?: readonly Remedy[]
 }
 
+/** A piece of a printed equation: text, a quantity that can be asked in turn, or a number. */
+export type Token = string | { readonly path: string } | { readonly constant: number }
+
+/** Where a number comes from. */
+export interface Origin {
+  readonly path: string
+  /**
+   * `given`; fixed by one equation `alone`, or `together` with the others of its block; a
+   * `property` read off solved quantities; `open` while nothing fixes it.
+   */
+  readonly how: 'given' | 'alone' | 'together' | 'property' | 'open'
+  /** Whose equation it is, and which. */
+  readonly owner?: string
+  readonly key?: string
+  readonly statement: readonly Token[]
+  /** Quantities solved at once with it. */
+  readonly with: readonly string[]
+  /** Quantities that went into the equation. */
+  readonly inputs: readonly string[]
+}
+
 /** One process of a unit on a chart. */
 export interface ProcessName {
   readonly unit: string
@@ -75,13 +96,25 @@ export interface BalanceMessage {
     readonly missing: number
     readonly excess: number
   }
-  readonly closure: { readonly mass: number; readonly energy: number; readonly worstUnit: string } | null
+  readonly closure: {
+    readonly mass: number
+    readonly energy: number
+    readonly worstUnit: string
+  } | null
   readonly undetermined: readonly string[]
   readonly unbounded: readonly string[]
   /** Process paths as true states: triples s, T, h; process i has points starts[i] to starts[i + 1]. */
-  readonly curves: { readonly points: Float64Array; readonly starts: Uint32Array; readonly flows: Float64Array }
+  readonly curves: {
+    readonly points: Float64Array
+    readonly starts: Uint32Array
+    readonly flows: Float64Array
+  }
   /** Lines of constant pressure of the plant, as triples s, T, h. */
-  readonly isobars: { readonly pressures: Float64Array; readonly points: Float64Array; readonly starts: Uint32Array }
+  readonly isobars: {
+    readonly pressures: Float64Array
+    readonly points: Float64Array
+    readonly starts: Uint32Array
+  }
   /** Time the worker took, ms. */
   readonly milliseconds: number
 }
