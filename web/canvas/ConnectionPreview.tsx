@@ -23,7 +23,7 @@ export function ConnectionPreview() {
       refused = true
     } else if (over.verdict.joins) {
       text = `${over.label}: ${over.verdict.joins === 'out' ? 'puts a branch in' : 'puts a junction in'}`
-    } else text = over.label
+    }
   } else if (connecting?.stream) {
     text = connecting.from.direction === 'out' ? 'Puts a junction in' : 'Puts a branch in'
   } else if (chosen) {

@@ -1,8 +1,15 @@
 import { memo } from 'react'
-import { type Dimension, describeQuantity, kindOf } from '../../src/document.ts'
+import {
+  type Dimension,
+  describeQuantity,
+  givenOf,
+  kindOf,
+  type Layout,
+} from '../../src/document.ts'
 import { Quantity } from '../number/Quantity.tsx'
-import { usePhase } from '../store/balance-store.ts'
-import { readLayout } from '../store/plant-store.ts'
+import { useNumber } from '../number/use-number.ts'
+import { readValue, useBalanceStore, usePhase } from '../store/balance-store.ts'
+import { readLayout, useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useCanvasStore } from './canvas-store.ts'
 import type { PlacedLabel, PlacedTag } from './labelling.ts'
@@ -15,11 +22,6 @@ export function Texts() {
   const scale = useCanvasStore((state) => state.textScale)
   return (
     <div className="texts" style={{ '--text-scale': scale } as React.CSSProperties}>
-      <svg className="leaders" aria-hidden="true">
-        {[...tags.values()].map((tag) => (
-          <Leader key={tag.id} tag={tag} />
-        ))}
-      </svg>
       {[...labels.values()].map((label) => (
         <UnitLabel key={label.id} label={label} />
       ))}
@@ -49,56 +51,72 @@ const UnitLabel = memo(function UnitLabel({ label }: { readonly label: PlacedLab
   return (
     <div className="unit-label" data-arrangement={label.arrangement} style={place(label)}>
       {!isShaft && <span className="unit-label-name">{text}</span>}
-      {path && described && (
-        <span className="unit-label-figure">
-          <Quantity path={path} dimension={described.dimension} />
-        </span>
-      )}
+      {path && described && <Figure path={path} dimension={described.dimension} />}
     </div>
   )
 })
 
-const Leader = memo(function Leader({ tag }: { readonly tag: PlacedTag }) {
-  const [start] = tag.leader
+/** The chief figure, once there is one: what is open is for the card and the ledger. */
+function Figure({ path, dimension }: { readonly path: string; readonly dimension: Dimension }) {
+  const { state } = useNumber(path)
+  if (state === 'open') return null
+  return (
+    <span className="unit-label-figure">
+      <Quantity path={path} dimension={dimension} />
+    </span>
+  )
+}
+
+function Leader({ leader }: { readonly leader: PlacedTag['leader'] }) {
+  const [start] = leader
   if (!start) return null
   return (
-    <g>
-      <path d={`M${tag.leader.map((point) => point.join(' ')).join('L')}`} />
+    <svg className="leader" aria-hidden="true">
+      <path d={`M${leader.map((point) => point.join(' ')).join('L')}`} />
       <circle cx={start[0]} cy={start[1]} r={1.5} />
-    </g>
+    </svg>
   )
-})
+}
 
 const Tag = memo(function Tag({ tag }: { readonly tag: PlacedTag }) {
   const quantities = useTagStore((state) => state.quantities)
   const phase = usePhase(tag.id)
+  const layout = useLayout()
+  // A tag without a single number says nothing.
+  const says = useBalanceStore(() => quantities.some((name) => hasNumber(layout, tag.id, name)))
+  if (!says) return null
   const perLine = Math.ceil(quantities.length / tag.lines)
   const lines = Array.from({ length: tag.lines }, (_, i) =>
     quantities.slice(i * perLine, (i + 1) * perLine),
   )
   return (
-    // The tag is a larger target for the pointer; the stream itself is reached by keys.
-    // biome-ignore lint/a11y/noStaticElementInteractions: see above
-    // biome-ignore lint/a11y/useKeyWithClickEvents: see above
-    <div
-      className="stream-tag nopan"
-      style={place(tag)}
-      onPointerEnter={() => useSelectionStore.getState().hover(tag.id)}
-      onPointerLeave={() => useSelectionStore.getState().hover(null)}
-      onClick={(event) => {
-        useSelectionStore.getState().select([tag.id], event.shiftKey ? 'toggle' : 'replace')
-      }}
-    >
-      {lines.map((line) => (
-        <div key={line.join()} className="stream-tag-line">
-          {line.map((name) => (
-            <Part key={name} id={tag.id} name={name} wet={phase === 'wet'} />
-          ))}
-        </div>
-      ))}
-    </div>
+    <>
+      <Leader leader={tag.leader} />
+      {/* biome-ignore lint/a11y/noStaticElementInteractions: a larger target for the pointer; the stream itself is reached by keys */}
+      {/* biome-ignore lint/a11y/useKeyWithClickEvents: as above */}
+      <div
+        className="stream-tag nopan"
+        style={place(tag)}
+        onPointerEnter={() => useSelectionStore.getState().hover(tag.id)}
+        onPointerLeave={() => useSelectionStore.getState().hover(null)}
+        onClick={(event) => {
+          useSelectionStore.getState().select([tag.id], event.shiftKey ? 'toggle' : 'replace')
+        }}
+      >
+        {lines.map((line) => (
+          <div key={line.join()} className="stream-tag-line">
+            {line.map((name) => (
+              <Part key={name} id={tag.id} name={name} wet={phase === 'wet'} />
+            ))}
+          </div>
+        ))}
+      </div>
+    </>
   )
 })
+
+const hasNumber = (layout: Layout, id: string, name: string): boolean =>
+  readValue(`${id}.${name}`) !== null || givenOf(layout, `${id}.${name}`) !== undefined
 
 const dimensions: Readonly<Record<TagQuantity | 'x', Dimension>> = {
   p: 'pressure',

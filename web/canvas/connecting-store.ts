@@ -3,9 +3,10 @@ import { labelOf, portsOf, type Unit } from '../../src/document.ts'
 import { readLayout, usePlantStore } from '../store/plant-store.ts'
 import { useCanvasStore } from './canvas-store.ts'
 import { outward, type Point, type Side } from './geometry.ts'
-import { type ConnectionEnd, connectEnds, judge, type Verdict, wayOf } from './joins.ts'
+import { type ConnectionEnd, connectEnds, judge, layoutOf, type Verdict, wayOf } from './joins.ts'
 import { placesOf } from './ports.ts'
 import type { PlacedUnit } from './sheet.ts'
+import { withAxesKept, withEndsTurned } from './steady.ts'
 import { toSheet } from './view.ts'
 
 /** A port as it can be seen and taken hold of on the sheet. */
@@ -198,13 +199,19 @@ function make(from: ConnectionEnd, to: ConnectionEnd, at: Point): void {
   const { edit, layoutId } = usePlantStore.getState()
   const { sheet } = useCanvasStore.getState()
   try {
-    edit(
-      'Connect',
-      (plant) => connectEnds(plant, layoutId, from, to, (id) => sheet.streams.get(id)?.route).plant,
-    )
-    const layout = readLayout()
-    const newest = layout.streams.at(-1)
-    say(newest ? `Connected ${labelOf(layout, newest.id)}.` : 'Connected.')
+    let made = ''
+    edit('Connect', (plant) => {
+      const { plant: after, id } = connectEnds(
+        plant,
+        layoutId,
+        from,
+        to,
+        (stream) => sheet.streams.get(stream)?.route,
+      )
+      made = id
+      return withEndsTurned(withAxesKept(layoutOf(plant, layoutId), after), layoutId, id)
+    })
+    say(`Connected ${labelOf(readLayout(), made)}.`)
   } catch (error) {
     refuse(error instanceof Error ? error.message : 'These cannot be connected.', at)
   }

@@ -2,6 +2,7 @@ import {
   addUnit,
   canConnect,
   connect,
+  findPort,
   insertOnStream,
   kinds,
   type Layout,
@@ -114,8 +115,12 @@ function freed(
   routeOf: (stream: string) => Route | undefined,
 ): { readonly plant: Plant; readonly port: string } {
   if ('stream' in end) return openStream(plant, layoutId, end.stream, way, end.at)
-  const stream = streamAtPort(layoutOf(plant, layoutId), end.port)
+  const layout = layoutOf(plant, layoutId)
+  const stream = streamAtPort(layout, end.port)
   if (stream === undefined) return { plant, port: end.port }
+  if (way === 'in' && bare(layout, end.port) !== end.port) {
+    return { plant, port: bare(layout, end.port) }
+  }
   const at = nearEnd(routeOf(stream) ?? [], way === 'out' ? 'from' : 'to')
   return openStream(plant, layoutId, stream, way, at)
 }
@@ -126,22 +131,28 @@ export type Verdict =
 
 /** Whether two ports can be connected, be it by a branch or a junction put into the stream at the second. */
 export function judge(layout: Layout, from: string, to: string): Verdict {
-  if (from === to) return { allowed: false, why: 'This is where the connection starts.' }
-  const fromWay = wayOf(layout, from)
-  const toWay = wayOf(layout, to)
   const stream = streamAtPort(layout, to)
   const ownStream = streamAtPort(layout, from)
-  if (stream === undefined && ownStream === undefined) return canConnect(layout, from, to)
-  if (fromWay === toWay) {
-    return {
-      allowed: false,
-      why: fromWay === 'out' ? 'Both are outlets.' : 'Both are inlets.',
-    }
-  }
   if (stream !== undefined && stream === ownStream) {
     return { allowed: false, why: 'They are connected already.' }
   }
-  return toWay && dividingKind(toWay)
-    ? { allowed: true, ...(stream === undefined ? {} : { joins: toWay }) }
+  // As if the streams there were not: branch and junction leave their ports to them.
+  const without = {
+    ...layout,
+    streams: layout.streams.filter(({ id }) => id !== stream && id !== ownStream),
+  }
+  const verdict = canConnect(without, bare(layout, from), bare(layout, to))
+  if (!verdict.allowed || stream === undefined) return verdict
+  const way = wayOf(layout, to)
+  // A further numbered inlet needs no junction.
+  if (way === 'in' && bare(layout, to) !== to) return verdict
+  return way && dividingKind(way)
+    ? { allowed: true, joins: way }
     : { allowed: false, why: 'A stream is connected here already.' }
+}
+
+/** A reference to a repeated port without its number: the next free one is meant. */
+function bare(layout: Layout, reference: string): string {
+  const address = findPort(layout, reference)
+  return address ? `${address.unit.id}.${address.port}` : reference
 }

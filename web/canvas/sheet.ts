@@ -81,22 +81,20 @@ function endOf(reference: string): End {
 
 const noOptions = {}
 
-/**
- * Draws a layout. `moved` holds units on their way under the pointer. What is unchanged since
- * `previous` keeps its identity, so that only what changed is painted again; streams that nothing
- * touched keep their routes.
- */
-export function drawSheet(
+/** Units by id as they stand. */
+export type Standing = ReadonlyMap<string, PlacedUnit>
+
+/** Where the units of a layout stand, which way they are turned, and where their streams meet them. */
+export function placeUnits(
   layout: Layout,
   moved: ReadonlyMap<string, Point> | null = null,
-  previous: Sheet = emptySheet,
-): Sheet {
+  previous: Standing = emptySheet.units,
+): Standing {
   const lies = new Map<string, Lie>()
-  const ends = new Map<string, { readonly from: End; readonly to: End }>()
+  const ends = endsOf(layout)
   const streamAt = new Map<string, Stream>()
   const counts = new Map<string, Record<string, number>>()
   for (const stream of layout.streams) {
-    ends.set(stream.id, { from: endOf(stream.from), to: endOf(stream.to) })
     streamAt.set(stream.from, stream)
     streamAt.set(stream.to, stream)
   }
@@ -131,7 +129,7 @@ export function drawSheet(
     const lie = lies.get(unit.id) as Lie
     units.set(
       unit.id,
-      keep(previous.units.get(unit.id), {
+      keep(previous.get(unit.id), {
         id: unit.id,
         kind: unit.kind,
         label: unit.label,
@@ -142,7 +140,27 @@ export function drawSheet(
       }),
     )
   }
+  return units
+}
 
+function endsOf(layout: Layout): Ends {
+  return new Map(
+    layout.streams.map(({ id, from, to }) => [id, { from: endOf(from), to: endOf(to) }]),
+  )
+}
+
+/**
+ * Draws a layout. `moved` holds units on their way under the pointer. What is unchanged since
+ * `previous` keeps its identity, so that only what changed is painted again; streams that nothing
+ * touched keep their routes.
+ */
+export function drawSheet(
+  layout: Layout,
+  moved: ReadonlyMap<string, Point> | null = null,
+  previous: Sheet = emptySheet,
+): Sheet {
+  const ends = endsOf(layout)
+  const units = placeUnits(layout, moved, previous.units)
   const shafts = new Map<string, PlacedShaft>()
   for (const shaft of layout.shafts) {
     shafts.set(shaft.id, keep(previous.shafts.get(shaft.id), placeShaft(shaft, units)))
@@ -244,7 +262,8 @@ function standsUpright(own: Point, source: Point | null, target: Point | null): 
   return vertical(source ?? target)
 }
 
-const widestPitch = 200
+/** No symbol is drawn out of its shape for the sake of a straight stream. */
+const widestPitch = 104
 
 /** Spaces the ports of symbols that stretch, so that their streams fall straight where they can. */
 function spacePorts(

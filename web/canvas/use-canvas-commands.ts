@@ -6,8 +6,10 @@ import { editLayout, readLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useCanvasStore } from './canvas-store.ts'
 import { say } from './connecting-store.ts'
+import { layoutOf } from './joins.ts'
 import { connectFromHere } from './keyboard.ts'
 import { placeFreely } from './placing.ts'
+import { withAxesKept } from './steady.ts'
 import { useTagStore } from './tag-store.ts'
 
 const selectedUnits = (): string[] => {
@@ -21,7 +23,8 @@ function removeSelected(): void {
   if (selected.length === 0) return
   editLayout(
     selected.length === 1 ? 'Delete' : `Delete ${selected.length} things`,
-    (plant, layoutId) => removeItems(plant, layoutId, selected),
+    (plant, layoutId) =>
+      withAxesKept(layoutOf(plant, layoutId), removeItems(plant, layoutId, selected)),
   )
   select([])
   say(selected.length === 1 ? 'Deleted.' : `${selected.length} things deleted.`)
