@@ -65,17 +65,16 @@ function ReadOutBox({ width, height }: { readonly width: number; readonly height
 
   let title: string
   let rows: Row[]
-  let at: { readonly x: number; readonly y: number }
+  let at: { readonly s: number; readonly T: number }
   if (pointed.kind === 'state') {
     const state = states.get(pointed.stream)
     if (!state) return null
-    const { x0, kx, y0, ky } = geometry
     title = named.find(({ id }) => id === state.id)?.name ?? labelOf(layout, state.id)
     rows = rowsOf(state, units)
     if (state.phase === 'wet') {
       rows.splice(4, 0, { symbol: 'x', ...formatQuantity(state.x, 'dryness', units) })
     }
-    at = { x: x0 + kx * state.s, y: y0 + ky * state.T }
+    at = state
   } else {
     const process = names.processes[pointed.process]
     if (!process) return null
@@ -97,14 +96,17 @@ function ReadOutBox({ width, height }: { readonly width: number; readonly height
     at = pointed
   }
 
+  const { x0, kx, y0, ky } = geometry
+  const x = x0 + kx * at.s
+  const y = y0 + ky * at.T
   const box = sizeOf(title, rows)
-  const flipped = at.x + gap + box.width > width && at.x > width / 2
-  const top = Math.max(2, Math.min(at.y - box.height / 2, height - box.height - 2))
+  const flipped = x + gap + box.width > width && x > width / 2
+  const top = Math.max(2, Math.min(y - box.height / 2, height - box.height - 2))
   return (
     <div
       className="chart-read-out"
       aria-hidden="true"
-      style={flipped ? { right: width - at.x + gap, top } : { left: at.x + gap, top }}
+      style={flipped ? { right: width - x + gap, top } : { left: x + gap, top }}
     >
       <div className="title">{title}</div>
       <dl>

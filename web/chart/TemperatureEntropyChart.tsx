@@ -29,7 +29,7 @@ const margin = { top: 34, right: 38, bottom: 20, left: 6 }
 const yAxisWidth = 40
 const xAxisHeight = 22
 /** Least room between ticks, px: on the entropy axis for one digit, and for several. */
-const tickRoom = { digit: 30, digits: 46, T: 70 }
+const tickRoom = { digit: 30, digits: 46, T: 60 }
 
 /** Size of an element, px, kept up to date. */
 function useSize(element: RefObject<HTMLElement | null>): { width: number; height: number } {

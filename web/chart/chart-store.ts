@@ -6,12 +6,10 @@ import type { Geometry } from './geometry.ts'
 export type Pointed =
   /** A stream's state, which may move with the numbers. */
   | { readonly kind: 'state'; readonly stream: string }
-  /** A place on a process: px, J/(kg K), K, J/kg. */
+  /** A place on a process: J/(kg K), K, J/kg. */
   | {
       readonly kind: 'process'
       readonly process: number
-      readonly x: number
-      readonly y: number
       readonly s: number
       readonly T: number
       readonly h: number

@@ -39,7 +39,7 @@ function under(store: ChartStore, x: number, y: number): Pointed | null {
   if (nearest !== undefined) return { kind: 'state', stream: nearest }
   const { points, starts } = balance.curves
   const hit = nearestOnPaths(points, starts, geometry, x, y, processReach)
-  return hit ? { kind: 'process', process: hit.path, x, y, s: hit.s, T: hit.T, h: hit.h } : null
+  return hit ? { kind: 'process', process: hit.path, s: hit.s, T: hit.T, h: hit.h } : null
 }
 
 /** The id that canvas and tables know a thing under the pointer by. */
@@ -62,6 +62,8 @@ export function usePointer(
 ) {
   const [dragged, setDragged] = useState(false)
   const fingers = useRef(new Map<number, { x: number; y: number }>())
+  /** Where the pointer is while no button is held; null outside the sheet. */
+  const resting = useRef<{ x: number; y: number } | null>(null)
   const pressed = useRef<{ x: number; y: number } | null>(null)
 
   const place = (event: { clientX: number; clientY: number }) => {
@@ -84,6 +86,28 @@ export function usePointer(
     const T = (y - geometry.y0) / geometry.ky
     change((view) => zoomed(view, factor, s, T))
   }
+
+  // Under a pointer that rests, the diagram moves with the numbers and the view.
+  useEffect(() => {
+    const look = () => {
+      const at = resting.current
+      if (!at || fingers.current.size > 0) return
+      const pointed = under(store, at.x, at.y)
+      if (!pointed && !store.getState().pointed) return
+      store.setState({ pointed })
+      useSelectionStore.getState().hover(idOf(pointed))
+    }
+    const unsubscribeView = store.subscribe((now, before) => {
+      if (now.geometry !== before.geometry) look()
+    })
+    const unsubscribeBalance = useBalanceStore.subscribe((now, before) => {
+      if (now.balance !== before.balance) look()
+    })
+    return () => {
+      unsubscribeView()
+      unsubscribeBalance()
+    }
+  }, [store])
 
   const latest = useRef(zoom)
   latest.current = zoom
@@ -112,6 +136,7 @@ export function usePointer(
     onPointerMove(event: PointerEvent<HTMLElement>) {
       const at = place(event)
       const before = fingers.current.get(event.pointerId)
+      resting.current = at
       if (!before) {
         point(under(store, at.x, at.y))
         return
@@ -156,6 +181,7 @@ export function usePointer(
       setDragged(false)
     },
     onPointerLeave(event: PointerEvent<HTMLElement>) {
+      resting.current = null
       if (!fingers.current.has(event.pointerId)) point(null)
     },
   }
