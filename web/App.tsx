@@ -1,10 +1,11 @@
-import { lazy, Suspense, useEffect, useRef, useState } from 'react'
+import { lazy, Suspense, useEffect, useLayoutEffect, useRef, useState } from 'react'
 import Canvas from './canvas/Canvas.tsx'
 import { Card } from './card/Card.tsx'
 import { runCommand } from './commands/command-store.ts'
 import { Dialogs } from './commands/Dialogs.tsx'
 import { Divider } from './Divider.tsx'
 import { Drawer } from './drawer/Drawer.tsx'
+import { Guard } from './Guard.tsx'
 import Rail from './rail/Rail.tsx'
 import { useSettingsStore } from './store/settings-store.ts'
 import { Notices } from './strip/Notices.tsx'
@@ -21,31 +22,46 @@ const narrow = 900
 const narrowRail = 1360
 const drawerHead = 32
 
-function useSize(): { readonly width: number; readonly height: number } {
-  const [size, setSize] = useState({ width: window.innerWidth, height: window.innerHeight })
+function useWidth(): number {
+  const [width, setWidth] = useState(window.innerWidth)
   useEffect(() => {
-    const look = () => setSize({ width: window.innerWidth, height: window.innerHeight })
+    const look = () => setWidth(window.innerWidth)
     window.addEventListener('resize', look)
     return () => window.removeEventListener('resize', look)
   }, [])
-  return size
+  return width
 }
 
-function Sheet({ room }: { room: number }) {
+function Sheet() {
+  const place = useRef<HTMLDivElement>(null)
+  const [room, setRoom] = useState(0)
+  useLayoutEffect(() => {
+    const element = place.current
+    if (!element) return
+    const look = () => setRoom(element.clientHeight)
+    look()
+    const observer = new ResizeObserver(look)
+    observer.observe(element)
+    return () => observer.disconnect()
+  }, [])
   const height = useSettingsStore((state) => state.drawerHeight)
   const folded = useSettingsStore((state) => state.drawerFolded)
   const change = useSettingsStore((state) => state.change)
   const most = Math.max(drawerHead + 60, room - 160)
-  const usual = Math.round(0.42 * room - 100)
+  const usual = Math.max(drawerHead + 60, Math.round(0.42 * room - 100))
   const shown = folded ? drawerHead : Math.min(height ?? usual, most)
   return (
-    <>
+    <div className="sheet" ref={place}>
       <div className="canvas-place">
-        <Canvas
-          onOpenExample={() => runCommand('open-example')}
-          onOpenFile={() => runCommand('open')}
-        />
-        <Card />
+        <Guard name="The canvas">
+          <Canvas
+            onOpenExample={() => runCommand('open-example')}
+            onOpenFile={() => runCommand('open')}
+          />
+        </Guard>
+        <Guard name="The card">
+          <Card />
+        </Guard>
       </div>
       <Divider
         orientation="horizontal"
@@ -61,9 +77,11 @@ function Sheet({ room }: { room: number }) {
         }
       />
       <div className="drawer-place" style={{ height: shown }}>
-        <Drawer />
+        <Guard name="The drawer">
+          <Drawer />
+        </Guard>
       </div>
-    </>
+    </div>
   )
 }
 
@@ -71,9 +89,11 @@ function Side() {
   return (
     <>
       <div className="chart-place">
-        <Suspense fallback={<p className="muted chart-wait">The chart is being loaded.</p>}>
-          <Chart />
-        </Suspense>
+        <Guard name="The chart">
+          <Suspense fallback={<p className="muted chart-wait">The chart is being loaded.</p>}>
+            <Chart />
+          </Suspense>
+        </Guard>
       </div>
       <Totals />
     </>
@@ -81,23 +101,20 @@ function Side() {
 }
 
 export function App() {
-  const { width, height } = useSize()
+  const width = useWidth()
   const chartShare = useSettingsStore((state) => state.chartShare)
   const chartFolded = useSettingsStore((state) => state.chartFolded)
   const railFolded = useSettingsStore((state) => state.railFolded)
   const change = useSettingsStore((state) => state.change)
-  const work = useRef<HTMLElement>(null)
   const isNarrow = width < narrow
   const chartWidth = Math.round(Math.min(width - 480, Math.max(240, width * chartShare)))
   return (
     <div className="window" data-narrow={isNarrow}>
       <Strip />
       <Notices />
-      <main className="work" ref={work}>
+      <main className="work">
         <Rail folded={railFolded ?? width < narrowRail} />
-        <div className="sheet">
-          <Sheet room={height - 40} />
-        </div>
+        <Sheet />
         {!chartFolded && !isNarrow && (
           <Divider
             orientation="vertical"

@@ -3,7 +3,7 @@ import type { Box, Obstacle } from './place-card.ts'
 /** What is drawn on the canvas, found by its classes. */
 const unitSelector = '.react-flow__node'
 const streamSelector = '.stream-line'
-const textSelector = '.unit-label, .stream-tag, .canvas-controls'
+const textSelector = '.unit-label, .stream-tag, .canvas-controls, .legend-group, .legend-ramp'
 /** Room to be left around things, px. */
 const around = 6
 /** How far apart a stream's line is looked at, px on screen. */

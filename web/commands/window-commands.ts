@@ -121,6 +121,7 @@ export const windowCommands: readonly Command[] = [
       name,
       group: 'View',
       keys: `Alt+${i + 1}`,
+      hidden: true,
       checked: () => settings().drawerTab === tab && !settings().drawerFolded,
       run: () => settings().change({ drawerTab: tab, drawerFolded: false }),
     }),

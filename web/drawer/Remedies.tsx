@@ -2,7 +2,7 @@ import { useState } from 'react'
 import type { Given } from '../../src/document.ts'
 import type { Finding, Remedy } from '../../src/messages.ts'
 import { focusNumber } from '../number/focus.ts'
-import { free, give, givenText, quantityName } from '../number/give.ts'
+import { free, give, givenText, lastGiven, quantityName } from '../number/give.ts'
 import { readGiven, useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
@@ -22,9 +22,20 @@ function apply({ action, path, value }: Remedy): void {
   focusNumber(path, true)
 }
 
-function suggestion(remedy: Remedy): string {
-  const value: Given | undefined = remedy.action === 'free' ? readGiven(remedy.path) : remedy.value
-  return value === undefined ? '' : givenText(remedy.path, value)
+function suggestion({ action, path, value }: Remedy): string {
+  const shown: Given | undefined = action === 'free' ? readGiven(path) : value
+  const text = shown === undefined ? '' : givenText(path, shown)
+  return isNewest({ action, path }) ? `${text}, just given` : text
+}
+
+/** Freeing what was given last comes first: that takes back what made the numbers too many. */
+function isNewest({ action, path }: Remedy): boolean {
+  return action === 'free' && path === lastGiven()
+}
+
+function inOrder(remedies: readonly Remedy[]): readonly Remedy[] {
+  const newest = remedies.find(isNewest)
+  return newest ? [newest, ...remedies.filter((one) => one !== newest)] : remedies
 }
 
 /** Quantities of which one must be given or freed, each a click; the nearest first. */
@@ -33,7 +44,7 @@ export function Remedies({ finding }: { finding: Finding }) {
   const hover = useSelectionStore((state) => state.hover)
   useLayout()
   useUnitChoice()
-  const remedies: readonly Remedy[] = finding.remedies ?? []
+  const remedies = inOrder(finding.remedies ?? [])
   const shown = all ? remedies : remedies.slice(0, nearest)
   const more = remedies.length - shown.length
   if (remedies.length === 0) return null

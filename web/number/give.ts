@@ -30,9 +30,17 @@ export function givenText(path: string, given: Given): string {
   return unit ? `${text} ${unit}` : text
 }
 
+/** The path given last: where too many numbers are given, it is the likeliest culprit. */
+let newestGiven: string | null = null
+
+export function lastGiven(): string | null {
+  return newestGiven
+}
+
 /** Gives a quantity a value: an undo step by name. */
 export function give(path: string, given: Given, options?: { readonly merge?: string }): void {
   const before = readGiven(path)
+  if (before === undefined) newestGiven = path
   const to = givenText(path, given)
   const name =
     before === undefined
