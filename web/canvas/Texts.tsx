@@ -42,6 +42,7 @@ const place = (box: PlacedLabel | PlacedTag): React.CSSProperties => ({
 const UnitLabel = memo(function UnitLabel({ label }: { readonly label: PlacedLabel }) {
   const text = useCanvasStore((state) => state.sheet.units.get(label.id)?.label)
   const kind = useCanvasStore((state) => state.sheet.units.get(label.id)?.kind)
+  const top = useCanvasStore((state) => state.sheet.units.get(label.id)?.body.y)
   const layout = readLayout()
   const isShaft = kind === undefined && layout.shafts.some((shaft) => shaft.id === label.id)
   const chief = isShaft ? 'generatorPower' : kind && kindOf(kind)?.chief
@@ -49,7 +50,12 @@ const UnitLabel = memo(function UnitLabel({ label }: { readonly label: PlacedLab
   // A kind may name a quantity that this unit has not got.
   const described = path ? describeQuantity(layout, path) : undefined
   return (
-    <div className="unit-label" data-arrangement={label.arrangement} style={place(label)}>
+    <div
+      className="unit-label"
+      data-arrangement={label.arrangement}
+      data-above={top !== undefined && label.y + label.height <= top}
+      style={place(label)}
+    >
       {!isShaft && <span className="unit-label-name">{text}</span>}
       {path && described && <Figure path={path} dimension={described.dimension} />}
     </div>

@@ -60,7 +60,9 @@ export function strain(
   from: { readonly point: Point; readonly side: Side },
   to: { readonly point: Point; readonly side: Side },
 ): number {
-  return manhattan(from.point, to.point) + price.bend * cornersNeeded(from, to)
+  // Out and back again by the same side is a detour.
+  const detour = from.side === to.side ? 2 * stub : 0
+  return manhattan(from.point, to.point) + detour + price.bend * cornersNeeded(from, to)
 }
 
 function length(route: Route): number {

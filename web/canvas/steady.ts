@@ -25,7 +25,7 @@ export function withAxesKept(before: Layout, after: Plant): Plant {
 }
 
 /** Of a unit's streams together; how much mirroring must spare to be worth the surprise, px. */
-const worthMirroring = 100
+const worthMirroring = 40
 
 /**
  * A unit that has just got its first streams is mirrored where they then run with much less strain:
