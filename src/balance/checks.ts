@@ -6,6 +6,8 @@ import type { Results } from './results.ts'
 
 /** A relative difference of this size is round-off: of pressures, flows and entropy flows. */
 const roundOff = 1e-8
+/** A temperature difference of this size is round-off, K. */
+const differenceRoundOff = 1e-7
 
 /** Errors and cautions that the answer itself shows: what cannot be, and what is unusual. */
 export function checkAnswer(model: Model, results: Results): Finding[] {
@@ -15,6 +17,7 @@ export function checkAnswer(model: Model, results: Results): Finding[] {
     ...pressureChecks(model, results, wording),
     ...rangeChecks(model, wording),
     ...entropyChecks(model, results, wording),
+    ...differenceChecks(model, wording),
     ...curveChecks(model, results, wording),
     ...idleChecks(model.system.layout, wording),
   ]
@@ -152,6 +155,34 @@ function rangeChecks(model: Model, wording: Wording): Finding[] {
       })
     }
   })
+  return findings
+}
+
+/** Temperature differences that must not be below zero, even where only a conductance would suffer. */
+function differenceChecks(model: Model, wording: Wording): Finding[] {
+  const findings: Finding[] = []
+  for (const { owner, name, value } of model.differences()) {
+    if (value >= -differenceRoundOff) continue
+    const streams = model.system.unitOf.get(owner)?.connections ?? []
+    const outlets = streams
+      .filter(({ description }) => description.direction === 'out')
+      .map(({ stream }) => `${stream}.T`)
+    const own = ['terminalDifference', 'drainApproach', 'hotEndDifference', 'coldEndDifference']
+      .map((quantity) => `${owner}.${quantity}`)
+      .filter((path) => model.system.indexOf.has(path))
+    findings.push(
+      error(
+        'temperature-cross',
+        [owner],
+        [...own, ...outlets],
+        `${wording.name(owner)}: the temperature difference ${name} is ${wording.value(value, 'temperatureDifference')}; heat would have to flow from cold to hot.`,
+        {
+          advice:
+            'Lower what the water is heated to, raise the steam pressure, or give another approach.',
+        },
+      ),
+    )
+  }
   return findings
 }
 

@@ -3,6 +3,7 @@ import { StepOutcome } from '../equations/newton/index.ts'
 import type { Finding, Status } from '../messages.ts'
 import { rangeProblem } from '../steam/index.ts'
 import { streamQuantities } from '../units/index.ts'
+import { portNamed } from '../units/kind.ts'
 import { error, ownersOf, ranked, remedies, Wording } from './findings.ts'
 import type { Model } from './model.ts'
 import type { Misfit } from './structure.ts'
@@ -49,8 +50,8 @@ function missingConnections(model: Model, wording: Wording): Finding[] {
   const onShaft = new Set(layout.shafts.flatMap((shaft) => [...shaft.turbines]))
   for (const { unit, kind, open } of units) {
     for (const port of open) {
-      const description = kind.ports[port] ?? kind.ports[port.replace(/1$/, '')]
-      const label = description?.label.toLowerCase() ?? port
+      const named = portNamed(kind.ports, port)
+      const label = named ? kind.ports[named.port]!.label.toLowerCase() : port
       findings.push(
         error(
           'open-port',

@@ -1,8 +1,6 @@
 import type { Layout } from '../plant/document.ts'
+import { portNamed } from '../units/kind.ts'
 import type { PlacedUnit } from './system.ts'
-
-/** `steam12` without its number. */
-const bare = (port: string): string => port.replace(/\d+$/, '')
 
 /** Units reached from a line's end in one direction, through whatever only passes the flow on. */
 function ends(
@@ -22,7 +20,7 @@ function ends(
       const other = unitOf.get(far.slice(0, far.indexOf('.')))
       if (other === undefined || seen.has(other.unit.id)) continue
       seen.add(other.unit.id)
-      const port = bare(far.slice(far.indexOf('.') + 1))
+      const port = portNamed(other.kind.ports, far.slice(far.indexOf('.') + 1))?.port
       const goesOn =
         other.kind.secondLaw !== 'fired' &&
         other.kind.passes?.some(([from, to]) => (direction === 'up' ? to : from) === port)

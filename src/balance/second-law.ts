@@ -54,16 +54,16 @@ export function auditUnit(
 ): UnitAudit {
   const { kind } = placed
   const T0 = model.system.layout.ambient.T
+  const delivered = kind.secondLaw === 'delivers' ? entering(placed, states, placeOf) : undefined
   let mass = 0
   let energy = 0
   let entropy = 0
   let entropyScale = 0
-  for (const [port, id] of placed.streams) {
-    const description = kind.ports[port] ?? kind.ports[port.replace(/\d+$/, '')]
-    if (description === undefined) continue
+  for (const { description, stream: id } of placed.connections) {
     const sign = description.direction === 'in' ? 1 : -1
     const at = placeOf.get(id)! * streamResults.length
-    const m = states.values[at]!
+    // A heat user's missing condensate leaves the plant at the state of the condensate.
+    const m = delivered && sign < 0 ? delivered : states.values[at]!
     mass += sign * m
     energy += sign * m * states.values[at + 2]!
     entropy += sign * m * states.values[at + 4]!
@@ -104,6 +104,19 @@ export function auditUnit(
     case 'edge':
       return { ...common, massImbalance: 0, energyImbalance: 0 }
   }
+}
+
+/** Flow into a unit, kg/s. */
+function entering(
+  placed: PlacedUnit,
+  states: States,
+  placeOf: ReadonlyMap<string, number>,
+): number {
+  let m = 0
+  for (const { description, stream } of placed.connections) {
+    if (description.direction === 'in') m += states.get(placeOf.get(stream)!, 'm')
+  }
+  return m
 }
 
 function numberOf(model: Model, expression: Expression): number {

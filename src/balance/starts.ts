@@ -1,5 +1,6 @@
 import {
   enthalpyAtPressureEntropy,
+  enthalpyAtPressureTemperature,
   Outcome,
   RESULT_SIZE,
   SATURATION_SIZE,
@@ -9,14 +10,25 @@ import {
   saturationAtPressure,
   stateAtPressureEnthalpy,
 } from '../steam/index.ts'
-import type { Start } from '../units/kind.ts'
+import type { PortDescription, Start } from '../units/kind.ts'
 import { ordinaryValue } from './ranges.ts'
 import type { PlacedUnit, System } from './system.ts'
 
 /** Superheated steam of which nothing is known, J/kg. */
 const superheatedEnthalpy = 3.4e6
+/** A bleed as a part of the largest flow, while nothing is known of it. */
+const bleedShare = 0.06
+/** How far below saturation heated water starts, K. */
+const nearSaturation = 3
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
+
+interface PortAt {
+  readonly port: string
+  readonly description: PortDescription
+  /** First variable of the stream there: m, then p and h. */
+  readonly base: number
+}
 
 /**
  * First values for unknowns that an iteration must start from: pressures spread from where they are
@@ -59,16 +71,12 @@ export class Starts {
     return id === undefined ? undefined : this.place.get(id)
   }
 
-  private portsOf(
-    placed: PlacedUnit,
-  ): { name: string; base: number; description: PlacedUnit['kind']['ports'][string] }[] {
-    const ports = []
-    for (const [name, id] of placed.streams) {
-      const description = placed.kind.ports[name] ?? placed.kind.ports[name.replace(/\d+$/, '')]
-      const base = this.place.get(id)
-      if (description && base !== undefined) ports.push({ name, base, description })
-    }
-    return ports
+  private portsOf(placed: PlacedUnit): PortAt[] {
+    return placed.connections.map(({ port, description, stream }) => ({
+      port,
+      description,
+      base: this.place.get(stream)!,
+    }))
   }
 
   private fillPressures(): void {
@@ -112,7 +120,6 @@ export class Starts {
           for (const port of group) {
             if (port.description.pressure !== 'throttles' || isDone(port.base + 1)) continue
             // What is throttled on entry arrives somewhat above.
-            if (this.comesFromPump(port.name, placed)) continue
             put(port.base + 1, 1.2 * p)
             changed = true
           }
@@ -125,16 +132,12 @@ export class Starts {
     }
   }
 
-  private comesFromPump(_port: string, _placed: PlacedUnit): boolean {
-    return false
-  }
-
-  private pressureGroups<T extends { name: string }>(placed: PlacedUnit, ports: T[]): T[][] {
-    const passes = placed.kind.passes
-    if (passes === undefined || passes.length < 2) return [ports]
-    return passes.map((pair) =>
-      ports.filter((port) => pair.includes(port.name.replace(/\d+$/, ''))),
-    )
+  /** Ports that share a pressure, nearly: what passes through apart from the shell. */
+  private pressureGroups(placed: PlacedUnit, ports: readonly PortAt[]): PortAt[][] {
+    const passes = placed.kind.passes ?? []
+    const through = passes.map((pair) => ports.filter(({ port }) => pair.includes(port)))
+    const shell = ports.filter(({ port }) => !passes.some((pair) => pair.includes(port)))
+    return [...through, shell].filter((group) => group.length > 0)
   }
 
   /** Pressures on the far side of a turbine or pump, when one side is known. */
@@ -184,11 +187,9 @@ export class Starts {
     const done = new Uint8Array(system.variables.length)
     for (let pass = 0; pass < 3; pass++) {
       for (const placed of system.units) {
-        for (const { name, base, description } of this.portsOf(placed)) {
+        for (const { port, base, description } of this.portsOf(placed)) {
           if (description.direction !== 'out' || this.known(base + 2)) continue
-          const bare = name.replace(/\d+$/, '')
-          const start = placed.kind.starts[name] ?? placed.kind.starts[bare]
-          values[base + 2] = this.enthalpyAt(placed, base, start, done)
+          values[base + 2] = this.enthalpyAt(placed, base, placed.kind.starts[port], done)
           done[base + 2] = 1
         }
       }
@@ -212,12 +213,24 @@ export class Starts {
     if (start === 'dry') return this.saturated(p, Saturation.hV)
     if (start === 'superheated') return superheatedEnthalpy
     if (start === 'expanded') return this.expanded(placed, p)
+    if (start === 'heated') return this.heated(placed, p)
     return this.saturated(p, Saturation.hL)
   }
 
   private saturated(p: number, slot: number): number {
     const outcome = saturationAtPressure(this.saturation, 0, Math.min(21e6, Math.max(700, p)))
     return outcome === Outcome.fine ? this.saturation[slot]! : slot === Saturation.hL ? 5e5 : 2.7e6
+  }
+
+  /** Brought near to the saturation temperature of the unit's shell. */
+  private heated(placed: PlacedUnit, p: number): number {
+    const shell = this.system.indexOf.get(`${placed.unit.id}.pressure`)
+    const pShell = shell === undefined ? p : this.values[shell]!
+    const clamped = Math.min(21e6, Math.max(700, pShell))
+    if (saturationAtPressure(this.saturation, 0, clamped) !== Outcome.fine) return 5e5
+    const T = this.saturation[Saturation.T]! - nearSaturation
+    const outcome = enthalpyAtPressureTemperature(this.result, 0, p, T)
+    return outcome === Outcome.fine ? this.result[0]! : this.saturation[Saturation.hL]!
   }
 
   private expanded(placed: PlacedUnit, p: number): number {
@@ -239,10 +252,10 @@ export class Starts {
     }
     if (largest === 0) largest = 100
     for (const placed of system.units) {
-      for (const { name, base } of this.portsOf(placed)) {
+      for (const { description, base } of this.portsOf(placed)) {
         if (this.known(base)) continue
-        const number = /\d+$/.test(name)
-        values[base] = number && placed.kind.shaft === 'driving' ? 0.06 * largest : largest
+        const isBleed = description.repeated === true && placed.kind.shaft === 'driving'
+        values[base] = isBleed ? bleedShare * largest : largest
       }
     }
   }

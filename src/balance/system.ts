@@ -18,14 +18,16 @@ import {
   volume,
 } from '../steam/operations.ts'
 import { kindNamed, plantQuantities, quantitiesOfShaft, streamQuantities } from '../units/index.ts'
-import type {
-  PortExpressions,
-  QuantityDescription,
-  QuantityTable,
-  Shape,
-  TotalName,
-  UnitContext,
-  UnitKind,
+import {
+  numberedPort,
+  type PortDescription,
+  type PortExpressions,
+  type QuantityDescription,
+  type QuantityTable,
+  type Shape,
+  type TotalName,
+  type UnitContext,
+  type UnitKind,
 } from '../units/kind.ts'
 import { plantEquations } from '../units/plant-totals.ts'
 import { shaftEquations } from '../units/shaft.ts'
@@ -52,6 +54,16 @@ export interface SystemEquation {
   readonly origin: 'unit' | 'steam' | 'curve'
 }
 
+/** A stream at a port. */
+export interface Connection {
+  /** Numbered name of the port. */
+  readonly name: string
+  /** Its name in the kind's table. */
+  readonly port: string
+  readonly description: PortDescription
+  readonly stream: string
+}
+
 /** A unit with its kind, its shape and the streams at its ports. */
 export interface PlacedUnit {
   readonly unit: Unit
@@ -59,6 +71,8 @@ export interface PlacedUnit {
   readonly shape: Shape
   /** Stream ids by numbered port name. */
   readonly streams: ReadonlyMap<string, string>
+  /** The same by port, with what the kind says of it, in the kind's order. */
+  readonly connections: readonly Connection[]
   /** Port names that need a stream and have none. */
   readonly open: readonly string[]
 }
@@ -239,21 +253,28 @@ class Assembly {
     if (kind === undefined) throw new Error(`unit ${unit.id} is of unknown kind ${unit.kind}`)
     const counts: Record<string, number> = {}
     const open: string[] = []
+    const connections: Connection[] = []
     for (const [port, description] of Object.entries(kind.ports)) {
       let count = 0
-      if (description.repeated) while (streams.has(`${port}${count + 1}`)) count++
+      const numbered = (number: number): string => numberedPort(kind.ports, port, number)
+      if (description.repeated) while (streams.has(numbered(count + 1))) count++
       else if (streams.has(port)) count = 1
       if (count === 0 && !description.optional) {
-        const name = description.repeated ? `${port}1` : port
+        const name = description.repeated ? numbered(1) : port
         open.push(name)
         this.ports.set(`${unit.id}.${name}`, this.addState(`${unit.id}.${name}`, unit.id, {}, true))
         count = 1
       }
       counts[port] = count
+      for (let k = 1; k <= count; k++) {
+        const name = description.repeated ? numbered(k) : port
+        const stream = streams.get(name)
+        if (stream !== undefined) connections.push({ name, port, description, stream })
+      }
     }
     const shape: Shape = { options: unit.options ?? {}, streams: counts }
     this.addQuantities(unit.id, kind.quantities, shape, unit.given)
-    return { unit, kind, shape, streams, open }
+    return { unit, kind, shape, streams, connections, open }
   }
 
   private addQuantities(
@@ -289,7 +310,7 @@ class Assembly {
       const count = shape.streams[port]!
       if (description.repeated) {
         ports[port] = Array.from({ length: count }, (_, k) =>
-          this.portState(placed, `${port}${k + 1}`),
+          this.portState(placed, numberedPort(kind.ports, port, k + 1)),
         )
       } else if (count > 0) ports[port] = this.portState(placed, port)
     }

@@ -79,8 +79,7 @@ function derived(model: Model, path: string): Origin {
   }
   const inputs: string[] = []
   const sum: Token[] = []
-  for (const [port, id] of placed.streams) {
-    const description = placed.kind.ports[port] ?? placed.kind.ports[port.replace(/\d+$/, '')]!
+  for (const { description, stream: id } of placed.connections) {
     const entropyOnly = placed.kind.secondLaw === 'adiabatic'
     // An adiabatic unit's entropy flows are added up out less in, all others' exergy in less out.
     const isAdded = (description.direction === 'out') === entropyOnly

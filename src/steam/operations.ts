@@ -376,6 +376,9 @@ export const enthalpyAtEntropy = (p: Expression, s: Expression): Expression =>
 /** Enthalpy, J/kg, of the liquid subcooled by a difference (K) at p (Pa); 0 is saturated liquid. */
 export const enthalpyAtSubcooling = (p: Expression, difference: Expression): Expression =>
   apply(enthalpyFromSubcooling, p, difference)
+/** Enthalpy, J/kg, of steam superheated by a difference (K) at p (Pa); 0 is dry saturated steam. */
+export const enthalpyAtSuperheat = (p: Expression, difference: Expression): Expression =>
+  apply(enthalpyFromSuperheat, p, difference)
 /** Saturation pressure, Pa, at T (K). */
 export const saturationPressureAt = (T: Expression): Expression =>
   apply(saturationPressureOperation, T)

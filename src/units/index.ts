@@ -1,14 +1,22 @@
 import { boiler } from './boiler.ts'
 import { branch } from './branch.ts'
 import { condenser } from './condenser.ts'
+import { desuperheater } from './desuperheater.ts'
+import { flashVessel } from './flash-vessel.ts'
+import { heatExchanger } from './heat-exchanger.ts'
+import { heatSource } from './heat-source.ts'
+import { heatUser } from './heat-user.ts'
 import { junction } from './junction.ts'
 import type { UnitKind } from './kind.ts'
+import { leak } from './leak.ts'
 import { mixingHeater } from './mixing-heater.ts'
 import { offtake } from './offtake.ts'
 import { pipe } from './pipe.ts'
 import { pump } from './pump.ts'
 import { reheater } from './reheater.ts'
+import { separator } from './separator.ts'
 import { supply } from './supply.ts'
+import { surfaceHeater } from './surface-heater.ts'
 import { turbine } from './turbine.ts'
 import { valve } from './valve.ts'
 
@@ -16,12 +24,20 @@ import { valve } from './valve.ts'
 const registry = [
   boiler,
   reheater,
+  heatSource,
   turbine,
   pump,
+  surfaceHeater,
   mixingHeater,
   condenser,
+  heatExchanger,
+  heatUser,
+  flashVessel,
+  separator,
+  desuperheater,
   pipe,
   valve,
+  leak,
   branch,
   junction,
   supply,

@@ -8,6 +8,8 @@ export interface PortDescription {
   readonly direction: 'in' | 'out'
   /** Numbered from 1 without gaps, as many as there are streams: `drain1`, `drain2`. */
   readonly repeated?: true
+  /** What the numbers of a repeated port follow, where that is not its own name. */
+  readonly stem?: string
   /** May stay without a stream. */
   readonly optional?: true
   /** What may flow here; decides which connections make sense. */
@@ -92,6 +94,34 @@ export interface PortExpressions {
   readonly x: Expression
 }
 
+const numbered = /^(.*?)([1-9][0-9]*)$/
+
+/**
+ * The port of a table that a stream's reference names (`drain2`, `outlet`), and its number where the
+ * port is repeated; undefined where there is none.
+ */
+export function portNamed(
+  ports: PortTable,
+  name: string,
+): { readonly port: string; readonly number?: number } | undefined {
+  if (Object.hasOwn(ports, name) && !(ports[name]!.repeated && ports[name]!.stem)) {
+    return { port: name }
+  }
+  const [, stem, digits] = numbered.exec(name) ?? []
+  if (stem === undefined) return undefined
+  for (const [port, description] of Object.entries(ports)) {
+    if (description.repeated && (description.stem ?? port) === stem) {
+      return { port, number: Number(digits) }
+    }
+  }
+  return undefined
+}
+
+/** The name that a repeated port's stream of a number goes by. */
+export function numberedPort(ports: PortTable, port: string, number: number): string {
+  return `${ports[port]!.stem ?? port}${number}`
+}
+
 type PortsOf<P extends PortTable> = {
   readonly [K in keyof P]: P[K] extends { repeated: true }
     ? readonly PortExpressions[]
@@ -142,9 +172,16 @@ export interface ProcessPath {
 
 /**
  * How the enthalpy of what leaves a port is guessed: saturated liquid or dry saturated steam of its
- * pressure, superheated steam, a turbine's expansion, or what comes in at another port.
+ * pressure, superheated steam, a turbine's expansion, water heated to the unit's saturation, or what
+ * comes in at another port.
  */
-export type Start = 'liquid' | 'dry' | 'superheated' | 'expanded' | { readonly as: string }
+export type Start =
+  | 'heated'
+  | 'liquid'
+  | 'dry'
+  | 'superheated'
+  | 'expanded'
+  | { readonly as: string }
 
 /** How exergy is accounted: contract, section 3, second law. */
 export type SecondLawRole = 'adiabatic' | 'losesHeat' | 'fired' | 'heated' | 'delivers' | 'edge'

@@ -11,17 +11,34 @@ import {
   square,
   times,
 } from '../equations/expression/index.ts'
-import { enthalpyAtEntropy, entropy, moisture, volume, wetPart } from '../steam/operations.ts'
+import {
+  enthalpyAtEntropy,
+  entropy,
+  liquidEnthalpy,
+  moisture,
+  volume,
+  wetPart,
+} from '../steam/operations.ts'
 import { commonPractice, energy, one } from './common.ts'
-import { defineUnitKind } from './kind.ts'
+import { defineUnitKind, type Shape } from './kind.ts'
 
 const perGroup = { port: 'bleed', extra: 1 } as const
+const perBleed = { port: 'bleed', extra: 0 } as const
+
+const withAdmission = (shape: Shape): boolean => shape.options.admission === true
+const withMoistureRemoval = (shape: Shape): boolean => shape.options.moistureRemoval === true
+
+/** A state between groups; not a stream, as what enters the first group after the valves is none. */
+interface GroupEnd {
+  readonly p: Expression
+  readonly h: Expression
+}
 
 /** Efficiency factor of a group on its wet part (K. Baumann, J. IEE 59, 1921): see the contract. */
 function wetFactor(
   factor: Expression,
-  start: { readonly p: Expression; readonly h: Expression },
-  end: { readonly p: Expression; readonly h: Expression },
+  start: GroupEnd,
+  end: GroupEnd,
   s: Expression,
   isentropicEnd: Expression,
 ): Expression {
@@ -118,6 +135,54 @@ export const turbine = defineUnitKind({
       basis: commonPractice,
       step: 10,
     },
+    admissionLossFraction: {
+      label: 'Admission pressure loss',
+      symbol: 'Δp/p',
+      dimension: 'ratio',
+      help: 'Part of the inlet pressure that valves and control stage take before the first group.',
+      usual: 0.03,
+      given: true,
+      range: [0.02, 0.04],
+      basis: `${commonPractice}, valves wide open`,
+      possible: { least: 0, below: 1 },
+      step: 0.01,
+      when: withAdmission,
+    },
+    admissionEfficiency: {
+      label: 'Admission efficiency',
+      symbol: 'η',
+      dimension: 'ratio',
+      help: 'Isentropic efficiency of the admission; 0 is pure throttling.',
+      usual: 0,
+      given: true,
+      range: [0, 0.8],
+      basis: `${commonPractice}: 0.6 to 0.8 of a control stage`,
+      possible: { least: 0, most: 1 },
+      step: 0.01,
+      when: withAdmission,
+    },
+    moistureRemoval: {
+      label: 'Moisture removal',
+      symbol: 'r',
+      dimension: 'ratio',
+      help: 'Part of the moisture at the end of the group that leaves with the bleed as saturated liquid.',
+      usual: 0.2,
+      given: true,
+      range: [0, 0.5],
+      basis: commonPractice,
+      possible: { least: 0, most: 1 },
+      step: 0.01,
+      each: perBleed,
+      when: withMoistureRemoval,
+    },
+    groupEndEnthalpy: {
+      label: 'Group end enthalpy',
+      symbol: 'h',
+      dimension: 'specificEnthalpy',
+      help: 'Enthalpy at the end of the group, before moisture is taken out.',
+      each: perBleed,
+      when: withMoistureRemoval,
+    },
     power: {
       label: 'Power',
       symbol: 'P',
@@ -126,19 +191,37 @@ export const turbine = defineUnitKind({
       step: 1e6,
     },
   },
+  options: {
+    admission: {
+      label: 'Admission',
+      help: 'Valves and control stage before the first group, with a pressure loss and an efficiency.',
+    },
+    moistureRemoval: {
+      label: 'Moisture removal',
+      help: 'Part of the moisture leaves with each bleed.',
+    },
+  },
   chief: 'power',
   shaft: 'driving',
-  equations: ({ ports: { inlet, bleed, exhaust }, quantities: q }) => {
+  equations: ({ ports: { inlet, bleed, exhaust }, quantities: q, shape }) => {
     const equations: Record<string, Equation> = {}
     const last = bleed.length
     const outlets = [...bleed, exhaust]
     equations.massBalance = massBalance(inlet.m, plus(...outlets.map((outlet) => outlet.m)))
     // The state where the expansion ends, before the exhaust loss is added.
     const endEnthalpy = minus(exhaust.h, q.exhaustLoss)
-    let start: { readonly p: Expression; readonly h: Expression } = inlet
+    let start: GroupEnd = inlet
+    if (withAdmission(shape)) {
+      const p = times(inlet.p, minus(one, q.admissionLossFraction))
+      const isentropicEnd = enthalpyAtEntropy(p, inlet.s)
+      const used = times(q.admissionEfficiency, minus(inlet.h, isentropicEnd))
+      start = { p, h: minus(inlet.h, used) }
+    }
     for (let i = 0; i <= last; i++) {
       const outlet = outlets[i]!
-      const end = { p: outlet.p, h: i === last ? endEnthalpy : outlet.h }
+      const removes = i < last && withMoistureRemoval(shape)
+      const endOfLine = i === last ? endEnthalpy : outlet.h
+      const end = { p: outlet.p, h: removes ? q.groupEndEnthalpy[i]! : endOfLine }
       const s = entropy(start.p, start.h)
       const isentropicEnd = enthalpyAtEntropy(end.p, s)
       const drop = minus(start.h, isentropicEnd)
@@ -151,6 +234,17 @@ export const turbine = defineUnitKind({
         times(square(q.flowConstant[i]!), minus(square(start.p), square(end.p))),
       )
       start = end
+      if (removes) {
+        // Water taken out, as a part of the group's flow; the rest shares the remaining state.
+        const water = times(q.moistureRemoval[i]!, moisture(end.p, end.h))
+        const liquid = liquidEnthalpy(end.p)
+        const rest = divide(minus(end.h, times(water, liquid)), minus(one, water))
+        equations[`bleedState${i + 1}`] = equal(
+          outlet.h,
+          plus(rest, divide(times(times(water, through), minus(liquid, rest)), outlet.m)),
+        )
+        start = { p: end.p, h: rest }
+      }
     }
     equations.exhaustVolume = equal(
       q.exhaustVolumeFlow,

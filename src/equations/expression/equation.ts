@@ -13,6 +13,10 @@ export interface Equation {
   readonly left: Expression
   readonly right: Expression
   readonly role?: EquationRole
+  /** The same relation as an expression that is zero and has a value wherever an iteration may go. */
+  readonly iterated?: Expression
+  /** What must not be below zero where the equation holds, by name: temperature differences, K. */
+  readonly differences?: Readonly<Record<string, Expression>>
 }
 
 export function equal(left: Expression, right: Expression): Equation {
@@ -86,6 +90,7 @@ function preferredVariable(expression: Expression): number | undefined {
 
 /** The residual in the form that iterates best, with the same variables. */
 export function iteratedResidual(equation: Equation): Expression {
+  if (equation.iterated !== undefined) return equation.iterated
   const index = preferredVariable(equation.left) ?? preferredVariable(equation.right)
   const explicit = index === undefined ? undefined : solveFor(equation, index)
   if (index === undefined || explicit === undefined) return residual(equation)

@@ -1,0 +1,103 @@
+import {
+  apply,
+  type Equation,
+  type Expression,
+  equal,
+  exponential,
+  minus,
+  negate,
+  type Operation,
+  Outcome,
+  times,
+} from '../equations/expression/index.ts'
+
+/*
+ * Counterflow surfaces: heat = conductance x logarithmic mean of the end differences. Iterations use
+ * the same relation in effectiveness form, which has a value for every pair of differences.
+ */
+
+/** Relative difference below which the mean's series is more exact than its quotient. */
+const nearlyEqual = 1e-3
+
+/**
+ * Reciprocal of the logarithmic mean of two positive differences, 1/K; without bound when one of
+ * them is zero.
+ */
+const reciprocalMean: Operation = {
+  name: 'reciprocalMean',
+  evaluate(tape, row) {
+    const k = tape.first[row]!
+    const a = tape.values[tape.operands[k]!]!
+    const b = tape.values[tape.operands[k + 1]!]!
+    if (a < 0 || b < 0) return Outcome.outsideDomain
+    if (a === 0 || b === 0) return Outcome.unbounded
+    const slot = tape.slotOf(row)
+    const difference = a - b
+    if (Math.abs(difference) < nearlyEqual * a) {
+      // ln(a/b)/(a - b) = (1 + r²/3 + r⁴/5 ...)/mean with r = (a - b)/(a + b).
+      const mean = (a + b) / 2
+      const r = difference / (a + b)
+      const r2 = r * r
+      const series = 1 + r2 * (1 / 3 + r2 * (1 / 5 + r2 / 7))
+      const slope = r * (2 / 3 + r2 * (4 / 5 + (r2 * 6) / 7))
+      const sum = a + b
+      tape.values[slot] = series / mean
+      tape.partials[k] = -series / (2 * mean * mean) + (slope * 2 * b) / (sum * sum * mean)
+      tape.partials[k + 1] = -series / (2 * mean * mean) - (slope * 2 * a) / (sum * sum * mean)
+      return Outcome.fine
+    }
+    const logarithm = Math.log(a / b)
+    tape.values[slot] = logarithm / difference
+    tape.partials[k] = (1 / a - logarithm / difference) / difference
+    tape.partials[k + 1] = (logarithm / difference - 1 / b) / difference
+    return Outcome.fine
+  },
+  print: ([a, b]) => ({ text: `1/LMTD(${a!.text}, ${b!.text})`, strength: 2 }),
+}
+
+/** (a - b)/heat, 1/(W/K); 0 where no heat passes: how much faster one side changes than the other. */
+const capacityDifference: Operation = {
+  name: 'capacityDifference',
+  evaluate(tape, row) {
+    const k = tape.first[row]!
+    const { values, operands, partials } = tape
+    const heat = values[operands[k + 2]!]!
+    const slot = tape.slotOf(row)
+    if (heat === 0) {
+      values[slot] = 0
+      partials.fill(0, k, k + 3)
+      return Outcome.fine
+    }
+    const quotient = (values[operands[k]!]! - values[operands[k + 1]!]!) / heat
+    values[slot] = quotient
+    partials[k] = 1 / heat
+    partials[k + 1] = -1 / heat
+    partials[k + 2] = -quotient / heat
+    return Outcome.fine
+  },
+  print: ([a, b, heat]) => ({ text: `(${a!.text} − ${b!.text})/${heat!.text}`, strength: 2 }),
+}
+
+/**
+ * conductance = heat/LMTD(a, b), a and b the differences at the zone's hot and cold end, K. `zone`
+ * names it in findings.
+ */
+export function transfer(
+  zone: string,
+  conductance: Expression,
+  heat: Expression,
+  a: Expression,
+  b: Expression,
+): Equation {
+  return {
+    ...equal(conductance, times(heat, apply(reciprocalMean, a, b))),
+    iterated: minus(
+      times(a, exponential(negate(times(conductance, apply(capacityDifference, a, b, heat))))),
+      b,
+    ),
+    differences: {
+      [`at the hot end of ${zone}`]: a,
+      [`at the cold end of ${zone}`]: b,
+    },
+  }
+}

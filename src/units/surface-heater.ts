@@ -1,0 +1,259 @@
+import {
+  divide,
+  type Equation,
+  equal,
+  massBalance,
+  minus,
+  plus,
+  times,
+} from '../equations/expression/index.ts'
+import {
+  enthalpyAtSuperheat,
+  liquidEnthalpy,
+  saturationTemperature,
+  temperature,
+} from '../steam/operations.ts'
+import { commonPractice, energy, heat, one, pressureLoss, pressureLossFraction } from './common.ts'
+import { transfer } from './heat-transfer.ts'
+import { defineUnitKind, type QuantityDescription, type Shape } from './kind.ts'
+
+const has =
+  (option: string) =>
+  (shape: Shape): boolean =>
+    shape.options[option] === true
+
+const exponent = (label: string, usual: number, when: (shape: Shape) => boolean) =>
+  ({
+    label,
+    symbol: 'n',
+    dimension: 'number',
+    help: 'Power of the flow with which the conductance changes when the hardware is frozen.',
+    usual,
+    given: true,
+    range: [0, 1],
+    basis: commonPractice,
+    step: 0.1,
+    when,
+  }) as const satisfies QuantityDescription
+
+const conductance = (label: string, help: string) =>
+  ({
+    label,
+    symbol: 'UA',
+    dimension: 'conductance',
+    help,
+    possible: { least: 0 },
+    step: 1e4,
+  }) as const satisfies QuantityDescription
+
+const withDrainCooler = has('drainCooler')
+const withDesuperheater = has('desuperheater')
+const withPlugging = has('plugging')
+const withExponents = has('exponents')
+
+export const surfaceHeater = defineUnitKind({
+  name: 'surfaceHeater',
+  label: 'Surface heater',
+  idStem: 'heater',
+  group: 'Heaters',
+  help: 'Heats water in tubes with steam on the shell; with drain cooler and desuperheating zone on demand.',
+  ports: {
+    steam: { direction: 'in', repeated: true, carries: 'steam', pressure: 'equal', label: 'Steam' },
+    drainInlet: {
+      direction: 'in',
+      repeated: true,
+      stem: 'drain',
+      optional: true,
+      carries: 'any',
+      pressure: 'throttles',
+      label: 'Drain of another heater',
+    },
+    drain: { direction: 'out', carries: 'water', pressure: 'equal', label: 'Drain' },
+    water: { direction: 'in', carries: 'any', pressure: 'own', label: 'Water' },
+    outlet: { direction: 'out', carries: 'any', pressure: 'own', label: 'Outlet' },
+  },
+  quantities: {
+    pressure: {
+      label: 'Shell pressure',
+      symbol: 'p',
+      dimension: 'pressure',
+      help: 'Pressure on the steam side, after the bleed line.',
+      possible: { above: 0 },
+      step: 1e5,
+    },
+    pressureLossFraction: {
+      ...pressureLossFraction(0.02, [0.005, 0.05]),
+      label: 'Tube pressure loss',
+    },
+    terminalDifference: {
+      label: 'Terminal difference',
+      symbol: 'TTD',
+      dimension: 'temperatureDifference',
+      help: 'Saturation temperature of the shell less water outlet temperature.',
+      usual: 2.8,
+      given: true,
+      range: [-3, 5],
+      basis: `${commonPractice}: 2 to 3 K at low pressure, 1.5 to 3 K at high pressure, -1.5 to 1 K with a desuperheating zone`,
+      step: 1,
+    },
+    heat: heat('Duty', 'Heat that the water takes up.'),
+    conductance: conductance(
+      'Conductance',
+      'Of the condensing zone: heat over the logarithmic mean difference, the shell at saturation.',
+    ),
+    drainApproach: {
+      label: 'Drain approach',
+      symbol: 'DCA',
+      dimension: 'temperatureDifference',
+      help: 'Drain outlet temperature less water inlet temperature.',
+      usual: 5.6,
+      given: true,
+      range: [5, 10],
+      basis: 'HEI closed feedwater heaters: 5.6 K (10 °F) as the economical least',
+      possible: { least: 0 },
+      step: 1,
+      when: withDrainCooler,
+    },
+    drainConductance: {
+      ...conductance('Drain cooler conductance', 'Of the drain cooling zone, counterflow.'),
+      when: withDrainCooler,
+    },
+    residualSuperheat: {
+      label: 'Residual superheat',
+      symbol: 'ΔTres',
+      dimension: 'temperatureDifference',
+      help: 'Superheat with which the steam leaves the desuperheating zone.',
+      usual: 20,
+      given: true,
+      range: [15, 30],
+      basis: commonPractice,
+      possible: { least: 0 },
+      step: 1,
+      when: withDesuperheater,
+    },
+    desuperheatConductance: {
+      ...conductance('Desuperheating conductance', 'Of the desuperheating zone, counterflow.'),
+      when: withDesuperheater,
+    },
+    pluggedFraction: {
+      label: 'Tubes plugged',
+      symbol: 'f',
+      dimension: 'ratio',
+      help: 'Part of the surface that is out of use, in every zone alike.',
+      usual: 0,
+      given: true,
+      range: [0, 0.1],
+      basis: commonPractice,
+      possible: { least: 0, below: 1 },
+      step: 0.01,
+      when: withPlugging,
+    },
+    conductanceExponent: exponent('Condensing exponent', 0.5, withExponents),
+    drainExponent: exponent(
+      'Drain cooling exponent',
+      0.6,
+      (shape) => withExponents(shape) && withDrainCooler(shape),
+    ),
+    desuperheatExponent: exponent(
+      'Desuperheating exponent',
+      0.6,
+      (shape) => withExponents(shape) && withDesuperheater(shape),
+    ),
+  },
+  options: {
+    drainCooler: {
+      label: 'Drain cooler',
+      help: 'A zone in which the drain heats the entering water.',
+    },
+    desuperheater: {
+      label: 'Desuperheating zone',
+      help: 'A zone in which superheated steam heats the leaving water.',
+    },
+    plugging: { label: 'Plugged tubes', help: 'Part of the surface is out of use.' },
+    exponents: {
+      label: 'Flow exponents',
+      help: 'The conductances change with a power of the flow when the hardware is frozen.',
+    },
+  },
+  chief: 'heat',
+  equations: ({ ports, quantities: q, shape }) => {
+    const { steam, drainInlet, drain, water, outlet } = ports
+    const shellTemperature = saturationTemperature(q.pressure)
+    const steamFlow = plus(...steam.map((stream) => stream.m))
+    const steamEnergy = plus(...steam.map((stream) => energy(stream)))
+    const drainsIn = plus(...drainInlet.map((stream) => energy(stream)))
+    const inUse = withPlugging(shape) ? minus(one, q.pluggedFraction) : one
+    const equations: Record<string, Equation> = {
+      shellMassBalance: massBalance(
+        drain.m,
+        plus(steamFlow, ...drainInlet.map((stream) => stream.m)),
+      ),
+      tubeMassBalance: massBalance(outlet.m, water.m),
+      drainPressure: equal(drain.p, q.pressure),
+      pressureLoss: pressureLoss(water, outlet, q.pressureLossFraction),
+      terminalDifference: equal(q.terminalDifference, minus(shellTemperature, outlet.T)),
+      duty: equal(q.heat, times(water.m, minus(outlet.h, water.h))),
+      energyBalance: equal(plus(steamEnergy, drainsIn), plus(energy(drain), q.heat)),
+    }
+    steam.forEach((stream, k) => {
+      equations[`steamPressure${k + 1}`] = equal(stream.p, q.pressure)
+    })
+
+    // Between zones the water is at the outlet's pressure; without a zone its own end state holds.
+    let coldEnd = water.T
+    let condensingHeat = q.heat
+    if (withDrainCooler(shape)) {
+      const zoneHeat = times(drain.m, minus(liquidEnthalpy(q.pressure), drain.h))
+      coldEnd = temperature(outlet.p, plus(water.h, divide(zoneHeat, water.m)))
+      condensingHeat = minus(condensingHeat, zoneHeat)
+      equations.drainState = equal(drain.T, plus(water.T, q.drainApproach))
+      equations.drainTransfer = transfer(
+        'the drain cooler',
+        times(q.drainConductance, inUse),
+        zoneHeat,
+        minus(shellTemperature, coldEnd),
+        q.drainApproach,
+      )
+    } else equations.drainState = equal(drain.h, liquidEnthalpy(q.pressure))
+
+    let hotEnd = outlet.T
+    if (withDesuperheater(shape)) {
+      const entering = divide(steamEnergy, steamFlow)
+      const leaving = enthalpyAtSuperheat(q.pressure, q.residualSuperheat)
+      const zoneHeat = times(steamFlow, minus(entering, leaving))
+      hotEnd = temperature(outlet.p, minus(outlet.h, divide(zoneHeat, water.m)))
+      condensingHeat = minus(condensingHeat, zoneHeat)
+      equations.desuperheatTransfer = transfer(
+        'the desuperheating zone',
+        times(q.desuperheatConductance, inUse),
+        zoneHeat,
+        minus(temperature(q.pressure, entering), outlet.T),
+        minus(plus(shellTemperature, q.residualSuperheat), hotEnd),
+      )
+    }
+    equations.heatTransfer = transfer(
+      'the condensing zone',
+      times(q.conductance, inUse),
+      condensingHeat,
+      minus(shellTemperature, hotEnd),
+      minus(shellTemperature, coldEnd),
+    )
+    return equations
+  },
+  secondLaw: 'adiabatic',
+  paths: (shape) => [
+    ...Array.from({ length: shape.streams.steam ?? 0 }, (_, k) => ({
+      from: `steam${k + 1}`,
+      to: 'drain',
+      course: 'line' as const,
+    })),
+    ...Array.from({ length: shape.streams.drainInlet ?? 0 }, (_, k) => ({
+      from: `drain${k + 1}`,
+      to: 'drain',
+      course: 'throttledLine' as const,
+    })),
+    { from: 'water', to: 'outlet', course: 'line' },
+  ],
+  passes: [['water', 'outlet']],
+  starts: { drain: 'liquid', outlet: 'heated' },
+})
