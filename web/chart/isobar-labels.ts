@@ -49,7 +49,13 @@ export function isobarLabels(
     const box =
       place.edge === 'right'
         ? { x: place.x + 3, y: place.y - height / 2, width: wide, height }
-        : { x: place.x - wide / 2, y: place.y - height - 2, width: wide, height }
+        : {
+            // The one with the unit reaches leftward, where no other follows.
+            x: shownUnit ? place.x + 6 - wide : place.x - wide / 2,
+            y: place.y - height - 2,
+            width: wide,
+            height,
+          }
     // A wide number at the right keeps within the chart, over the line's end if it must.
     box.x = Math.min(box.x, chartWidth - wide - 1)
     const touches = labels.some(
