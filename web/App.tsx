@@ -18,8 +18,6 @@ const Chart = lazy(() => import('./chart/TemperatureEntropyChart.tsx'))
 
 /** Below this width the chart folds under the canvas. */
 const narrow = 900
-/** Below this width the rail shows symbols only, unless the user has unfolded it. */
-const narrowRail = 1360
 const drawerHead = 32
 
 function useWidth(): number {
@@ -104,7 +102,6 @@ export function App() {
   const width = useWidth()
   const chartShare = useSettingsStore((state) => state.chartShare)
   const chartFolded = useSettingsStore((state) => state.chartFolded)
-  const railFolded = useSettingsStore((state) => state.railFolded)
   const change = useSettingsStore((state) => state.change)
   const isNarrow = width < narrow
   const chartWidth = Math.round(Math.min(width - 480, Math.max(240, width * chartShare)))
@@ -113,7 +110,7 @@ export function App() {
       <Strip />
       <Notices />
       <main className="work">
-        <Rail folded={railFolded ?? width < narrowRail} />
+        <Rail />
         <Sheet />
         {!chartFolded && !isNarrow && (
           <Divider

@@ -7,7 +7,7 @@ import {
 } from '../../src/document.ts'
 import { Quantity } from '../number/Quantity.tsx'
 import { QuantityField } from '../number/QuantityField.tsx'
-import { usePhase } from '../store/balance-store.ts'
+import { usePhase, useValue } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
@@ -51,7 +51,15 @@ const phaseWords = {
 }
 
 function Phase({ id }: { id: string }) {
-  return <td className="cell-word">{phaseWords[usePhase(id)]}</td>
+  const phase = usePhase(id)
+  // Outside the wet region there is no dryness.
+  const saturated = useValue(`${id}.x`) !== null && phase !== 'wet'
+  return (
+    <td className="cell-word">
+      {saturated ? 'sat. ' : ''}
+      {phaseWords[phase]}
+    </td>
+  )
 }
 
 const Row = memo(function Row({ row, index }: { row: StreamRow; index: number }) {

@@ -1,8 +1,10 @@
+import { hollowWidth, patternOf, streamWidth, wall } from '../canvas/stream-style.ts'
 import { useBalanceStore, usePhase, useValue } from '../store/balance-store.ts'
 import { rampColour } from '../styles/ramp.ts'
 
 const length = 26
-const middle = 6
+const height = 12
+const line = `M0 ${height / 2}H${length}`
 
 /** A short piece of a stream as the canvas draws it: width is flow, colour temperature, pattern phase. */
 export function Swatch({ id }: { id: string }) {
@@ -12,24 +14,30 @@ export function Swatch({ id }: { id: string }) {
   const coldest = useBalanceStore((state) => state.coldest)
   const hottest = useBalanceStore((state) => state.hottest)
   const largestFlow = useBalanceStore((state) => state.largestFlow)
-  const flows = m !== null && Math.abs(m) > 0 && largestFlow > 0
-  const width = flows ? 1.25 + 4.5 * Math.sqrt(Math.abs(m) / largestFlow) : 1.25
-  const colour = T === null || !flows ? 'var(--muted)' : rampColour(T, coldest, hottest)
-  const line = `M1 ${middle}H${length - 1}`
-  const hollow = flows && (phase === 'vapour' || phase === 'supercritical' || phase === 'wet')
-  const outer = hollow ? Math.max(width, 3.2) : width
+  const pattern = patternOf(phase, m)
+  const plain = streamWidth(m, largestFlow)
+  const hollow = pattern === 'steam' || pattern === 'wet'
+  const width = hollow ? hollowWidth(plain) : plain
+  const bore = width - 2 * wall
+  const colour = pattern === 'none' || T === null ? 'var(--muted)' : rampColour(T, coldest, hottest)
   return (
-    <svg className="swatch" width={length} height={2 * middle} aria-hidden="true">
+    <svg className="swatch" width={length} height={height} aria-hidden="true">
       <path
         d={line}
         stroke={colour}
-        strokeWidth={outer}
-        strokeDasharray={flows ? undefined : '3 3'}
+        strokeWidth={width}
+        strokeDasharray={pattern === 'none' ? '3 3' : undefined}
       />
-      {hollow && <path d={line} stroke="var(--paper)" strokeWidth={outer - 2} />}
-      {hollow && <path d={line} stroke={colour} strokeOpacity="0.15" strokeWidth={outer - 2} />}
-      {hollow && phase === 'wet' && (
-        <path d={line} stroke={colour} strokeWidth={1.2} strokeDasharray="1.5 3" />
+      {hollow && <path className="stream-bore" d={line} strokeWidth={bore} />}
+      {hollow && <path className="stream-tint" d={line} stroke={colour} strokeWidth={bore} />}
+      {pattern === 'wet' && (
+        <path
+          className="stream-beads"
+          d={line}
+          stroke={colour}
+          strokeWidth={Math.min(1.6, bore)}
+          strokeDasharray="0 4"
+        />
       )}
     </svg>
   )

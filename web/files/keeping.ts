@@ -120,19 +120,19 @@ async function workOnCopy(): Promise<void> {
 async function editHere(): Promise<void> {
   const mine = unwritten
   const theirs = await readKept(id)
+  const read = theirs === undefined ? null : readPlant(theirs)
   await lock.seize(id)
   ours = true
   useNoticeStore.getState().dismiss(elsewhereNotice)
   if (mine) {
-    if (theirs !== undefined) {
-      const title = `${mine.title} (other window)`
+    if (theirs !== undefined && read) {
+      const title = `${read.outcome === 'plant' ? read.plant.title : mine.title} (other window)`
       await keepPlant({ id: newId(), title, at: Date.now() - 1 }, theirs)
     }
     changed(mine)
     await flush()
     return
   }
-  const read = theirs === undefined ? null : readPlant(theirs)
   if (read?.outcome === 'plant') show(read.plant)
   setKeeping('kept')
 }

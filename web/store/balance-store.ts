@@ -169,9 +169,20 @@ export function useValueBefore(path: string): number | null {
 
 function phaseIn(state: BalanceState, streamId: string): Phase {
   const at = state.index.streams.get(streamId)
-  return at === undefined ? 'none' : (phaseNames[state.balance?.phases[at] ?? 0] ?? 'none')
+  const phase = at === undefined ? 'none' : (phaseNames[state.balance?.phases[at] ?? 0] ?? 'none')
+  if (phase !== 'wet') return phase
+  const x = valueIn(state.index, state.balance, `${streamId}.x`)
+  if (x === null) return phase
+  return x <= saturated ? 'liquid' : x >= 1 - saturated ? 'vapour' : phase
 }
 
+/** Within this of 0 or 1 a dryness is that of saturated liquid or dry saturated steam. */
+const saturated = 1e-9
+
+/**
+ * The phase as it is seen: saturated liquid (wet with dryness 0) counts as liquid, dry saturated steam
+ * as vapour.
+ */
 export function usePhase(streamId: string): Phase {
   return useBalanceStore((state) => phaseIn(state, streamId))
 }
