@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
-import { kinds } from '../../src/document.ts'
+import { addUnit, emptyPlant, kinds, portsOf } from '../../src/document.ts'
 import { grid, isHorizontal } from '../../web/canvas/geometry.ts'
+import { placesOf } from '../../web/canvas/ports.ts'
 import { symbolOf, symbols } from '../../web/canvas/symbols/index.ts'
 import type { Form } from '../../web/canvas/symbols/symbol.ts'
 
@@ -16,14 +17,22 @@ describe('symbols', () => {
   it('are there for every kind, with a place for every port', () => {
     for (const kind of kinds) {
       expect(Object.keys(symbols), kind.name).toContain(kind.name)
-      const { ports } = symbolOf(kind.name)
-      for (const [name, port] of Object.entries(kind.ports)) {
-        const key = port.repeated ? `${name.replace(/s$/, '')}*` : name
-        const keys = Object.keys(ports)
-        expect(
-          keys.includes(key) || keys.includes(`${name}*`),
-          `${kind.name}.${name} among ${keys}`,
-        ).toBe(true)
+      const lie = {
+        symbol: symbolOf(kind.name),
+        form: { options: {}, counts: {} },
+        mirrored: false,
+        upended: false,
+        at: [0, 0] as const,
+      }
+      const empty = emptyPlant()
+      const { plant } = addUnit(empty, empty.layouts[0]?.id ?? '', kind.name, [0, 0])
+      const layout = plant.layouts[0]
+      const unit = layout?.units[0]
+      if (!layout || !unit) throw new Error(`No ${kind.name} was added.`)
+      const ports = portsOf(layout, unit)
+      expect(ports.length).toBeGreaterThan(0)
+      for (const port of ports) {
+        expect(placesOf(lie, port.name), `${kind.name}.${port.name}`).not.toBeNull()
       }
     }
   })

@@ -46,7 +46,7 @@ export const useCanvasStore = create<CanvasState>()((set, get) => ({
     const { sheet, textScale, labels, tags, zoom } = get()
     const layout = readLayout()
     const next = drawSheet(layout, moved, sheet)
-    set({ moved, sheet: next, ...texts(layout, next, textScale, zoom, { labels, tags }) })
+    set({ moved, sheet: next, ...texts(layout, next, textScale, zoom, { labels, tags, sheet }) })
   },
   setZoom(zoom) {
     const wanted = Math.max(1, smallestText / textSize / zoom)
@@ -128,10 +128,7 @@ function texts(
   sheet: Sheet,
   scale: number,
   zoom: number,
-  earlier?: {
-    readonly labels: ReadonlyMap<string, PlacedLabel>
-    readonly tags: ReadonlyMap<string, PlacedTag>
-  },
+  earlier?: Pick<CanvasState, 'labels' | 'tags' | 'sheet'>,
 ): Pick<CanvasState, 'labels' | 'tags'> {
   const occupied = {
     bodies: [...sheet.units.values()].map((unit) => grown(unit.body, unit.symbol.overhang ?? 0)),
@@ -171,14 +168,36 @@ function texts(
   }
   // The label inside a turbine has no choice: it is set first.
   requests.sort((a, b) => Number(b.wish === 'inside') - Number(a.wish === 'inside'))
-  const labels = placeLabels(requests, occupied)
+  const stays = staying(sheet, earlier)
+  const labels = placeLabels(requests, occupied, stays.labels)
   const tags =
     zoom < tagsFrom
       ? new Map<string, PlacedTag>()
-      : placeTags(tagRequests(layout, sheet, scale), occupied, labels.values())
+      : placeTags(tagRequests(layout, sheet, scale), occupied, labels.values(), stays.tags)
   return earlier
     ? { labels: kept(earlier.labels, labels), tags: kept(earlier.tags, tags) }
     : { labels, tags }
+}
+
+/** Under way, the texts of what does not move need not be placed anew. */
+function staying(sheet: Sheet, earlier?: Pick<CanvasState, 'labels' | 'tags' | 'sheet'>) {
+  const labels = new Map<string, PlacedLabel>()
+  const tags = new Map<string, PlacedTag | null>()
+  if (!earlier) return { labels, tags }
+  for (const [id, label] of earlier.labels) {
+    const unit = sheet.units.get(id)
+    const shaft = sheet.shafts.get(id)
+    if (
+      (unit && earlier.sheet.units.get(id) === unit) ||
+      (shaft && earlier.sheet.shafts.get(id) === shaft)
+    ) {
+      labels.set(id, label)
+    }
+  }
+  for (const [id, stream] of sheet.streams) {
+    if (earlier.sheet.streams.get(id) === stream) tags.set(id, earlier.tags.get(id) ?? null)
+  }
+  return { labels, tags }
 }
 
 /** Texts that stand where they stood keep their identity and are not painted again. */

@@ -160,11 +160,12 @@ function inside(request: LabelRequest, found: Candidate[]): readonly Side[] {
 
 /**
  * A place for each label, in the order given: the one that covers least, the earlier the better.
- * `earlier` labels of units that have not changed stay where they are.
+ * `staying` labels keep the place they have as long as they cover nothing there.
  */
 export function placeLabels(
   requests: readonly LabelRequest[],
   occupied: Occupied,
+  staying: ReadonlyMap<string, PlacedLabel> = new Map(),
 ): Map<string, PlacedLabel> {
   const streams = new Field()
   for (const { route } of occupied.streams) for (const box of boxesOf(route)) streams.add(box)
@@ -174,21 +175,26 @@ export function placeLabels(
   const placed = new Map<string, PlacedLabel>()
   for (const request of requests) {
     const within = request.wish === 'inside'
+    const covered = (box: Box) =>
+      within && overlap(box, request.body) ? 0 : 4 * bodies.covered(box) + 8 * streams.covered(box)
+    const stays = staying.get(request.id)
+    if (stays && covered(stays) === 0 && texts.covered(stays) === 0) {
+      placed.set(request.id, stays)
+      texts.add(padded(stays))
+      continue
+    }
     let best: Candidate | null = null
     let least = Number.POSITIVE_INFINITY
-    candidatesOf(request).forEach((candidate, i) => {
-      const covers =
-        within && overlap(candidate, request.body)
-          ? 0
-          : 4 * bodies.covered(candidate) + 8 * streams.covered(candidate)
-      const cost = covers + 8 * texts.covered(candidate) + 2 * i
+    for (const [i, candidate] of candidatesOf(request).entries()) {
+      if (2 * i >= least) break
+      const cost = covered(candidate) + 8 * texts.covered(candidate) + 2 * i
       if (cost < least) {
         least = cost
         best = candidate
       }
-    })
+    }
     if (!best) continue
-    const label: PlacedLabel = { id: request.id, ...(best as Candidate) }
+    const label: PlacedLabel = { id: request.id, ...best }
     placed.set(request.id, label)
     texts.add(padded(label))
   }
@@ -208,12 +214,13 @@ const reaches = [14, 26] as const
 
 /**
  * A place with a leader for each tag that finds one where it covers nothing; tags that find none are
- * left out.
+ * left out. `staying` tags keep the place they have, or none, as long as they cover nothing there.
  */
 export function placeTags(
   requests: readonly TagRequest[],
   occupied: Occupied,
   labels: Iterable<Box>,
+  staying: ReadonlyMap<string, PlacedTag | null> = new Map(),
 ): Map<string, PlacedTag> {
   const field = new Field()
   for (const { route } of occupied.streams) for (const box of boxesOf(route)) field.add(box)
@@ -222,7 +229,13 @@ export function placeTags(
   const leaders = new Field()
   const placed = new Map<string, PlacedTag>()
   for (const request of requests) {
-    const tag = freeTag(request, field, leaders)
+    const stays = staying.get(request.id)
+    const tag =
+      stays === undefined
+        ? freeTag(request, field, leaders)
+        : stays && field.covered(stays) === 0
+          ? stays
+          : null
     if (!tag) continue
     placed.set(request.id, tag)
     field.add(padded(tag))

@@ -114,54 +114,92 @@ export function passesThrough(
   return false
 }
 
-function conflictPrice(a: Point, b: Point, routes: readonly Route[]): number {
-  let sum = 0
-  const level = a[1] === b[1]
-  const along = level ? 0 : 1
-  const across = level ? 1 : 0
-  const least = Math.min(a[along], b[along])
-  const most = Math.max(a[along], b[along])
+/** Straights of the streams that are there, level and upright ones apart: place, least and most along it. */
+interface Straights {
+  readonly level: readonly number[]
+  readonly upright: readonly number[]
+}
+
+interface Region {
+  readonly left: number
+  readonly right: number
+  readonly top: number
+  readonly bottom: number
+}
+
+function straightsOf(routes: readonly Route[], region: Region): Straights {
+  const level: number[] = []
+  const upright: number[] = []
   for (const route of routes) {
     for (let i = 1; i < route.length; i++) {
-      const c = route[i - 1] as Point
-      const d = route[i] as Point
-      if ((c[1] === d[1]) === level) {
-        const apart = Math.abs(c[across] - a[across])
-        if (apart >= spacing) continue
-        const shared =
-          Math.min(most, Math.max(c[along], d[along])) -
-          Math.max(least, Math.min(c[along], d[along]))
-        if (shared > 0) sum += price.beside * (shared + 16) * (apart === 0 ? 2 : 1)
-      } else {
-        const at = c[along]
-        const low = Math.min(c[across], d[across])
-        const high = Math.max(c[across], d[across])
-        if (at > least && at < most && a[across] > low && a[across] < high) sum += price.crossing
-        else if (at >= least && at <= most && a[across] >= low && a[across] <= high) {
-          // A corner on another stream reads as a joint.
-          sum += price.crossing
-        }
-      }
+      const [x1, y1] = route[i - 1] as Point
+      const [x2, y2] = route[i] as Point
+      const left = Math.min(x1, x2)
+      const right = Math.max(x1, x2)
+      const top = Math.min(y1, y2)
+      const bottom = Math.max(y1, y2)
+      if (right < region.left || left > region.right) continue
+      if (bottom < region.top || top > region.bottom) continue
+      if (y1 === y2) level.push(y1, left, right)
+      else upright.push(x1, top, bottom)
+    }
+  }
+  return { level, upright }
+}
+
+/** What a straight from a to b is charged for lying beside, crossing or touching others. */
+function conflictPrice(a: Point, b: Point, { level, upright }: Straights): number {
+  const isLevel = a[1] === b[1]
+  const at = isLevel ? a[1] : a[0]
+  const from = isLevel ? a[0] : a[1]
+  const to = isLevel ? b[0] : b[1]
+  const least = from < to ? from : to
+  const most = from < to ? to : from
+  let sum = 0
+  const parallel = isLevel ? level : upright
+  for (let i = 0; i < parallel.length; i += 3) {
+    const apart = Math.abs((parallel[i] as number) - at)
+    if (apart >= spacing) continue
+    const shared =
+      Math.min(most, parallel[i + 2] as number) - Math.max(least, parallel[i + 1] as number)
+    if (shared > 0) sum += price.beside * (shared + 16) * (apart === 0 ? 2 : 1)
+  }
+  const across = isLevel ? upright : level
+  for (let i = 0; i < across.length; i += 3) {
+    const place = across[i] as number
+    // A corner on another stream reads as a joint: touching costs as much as crossing.
+    if (
+      place >= least &&
+      place <= most &&
+      at >= (across[i + 1] as number) &&
+      at <= (across[i + 2] as number)
+    ) {
+      sum += price.crossing
     }
   }
   return sum
 }
 
-function priceOf(route: Route, from: Terminal, to: Terminal, around: Surroundings, most: number) {
+interface Task {
+  readonly from: Terminal
+  readonly to: Terminal
+  readonly obstacles: readonly Box[]
+  readonly straights: Straights
+}
+
+/** The price of a route, or any figure from `most` up where it comes to that. */
+function priceOf(route: Route, { from, to, obstacles, straights }: Task, most: number): number {
   const last = route.length - 1
   let sum = length(route) + price.bend * (last - 1)
   if (last > 1) {
-    for (const [a, b] of [
-      [route[0], route[1]],
-      [route[last - 1], route[last]],
-    ]) {
-      sum += price.cramped * Math.max(0, easy - manhattan(a as Point, b as Point))
-    }
+    const first = manhattan(route[0] as Point, route[1] as Point)
+    const final = manhattan(route[last - 1] as Point, route[last] as Point)
+    sum += price.cramped * (Math.max(0, easy - first) + Math.max(0, easy - final))
   }
-  for (let i = 1; i <= last; i++) {
+  for (let i = 1; i <= last && sum < most; i++) {
     const a = route[i - 1] as Point
     const b = route[i] as Point
-    for (const box of around.obstacles) {
+    for (const box of obstacles) {
       if (enters(a, b, box, clearance - 1)) sum += price.through
     }
     // Its own units a stream may touch at its ends, but neither cross nor hug.
@@ -171,21 +209,24 @@ function priceOf(route: Route, from: Terminal, to: Terminal, around: Surrounding
     if (enters(a, b, to.body, i === last ? -1 : clearance - 1)) {
       sum += i === last || enters(a, b, to.body, -1) ? price.through : price.hugging
     }
-    if (sum >= most) return sum
-    sum += conflictPrice(a, b, around.routes)
-    if (sum >= most) return sum
+  }
+  for (let i = 1; i <= last && sum < most; i++) {
+    sum += conflictPrice(route[i - 1] as Point, route[i] as Point, straights)
   }
   return sum
 }
 
-/** Coordinates worth trying between two ends: near each, halfway, and along the edges of what stands between. */
-function tracks(
-  a: number,
-  b: number,
-  low: number,
-  high: number,
-  edges: readonly number[],
-): number[] {
+/** A coordinate to try, and how far it lies beyond the two ends. */
+interface Track {
+  readonly at: number
+  readonly beyond: number
+}
+
+/**
+ * Coordinates worth trying between two ends: near each, halfway, and along the edges of what stands
+ * about; those that make the way no longer first, the middle ones leading.
+ */
+function tracks(a: number, b: number, edges: readonly number[]): Track[] {
   const found = new Set<number>()
   for (let step = 0; step <= 6; step++) {
     for (const end of [a, b]) {
@@ -195,8 +236,14 @@ function tracks(
   }
   const middle = onGrid((a + b) / 2)
   for (let step = -2; step <= 2; step++) found.add(middle + step * grid)
-  for (const edge of edges) if (edge >= low && edge <= high) found.add(edge)
-  return [...found]
+  for (const edge of edges) found.add(edge)
+  const low = Math.min(a, b)
+  const high = Math.max(a, b)
+  const all: Track[] = []
+  for (const at of found) all.push({ at, beyond: Math.max(0, low - at, at - high) })
+  return all.sort(
+    (p, q) => p.beyond - q.beyond || Math.abs(p.at - middle) - Math.abs(q.at - middle),
+  )
 }
 
 /**
@@ -208,45 +255,47 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
   const b = to.point
   const out = outward[from.side]
   const back = outward[to.side]
-
-  const room = 240
-  const left = Math.min(a[0], b[0], from.body.x, to.body.x) - room
-  const right =
-    Math.max(a[0], b[0], from.body.x + from.body.width, to.body.x + to.body.width) + room
-  const top = Math.min(a[1], b[1], from.body.y, to.body.y) - room
-  const bottom =
-    Math.max(a[1], b[1], from.body.y + from.body.height, to.body.y + to.body.height) + room
+  const region: Region = {
+    left: Math.min(a[0], b[0], from.body.x, to.body.x) - room,
+    right: Math.max(a[0], b[0], from.body.x + from.body.width, to.body.x + to.body.width) + room,
+    top: Math.min(a[1], b[1], from.body.y, to.body.y) - room,
+    bottom: Math.max(a[1], b[1], from.body.y + from.body.height, to.body.y + to.body.height) + room,
+  }
+  const obstacles = around.obstacles.filter(
+    (box) =>
+      box.x < region.right &&
+      box.x + box.width > region.left &&
+      box.y < region.bottom &&
+      box.y + box.height > region.top,
+  )
+  const task: Task = { from, to, obstacles, straights: straightsOf(around.routes, region) }
 
   const xEdges: number[] = []
   const yEdges: number[] = []
-  const edgesOf = (box: Box) => {
-    for (const away of [2, 3, 4]) {
-      xEdges.push(onGrid(box.x) - away * grid, onGrid(box.x + box.width) + away * grid)
-      yEdges.push(onGrid(box.y) - away * grid, onGrid(box.y + box.height) + away * grid)
+  for (const box of [from.body, to.body, ...obstacles]) {
+    for (let away = 2; away <= 4; away++) {
+      const { x, y, width, height } = box
+      xEdges.push(onGrid(x) - away * grid, onGrid(x + width) + away * grid)
+      yEdges.push(onGrid(y) - away * grid, onGrid(y + height) + away * grid)
     }
   }
-  edgesOf(from.body)
-  edgesOf(to.body)
-  for (const box of around.obstacles) {
-    if (box.x < right && box.x + box.width > left && box.y < bottom && box.y + box.height > top) {
-      edgesOf(box)
-    }
-  }
-  const xs = tracks(a[0], b[0], left, right, xEdges)
-  const ys = tracks(a[1], b[1], top, bottom, yEdges)
+  const xs = tracks(a[0], b[0], xEdges)
+  const ys = tracks(a[1], b[1], yEdges)
 
-  let best: Route | null = null
-  let least = Number.POSITIVE_INFINITY
   // Between ends that face each other from nearby the corners may come close to the units.
   const facing = (b[0] - a[0]) * out[0] + (b[1] - a[1]) * out[1]
   const tight =
     from.side !== to.side && facing > 0 && facing < 2 * stub ? Math.min(4, facing / 2) : stub
-  const consider = (points: readonly Point[]) => {
-    const bare = length(points) + price.bend * (points.length - 2)
-    if (bare >= least) return
+
+  let best: Route | null = null
+  let least = Number.POSITIVE_INFINITY
+  const direct = manhattan(a, b)
+  /** True where a route of that length and so many corners could still be the cheapest. */
+  const worth = (more: number, corners: number) => direct + more + price.bend * corners < least
+  const consider = (...points: readonly Point[]) => {
     const route = tidied(points)
     if (!leaves(route, out, back, tight)) return
-    const cost = priceOf(route, from, to, around, least)
+    const cost = priceOf(route, task, least)
     if (cost < least) {
       least = cost
       best = route
@@ -255,36 +304,65 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
 
   const fromLevel = isHorizontal(from.side)
   const toLevel = isHorizontal(to.side)
-  const near = (values: readonly number[], end: number, way: number): number[] =>
-    values
-      .filter((value) => (value - end) * way >= tight)
-      .sort((p, q) => Math.abs(p - end) - Math.abs(q - end))
-      .slice(0, 12)
-
   if (fromLevel && toLevel) {
-    if (a[1] === b[1]) consider([a, b])
-    for (const x of xs) consider([a, [x, a[1]], [x, b[1]], b])
-    for (const x1 of near(xs, a[0], out[0])) {
-      for (const x2 of near(xs, b[0], back[0])) {
-        for (const y of ys) consider([a, [x1, a[1]], [x1, y], [x2, y], [x2, b[1]], b])
+    if (a[1] === b[1]) consider(a, b)
+    for (const { at: x, beyond } of xs) {
+      if (!worth(2 * beyond, 2)) break
+      consider(a, [x, a[1]], [x, b[1]], b)
+    }
+    for (const x1 of near(xs, a[0], out[0], tight)) {
+      for (const x2 of near(xs, b[0], back[0], tight)) {
+        const more = detour(a[0], x1, x2, b[0])
+        for (const { at: y, beyond } of ys) {
+          if (!worth(more + 2 * beyond, 4)) break
+          consider(a, [x1, a[1]], [x1, y], [x2, y], [x2, b[1]], b)
+        }
       }
     }
   } else if (!fromLevel && !toLevel) {
-    if (a[0] === b[0]) consider([a, b])
-    for (const y of ys) consider([a, [a[0], y], [b[0], y], b])
-    for (const y1 of near(ys, a[1], out[1])) {
-      for (const y2 of near(ys, b[1], back[1])) {
-        for (const x of xs) consider([a, [a[0], y1], [x, y1], [x, y2], [b[0], y2], b])
+    if (a[0] === b[0]) consider(a, b)
+    for (const { at: y, beyond } of ys) {
+      if (!worth(2 * beyond, 2)) break
+      consider(a, [a[0], y], [b[0], y], b)
+    }
+    for (const y1 of near(ys, a[1], out[1], tight)) {
+      for (const y2 of near(ys, b[1], back[1], tight)) {
+        const more = detour(a[1], y1, y2, b[1])
+        for (const { at: x, beyond } of xs) {
+          if (!worth(more + 2 * beyond, 4)) break
+          consider(a, [a[0], y1], [x, y1], [x, y2], [b[0], y2], b)
+        }
       }
     }
-  } else if (fromLevel) {
-    consider([a, [b[0], a[1]], b])
-    for (const x of xs) for (const y of ys) consider([a, [x, a[1]], [x, y], [b[0], y], b])
   } else {
-    consider([a, [a[0], b[1]], b])
-    for (const y of ys) for (const x of xs) consider([a, [a[0], y], [x, y], [x, b[1]], b])
+    consider(a, fromLevel ? [b[0], a[1]] : [a[0], b[1]], b)
+    for (const { at: x, beyond: beyondX } of xs) {
+      if (!worth(2 * beyondX, 3)) break
+      for (const { at: y, beyond: beyondY } of ys) {
+        if (!worth(2 * beyondX + 2 * beyondY, 3)) break
+        if (fromLevel) consider(a, [x, a[1]], [x, y], [b[0], y], b)
+        else consider(a, [a[0], y], [x, y], [x, b[1]], b)
+      }
+    }
   }
   return best ?? tidied([a, [a[0], b[1]], b])
+}
+
+/** How far round the two ends a route may go, px. */
+const room = 240
+
+/** Tracks on the outer side of an end, the nearest few. */
+function near(all: readonly Track[], end: number, way: number, least: number): number[] {
+  return all
+    .map(({ at }) => at)
+    .filter((at) => (at - end) * way >= least)
+    .sort((p, q) => Math.abs(p - end) - Math.abs(q - end))
+    .slice(0, 10)
+}
+
+/** What the way over two places between is longer than the direct one, along one axis. */
+function detour(a: number, first: number, second: number, b: number): number {
+  return Math.abs(first - a) + Math.abs(second - first) + Math.abs(b - second) - Math.abs(b - a)
 }
 
 /** True where the first straight leaves outward and the last one arrives inward, each long enough. */
