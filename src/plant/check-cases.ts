@@ -1,6 +1,7 @@
-import { checkCurve, givensAt, type KnownPaths } from './check-given.ts'
+import { checkCurve, givensAt } from './check-given.ts'
 import type { NoteRepair } from './check-layout.ts'
 import type { Case, Layout } from './document.ts'
+import type { KnownPaths } from './known-paths.ts'
 import { suggestion } from './nearest-name.ts'
 import {
   booleanAt,

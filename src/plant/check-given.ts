@@ -1,6 +1,5 @@
-import type { Curve, Given, Givens, Layout } from './document.ts'
-import { suggestion } from './nearest-name.ts'
-import { splitPath } from './paths.ts'
+import type { Curve, Given, Givens } from './document.ts'
+import type { KnownPaths } from './known-paths.ts'
 import {
   listAt,
   numberAt,
@@ -11,7 +10,6 @@ import {
   textAt,
   within,
 } from './place.ts'
-import type { QuantityEntry } from './quantities.ts'
 
 /** A given: a finite number or a well-formed curve. Whether its path exists is checked later. */
 export function givenAt(value: unknown, place: string): Given {
@@ -65,42 +63,6 @@ export function givensAt(value: unknown, place: string): Givens {
       givenAt(given, within(place, name)),
     ]),
   )
-}
-
-/** What a layout's paths are checked against. */
-export interface KnownPaths {
-  readonly has: (path: string) => boolean
-  /** Why there is no such path, as sentences. */
-  readonly why: (path: string) => string
-}
-
-/** The paths of a layout, from the quantities that its units, streams, shafts and plant have. */
-export function knownPaths(
-  layout: Layout,
-  entriesOf: ReadonlyMap<string, readonly QuantityEntry[]>,
-  whyLacking: (id: string, name: string) => string | undefined,
-): KnownPaths {
-  const paths = new Map<string, string[]>()
-  const known = new Set<string>()
-  for (const [id, entries] of entriesOf) {
-    paths.set(
-      id,
-      entries.map(({ name }) => name),
-    )
-    for (const { path } of entries) known.add(path)
-  }
-  return {
-    has: (path) => known.has(path),
-    why: (path) => {
-      const [id, name] = splitPath(path) ?? [path, '']
-      const names = paths.get(id)
-      if (names) {
-        return whyLacking(id, name) ?? `${id} has no quantity ${name}.${suggestion(name, names)}`
-      }
-      const nearest = suggestion(id, paths.keys())
-      return `layout ${layout.id} has no unit, stream or shaft ${id}.${nearest}`
-    },
-  }
 }
 
 /** The path that a curve depends on exists and is not the curve's own. */

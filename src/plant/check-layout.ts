@@ -1,8 +1,9 @@
 import type { Catalogue, Kind } from './catalogue.ts'
 import { casesAt, checkCasePaths } from './check-cases.ts'
-import { checkCurve, givensAt, type KnownPaths, knownPaths } from './check-given.ts'
+import { checkCurve, givensAt } from './check-given.ts'
 import { checkStreamEnds } from './check-streams.ts'
 import type { Layout, Options, Shaft, Stream, Unit } from './document.ts'
+import { type KnownPaths, knownPaths } from './known-paths.ts'
 import { suggestion } from './nearest-name.ts'
 import {
   booleanAt,
@@ -17,15 +18,6 @@ import {
   textListAt,
   within,
 } from './place.ts'
-import {
-  ownerOf,
-  type QuantityEntry,
-  quantitiesOf,
-  quantitiesOfPlant,
-  quantitiesOfShaft,
-  quantitiesOfStream,
-} from './quantities.ts'
-
 /** Notes a repair: what was missing at a place, and what stands there now. */
 export type NoteRepair = (place: string, what: string, where?: readonly string[]) => void
 
@@ -264,14 +256,7 @@ function checkShafts(layout: Layout, place: string, catalogue: Catalogue): void 
 
 /** Every given belongs to a quantity that its owner has, every curve and case to a path that exists. */
 function checkQuantities(layout: Layout, place: string, catalogue: Catalogue): void {
-  const entriesOf = new Map<string, readonly QuantityEntry[]>()
-  for (const unit of layout.units) entriesOf.set(unit.id, quantitiesOf(layout, unit, catalogue))
-  for (const stream of layout.streams) {
-    entriesOf.set(stream.id, quantitiesOfStream(stream, catalogue))
-  }
-  for (const shaft of layout.shafts) entriesOf.set(shaft.id, quantitiesOfShaft(shaft, catalogue))
-  entriesOf.set('plant', quantitiesOfPlant(catalogue))
-  const known = knownPaths(layout, entriesOf, (id, name) => whyLacking(layout, id, name, catalogue))
+  const known = knownPaths(layout, catalogue)
   const owners = (list: 'units' | 'streams' | 'shafts') =>
     layout[list].forEach((owner, i) => {
       checkGivens(owner.id, owner.given, `${place}.${list}[${i}].given`, known)
@@ -281,28 +266,6 @@ function checkQuantities(layout: Layout, place: string, catalogue: Catalogue): v
   owners('shafts')
   checkGivens('plant', layout.plant.given, `${place}.plant.given`, known)
   checkCasePaths(layout, place, known)
-}
-
-/** Why a quantity is missing that its owner would have in another form; nothing where it never has it. */
-function whyLacking(
-  layout: Layout,
-  id: string,
-  name: string,
-  catalogue: Catalogue,
-): string | undefined {
-  const owner = ownerOf(layout, id)
-  if (owner?.type === 'shaft' && Object.hasOwn(catalogue.shaftQuantities(true), name)) {
-    return `shaft ${id} has no generator, and so no ${name}.`
-  }
-  if (owner?.type !== 'unit') return undefined
-  const table = catalogue.kindNamed(owner.unit.kind)?.quantities ?? {}
-  const bare = name.replace(/\d+$/, '')
-  const declared = Object.hasOwn(table, name)
-    ? !table[name]?.each
-    : Object.hasOwn(table, bare) && table[bare]?.each && bare !== name
-  return declared
-    ? `${id} (${owner.unit.kind}) has no ${name} with the options and streams that it has.`
-    : undefined
 }
 
 function checkGivens(id: string, given: Unit['given'], place: string, known: KnownPaths): void {

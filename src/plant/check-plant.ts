@@ -3,19 +3,11 @@ import { checkLayout, type NoteRepair } from './check-layout.ts'
 import type { Layout, Plant } from './document.ts'
 import { currentVersion } from './migrate.ts'
 import { listAt, refuse, refuseTwins, strictObjectAt, textAt, Unusable } from './place.ts'
-
-/** Something that a file lacked and that was put right without touching its physics. */
-export interface Repair {
-  readonly severity: 'remark'
-  readonly code: 'repaired'
-  /** Ids of units, streams and shafts. */
-  readonly where: readonly string[]
-  readonly quantities: readonly string[]
-  readonly message: string
-}
+import type { Remark } from './remark.ts'
 
 export type ReadResult =
-  | { readonly outcome: 'plant'; readonly plant: Plant; readonly repairs: readonly Repair[] }
+  /** `repairs`: what the file lacked and what was put there; its physics is never touched. */
+  | { readonly outcome: 'plant'; readonly plant: Plant; readonly repairs: readonly Remark[] }
   /** One line that names the place: line and column, or `layouts[0].units[3].given.foo`. */
   | { readonly outcome: 'unusable'; readonly message: string }
 
@@ -25,7 +17,7 @@ export type ReadResult =
  * a stream, a turbine on no shaft) passes: findings tell of it. Nothing is thrown.
  */
 export function checkPlant(value: unknown, catalogue: Catalogue = standardCatalogue): ReadResult {
-  const repairs: Repair[] = []
+  const repairs: Remark[] = []
   try {
     return { outcome: 'plant', plant: plantAt(value, catalogue, repairs), repairs }
   } catch (fault) {
@@ -36,7 +28,7 @@ export function checkPlant(value: unknown, catalogue: Catalogue = standardCatalo
 
 const plantKeys = ['format', 'version', 'title', 'layouts']
 
-function plantAt(value: unknown, catalogue: Catalogue, repairs: Repair[]): Plant {
+function plantAt(value: unknown, catalogue: Catalogue, repairs: Remark[]): Plant {
   const file = strictObjectAt(value, '', plantKeys, 'the plant')
   if (file.format !== 'bledsteam/plant') {
     refuse('format', 'a plant file has the format "bledsteam/plant".')

@@ -1,9 +1,9 @@
+import { numberedPort, portNamed } from '../units/kind.ts'
 import type { Catalogue, Kind } from './catalogue.ts'
 import type { Layout, Stream, Unit } from './document.ts'
 import { suggestion } from './nearest-name.ts'
 import { splitPath } from './paths.ts'
 import { refuse } from './place.ts'
-import { portOfKind } from './ports.ts'
 
 type End = 'from' | 'to'
 
@@ -17,14 +17,14 @@ export function checkStreamEnds(layout: Layout, place: string, catalogue: Catalo
     for (const end of ['from', 'to'] as const) {
       const here = `${place}.streams[${i}].${end}`
       const reference = stream[end]
-      const { unit, port, number } = portAt(stream, end, here, units, catalogue)
+      const number = numberAt(stream, end, here, units, catalogue)
       const other = taken.get(reference)
       if (other !== undefined) {
         refuse(here, `${reference} takes one stream, and ${other} is connected to it already.`)
       }
       taken.set(reference, stream.id)
       if (number === undefined) continue
-      const key = `${unit.id}.${port}`
+      const key = reference.slice(0, -String(number).length)
       const used = numbers.get(key) ?? new Map<number, string>()
       numbers.set(key, used.set(number, here))
     }
@@ -41,13 +41,14 @@ export function checkStreamEnds(layout: Layout, place: string, catalogue: Catalo
   }
 }
 
-function portAt(
+/** The number of the port that a stream ends at; undefined for single ports. */
+function numberAt(
   stream: Stream,
   end: End,
   here: string,
   units: ReadonlyMap<string, Unit>,
   catalogue: Catalogue,
-): { unit: Unit; port: string; number?: number } {
+): number | undefined {
   const reference = stream[end]
   const [id, name] = splitPath(reference) ?? []
   if (id === undefined || name === undefined) {
@@ -65,7 +66,7 @@ function portAt(
     )
   }
   const kind = catalogue.kindNamed(unit.kind)
-  const found = kind && portOfKind(kind, name)
+  const found = kind && portNamed(kind.ports, name)
   const description = found && kind?.ports[found.port]
   if (!kind || !found || !description) {
     return refuse(
@@ -83,7 +84,7 @@ function portAt(
   if (description.repeated && found.number === undefined) {
     refuse(here, `the ports ${name} of ${id} are numbered: write ${id}.${name}1.`)
   }
-  return { unit, ...found }
+  return found.number
 }
 
 /** '; its inlets: steam1, water.' and the nearest of them. */
@@ -91,7 +92,7 @@ function portList(kind: Kind, end: End, wrong: string): string {
   const direction = end === 'from' ? 'out' : 'in'
   const names = Object.entries(kind.ports)
     .filter(([, port]) => port.direction === direction)
-    .map(([name, port]) => (port.repeated ? `${name}1` : name))
+    .map(([name, port]) => (port.repeated ? numberedPort(kind.ports, name, 1) : name))
   const what = direction === 'out' ? 'outlets' : 'inlets'
   return names.length === 0
     ? `; it has no ${what}.`

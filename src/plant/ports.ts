@@ -1,4 +1,4 @@
-import type { PortDescription, Shape } from '../units/kind.ts'
+import { numberedPort, type PortDescription, portNamed, type Shape } from '../units/kind.ts'
 import { type Catalogue, type Kind, standardCatalogue } from './catalogue.ts'
 import type { Layout, PortReference, Unit } from './document.ts'
 import { splitPath } from './paths.ts'
@@ -14,35 +14,39 @@ export interface PortAddress {
   readonly number?: number
 }
 
-/** `drain12` to `['drain', 12]`. Numbers start at 1 and have no leading zero. */
-const numbered = /^(.*?[^0-9])([1-9][0-9]*)$/
-
-/** Name in the kind's table and number of a port, or nothing where the kind has no such port. */
-export function portOfKind(
-  kind: Kind,
-  name: string,
-): { readonly port: string; readonly number?: number } | undefined {
-  if (Object.hasOwn(kind.ports, name)) return { port: name }
-  const match = numbered.exec(name)
-  const [, port, digits] = match ?? []
-  if (port === undefined || !Object.hasOwn(kind.ports, port) || !kind.ports[port]?.repeated) {
-    return undefined
-  }
-  return { port, number: Number(digits) }
-}
-
-/** Finds `hp.bleed2` (or the bare `hp.bleed`) in a layout. */
+/**
+ * Finds `hp.bleed2` in a layout, or a repeated port by its bare name (`h1.drain`). Where an outlet and
+ * numbered inlets share that name, `direction` tells which is meant; without it the single port is.
+ */
 export function findPort(
   layout: Layout,
   reference: PortReference,
   catalogue: Catalogue = standardCatalogue,
+  direction?: PortDescription['direction'],
 ): PortAddress | undefined {
   const [id, name] = splitPath(reference) ?? []
   const unit = id === undefined ? undefined : layout.units.find((one) => one.id === id)
   const kind = unit && catalogue.kindNamed(unit.kind)
-  const found = kind && name !== undefined ? portOfKind(kind, name) : undefined
-  const description = found && kind?.ports[found.port]
-  return unit && kind && found && description ? { unit, kind, ...found, description } : undefined
+  if (!unit || !kind || name === undefined) return undefined
+  const exact = portNamed(kind.ports, name)
+  const description = exact && kind.ports[exact.port]
+  const fits = direction === undefined || description?.direction === direction
+  if (exact && description && fits) return { unit, kind, ...exact, description }
+  for (const [port, one] of Object.entries(kind.ports)) {
+    const isMeant = one.repeated && (port === name || one.stem === name)
+    if (isMeant && (direction === undefined || one.direction === direction)) {
+      return { unit, kind, port, description: one }
+    }
+  }
+  return exact && description ? { unit, kind, ...exact, description } : undefined
+}
+
+/** A reference to a port, numbered where it is repeated. */
+export function portReference(address: PortAddress, number?: number): PortReference {
+  const { unit, kind, port } = address
+  return number === undefined
+    ? `${unit.id}.${port}`
+    : `${unit.id}.${numberedPort(kind.ports, port, number)}`
 }
 
 const noOptions = {}
@@ -55,7 +59,7 @@ export function shapeOf(layout: Layout, unit: Unit, kind: Kind): Shape {
   for (const stream of layout.streams) {
     for (const end of [stream.from, stream.to]) {
       if (!end.startsWith(start)) continue
-      const found = portOfKind(kind, end.slice(start.length))
+      const found = portNamed(kind.ports, end.slice(start.length))
       if (found) streams[found.port] = (streams[found.port] ?? 0) + 1
     }
   }
@@ -89,7 +93,7 @@ export function portsOf(
   const ports: PortOfUnit[] = []
   for (const [port, description] of Object.entries(kind.ports)) {
     for (let number = 1; ; number++) {
-      const name = description.repeated ? `${port}${number}` : port
+      const name = description.repeated ? numberedPort(kind.ports, port, number) : port
       const stream = streams.get(`${unit.id}.${name}`)
       ports.push({
         name,

@@ -107,12 +107,18 @@ const tub: Kind = {
   idStem: 'tub',
   ports: {
     steam: port('in', 'steam', { repeated: true, label: 'Steam' }),
-    drain: port('in', 'any', { repeated: true, optional: true, label: 'Drain' }),
+    drainInlet: port('in', 'any', {
+      repeated: true,
+      stem: 'drain',
+      optional: true,
+      label: 'Drain inlet',
+    }),
+    drain: port('out', 'water', { optional: true, label: 'Drain' }),
     outlet: port('out', 'water', { label: 'Outlet' }),
   },
   quantities: {
     pressure: quantity({ dimension: 'pressure', usual: 1e5, given: true }),
-    part: quantity({ label: 'Part', each: { port: 'drain', extra: 0 } }),
+    part: quantity({ label: 'Part', each: { port: 'drainInlet', extra: 0 } }),
   },
 }
 

@@ -1,6 +1,6 @@
 import { type Catalogue, standardCatalogue } from '../catalogue.ts'
 import type { Layout, Plant, PortReference, Stream } from '../document.ts'
-import { findPort, type PortAddress, portsOf, separateLines } from '../ports.ts'
+import { findPort, type PortAddress, portReference, portsOf, separateLines } from '../ports.ts'
 import { labelOf } from '../quantities.ts'
 import { changeLayout, EditRefused, freeId, layoutNamed } from './change-layout.ts'
 import {
@@ -55,8 +55,7 @@ function findEnds(
   options: ConnectOptions,
   catalogue: Catalogue,
 ): Ends {
-  const first = findPort(layout, one, catalogue)
-  const second = findPort(layout, other, catalogue)
+  const [first, second] = findPair(layout, one, other, catalogue)
   if (!first || !second) return refused(`There is no port ${first ? other : one}.`)
   if (first.description.direction === second.description.direction) {
     return refused(
@@ -83,6 +82,25 @@ function findEnds(
   return typeof to === 'string' ? refused(to) : { allowed: true, from, to }
 }
 
+/** Both ports; where a bare name means an outlet and numbered inlets too, the one that fits the other. */
+function findPair(
+  layout: Layout,
+  one: PortReference,
+  other: PortReference,
+  catalogue: Catalogue,
+): readonly [PortAddress?, PortAddress?] {
+  const first = findPort(layout, one, catalogue)
+  const second = findPort(layout, other, catalogue, first && opposite(first))
+  if (!first || !second || first.description.direction !== second.description.direction) {
+    return [first, second]
+  }
+  return [findPort(layout, one, catalogue, opposite(second)), second]
+}
+
+function opposite({ description }: PortAddress): 'in' | 'out' {
+  return description.direction === 'in' ? 'out' : 'in'
+}
+
 /** 'Outlet of Heater 5'. */
 function portLabel(layout: Layout, { unit, description, number }: PortAddress): string {
   const numbered = number === undefined ? description.label : `${description.label} ${number}`
@@ -100,14 +118,14 @@ function freeEnd(
   const all = portsOf(layout, unit, catalogue).filter((one) => one.port === port)
   if (!description.repeated) {
     const stream = all[0]?.stream
-    if (stream === undefined) return { ...address, reference: `${unit.id}.${port}` }
+    if (stream === undefined) return { ...address, reference: portReference(address) }
     return `${portLabel(layout, address)} is connected already, to ${stream}.`
   }
   // The open port comes after those in use.
   const next = all.length
   if (number === undefined || number === next || (insert && number < next)) {
     const taken = number ?? next
-    return { ...address, number: taken, reference: `${unit.id}.${port}${taken}` }
+    return { ...address, number: taken, reference: portReference(address, taken) }
   }
   return number < next
     ? `${portLabel(layout, address)} is connected already, to ${all[number - 1]?.stream}.`
@@ -172,11 +190,11 @@ function movedEnd(
   port: PortReference,
   catalogue: Catalogue,
 ): End | { readonly same: true } | string {
-  const address = findPort(layout, port, catalogue)
+  const direction = end === 'from' ? 'out' : 'in'
+  const address = findPort(layout, port, catalogue, direction)
   if (!address) return `There is no port ${port}.`
   const now = findPort(layout, stream[end], catalogue)
   if (now && now.unit === address.unit && now.port === address.port) return { same: true }
-  const direction = end === 'from' ? 'out' : 'in'
   if (address.description.direction !== direction) {
     return end === 'from' ? 'A stream starts at an outlet.' : 'A stream ends at an inlet.'
   }

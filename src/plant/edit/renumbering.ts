@@ -1,7 +1,7 @@
+import { numberedPort, portNamed } from '../../units/kind.ts'
 import type { Kind } from '../catalogue.ts'
 import type { Layout, Options, Stream, Unit } from '../document.ts'
 import { splitPath } from '../paths.ts'
-import { portOfKind } from '../ports.ts'
 import type { QuantityEntry } from '../quantities.ts'
 
 /** How the numbers of a unit's repeated port change when a stream comes, goes or moves up. */
@@ -66,10 +66,12 @@ export function renumberEnds(
     const [id, name] = splitPath(end) ?? [end, '']
     const unit = units.get(id)
     const kind = unit && kindOf(unit)
-    const found = kind && portOfKind(kind, name)
+    const found = kind && portNamed(kind.ports, name)
     const change = renumberings.find((one) => one.unit === id && one.port === found?.port)
     const number = found?.number === undefined ? undefined : change?.to(found.number)
-    return number === undefined || !found ? end : `${id}.${found.port}${number}`
+    return number === undefined || !kind || !found
+      ? end
+      : `${id}.${numberedPort(kind.ports, found.port, number)}`
   }
   return streams.map((stream) => {
     const from = renumbered(stream.from)

@@ -1,6 +1,6 @@
 import { type Catalogue, type Kind, standardCatalogue } from '../catalogue.ts'
 import type { Layout, Plant, Stream } from '../document.ts'
-import { findPort, type PortOfUnit, portsOf } from '../ports.ts'
+import { findPort, type PortOfUnit, portReference, portsOf } from '../ports.ts'
 import { changeEach, changeLayout, EditRefused, freeId, layoutNamed } from './change-layout.ts'
 import { type Connection, canConnect } from './connect.ts'
 import { renumberEnds, withNumber } from './renumbering.ts'
@@ -101,8 +101,8 @@ export function insertOnStream(
   if (!answer.allowed || !answer.ports) {
     throw new EditRefused(answer.allowed ? 'There is nothing to insert here.' : answer.why)
   }
-  const inlet = numberedEnd(layout, unitId, answer.ports.inlet, catalogue)
-  const outlet = numberedEnd(layout, unitId, answer.ports.outlet, catalogue)
+  const inlet = numberedEnd(layout, `${unitId}.${answer.ports.inlet}`, 'in', catalogue)
+  const outlet = numberedEnd(layout, `${unitId}.${answer.ports.outlet}`, 'out', catalogue)
   const id = freeId(layout, 's')
   const renumberings = [inlet, outlet].flatMap(({ port, number }) =>
     number === undefined ? [] : [withNumber(unitId, port, number)],
@@ -125,14 +125,14 @@ export function insertOnStream(
 /** The port with the number that the stream takes there. */
 function numberedEnd(
   layout: Layout,
-  unitId: string,
-  name: string,
+  end: string,
+  direction: 'in' | 'out',
   catalogue: Catalogue,
 ): { reference: string; port: string; number?: number } {
-  const address = findPort(layout, `${unitId}.${name}`, catalogue)
-  if (!address) throw new EditRefused(`There is no port ${unitId}.${name}.`)
+  const address = findPort(layout, end, catalogue, direction)
+  if (!address) throw new EditRefused(`There is no port ${end}.`)
   const { unit, port, description } = address
-  if (!description.repeated) return { reference: `${unitId}.${port}`, port }
+  if (!description.repeated) return { reference: portReference(address), port }
   const number = portsOf(layout, unit, catalogue).filter((one) => one.port === port).length
-  return { reference: `${unitId}.${port}${number}`, port, number }
+  return { reference: portReference(address, number), port, number }
 }
