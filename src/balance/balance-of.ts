@@ -1,6 +1,7 @@
 import type { Finding } from '../messages.ts'
 import { phaseNames } from '../messages.ts'
-import type { Layout } from '../plant/document.ts'
+import type { Layout, Plant } from '../plant/document.ts'
+import { type Overrides, solveCase } from './case/solve-case.ts'
 import { Model } from './model.ts'
 import { type Balance, solve } from './solve.ts'
 import { Phase, streamResults } from './states.ts'
@@ -24,11 +25,28 @@ export interface AskedBalance {
   readonly iterations: number
 }
 
-/** Solves a layout and gives every quantity by name; `remarks` lead the findings. */
-export function balanceOf(layout: Layout, remarks: readonly Finding[] = []): AskedBalance {
-  const model = new Model(layout)
-  const balance = solve(model)
-  const { results, status } = balance
+/** Solves a layout as it stands and gives every quantity by name. */
+export function balanceOf(layout: Layout): AskedBalance {
+  return asked(solve(new Model(layout)), [])
+}
+
+/** Solves a layout, or a case of it, with further changes; a call that makes no sense is unusable. */
+export function balanceOfCase(
+  plant: Plant,
+  layoutId: string,
+  caseId: string | null,
+  overrides?: Overrides,
+):
+  | { readonly outcome: 'balance'; readonly balance: AskedBalance }
+  | { readonly outcome: 'unusable'; readonly message: string } {
+  const solved = solveCase(plant, layoutId, caseId, overrides)
+  if (solved.outcome === 'unusable') return solved
+  return { outcome: 'balance', balance: asked(solved.balance, solved.remarks) }
+}
+
+function asked(balance: Balance, remarks: readonly Finding[]): AskedBalance {
+  const { results, status, model } = balance
+  const { layout } = model.system
   const streams: Record<string, Numbers> = {}
   layout.streams.forEach((stream, k) => {
     const numbers: Numbers = {}

@@ -1,27 +1,24 @@
-import {
-  type Expression,
-  forEachVariable,
-  Outcome,
-  type Tape,
-  TapeBuilder,
-} from '../equations/expression/index.ts'
 import { Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
+import { Differences } from './differences.ts'
 import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
 import { analyse, type Structure } from './structure.ts'
-import { assemble, type System } from './system.ts'
+import { type AssemblyOptions, assemble, type System } from './system.ts'
 
 /** A layout assembled, analysed and lowered: ready to be solved, again and again as givens change. */
 export class Model {
   readonly system: System
   readonly structure: Structure
   readonly program: Program
-  private started = false
+  readonly options: AssemblyOptions
+  private isWarm = false
+  private seed: ((path: string) => number | null) | undefined
   private differencesRead: Differences | undefined
 
-  constructor(layout: Layout) {
-    this.system = assemble(layout)
+  constructor(layout: Layout, options: AssemblyOptions = {}) {
+    this.system = assemble(layout, options)
+    this.options = options
     this.structure = analyse(this.system)
     this.program = new Program(
       this.system.equations.map(({ equation }) => equation),
@@ -61,15 +58,36 @@ export class Model {
     return true
   }
 
-  /** Solves from the values at hand; the first time from first guesses. Returns iterations. */
+  /** Starts the next solution from these values (by path; null where none is known). */
+  startFrom(known: (path: string) => number | null): void {
+    this.seed = known
+    this.isWarm = false
+    this.program.forget()
+  }
+
+  /**
+   * Solves from the values at hand; the first time, and when those lead nowhere, from first
+   * guesses. Returns the iterations of the hardest block.
+   */
   solve(): number {
-    if (!this.started) {
-      this.started = true
-      return this.program.solve((known) => {
-        new Starts(this.system, this.values, known).fill()
-      })
+    if (this.isWarm) {
+      const iterations = this.program.solve()
+      if (this.firstFailure() < 0) return iterations
+      this.program.forget()
     }
-    return this.program.solve()
+    const iterations = this.program.solve((known) => this.fillStarts(known))
+    this.isWarm = this.firstFailure() < 0
+    return iterations
+  }
+
+  private fillStarts(known: (index: number) => boolean): void {
+    new Starts(this.system, this.values, known).fill()
+    if (this.seed === undefined) return
+    this.system.variables.forEach(({ path }, index) => {
+      if (known(index)) return
+      const value = this.seed!(path)
+      if (value !== null) this.values[index] = value
+    })
   }
 
   /** Index of the first block of the core that has no answer, or -1. */
@@ -79,52 +97,6 @@ export class Model {
       if (outcomes[k] !== StepOutcome.solved && outcomes[k] !== StepOutcome.inputMissing) return k
     }
     return -1
-  }
-}
-
-interface Difference {
-  readonly owner: string
-  readonly name: string
-  readonly expression: Expression
-}
-
-/** Temperature differences of the equations, on a tape of their own that is read after a solution. */
-class Differences {
-  private readonly entries: readonly Difference[]
-  private readonly tape: Tape
-  private readonly slots: readonly number[]
-  private readonly rows: readonly Int32Array[]
-  private readonly needs: readonly (readonly number[])[]
-
-  constructor(system: System) {
-    const entries: Difference[] = []
-    for (const { owner, equation } of system.equations) {
-      for (const [name, expression] of Object.entries(equation.differences ?? {})) {
-        entries.push({ owner, name, expression })
-      }
-    }
-    const builder = new TapeBuilder(system.variables.length)
-    this.entries = entries
-    this.slots = entries.map(({ expression }) => builder.lower(expression))
-    this.rows = this.slots.map((slot) => builder.rowsBehind([slot]))
-    this.needs = entries.map(({ expression }) => {
-      const needed: number[] = []
-      forEachVariable(expression, ({ index }) => needed.push(index))
-      return needed
-    })
-    this.tape = builder.finish()
-  }
-
-  /** Those that can be computed from the values, K. */
-  read(values: Float64Array, lost: Uint8Array): { owner: string; name: string; value: number }[] {
-    this.tape.values.set(values.subarray(0, lost.length))
-    const found: { owner: string; name: string; value: number }[] = []
-    this.entries.forEach(({ owner, name }, k) => {
-      if (this.needs[k]!.some((index) => lost[index])) return
-      if (this.tape.evaluate(this.rows[k]!) !== Outcome.fine) return
-      found.push({ owner, name, value: this.tape.values[this.slots[k]!]! })
-    })
-    return found
   }
 }
 

@@ -42,6 +42,10 @@ export class Results {
       paths.push(path)
       sources.push(index)
     })
+    for (const path of system.meaningless) {
+      paths.push(path)
+      sources.push(-1)
+    }
     for (const { unit, kind } of system.units) {
       for (const name of auditNames(kind.secondLaw)) {
         paths.push(`${unit.id}.${name}`)

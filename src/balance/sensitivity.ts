@@ -42,7 +42,7 @@ export class Sensitivity {
   constructor(model: Model) {
     this.model = model
     const { structure, system } = model
-    const { equations } = assemble(system.layout, { fold: false })
+    const { equations } = assemble(system.layout, { ...model.options, fold: false })
     const builder = new TapeBuilder(system.variables.length)
     const seeds = structure.blocks.map((block) =>
       block.equations.map((e) => builder.lower(iteratedResidual(equations[e]!.equation))),

@@ -127,9 +127,17 @@ export class Starts {
       }
       return changed
     }
-    for (let pass = 0; pass < 4 * system.units.length + 4; pass++) {
-      if (!spread(false) && !spread(true)) break
+    const most = 4 * system.units.length + 4
+    for (let pass = 0; pass < most; pass++) if (!spread(false)) break
+    // A vessel that no known pressure reaches starts at its usual one, before machines are crossed.
+    for (const { unit } of system.units) {
+      const own = system.indexOf.get(`${unit.id}.pressure`)
+      const usual = own === undefined ? undefined : system.variables[own]!.description.usual
+      if (own === undefined || usual === undefined || isDone(own)) continue
+      put(own, usual)
+      for (let pass = 0; pass < most; pass++) if (!spread(false)) break
     }
+    for (let pass = 0; pass < most; pass++) if (!spread(false) && !spread(true)) break
   }
 
   /** Ports that share a pressure, nearly: what passes through apart from the shell. */
@@ -260,15 +268,15 @@ export class Starts {
     }
   }
 
-  /** Pressures and volumes that a unit's own quantities repeat. */
+  /** Powers and heats in the proportions of a plant, so that their differences and ratios make sense. */
   private fillQuantities(): void {
     const { system, values } = this
     for (let v = 0; v < system.variables.length; v++) {
-      if (this.known(v) || system.variables[v]!.isState) continue
-      const { description } = system.variables[v]!
-      if (description.dimension === 'power' || description.dimension === 'heatFlow') {
-        values[v] = 1e7
-      }
+      const { description, owner, isState } = system.variables[v]!
+      if (this.known(v) || isState) continue
+      if (description.dimension === 'power') {
+        values[v] = system.unitOf.get(owner)?.kind.shaft === 'driven' ? 1e5 : 1e7
+      } else if (description.dimension === 'heatFlow') values[v] = 3e7
     }
   }
 }

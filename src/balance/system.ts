@@ -92,23 +92,34 @@ export interface System {
   readonly curved: Uint8Array
   readonly units: readonly PlacedUnit[]
   readonly unitOf: ReadonlyMap<string, PlacedUnit>
+  /** Quantities that mean nothing while their unit is out of service. */
+  readonly meaningless: readonly string[]
   /** By unit: what it adds to the plant's totals. */
   readonly totalsOf: ReadonlyMap<string, UnitTotals>
   /** First variable of each stream (m; p and h follow), in the layout's order. */
   readonly streamBase: Int32Array
 }
 
+export interface AssemblyOptions {
+  /** Fold givens of exactly 0 or 1 into the equations (the default). */
+  readonly fold?: boolean
+  /** Ids of units that are out of service. */
+  readonly outOfService?: ReadonlySet<string>
+}
+
 /**
- * Assembles the equations of a layout. Givens of exactly 0 or 1 are folded into them, unless asked
- * otherwise; variables and equations are the same and in the same order either way.
+ * Assembles the equations of a layout. Variables and equations are the same and in the same order
+ * whether givens are folded or not.
  */
-export function assemble(layout: Layout, options: { readonly fold?: boolean } = {}): System {
-  return new Assembly(layout, options.fold ?? true).system()
+export function assemble(layout: Layout, options: AssemblyOptions = {}): System {
+  return new Assembly(layout, options).system()
 }
 
 class Assembly {
   private readonly layout: Layout
   private readonly fold: boolean
+  private readonly outOfService: ReadonlySet<string>
+  private readonly meaningless: string[] = []
   private readonly variables: SystemVariable[] = []
   private readonly expressions: Expression[] = []
   private readonly given: number[] = []
@@ -121,9 +132,10 @@ class Assembly {
   private readonly totalsOf = new Map<string, UnitTotals>()
   private readonly streamBase: Int32Array
 
-  constructor(layout: Layout, fold: boolean) {
+  constructor(layout: Layout, { fold = true, outOfService = new Set() }: AssemblyOptions) {
     this.layout = layout
     this.fold = fold
+    this.outOfService = outOfService
     this.streamBase = new Int32Array(layout.streams.length)
   }
 
@@ -156,6 +168,7 @@ class Assembly {
       ),
       units: this.placed,
       unitOf,
+      meaningless: this.meaningless,
       totalsOf: this.totalsOf,
       streamBase: this.streamBase,
     }
@@ -273,7 +286,7 @@ class Assembly {
       }
     }
     const shape: Shape = { options: unit.options ?? {}, streams: counts }
-    this.addQuantities(unit.id, kind.quantities, shape, unit.given)
+    this.addQuantities(unit.id, kind.quantities, shape, unit.given, this.idleKind(unit.id, kind))
     return { unit, kind, shape, streams, connections, open }
   }
 
@@ -282,10 +295,15 @@ class Assembly {
     table: QuantityTable,
     shape: Shape,
     given: Readonly<Record<string, Given>>,
+    idle?: UnitKind['outOfService'],
   ): void {
     for (const name in table) {
       const description = table[name]!
       if (description.when && !description.when(shape)) continue
+      if (idle?.meaningless.includes(name)) {
+        this.meaningless.push(`${owner}.${name}`)
+        continue
+      }
       if (description.each === undefined) {
         this.add(`${owner}.${name}`, owner, description, given[name])
         continue
@@ -337,7 +355,8 @@ class Assembly {
   ): void {
     const { unit, kind } = placed
     const context = this.contextOf(placed, drivenBy.has(unit.id))
-    this.addEquations(unit.id, kind.equations(context))
+    const idle = this.idleKind(unit.id, kind)
+    this.addEquations(unit.id, idle ? idle.equations(context) : kind.equations(context))
     const totals = kind.totals?.(context)
     if (totals === undefined) return
     this.totalsOf.set(unit.id, totals)
@@ -351,6 +370,11 @@ class Assembly {
       }
       parts.push(expression)
     }
+  }
+
+  /** How a unit behaves out of service, where it is. */
+  private idleKind(id: string, kind: UnitKind): UnitKind['outOfService'] {
+    return this.outOfService.has(id) ? kind.outOfService : undefined
   }
 
   private addEquations(owner: string, equations: Readonly<Record<string, Equation>>): void {

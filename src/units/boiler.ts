@@ -101,6 +101,18 @@ export const boiler = defineUnitKind({
     boilerSteam: steam.m,
     turbineHeatCredit: blowdown ? times(blowdown.m, minus(blowdown.h, feedwater.h)) : constant(0),
   }),
+  freezing: ({ shape }) => [
+    { quantity: 'lossConstant', frees: ['pressureLossFraction'] },
+    ...(withBlowdown(shape)
+      ? [
+          {
+            quantity: 'drumPressure',
+            frees: [],
+            law: { against: { port: 'steam', quantity: 'p' }, exponent: 1 },
+          },
+        ]
+      : []),
+  ],
   secondLaw: 'fired',
   paths: (shape) => [
     { from: 'feedwater', to: 'steam', course: 'line' },

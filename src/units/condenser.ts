@@ -11,7 +11,9 @@ import {
 } from '../equations/expression/index.ts'
 import { saturationTemperature, subcooling } from '../steam/operations.ts'
 import { commonPractice, energy } from './common.ts'
-import { defineUnitKind } from './kind.ts'
+import { defineUnitKind, type Shape } from './kind.ts'
+
+const withExponents = (shape: Shape): boolean => shape.options.exponents === true
 
 export const condenser = defineUnitKind({
   name: 'condenser',
@@ -117,6 +119,18 @@ export const condenser = defineUnitKind({
       possible: { least: 0 },
       step: 1e5,
     },
+    conductanceExponent: {
+      label: 'Conductance exponent',
+      symbol: 'n',
+      dimension: 'number',
+      help: 'Power of the cooling water flow with which the conductance changes when the hardware is frozen.',
+      usual: 0.5,
+      given: true,
+      range: [0, 1],
+      basis: commonPractice,
+      step: 0.1,
+      when: withExponents,
+    },
   },
   chief: 'heat',
   equations: ({ ports: { steam, drain, condensate }, quantities: q }) => {
@@ -145,6 +159,23 @@ export const condenser = defineUnitKind({
     return equations
   },
   totals: ({ quantities: q }) => ({ heatRejected: q.heat }),
+  options: {
+    exponents: {
+      label: 'Flow exponent',
+      help: 'The conductance changes with a power of the cooling water flow when the hardware is frozen.',
+    },
+  },
+  freezing: ({ shape }) => [
+    {
+      quantity: 'conductance',
+      frees: ['pressure', 'terminalDifference', 'coolingRise'],
+      ...(withExponents(shape) && {
+        law: { against: 'coolingFlow', exponent: 'conductanceExponent' },
+      }),
+    },
+    { quantity: 'coolingFlow', frees: [], needs: 'conductance' },
+    { quantity: 'coolingInletT', frees: [], needs: 'conductance' },
+  ],
   secondLaw: 'losesHeat',
   paths: (shape) => [
     ...Array.from({ length: shape.streams.steam ?? 0 }, (_, k) => ({

@@ -68,6 +68,9 @@ export const heatExchanger = defineUnitKind({
       q.coldEndDifference,
     ),
   }),
+  freezing: () => [
+    { quantity: 'conductance', frees: ['heat', 'hotEndDifference', 'coldEndDifference'] },
+  ],
   secondLaw: 'adiabatic',
   paths: () => [
     { from: 'hot', to: 'hotOutlet', course: 'line' },

@@ -32,6 +32,7 @@ export const heatSource = defineUnitKind({
     energyBalance: equal(q.heat, minus(energy(outlet), energy(inlet))),
   }),
   totals: ({ quantities: q }) => ({ recoveredHeat: q.heat }),
+  freezing: () => [{ quantity: 'lossConstant', frees: ['pressureLossFraction'] }],
   secondLaw: 'heated',
   paths: () => [{ from: 'inlet', to: 'outlet', course: 'line' }],
   passes: [['inlet', 'outlet']],

@@ -4,6 +4,7 @@ import {
   type Expression,
   equal,
   exponential,
+  isConstant,
   minus,
   negate,
   type Operation,
@@ -76,6 +77,39 @@ const capacityDifference: Operation = {
     return Outcome.fine
   },
   print: ([a, b, heat]) => ({ text: `(${a!.text} − ${b!.text})/${heat!.text}`, strength: 2 }),
+}
+
+/** Energy flow over mass flow, J/kg; a third value where nothing flows. */
+const mixedEnthalpyOperation: Operation = {
+  name: 'mixedEnthalpy',
+  evaluate(tape, row) {
+    const k = tape.first[row]!
+    const { values, operands, partials } = tape
+    const m = values[operands[k + 1]!]!
+    const slot = tape.slotOf(row)
+    if (m === 0) {
+      values[slot] = values[operands[k + 2]!]!
+      partials[k] = 0
+      partials[k + 1] = 0
+      partials[k + 2] = 1
+      return Outcome.fine
+    }
+    const h = values[operands[k]!]! / m
+    values[slot] = h
+    partials[k] = 1 / m
+    partials[k + 1] = -h / m
+    partials[k + 2] = 0
+    return Outcome.fine
+  },
+  print: ([energyFlow, m]) => ({ text: `${energyFlow!.text}/${m!.text}`, strength: 2 }),
+}
+
+export function mixedEnthalpy(
+  energyFlow: Expression,
+  m: Expression,
+  whenIdle: Expression,
+): Expression {
+  return isConstant(m, 0) ? whenIdle : apply(mixedEnthalpyOperation, energyFlow, m, whenIdle)
 }
 
 /**

@@ -187,6 +187,47 @@ export type Start =
 export type SecondLawRole = 'adiabatic' | 'losesHeat' | 'fired' | 'heated' | 'delivers' | 'edge'
 
 /**
+ * What freezing the hardware gives and frees. The quantity takes the value that it has in the
+ * hardware's solution; where that is not known, nothing is replaced.
+ */
+export interface FreezeRule {
+  readonly quantity: string
+  /** Quantities of the unit whose givens it replaces. */
+  readonly frees: readonly string[]
+  /** Only together with this one. */
+  readonly needs?: string
+  /** Only where the unit itself gives it as a number. */
+  readonly onlyGiven?: true
+  /** Given as a power of a flow or pressure instead of a number, through the hardware's value of it. */
+  readonly law?: {
+    /** A quantity of the unit, or a quantity of the stream at a port. */
+    readonly against: string | { readonly port: string; readonly quantity: string }
+    /** The exponent, or the quantity that gives it. */
+    readonly exponent: number | string
+  }
+  /** A flow given on the unit's streams, or as their share at a branch before it, gives way. */
+  readonly freesFlow?: true
+}
+
+/** What a kind may ask about its unit when its hardware is frozen. */
+export interface FreezeContext {
+  readonly shape: Shape
+  /** The unit's shaft has a generator. */
+  readonly drivesGenerator: boolean
+}
+
+/** How a unit behaves while it is out of service. */
+export interface OutOfService<P extends PortTable, Q extends QuantityTable> {
+  equations(unit: UnitContext<P, Q>): Readonly<Record<string, Equation>>
+  /** Quantities that mean nothing then. */
+  readonly meaningless: readonly string[]
+  /** Quantities whose givens give way. */
+  readonly frees: readonly string[]
+  /** Ports whose streams carry nothing: a flow given there gives way. */
+  readonly idlePorts: readonly string[]
+}
+
+/**
  * A kind of unit, declared once: everything that others need to know of it.
  * Registered in index.ts; nothing outside this folder asks which kind it has in hand.
  */
@@ -212,6 +253,14 @@ export interface UnitKind<
   // Methods, so that kinds with exact port names fit where any kind is meant.
   equations(unit: UnitContext<P, Q>): Readonly<Record<string, Equation>>
   totals?(unit: UnitContext<P, Q>): Partial<Record<TotalName, Expression>>
+  /** What stays when the hardware is frozen; absent: nothing of its own. */
+  freezing?(unit: FreezeContext): readonly FreezeRule[]
+  /** Absent: the kind cannot be taken out of service. */
+  readonly outOfService?: OutOfService<P, Q>
+  /** Numbers of bleeds whose pressure a control valve holds. */
+  controlled?(shape: Shape): readonly number[]
+  /** Holds the pressure behind it, whatever comes in, with these quantities given. */
+  holdsPressure?(isGiven: (quantity: string) => boolean): boolean
   readonly secondLaw: SecondLawRole
   readonly paths: (shape: Shape) => readonly ProcessPath[]
   /** First guesses of what leaves: where an iteration starts when nothing better is known. */

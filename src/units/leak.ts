@@ -35,6 +35,7 @@ export const leak = defineUnitKind({
       times(square(q.flowConstant), minus(square(inlet.p), square(outlet.p))),
     ),
   }),
+  freezing: () => [{ quantity: 'flowConstant', frees: [], freesFlow: true }],
   secondLaw: 'adiabatic',
   paths: () => [{ from: 'inlet', to: 'outlet', course: 'isenthalp' }],
   passes: [['inlet', 'outlet']],

@@ -1,9 +1,60 @@
-import { type Equation, equal, massBalance, plus, times } from '../equations/expression/index.ts'
+import {
+  constant,
+  type Equation,
+  type Expression,
+  equal,
+  massBalance,
+  plus,
+  times,
+} from '../equations/expression/index.ts'
 import { subcooling, vapourEnthalpy } from '../steam/operations.ts'
 import { commonPractice, energy } from './common.ts'
-import { defineUnitKind, type Shape } from './kind.ts'
+import { defineUnitKind, type PortExpressions, type Shape } from './kind.ts'
 
 const withVent = (shape: Shape): boolean => (shape.streams.vent ?? 0) > 0
+
+interface MixingUnit {
+  readonly ports: {
+    readonly steam: readonly PortExpressions[]
+    readonly water: readonly PortExpressions[]
+    readonly drain: readonly PortExpressions[]
+    readonly outlet: PortExpressions
+    readonly vent?: PortExpressions | undefined
+  }
+  readonly quantities: Readonly<Record<'pressure' | 'subcooling' | 'ventFraction', Expression>>
+}
+
+function mixing({
+  ports: { steam, water, drain, outlet, vent },
+  quantities: q,
+}: MixingUnit): Record<string, Equation> {
+  const entering = [...steam, ...water, ...drain]
+  const leaving = vent ? [outlet, vent] : [outlet]
+  const equations: Record<string, Equation> = {
+    massBalance: massBalance(
+      plus(...leaving.map((stream) => stream.m)),
+      plus(...entering.map((stream) => stream.m)),
+    ),
+    energyBalance: equal(
+      plus(...entering.map((stream) => energy(stream))),
+      plus(...leaving.map((stream) => energy(stream))),
+    ),
+    outletPressure: equal(outlet.p, q.pressure),
+    outletState: equal(subcooling(outlet.p, outlet.h), q.subcooling),
+  }
+  steam.forEach((stream, k) => {
+    equations[`steamPressure${k + 1}`] = equal(stream.p, q.pressure)
+  })
+  water.forEach((stream, k) => {
+    equations[`waterPressure${k + 1}`] = equal(stream.p, q.pressure)
+  })
+  if (vent) {
+    equations.ventPressure = equal(vent.p, q.pressure)
+    equations.ventFlow = equal(vent.m, times(q.ventFraction, outlet.m))
+    equations.ventState = equal(vent.h, vapourEnthalpy(q.pressure))
+  }
+  return equations
+}
 
 export const mixingHeater = defineUnitKind({
   name: 'mixingHeater',
@@ -69,33 +120,18 @@ export const mixingHeater = defineUnitKind({
     },
   },
   chief: 'pressure',
-  equations: ({ ports: { steam, water, drain, outlet, vent }, quantities: q }) => {
-    const entering = [...steam, ...water, ...drain]
-    const leaving = vent ? [outlet, vent] : [outlet]
-    const equations: Record<string, Equation> = {
-      massBalance: massBalance(
-        plus(...leaving.map((stream) => stream.m)),
-        plus(...entering.map((stream) => stream.m)),
+  equations: (unit) => mixing(unit),
+  outOfService: {
+    // Takes no steam; the water leaves as it mixes, so its subcooling follows.
+    equations: (unit) => ({
+      ...mixing(unit),
+      ...Object.fromEntries(
+        unit.ports.steam.map((stream, k) => [`noSteam${k + 1}`, equal(stream.m, constant(0))]),
       ),
-      energyBalance: equal(
-        plus(...entering.map((stream) => energy(stream))),
-        plus(...leaving.map((stream) => energy(stream))),
-      ),
-      outletPressure: equal(outlet.p, q.pressure),
-      outletState: equal(subcooling(outlet.p, outlet.h), q.subcooling),
-    }
-    steam.forEach((stream, k) => {
-      equations[`steamPressure${k + 1}`] = equal(stream.p, q.pressure)
-    })
-    water.forEach((stream, k) => {
-      equations[`waterPressure${k + 1}`] = equal(stream.p, q.pressure)
-    })
-    if (vent) {
-      equations.ventPressure = equal(vent.p, q.pressure)
-      equations.ventFlow = equal(vent.m, times(q.ventFraction, outlet.m))
-      equations.ventState = equal(vent.h, vapourEnthalpy(q.pressure))
-    }
-    return equations
+    }),
+    meaningless: [],
+    frees: ['subcooling'],
+    idlePorts: ['steam'],
   },
   secondLaw: 'adiabatic',
   paths: (shape) => [

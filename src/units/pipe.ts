@@ -50,6 +50,7 @@ export const pipe = defineUnitKind({
     energyBalance: equal(outlet.h, minus(inlet.h, divide(q.heatLoss, inlet.m))),
   }),
   totals: ({ quantities: q }) => ({ lineHeatLoss: q.heatLoss }),
+  freezing: () => [{ quantity: 'lossConstant', frees: ['pressureLossFraction', 'pressureDrop'] }],
   secondLaw: 'losesHeat',
   paths: () => [{ from: 'inlet', to: 'outlet', course: 'line' }],
   passes: [['inlet', 'outlet']],

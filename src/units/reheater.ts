@@ -47,6 +47,7 @@ export const reheater = defineUnitKind({
     fuel: equal(q.fuelHeat, divide(q.heat, q.efficiency)),
   }),
   totals: ({ quantities: q }) => ({ heatInput: q.heat, fuelHeat: q.fuelHeat }),
+  freezing: () => [{ quantity: 'lossConstant', frees: ['pressureLossFraction'] }],
   secondLaw: 'fired',
   paths: (shape) => [
     { from: 'inlet', to: 'outlet', course: 'line' },

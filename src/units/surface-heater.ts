@@ -1,4 +1,5 @@
 import {
+  constant,
   divide,
   type Equation,
   equal,
@@ -14,8 +15,8 @@ import {
   temperature,
 } from '../steam/operations.ts'
 import { commonPractice, energy, heat, one, pressureLoss, pressureLossFraction } from './common.ts'
-import { transfer } from './heat-transfer.ts'
-import { defineUnitKind, type QuantityDescription, type Shape } from './kind.ts'
+import { mixedEnthalpy, transfer } from './heat-transfer.ts'
+import { defineUnitKind, type FreezeRule, type QuantityDescription, type Shape } from './kind.ts'
 
 const has =
   (option: string) =>
@@ -239,6 +240,68 @@ export const surfaceHeater = defineUnitKind({
       minus(shellTemperature, coldEnd),
     )
     return equations
+  },
+  freezing: ({ shape }) => {
+    const rule = (
+      quantity: string,
+      approach: string,
+      exponentName: string,
+      port: string,
+    ): FreezeRule => ({
+      quantity,
+      frees: [approach],
+      ...(withExponents(shape) && {
+        law: { against: { port, quantity: 'm' }, exponent: exponentName },
+      }),
+    })
+    return [
+      rule('conductance', 'terminalDifference', 'conductanceExponent', 'water'),
+      ...(withDrainCooler(shape)
+        ? [rule('drainConductance', 'drainApproach', 'drainExponent', 'drain')]
+        : []),
+      ...(withDesuperheater(shape)
+        ? [rule('desuperheatConductance', 'residualSuperheat', 'desuperheatExponent', 'steam1')]
+        : []),
+    ]
+  },
+  outOfService: {
+    equations: ({ ports: { steam, drainInlet, drain, water, outlet }, quantities: q }) => {
+      const drainsIn = plus(...drainInlet.map((stream) => stream.m))
+      const equations: Record<string, Equation> = {
+        shellMassBalance: massBalance(
+          drain.m,
+          plus(...steam.map((stream) => stream.m), ...drainInlet.map((stream) => stream.m)),
+        ),
+        tubeMassBalance: massBalance(outlet.m, water.m),
+        drainPressure: equal(drain.p, q.pressure),
+        pressureLoss: pressureLoss(water, outlet, q.pressureLossFraction),
+        waterState: equal(outlet.h, water.h),
+        drainState: equal(
+          drain.h,
+          mixedEnthalpy(
+            plus(...drainInlet.map((stream) => energy(stream))),
+            drainsIn,
+            liquidEnthalpy(q.pressure),
+          ),
+        ),
+      }
+      steam.forEach((stream, k) => {
+        equations[`steamPressure${k + 1}`] = equal(stream.p, q.pressure)
+        equations[`noSteam${k + 1}`] = equal(stream.m, constant(0))
+      })
+      return equations
+    },
+    meaningless: [
+      'terminalDifference',
+      'heat',
+      'conductance',
+      'drainApproach',
+      'drainConductance',
+      'residualSuperheat',
+      'desuperheatConductance',
+    ],
+    frees: [],
+    idlePorts: ['steam'],
   },
   secondLaw: 'adiabatic',
   paths: (shape) => [

@@ -20,7 +20,7 @@ import {
   wetPart,
 } from '../steam/operations.ts'
 import { commonPractice, energy, one } from './common.ts'
-import { defineUnitKind, type Shape } from './kind.ts'
+import { defineUnitKind, type FreezeRule, type Shape } from './kind.ts'
 
 const perGroup = { port: 'bleed', extra: 1 } as const
 const perBleed = { port: 'bleed', extra: 0 } as const
@@ -258,6 +258,28 @@ export const turbine = defineUnitKind({
     return equations
   },
   totals: ({ quantities: q }) => ({ turbinePower: q.power }),
+  controlled: (shape) => {
+    const numbers = shape.options.controlledBleeds
+    return Array.isArray(numbers) ? numbers : []
+  },
+  freezing: ({ shape, drivesGenerator }) => {
+    const controlled = shape.options.controlledBleeds
+    const rules: FreezeRule[] = [
+      {
+        quantity: 'exhaustLoss',
+        frees: [],
+        onlyGiven: true,
+        law: { against: 'exhaustVolumeFlow', exponent: 2 },
+      },
+    ]
+    for (let i = 1; i <= (shape.streams.bleed ?? 0) + 1; i++) {
+      // Without a generator the inlet valve follows the pump; behind a controlled bleed it follows that.
+      const followsValve = i === 1 && !drivesGenerator
+      const followsBleed = Array.isArray(controlled) && controlled.includes(i - 1)
+      if (!followsValve && !followsBleed) rules.push({ quantity: `flowConstant${i}`, frees: [] })
+    }
+    return rules
+  },
   secondLaw: 'adiabatic',
   paths: (shape) => {
     const bleeds = shape.streams.bleed ?? 0

@@ -36,6 +36,7 @@ export const valve = defineUnitKind({
     pressureDrop: equal(outlet.p, minus(inlet.p, q.pressureDrop)),
     energyBalance: equal(outlet.h, inlet.h),
   }),
+  holdsPressure: (isGiven) => !isGiven('pressureDrop') && !isGiven('pressureLossFraction'),
   secondLaw: 'adiabatic',
   paths: () => [{ from: 'inlet', to: 'outlet', course: 'isenthalp' }],
   passes: [['inlet', 'outlet']],
