@@ -156,7 +156,7 @@ export function givenOf(layout: Layout, path: string): Given | undefined {
 }
 
 /** 'Heater 5' within a sentence: heater 5. 'LP' and 'hp2' stay as they are. */
-function withinSentence(label: string): string {
+export function withinSentence(label: string): string {
   return /^\p{Lu}\p{Ll}/u.test(label) ? label.charAt(0).toLowerCase() + label.slice(1) : label
 }
 

@@ -102,11 +102,14 @@ function OpenCard({ content }: { content: CardContent }) {
       ref={card}
       className="card"
       aria-label={content.title}
-      style={place ? { left: place.left, top: place.top } : { visibility: 'hidden' }}
+      style={place ? { left: place.left, top: place.top } : { opacity: 0 }}
       onKeyDown={(event) => {
         if (event.key !== 'Escape') return
         event.stopPropagation()
         select([])
+        document
+          .querySelector<HTMLElement>(`.canvas-place [data-id="${CSS.escape(content.id)}"]`)
+          ?.focus()
       }}
     >
       <header className="card-head" onPointerDown={startMove}>

@@ -8,8 +8,8 @@ import {
   type QuantityEntry,
   quantitiesOfId,
   type Unit,
+  withinSentence,
 } from '../../src/document.ts'
-import { withinSentence } from '../number/give.ts'
 
 /** A stream at one of a unit's ports, or a unit at one of a stream's ends. */
 export interface Neighbour {

@@ -1,5 +1,11 @@
-import { kindOf, type Layout, labelOf, quantitiesOfId, splitPath } from '../../src/document.ts'
-import { withinSentence } from '../number/give.ts'
+import {
+  kindOf,
+  type Layout,
+  labelOf,
+  quantitiesOfId,
+  splitPath,
+  withinSentence,
+} from '../../src/document.ts'
 import { type Command, commandName, isEnabled } from './command-store.ts'
 
 export type Found =

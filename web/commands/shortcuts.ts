@@ -9,9 +9,15 @@ interface Chord {
   readonly key: string
 }
 
+/** 'Mod+Shift+Z' to its parts; the last may be the sign '+' itself. */
+function partsOf(keys: string): readonly string[] {
+  const [, before = '', key = ''] = /^((?:\w+\+)*)(.+)$/.exec(keys) ?? []
+  return [...before.split('+').filter(Boolean), key]
+}
+
 function chordOf(text: string): Chord {
-  const parts = text.split('+')
-  const key = parts.at(-1) || '+'
+  const parts = partsOf(text)
+  const key = parts.at(-1) ?? ''
   return {
     mod: parts.includes('Mod'),
     shift: parts.includes('Shift'),
@@ -44,8 +50,7 @@ function inField(target: EventTarget | null): boolean {
 export function keysText(keys: string): string {
   const [first = ''] = keys.split(' ')
   const names: Record<string, string> = mac ? { Mod: '⌘', Shift: '⇧', Alt: '⌥' } : { Mod: 'Ctrl' }
-  return first
-    .split('+')
+  return partsOf(first)
     .map((part) => names[part] ?? part)
     .join(mac ? '' : ' ')
 }

@@ -3,6 +3,7 @@ import type { Given } from '../../src/document.ts'
 import type { Finding, Remedy } from '../../src/messages.ts'
 import { focusNumber } from '../number/focus.ts'
 import { free, give, givenText, lastGiven, quantityName } from '../number/give.ts'
+import { readValueBefore } from '../store/balance-store.ts'
 import { readGiven, useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
@@ -10,11 +11,18 @@ import { useUnitChoice } from '../store/settings-store.ts'
 /** How many remedies stand there before 'and n more'. */
 const nearest = 4
 
-function apply({ action, path, value }: Remedy): void {
+/** What a remedy would give: what the quantity was when the plant was last solved, else what suggests itself. */
+function valueToGive({ path, value }: Remedy): Given | undefined {
+  return readValueBefore(path) ?? value
+}
+
+function apply(remedy: Remedy): void {
+  const { action, path } = remedy
   if (action === 'free') {
     free(path)
     return
   }
+  const value = valueToGive(remedy)
   if (value !== undefined) give(path, value)
   // Shown where it can be changed at once: the value that suggests itself is seldom the one wanted.
   const [id] = path.split('.')
@@ -22,10 +30,12 @@ function apply({ action, path, value }: Remedy): void {
   focusNumber(path, true)
 }
 
-function suggestion({ action, path, value }: Remedy): string {
-  const shown: Given | undefined = action === 'free' ? readGiven(path) : value
+function suggestion(remedy: Remedy): string {
+  const { action, path } = remedy
+  const shown: Given | undefined = action === 'free' ? readGiven(path) : valueToGive(remedy)
   const text = shown === undefined ? '' : givenText(path, shown)
-  return isNewest({ action, path }) ? `${text}, just given` : text
+  if (action === 'give' && readValueBefore(path) !== null) return `was ${text}`
+  return isNewest(remedy) ? `${text}, just given` : text
 }
 
 /** Freeing what was given last comes first: that takes back what made the numbers too many. */

@@ -1,5 +1,11 @@
-import { findPort, type Layout, labelOf, type Stream, splitPath } from '../../src/document.ts'
-import { withinSentence } from '../number/give.ts'
+import {
+  findPort,
+  type Layout,
+  labelOf,
+  type Stream,
+  splitPath,
+  withinSentence,
+} from '../../src/document.ts'
 
 export interface StreamRow {
   readonly type: 'stream'

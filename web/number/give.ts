@@ -4,14 +4,10 @@ import {
   type Given,
   labelOf,
   setGiven,
+  withinSentence,
 } from '../../src/document.ts'
 import { editLayout, readGiven, readLayout } from '../store/plant-store.ts'
 import { readUnitChoice } from '../store/settings-store.ts'
-
-/** 'Terminal difference' within a sentence: terminal difference. 'NPSH available' stays as it is. */
-export function withinSentence(label: string): string {
-  return /^\p{Lu}\p{Ll}/u.test(label) ? label.charAt(0).toLowerCase() + label.slice(1) : label
-}
 
 /** A quantity by name: 'Heater 5, terminal difference'; the path itself where nothing bears it. */
 export function quantityName(path: string): string {
@@ -26,7 +22,7 @@ export function quantityName(path: string): string {
 export function givenText(path: string, given: Given): string {
   const dimension = describeQuantity(readLayout(), path)?.dimension ?? 'number'
   if (typeof given !== 'number') return 'a curve'
-  const { text, unit } = formatQuantity(given, dimension, readUnitChoice(), { digits: 'given' })
+  const { text, unit } = formatQuantity(given, dimension, readUnitChoice())
   return unit ? `${text} ${unit}` : text
 }
 

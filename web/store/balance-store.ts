@@ -160,7 +160,13 @@ export function readValue(path: string): number | null {
   return valueIn(index, balance, path)
 }
 
-/** The same quantity in the solved balance before the last edit. */
+/** A quantity in the solved balance before the last edit, for use outside React. */
+export function readValueBefore(path: string): number | null {
+  const { before } = useBalanceStore.getState()
+  return before ? valueIn(indexOf(before.names), before.balance, path) : null
+}
+
+/** As `readValueBefore`, redrawing when it changes. */
 export function useValueBefore(path: string): number | null {
   return useBalanceStore(({ before }) =>
     before ? valueIn(indexOf(before.names), before.balance, path) : null,
