@@ -62,7 +62,7 @@ export function layoutOf(parts: LayoutParts): Layout {
       turbines: shaft.turbines,
       pumps: shaft.pumps ?? [],
       generator: shaft.generator !== false,
-      given: shaft.given ?? (shaft.generator === false ? machineOnly : lossless),
+      given: shaftGivens(shaft),
     })),
     plant: { given: plant },
     cases: [{ id: 'design', name: 'Design' }],
@@ -79,6 +79,39 @@ export function layoutOf(parts: LayoutParts): Layout {
 }
 
 const machineOnly = { mechanicalEfficiency: 1, mechanicalLoss: 0 } as const
+
+const shaftGivens = ({ given, generator }: ShaftParts): Givens =>
+  given ?? (generator === false ? machineOnly : lossless)
+
+export interface Change {
+  readonly set?: Readonly<Record<string, Given>>
+  readonly free?: readonly string[]
+}
+
+/** The same layout with other givens: first all that is freed, then all that is set. */
+export function changed(parts: LayoutParts, { set = {}, free = [] }: Change): LayoutParts {
+  const given = (id: string, before: Givens): Givens => {
+    const kept = Object.entries(before).filter(([name]) => !free.includes(`${id}.${name}`))
+    const added = Object.entries(set)
+      .filter(([path]) => path.startsWith(`${id}.`))
+      .map(([path, value]) => [path.slice(id.length + 1), value] as const)
+    return Object.fromEntries([...kept, ...added])
+  }
+  const each = <T>(list: Readonly<Record<string, T>>, change: (id: string, one: T) => T) =>
+    Object.fromEntries(Object.entries(list).map(([id, one]) => [id, change(id, one)]))
+  return {
+    ...parts,
+    units: each(parts.units, (id, [kind, before = {}, options]) =>
+      options ? [kind, given(id, before), options] : [kind, given(id, before)],
+    ),
+    streams: each(parts.streams, (id, [from, to, before = {}]) => [from, to, given(id, before)]),
+    shafts: each(parts.shafts ?? {}, (id, shaft) => ({
+      ...shaft,
+      given: given(id, shaftGivens(shaft)),
+    })),
+    plant: given('plant', parts.plant ?? { otherAuxiliary: 0 }),
+  }
+}
 
 /** A number of a balance by its path; NaN where it is null, an error where there is no such key. */
 export type Look = (path: string) => number
