@@ -1,13 +1,16 @@
+/** Door for the window: the plant file, its edits and differences, the catalogue of kinds, quantities. */
 import { standardCatalogue } from './plant/catalogue.ts'
 import type { QuantityTable } from './units/kind.ts'
 
-/** Door for the window: the plant file, its edits and differences, the catalogue of kinds, quantities. */
 export * from './plant/catalogue.ts'
 export * from './plant/check-plant.ts'
 export * from './plant/difference.ts'
 export * from './plant/document.ts'
-export * from './plant/edit/change-layout.ts'
+export * from './plant/edit/cases.ts'
 export * from './plant/edit/connect.ts'
+export * from './plant/edit/copy-items.ts'
+export * from './plant/edit/edit-refused.ts'
+export * from './plant/edit/layouts.ts'
 export * from './plant/edit/remove-items.ts'
 export * from './plant/edit/set-given.ts'
 export * from './plant/edit/shafts.ts'

@@ -1,7 +1,7 @@
 import { type Catalogue, standardCatalogue } from './catalogue.ts'
 import { checkCurve, givenAt } from './check-given.ts'
 import type { Given, Givens, Layout } from './document.ts'
-import { withGiven } from './edit/set-given.ts'
+import { withGiven } from './givens.ts'
 import { knownPaths } from './known-paths.ts'
 import { splitPath } from './paths.ts'
 import { refuse, Unusable } from './place.ts'

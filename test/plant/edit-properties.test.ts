@@ -8,7 +8,6 @@ import {
   invertDifference,
 } from '../../src/plant/difference.ts'
 import type { Given, Layout, Plant } from '../../src/plant/document.ts'
-import { EditRefused } from '../../src/plant/edit/change-layout.ts'
 import {
   canConnect,
   canReconnect,
@@ -16,6 +15,7 @@ import {
   reconnect,
   renumberPort,
 } from '../../src/plant/edit/connect.ts'
+import { EditRefused } from '../../src/plant/edit/edit-refused.ts'
 import { removeItems } from '../../src/plant/edit/remove-items.ts'
 import { setGiven } from '../../src/plant/edit/set-given.ts'
 import { putOnShaft, setGenerator } from '../../src/plant/edit/shafts.ts'

@@ -1,7 +1,5 @@
 import type { Layout, Plant } from '../document.ts'
-
-/** An edit that cannot be made. The message is a sentence for the user; where there is a `can...` function, ask it first. */
-export class EditRefused extends Error {}
+import { EditRefused } from './edit-refused.ts'
 
 export function layoutNamed(plant: Plant, layoutId: string): Layout {
   const layout = plant.layouts.find(({ id }) => id === layoutId)

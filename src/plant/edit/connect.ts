@@ -2,7 +2,8 @@ import { type Catalogue, standardCatalogue } from '../catalogue.ts'
 import type { Layout, Plant, PortReference, Stream } from '../document.ts'
 import { findPort, type PortAddress, portReference, portsOf, separateLines } from '../ports.ts'
 import { labelOf } from '../quantities.ts'
-import { changeLayout, EditRefused, freeId, layoutNamed } from './change-layout.ts'
+import { changeLayout, freeId, layoutNamed } from './change-layout.ts'
+import { EditRefused } from './edit-refused.ts'
 import {
   type Renumbering,
   renumberEnds,

@@ -1,11 +1,12 @@
 import { type Catalogue, standardCatalogue } from '../catalogue.ts'
 import { givenAt } from '../check-given.ts'
-import { equalParts } from '../difference.ts'
 import type { Given, Givens, Layout, Plant } from '../document.ts'
+import { withGiven } from '../givens.ts'
 import { splitPath } from '../paths.ts'
 import { Unusable } from '../place.ts'
 import { describeQuantity } from '../quantities.ts'
-import { changeEach, changeLayout, EditRefused } from './change-layout.ts'
+import { changeEach, changeLayout } from './change-layout.ts'
+import { EditRefused } from './edit-refused.ts'
 
 /** Why a value cannot be given for a path, as a sentence; nothing where it can. */
 export function whyNotGiven(
@@ -66,17 +67,4 @@ export function setGiven(
           plant: plantGiven === layout.plant.given ? layout.plant : { given: plantGiven },
         }
   })
-}
-
-/** Givens with one more, one changed or (undefined) one less; the very same where that changes nothing. */
-export function withGiven(givens: Givens, name: string, given: Given | undefined): Givens {
-  if (given === undefined) {
-    if (!Object.hasOwn(givens, name)) return givens
-    const { [name]: _, ...rest } = givens
-    return rest
-  }
-  // Minus zero is zero: the file cannot tell them apart.
-  const value = given === 0 ? 0 : given
-  if (Object.hasOwn(givens, name) && equalParts(givens[name], value)) return givens
-  return { ...givens, [name]: value }
 }

@@ -2,7 +2,8 @@ import { type Catalogue, standardCatalogue } from '../catalogue.ts'
 import type { Layout, Plant, Shaft } from '../document.ts'
 import { quantitiesOfShaft } from '../quantities.ts'
 import { usualGivens } from '../usual-givens.ts'
-import { changeEach, changeLayout, EditRefused, freeId, keep } from './change-layout.ts'
+import { changeEach, changeLayout, freeId, keep } from './change-layout.ts'
+import { EditRefused } from './edit-refused.ts'
 import { restructure } from './restructure.ts'
 
 /** Puts a turbine on the first shaft with a generator, or on a new one. */

@@ -1,8 +1,9 @@
 import { type Catalogue, type Kind, standardCatalogue } from '../catalogue.ts'
 import type { Layout, Plant, Stream } from '../document.ts'
 import { findPort, type PortOfUnit, portReference, portsOf } from '../ports.ts'
-import { changeEach, changeLayout, EditRefused, freeId, layoutNamed } from './change-layout.ts'
+import { changeEach, changeLayout, freeId, layoutNamed } from './change-layout.ts'
 import { type Connection, canConnect } from './connect.ts'
+import { EditRefused } from './edit-refused.ts'
 import { renumberEnds, withNumber } from './renumbering.ts'
 import { restructure } from './restructure.ts'
 
