@@ -47,24 +47,43 @@ describe('placeLabels', () => {
   })
 
   it('stands within a symbol that has room, and beside one that has not', () => {
-    const place = (width: number) =>
+    const shell = { x: 0, y: 0, width: 96, height: 80 }
+    const place = (room: boolean) =>
       placeLabels(
         [
           {
             id: 'a',
-            body: { x: 0, y: 0, width, height: 80 },
+            body: shell,
             shapes,
-            wish: 'inside',
+            wish: ['top'],
+            inside: () => (room ? [18, 25] : null),
             anchors: [],
           },
         ],
-        { bodies: [{ x: 0, y: 0, width, height: 80 }], streams: [] },
+        { bodies: [shell], streams: [] },
       ).get('a')
-    const wide = place(96)
-    expect(wide?.x).toBe(18)
-    expect(wide?.y).toBe(25)
-    const narrow = place(56)
-    expect(narrow && overlap(narrow, { x: 0, y: 0, width: 56, height: 80 })).toBe(false)
+    expect(place(true)).toMatchObject({ x: 18, y: 25, align: 'centre' })
+    const beside = place(false)
+    expect(beside && overlap(beside, shell)).toBe(false)
+  })
+
+  it('stays where it is while it covers nothing there', () => {
+    const request = { id: 'a', body, shapes, wish: ['top', 'bottom'] as const, anchors: [] }
+    const stands = {
+      id: 'a',
+      x: 0,
+      y: 60,
+      width: 60,
+      height: 30,
+      arrangement: 'stacked' as const,
+      align: 'left' as const,
+    }
+    const staying = new Map([['a', stands]])
+    const free = placeLabels([request], { bodies: [body], streams: [] }, staying)
+    expect(free.get('a')).toBe(stands)
+    const neighbour = { x: 10, y: 50, width: 48, height: 32 }
+    const pushed = placeLabels([request], { bodies: [body, neighbour], streams: [] }, staying)
+    expect(pushed.get('a')).not.toBe(stands)
   })
 })
 

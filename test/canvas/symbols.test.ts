@@ -88,6 +88,17 @@ describe('the turbine', () => {
     }
   })
 
+  it('holds a text where the casing is high enough, or none', () => {
+    const form: Form = { options: {}, counts: { bleed: 1 } }
+    const { inside, size } = symbols.turbine
+    const { width } = size(form)
+    const text = { width: 56, height: 30 }
+    const at = inside?.(form, text)
+    expect(at && at[0] >= 0 && at[0] + text.width <= width).toBe(true)
+    expect(inside?.(form, { width: 200, height: 30 })).toBeNull()
+    expect(inside?.(form, { width: 40, height: 90 })).toBeNull()
+  })
+
   it('stretches so that ports stand at the pitches asked for', () => {
     const form: Form = { options: {}, counts: { bleed: 2 }, pitches: [32, 72, 40] }
     const at = (port: string, number: number) => {

@@ -20,7 +20,7 @@ import { editLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { CanvasControls } from './CanvasControls.tsx'
 import { ConnectionPreview } from './ConnectionPreview.tsx'
-import { followPlant, useCanvasStore } from './canvas-store.ts'
+import { followPlant, tagsBeyond, useCanvasStore } from './canvas-store.ts'
 import { useConnectingStore } from './connecting-store.ts'
 import { EmptyCanvas } from './EmptyCanvas.tsx'
 import { around, type Box, type Point } from './geometry.ts'
@@ -169,12 +169,12 @@ const proOptions = { hideAttribution: true }
 
 /** Room under the drawing for the legend, and round it, px. */
 const foot = 52
-const margin = 24
+const margin = tagsBeyond
 
 /** The view that shows the whole sheet, texts included; never magnified. */
 function fitted(canvas: DOMRect) {
-  const { sheet, labels, tags } = useCanvasStore.getState()
-  const boxes: Box[] = [...labels.values(), ...tags.values()]
+  const { sheet, labels } = useCanvasStore.getState()
+  const boxes: Box[] = [...labels.values()]
   if (sheet.extent) boxes.push(sheet.extent)
   const extent = around(boxes)
   if (!extent || canvas.width === 0) return { x: 0, y: 0, zoom: 1 }

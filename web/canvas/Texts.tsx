@@ -11,7 +11,7 @@ import { useNumber } from '../number/use-number.ts'
 import { readValue, useBalanceStore, usePhase } from '../store/balance-store.ts'
 import { readLayout, useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
-import { useCanvasStore } from './canvas-store.ts'
+import { figuresFrom, useCanvasStore } from './canvas-store.ts'
 import type { PlacedLabel, PlacedTag } from './labelling.ts'
 import { type TagQuantity, useTagStore } from './tag-store.ts'
 
@@ -65,7 +65,8 @@ const UnitLabel = memo(function UnitLabel({ label }: { readonly label: PlacedLab
 /** The chief figure, once there is one: what is open is for the card and the ledger. */
 function Figure({ path, dimension }: { readonly path: string; readonly dimension: Dimension }) {
   const { state } = useNumber(path)
-  if (state === 'open') return null
+  const shown = useCanvasStore((canvas) => canvas.zoom >= figuresFrom)
+  if (state === 'open' || !shown) return null
   return (
     <span className="unit-label-figure">
       <Quantity path={path} dimension={dimension} />

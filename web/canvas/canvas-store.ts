@@ -2,7 +2,7 @@ import { create } from 'zustand'
 import { kindOf, type Layout } from '../../src/document.ts'
 import { textWidth } from '../chart/measure-text.ts'
 import { readLayout, usePlantStore } from '../store/plant-store.ts'
-import { grown, type Point } from './geometry.ts'
+import { around, grown, type Point, type Size } from './geometry.ts'
 import {
   type Arrangement,
   type LabelRequest,
@@ -11,7 +11,7 @@ import {
   placeLabels,
   placeTags,
 } from './labelling.ts'
-import { drawSheet, emptySheet, generatorBox, type Sheet } from './sheet.ts'
+import { drawSheet, emptySheet, generatorBox, type PlacedUnit, type Sheet } from './sheet.ts'
 import { type TagChoice, useTagStore } from './tag-store.ts'
 
 interface CanvasState {
@@ -32,8 +32,11 @@ interface CanvasState {
 const smallestText = 11.6
 const textSize = 12
 export const lineHeight = 15
-/** Below this zoom tags would crowd the sheet. */
+/** Below this zoom tags, and below that one figures, would crowd the sheet. */
 const tagsFrom = 0.55
+export const figuresFrom = 0.5
+/** How far tags may stand beyond all else, px: they are not to make the whole smaller on the screen. */
+export const tagsBeyond = 24
 
 export const useCanvasStore = create<CanvasState>()((set, get) => ({
   sheet: emptySheet,
@@ -53,7 +56,8 @@ export const useCanvasStore = create<CanvasState>()((set, get) => ({
     // In steps, so that labels are not set anew at every turn of the wheel.
     const textScale = wanted === 1 ? 1 : Math.ceil(wanted * 8) / 8
     const { sheet, textScale: earlier, zoom: before } = get()
-    if (textScale === earlier && zoom >= tagsFrom === before >= tagsFrom) {
+    const step = (at: number) => Number(at >= tagsFrom) + Number(at >= figuresFrom)
+    if (textScale === earlier && step(zoom) === step(before)) {
       if (zoom !== before) set({ zoom })
     } else set({ zoom, textScale, ...texts(readLayout(), sheet, textScale, zoom) })
   },
@@ -94,7 +98,7 @@ export function followPlant(): () => void {
 }
 
 /** Rooms for numbers are kept at their usual width, so that nothing moves because a digit changed. */
-const usualFigure = '000.0 MW'
+const usualFigure = '00.00 MW'
 const usualParts: Readonly<Record<string, string>> = {
   p: '000.0 bar',
   T: '000.0 °C',
@@ -140,13 +144,18 @@ function texts(
   }
   const requests: LabelRequest[] = []
   for (const unit of sheet.units.values()) {
-    if (unit.symbol.label !== 'inside' && unit.symbol.label.length === 0) continue
+    if (unit.symbol.label.length === 0) continue
     if (unit.label === '') continue
     requests.push({
       id: unit.id,
       body: grown(unit.body, unit.symbol.overhang ?? 0),
       wish: unit.symbol.label,
-      shapes: labelShapes(unit.label, kindOf(unit.kind)?.chief !== undefined, scale),
+      ...(unit.symbol.inside ? { inside: (size: Size) => insideOf(unit, size) } : {}),
+      shapes: labelShapes(
+        unit.label,
+        zoom >= figuresFrom && kindOf(unit.kind)?.chief !== undefined,
+        scale,
+      ),
       anchors: Object.values(unit.anchors),
     })
   }
@@ -167,16 +176,25 @@ function texts(
     })
   }
   // The label inside a turbine has no choice: it is set first.
-  requests.sort((a, b) => Number(b.wish === 'inside') - Number(a.wish === 'inside'))
+  requests.sort((a, b) => Number(Boolean(b.inside)) - Number(Boolean(a.inside)))
   const stays = staying(sheet, earlier)
   const labels = placeLabels(requests, occupied, stays.labels)
+  const whole = around([...labels.values(), ...(sheet.extent ? [sheet.extent] : [])])
+  const bounds = whole && grown(whole, tagsBeyond)
   const tags =
     zoom < tagsFrom
       ? new Map<string, PlacedTag>()
-      : placeTags(tagRequests(layout, sheet, scale), occupied, labels.values(), stays.tags)
+      : placeTags(tagRequests(layout, sheet, scale), occupied, labels.values(), stays.tags, bounds)
   return earlier
     ? { labels: kept(earlier.labels, labels), tags: kept(earlier.tags, tags) }
     : { labels, tags }
+}
+
+function insideOf(unit: PlacedUnit, text: Size): Point | null {
+  const at = unit.symbol.inside?.(unit.form, text)
+  if (!at) return null
+  const x = unit.mirrored ? unit.size.width - at[0] - text.width : at[0]
+  return [unit.at[0] + x, unit.at[1] + at[1]]
 }
 
 /** Under way, the texts of what does not move need not be placed anew. */
@@ -274,11 +292,13 @@ function tagRequests(layout: Layout, sheet: Sheet, scale: number) {
     })
 }
 
-/** The streams that a reader looks for first: what single, required ports of chief machines give off. */
+/** The streams that a reader looks for first: what machines give off at a pressure of its own. */
 function isChief(layout: Layout, stream: Layout['streams'][number]): boolean {
   const dot = stream.from.indexOf('.')
   const unit = layout.units.find((one) => one.id === stream.from.slice(0, dot))
   const kind = unit && kindOf(unit.kind)
   const port = kind?.ports[stream.from.slice(dot + 1)]
-  return Boolean(kind?.chief && port && !port.optional && !port.repeated)
+  return Boolean(
+    kind?.chief !== undefined && port?.pressure === 'own' && !port.optional && !port.repeated,
+  )
 }

@@ -1,4 +1,12 @@
-import { type Box, overlap, type Point, type Side, type Size, sharedArea } from './geometry.ts'
+import {
+  type Box,
+  holds,
+  overlap,
+  type Point,
+  type Side,
+  type Size,
+  sharedArea,
+} from './geometry.ts'
 import type { Route } from './routing.ts'
 
 /** Sets labels and tags where they cover nothing. Lengths in px at 100 %. */
@@ -14,8 +22,10 @@ export interface LabelRequest {
   readonly body: Box
   /** The label and its figure in two lines, beside each other, and in more lines where words allow. */
   readonly shapes: readonly { readonly arrangement: Arrangement; readonly size: Size }[]
-  /** Within the symbol if it fits there; else beside it, the sides in the order wished. */
-  readonly wish: 'inside' | readonly Side[]
+  /** The sides in the order wished. */
+  readonly wish: readonly Side[]
+  /** Where within the symbol a text of that size has room; it goes there first. */
+  readonly inside?: (size: Size) => Point | null
   /** Where streams meet the symbol. */
   readonly anchors: readonly { readonly x: number; readonly y: number; readonly side: Side }[]
 }
@@ -44,7 +54,9 @@ export interface PlacedTag extends Box {
 
 const gap = 6
 /** Half the width that a stream takes, walls and all. */
-const streamReach = 5
+const streamReach = 4
+/** Between a text and the stream beside it. */
+const stemGap = 8
 /** Room kept between texts. */
 const between = 3
 
@@ -107,10 +119,10 @@ function candidatesOf(request: LabelRequest): Candidate[] {
   const found: Candidate[] = []
   const right = body.x + body.width
   const bottom = body.y + body.height
-  const sides = request.wish === 'inside' ? inside(request, found) : request.wish
+  inside(request, found)
   // Close by on every side first, then farther off.
   for (const away of [gap, gap + 18, gap + 36]) {
-    for (const side of sides) {
+    for (const side of request.wish) {
       for (const { arrangement, size } of request.shapes) {
         const { width, height } = size
         const put = (x: number, y: number, align: PlacedLabel['align']) =>
@@ -119,8 +131,8 @@ function candidatesOf(request: LabelRequest): Candidate[] {
         if (side === 'top' || side === 'bottom') {
           const y = side === 'top' ? body.y - away - height : bottom + away
           if (stems.length === 0) put(body.x + body.width / 2 - width / 2, y, 'centre')
-          for (const stem of stems) put(stem.x + streamReach + 5, y, 'left')
-          for (const stem of stems) put(stem.x - streamReach - 5 - width, y, 'right')
+          for (const stem of stems) put(stem.x + stemGap, y, 'left')
+          for (const stem of stems) put(stem.x - stemGap - width, y, 'right')
           put(body.x, y, 'left')
           put(right - width, y, 'right')
         } else {
@@ -140,22 +152,12 @@ function candidatesOf(request: LabelRequest): Candidate[] {
   return found
 }
 
-const allSides: readonly Side[] = ['top', 'bottom', 'right', 'left']
-
-/** Adds the places inside the symbol; returns the sides that remain. */
-function inside(request: LabelRequest, found: Candidate[]): readonly Side[] {
-  const { body } = request
+/** Adds the places inside the symbol. */
+function inside(request: LabelRequest, found: Candidate[]): void {
   for (const { arrangement, size } of request.shapes) {
-    if (size.width > body.width - 8 || arrangement === 'beside') continue
-    found.push({
-      x: body.x + body.width / 2 - size.width / 2,
-      y: body.y + body.height / 2 - size.height / 2,
-      ...size,
-      arrangement,
-      align: 'centre',
-    })
+    const at = arrangement === 'beside' ? null : request.inside?.(size)
+    if (at) found.push({ x: at[0], y: at[1], ...size, arrangement, align: 'centre' })
   }
-  return allSides
 }
 
 /**
@@ -174,7 +176,7 @@ export function placeLabels(
   const texts = new Field()
   const placed = new Map<string, PlacedLabel>()
   for (const request of requests) {
-    const within = request.wish === 'inside'
+    const within = request.inside !== undefined
     const covered = (box: Box) =>
       within && overlap(box, request.body) ? 0 : 4 * bodies.covered(box) + 8 * streams.covered(box)
     const stays = staying.get(request.id)
@@ -215,12 +217,14 @@ const reaches = [14, 26] as const
 /**
  * A place with a leader for each tag that finds one where it covers nothing; tags that find none are
  * left out. `staying` tags keep the place they have, or none, as long as they cover nothing there.
+ * No tag lies outside `bounds`.
  */
 export function placeTags(
   requests: readonly TagRequest[],
   occupied: Occupied,
   labels: Iterable<Box>,
   staying: ReadonlyMap<string, PlacedTag | null> = new Map(),
+  bounds: Box | null = null,
 ): Map<string, PlacedTag> {
   const field = new Field()
   for (const { route } of occupied.streams) for (const box of boxesOf(route)) field.add(box)
@@ -232,7 +236,7 @@ export function placeTags(
     const stays = staying.get(request.id)
     const tag =
       stays === undefined
-        ? freeTag(request, field, leaders)
+        ? freeTag(request, field, leaders, bounds)
         : stays && field.covered(stays) === 0
           ? stays
           : null
@@ -247,7 +251,12 @@ export function placeTags(
   return placed
 }
 
-function freeTag(request: TagRequest, field: Field, leaders: Field): PlacedTag | null {
+function freeTag(
+  request: TagRequest,
+  field: Field,
+  leaders: Field,
+  bounds: Box | null,
+): PlacedTag | null {
   const straights = request.route
     .slice(1)
     .map((end, i) => ({ start: request.route[i] as Point, end }))
@@ -271,6 +280,7 @@ function freeTag(request: TagRequest, field: Field, leaders: Field): PlacedTag |
               ? aboveOrBelow(request.id, at, way, reach, lines, size)
               : besides(request.id, at, way, reach, lines, size)
             for (const one of tag) {
+              if (bounds && !holds(bounds, one)) continue
               if (field.covered(one) === 0 && clear(one.leader, field, leaders)) return one
             }
           }

@@ -1,5 +1,5 @@
 import type { ComponentType } from 'react'
-import type { Box, Side, Size } from '../geometry.ts'
+import type { Box, Point, Side, Size } from '../geometry.ts'
 
 /** Where a stream meets a symbol: px from the symbol's top left corner, and the side it leaves by. */
 export interface Anchor {
@@ -34,8 +34,10 @@ export interface SymbolDrawing {
   readonly ports: Readonly<Record<string, (form: Form, number: number) => Places>>
   /** Drawn in a group of class `symbol`: stroke 1.5; class `detail` 1, `solid` ink, `tinted`, `open` no fill. */
   readonly Drawing: ComponentType<{ readonly form: Form }>
-  /** Label inside the symbol; else beside it, in the order of the sides given. */
-  readonly label: 'inside' | readonly Side[]
+  /** Where the label goes, the sides in the order wished; none: the symbol has no label. */
+  readonly label: readonly Side[]
+  /** Where in the symbol a text of that size has room, px from the top left corner; else it goes beside. */
+  readonly inside?: (form: Form, text: Size) => Point | null
   /** Turns upright where its streams run upright. */
   readonly turns?: true
   /**

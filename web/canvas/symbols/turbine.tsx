@@ -1,4 +1,4 @@
-import type { Side } from '../geometry.ts'
+import type { Point, Side, Size } from '../geometry.ts'
 import type { Anchor, Form, SymbolDrawing } from './symbol.ts'
 
 const narrowEnd = 32
@@ -41,6 +41,15 @@ function bleedAt(form: Form, number: number): number {
   return Math.round((before + (places[last] as number)) / 16) * 8
 }
 
+/** In the middle, or as far towards the wide end as the text needs. */
+function inside(form: Form, text: Size): Point | null {
+  const most = width(form) - text.width - 6
+  for (let x = (width(form) - text.width) / 2; x <= most; x += 2) {
+    if (reach(form, x) >= text.height / 2 + 3) return [x, axis(form) - text.height / 2]
+  }
+  return null
+}
+
 export const turbine: SymbolDrawing = {
   size: (form) => ({ width: width(form), height: 2 * axis(form) }),
   body: (form) => ({
@@ -76,7 +85,8 @@ export const turbine: SymbolDrawing = {
       </>
     )
   },
-  label: 'inside',
+  label: ['top', 'bottom', 'right', 'left'],
+  inside,
   spaced: { port: 'bleed', last: 'exhaust', least: 24, usual: usualPitch },
   axis,
 }
