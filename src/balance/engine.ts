@@ -1,5 +1,6 @@
 import type { Answer, BalanceMessage, NamesMessage, ProcessName, Request } from '../messages.ts'
 import type { Layout } from '../plant/document.ts'
+import { solveCase } from './case/solve-case.ts'
 import { curvesOf, isobarsOf } from './chart-data.ts'
 import { Model } from './model.ts'
 import { domePoints } from './paths.ts'
@@ -16,7 +17,20 @@ export function createEngine(clock: () => number = Date.now): Engine {
   let kept: { model: Model; results: Results; signature: string; number: number } | undefined
   let counter = 0
   let domeSent = false
-  let keptNames: Layout | undefined
+  let namesSent = 0
+
+  /** A case is solved afresh: its givens follow from the design's solution. */
+  function caseOf(request: Request): { balance: Balance; number: number } | string {
+    const solved = solveCase(request.plant, request.layout, request.case)
+    if (solved.outcome === 'unusable') return solved.message
+    const { balance, remarks } = solved
+    counter++
+    kept = undefined
+    return {
+      balance: { ...balance, findings: [...remarks, ...balance.findings] },
+      number: counter,
+    }
+  }
 
   function modelFor(layout: Layout): { model: Model; results: Results; number: number } {
     const signature = signatureOf(layout)
@@ -47,10 +61,22 @@ export function createEngine(clock: () => number = Date.now): Engine {
         answers.push({ type: 'dome', points: domePoints() })
       }
       try {
-        const { model, results, number } = modelFor(layout)
-        const balance = solve(model, results)
-        if (keptNames === undefined || kept?.model.system.layout !== keptNames) {
-          keptNames = model.system.layout
+        let balance: Balance
+        let number: number
+        if (isCase(layout, request.case)) {
+          const solved = caseOf(request)
+          if (typeof solved === 'string') {
+            return [...answers, { type: 'unusable', sequence: request.sequence, message: solved }]
+          }
+          balance = solved.balance
+          number = solved.number
+        } else {
+          const found = modelFor(layout)
+          balance = solve(found.model, found.results)
+          number = found.number
+        }
+        if (namesSent !== number) {
+          namesSent = number
           answers.push(namesOf(balance, number))
         }
         answers.push({
@@ -69,6 +95,20 @@ export function createEngine(clock: () => number = Date.now): Engine {
       return answers
     },
   }
+}
+
+/** Whether a case changes anything: the design case of a layout only names it. */
+function isCase(layout: Layout, id: string | null): boolean {
+  const chosen = layout.cases.find((one) => one.id === id)
+  if (chosen === undefined) return false
+  const { frozen, loadControl, given = {}, free = [], outOfService = [] } = chosen
+  return (
+    frozen === true ||
+    loadControl !== undefined ||
+    Object.keys(given).length > 0 ||
+    free.length > 0 ||
+    outOfService.length > 0
+  )
 }
 
 /** What must stay the same for a model to serve a layout with other values. */

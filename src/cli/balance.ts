@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs'
 import { resolve } from 'node:path'
 import { applyOverrides, readPlant } from '../document.ts'
-import { balanceOf } from '../engine.ts'
+import { balanceOfCase } from '../engine.ts'
 
 /*
  * npm run --silent balance -- FILE [--layout ID] [--case ID] [--free PATH]... [--set PATH=VALUE]...
@@ -94,11 +94,13 @@ function run(words: readonly string[]): number {
     const ids = layout.cases.map((one) => one.id).join(', ')
     throw new Unusable(`layout ${layout.id} has no case ${call.case}; there are: ${ids}`)
   }
-  const applied = applyOverrides(layout, { free: call.free, set: call.set })
-  if (applied.outcome === 'unusable') throw new Unusable(applied.message)
-  const balance = balanceOf(applied.layout, applied.remarks)
-  process.stdout.write(`${JSON.stringify(balance, null, 1)}\n`)
-  return balance.status === 'solved' ? 0 : 1
+  const overrides = { free: call.free, set: call.set }
+  const checked = applyOverrides(layout, overrides)
+  if (checked.outcome === 'unusable') throw new Unusable(checked.message)
+  const solved = balanceOfCase(read.plant, layout.id, call.case ?? null, overrides)
+  if (solved.outcome === 'unusable') throw new Unusable(`${call.file}: ${solved.message}`)
+  process.stdout.write(`${JSON.stringify(solved.balance, null, 1)}\n`)
+  return solved.balance.status === 'solved' ? 0 : 1
 }
 
 try {

@@ -1,5 +1,6 @@
 import type { Finding } from '../../messages.ts'
-import type { Case, Given, Layout, Plant } from '../../plant/document.ts'
+import type { Case, Layout, Plant } from '../../plant/document.ts'
+import type { Overrides } from '../../plant/overrides.ts'
 import { Wording } from '../findings.ts'
 import { Model } from '../model.ts'
 import { type Balance, solve } from '../solve.ts'
@@ -8,12 +9,6 @@ import { continueTo } from './continuation.ts'
 import { freeze, type GivenTable, givensOf, withGivens } from './freeze.ts'
 import { freedByLoadControl } from './load-control.ts'
 import { splitTurbine, UnusableCase } from './split.ts'
-
-/** Changes made after the case's own, as on the command line. */
-export interface Overrides {
-  readonly free: readonly string[]
-  readonly set: Readonly<Record<string, Given>>
-}
 
 export type CaseOutcome =
   | { readonly outcome: 'balance'; readonly balance: Balance; readonly remarks: readonly Finding[] }
