@@ -177,8 +177,12 @@ export function placeLabels(
   const placed = new Map<string, PlacedLabel>()
   for (const request of requests) {
     const within = request.inside !== undefined
-    const covered = (box: Box) =>
-      within && overlap(box, request.body) ? 0 : 4 * bodies.covered(box) + 8 * streams.covered(box)
+    const covered = (box: Box) => {
+      if (within && overlap(box, request.body)) return 0
+      const lines = streams.covered(box)
+      // However little of a stream is covered, its course is hidden.
+      return 4 * bodies.covered(box) + 8 * lines + (lines > 0 ? 160 : 0)
+    }
     const stays = staying.get(request.id)
     if (stays && covered(stays) === 0 && texts.covered(stays) === 0) {
       placed.set(request.id, stays)
