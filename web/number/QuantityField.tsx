@@ -1,5 +1,5 @@
 import { useEffect, useId, useRef, useState } from 'react'
-import type { QuantityDescription } from '../../src/document.ts'
+import type { Given, QuantityDescription } from '../../src/document.ts'
 import { usePlantStore } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { focusGranted, useFocusWanted } from './focus.ts'
@@ -17,6 +17,8 @@ interface Editing {
   /** Key under which the arrow keys' steps join into one undo step. */
   readonly merge: string
   readonly stepped: boolean
+  /** What was given when the field opened. */
+  readonly before: Given | undefined
 }
 
 interface Props {
@@ -64,6 +66,7 @@ export function QuantityField({ path, label, description, showUnit = true }: Pro
       value: start,
       merge: `field/${path}/${openings}`,
       stepped: false,
+      before: given,
     })
   }
 
@@ -107,7 +110,7 @@ export function QuantityField({ path, label, description, showUnit = true }: Pro
         if (sure) free(path)
         break
       case 'value':
-        if (typed.value !== given) give(path, typed.value, { merge: editing.merge })
+        if (typed.value !== given) give(path, typed.value, editing)
         break
     }
     close()
@@ -129,8 +132,9 @@ export function QuantityField({ path, label, description, showUnit = true }: Pro
     const rounded = readTyped(shown, path, description, units)
     if (rounded.outcome === 'refused') setEditing({ ...editing, error: rounded.message })
     else if (rounded.outcome === 'value') {
-      give(path, rounded.value, { merge: editing.merge })
+      give(path, rounded.value, editing)
       setEditing({
+        before: editing.before,
         text: shown,
         first: shown,
         value: rounded.value,

@@ -6,7 +6,7 @@ import {
   setGiven,
   withinSentence,
 } from '../../src/document.ts'
-import { editLayout, readGiven, readLayout } from '../store/plant-store.ts'
+import { type EditOptions, editLayout, readGiven, readLayout } from '../store/plant-store.ts'
 import { readUnitChoice } from '../store/settings-store.ts'
 
 /** A quantity by name: 'Heater 5, terminal difference'; the path itself where nothing bears it. */
@@ -34,8 +34,15 @@ export function lastGiven(): string | null {
 }
 
 /** Gives a quantity a value: an undo step by name. */
-export function give(path: string, given: Given, options?: { readonly merge?: string }): void {
-  const before = readGiven(path)
+export function give(
+  path: string,
+  given: Given,
+  options: EditOptions & {
+    /** What was given before a row of merged edits began, for their common name. */
+    readonly before?: Given | undefined
+  } = {},
+): void {
+  const before = options.before ?? readGiven(path)
   if (before === undefined) newestGiven = path
   const to = givenText(path, given)
   const name =
