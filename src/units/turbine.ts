@@ -200,6 +200,16 @@ export const turbine = defineUnitKind({
       label: 'Moisture removal',
       help: 'Part of the moisture leaves with each bleed.',
     },
+    controlledBleeds: {
+      label: 'Controlled bleeds',
+      help: 'Bleeds whose pressure a control valve holds when the hardware is frozen.',
+      list: { numbersOf: 'bleed' },
+    },
+    splitFrom: {
+      label: 'Split from',
+      help: 'For each stage group the group of the hardware that it is part of.',
+      list: { each: perGroup },
+    },
   },
   chief: 'power',
   shaft: 'driving',
