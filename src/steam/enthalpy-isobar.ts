@@ -28,7 +28,14 @@ import {
 } from './gap.ts'
 import { borderTemperature23 } from './if97/borders.ts'
 import { POINT_SIZE, Point, region1Point, region2Point, region5Point } from './if97/point.ts'
-import { FIELD_SIZE, Field, found, region3AtEntropy, region3Temperature } from './if97/region3.ts'
+import {
+  FIELD_SIZE,
+  Field,
+  region3AtEntropy,
+  region3Temperature,
+  Sought,
+  sought,
+} from './if97/region3.ts'
 import { region1TemperatureFromEntropy } from './if97/unrolled-region1.ts'
 import {
   region2aTemperatureFromEntropy,
@@ -36,8 +43,28 @@ import {
   region2cTemperatureFromEntropy,
 } from './if97/unrolled-region2.ts'
 import { Outcome, refuse } from './outcome.ts'
-import { Saturation } from './records.ts'
+import { Result, Saturation } from './records.ts'
 import { cachedSaturation, saturationCache } from './saturation.ts'
+
+// Slots and limits as constants of this module: an imported binding is looked up at each use.
+const {
+  sL: satSL,
+  sV: satSV,
+  hL: satHL,
+  hV: satHV,
+  hLp: satHLp,
+  hVp: satHVp,
+  vL: satVL,
+  vV: satVV,
+  T: satT,
+} = Saturation
+const { h: ptH, s: ptS, cp: ptCp, v: ptV, vT: ptVT, vp: ptVp, hp: ptHp } = Point
+const { value: outValue, first: outFirst, second: outSecond } = Result
+const { T: ofT, h: ofH, rho: ofRho, pT: ofPT, hT: ofHT, pRho: ofPRho, hRho: ofHRho } = Field
+const pressure13 = borderPressure13
+const critical = criticalPressure
+const leastSaturation = lowestSaturationPressure
+const cache = saturationCache
 
 const point = new Float64Array(POINT_SIZE)
 const field = new Float64Array(FIELD_SIZE)
@@ -68,48 +95,63 @@ export function enthalpyAtPressureEntropy(
   p: number,
   s: number,
 ): number {
+  // Short enough to be inlined: numbers passed on to a longer function would be allocated.
+  asked[0] = p
+  asked[1] = s
+  return entropyForm(out, at)
+}
+
+/** p (Pa) and s (J/(kg K)) or v (m3/kg) of the call under way; T (K) of the last step and the step. */
+const asked = new Float64Array(4)
+const g = new Float64Array(9)
+
+function entropyForm(out: Float64Array, at: number): number {
+  const p = asked[0] as number
+  const s = asked[1] as number
   if (!(p >= lowestPressure && p <= highestPressure)) return refusePressure(p)
   if (!Number.isFinite(s)) return refuse(s > 0 ? Outcome.entropyHigh : Outcome.entropyLow, s, 0)
-  if (p >= criticalPressure) return denseEntropy(out, at, p, s, SUPERCRITICAL)
-  if (p < lowestSaturationPressure) return steamEntropy(out, at, p, s)
+  if (p >= critical) return denseEntropy(out, at, SUPERCRITICAL)
+  if (p < leastSaturation) return steamEntropy(out, at)
   const slot = cachedSaturation(p)
-  if (s < (saturationCache[slot + Saturation.sL] as number)) {
-    return p > borderPressure13 ? denseEntropy(out, at, p, s, LIQUID) : liquidEntropy(out, at, p, s)
+  if (s < (cache[slot + satSL] as number)) {
+    return p > pressure13 ? denseEntropy(out, at, LIQUID) : liquidEntropy(out, at)
   }
-  if (s > (saturationCache[slot + Saturation.sV] as number)) {
-    return p > borderPressure13 ? denseEntropy(out, at, p, s, VAPOUR) : steamEntropy(out, at, p, s)
+  if (s > (cache[slot + satSV] as number)) {
+    return p > pressure13 ? denseEntropy(out, at, VAPOUR) : steamEntropy(out, at)
   }
-  return wetForm(out, at, slot, s, Saturation.sL)
+  return wetForm(out, at, slot, satSL)
 }
 
 /** h between saturated liquid and steam by s or v, whose slot of the liquid's side is given. */
-function wetForm(out: Float64Array, at: number, slot: number, value: number, of: number): number {
-  const first = saturationCache[slot + of] as number
-  const firstP = saturationCache[slot + of + DERIVATIVES] as number
-  const width = (saturationCache[slot + of + 1] as number) - first
-  const widthP = (saturationCache[slot + of + DERIVATIVES + 1] as number) - firstP
-  const hL = saturationCache[slot + Saturation.hL] as number
-  const dh = (saturationCache[slot + Saturation.hV] as number) - hL
-  const hLp = saturationCache[slot + Saturation.hLp] as number
-  const dhp = (saturationCache[slot + Saturation.hVp] as number) - hLp
+function wetForm(out: Float64Array, at: number, slot: number, of: number): number {
+  const value = asked[1] as number
+  const first = cache[slot + of] as number
+  const firstP = cache[slot + of + DERIVATIVES] as number
+  const width = (cache[slot + of + 1] as number) - first
+  const widthP = (cache[slot + of + DERIVATIVES + 1] as number) - firstP
+  const hL = cache[slot + satHL] as number
+  const dh = (cache[slot + satHV] as number) - hL
+  const hLp = cache[slot + satHLp] as number
+  const dhp = (cache[slot + satHVp] as number) - hLp
   const x = (value - first) / width
   const xp = -(firstP + x * widthP) / width
   return write(out, at, hL + x * dh, hLp + x * dhp + xp * dh, dh / width)
 }
 
 /** From a saturated property's slot to that of its derivative. */
-const DERIVATIVES = Saturation.hLp - Saturation.hL
+const DERIVATIVES = satHLp - satHL
 
 /** h between both sides of a border by s or v, whose slot of a point is given. */
-function gapForm(out: Float64Array, at: number, value: number, of: number): number {
+function gapForm(out: Float64Array, at: number, of: number): number {
+  const value = asked[1] as number
   const T = border[0] as number
   const slope = border[1] as number
   const first = lowSide[of] as number
   const width = (highSide[of] as number) - first
   const firstP = alongBorder(lowSide, T, slope, of)
   const widthP = alongBorder(highSide, T, slope, of) - firstP
-  const h = lowSide[Point.h] as number
-  const dh = (highSide[Point.h] as number) - h
+  const h = lowSide[ptH] as number
+  const dh = (highSide[ptH] as number) - h
   const hp = enthalpyAlong(lowSide, slope)
   const dhp = enthalpyAlong(highSide, slope) - hp
   const part = (value - first) / width
@@ -118,33 +160,37 @@ function gapForm(out: Float64Array, at: number, value: number, of: number): numb
 }
 
 function alongBorder(q: Float64Array, T: number, slope: number, of: number): number {
-  return of === Point.s ? entropyAlong(q, T, slope) : volumeAlong(q, slope)
+  return of === ptS ? entropyAlong(q, T, slope) : volumeAlong(q, slope)
 }
 
-function denseEntropy(out: Float64Array, at: number, p: number, s: number, side: number): number {
+function denseEntropy(out: Float64Array, at: number, side: number): number {
+  const p = asked[0] as number
+  const s = asked[1] as number
   if (side !== VAPOUR && s < mostEntropy13) {
-    if (s < leastEntropy13) return liquidEntropy(out, at, p, s)
+    if (s < leastEntropy13) return liquidEntropy(out, at)
     region1Point(point, p, borderTemperature13)
-    if (s <= (point[Point.s] as number)) return liquidEntropy(out, at, p, s)
+    if (s <= (point[ptS] as number)) return liquidEntropy(out, at)
   }
   if (side !== LIQUID && s > leastEntropy23) {
-    if (s > mostEntropy23) return steamEntropy(out, at, p, s)
+    if (s > mostEntropy23) return steamEntropy(out, at)
     region2Point(point, p, borderTemperature23(p))
-    if (s >= (point[Point.s] as number)) return steamEntropy(out, at, p, s)
+    if (s >= (point[ptS] as number)) return steamEntropy(out, at)
   }
   // The critical entropy parts subregion 3a from 3b.
   const liquidSide = side === LIQUID || (side === SUPERCRITICAL && s <= criticalEntropy)
-  if (!region3AtEntropy(field, p, s, liquidSide)) return refuse(Outcome.entropyHigh, s, s)
-  const T = found[1] as number
+  sought[Sought.p] = p
+  sought[Sought.value] = s
+  if (!region3AtEntropy(field, liquidSide)) return refuse(Outcome.entropyHigh, s, s)
+  const T = field[ofT] as number
   if (T < borderTemperature13) {
     sidesOfBorder13(p)
-    return gapForm(out, at, s, Point.s)
+    return gapForm(out, at, ptS)
   }
   if (side !== LIQUID && T > borderTemperature23(p)) {
     sidesOfBorder23(p)
-    return gapForm(out, at, s, Point.s)
+    return gapForm(out, at, ptS)
   }
-  return write(out, at, field[Field.h] as number, 1 / (found[0] as number), T)
+  return write(out, at, field[ofH] as number, 1 / (field[ofRho] as number), T)
 }
 
 /** Entropy at the critical point, J/(kg K). */
@@ -153,87 +199,118 @@ const criticalEntropy = 4412.02148223476
 /** Step (as part of T) after which h, s and v at the next T follow from Taylor's terms to round-off. */
 const settled = 1e-7
 
-function liquidEntropy(out: Float64Array, at: number, p: number, s: number): number {
-  let T = Math.min(640, Math.max(265, region1TemperatureFromEntropy(p * 1e-6, s * 1e-3 + 2)))
+function liquidEntropy(out: Float64Array, at: number): number {
+  const p = asked[0] as number
+  const s = asked[1] as number
+  g[6] = p * 1e-6
+  g[7] = s * 1e-3 + 2
+  region1TemperatureFromEntropy(g)
+  let T = Math.min(640, Math.max(265, g[0] as number))
   for (let i = 0; i < MOST_STEPS; i++) {
     region1Point(point, p, T)
-    const step = ((s - (point[Point.s] as number)) * T) / (point[Point.cp] as number)
-    if (Math.abs(step) < settled * T) return finishEntropy(out, at, p, s, T, step)
+    const step = ((s - (point[ptS] as number)) * T) / (point[ptCp] as number)
+    if (Math.abs(step) < settled * T) {
+      asked[2] = T
+      asked[3] = step
+      return finishEntropy(out, at)
+    }
     T = Math.min(640, Math.max(265, T + step))
   }
-  return refuseEntropy(p, s)
+  return refuseEntropy()
 }
 
-function steamEntropy(out: Float64Array, at: number, p: number, s: number): number {
-  let T = Math.min(1075, Math.max(265, steamGuess(p, s)))
+function steamEntropy(out: Float64Array, at: number): number {
+  const p = asked[0] as number
+  const s = asked[1] as number
+  steamGuess()
+  let T = Math.min(1075, Math.max(265, g[0] as number))
   let stuck = 0
   for (let i = 0; i < MOST_STEPS && stuck < 3; i++) {
     region2Point(point, p, T)
-    const step = ((s - (point[Point.s] as number)) * T) / (point[Point.cp] as number)
+    const step = ((s - (point[ptS] as number)) * T) / (point[ptCp] as number)
     if (Math.abs(step) < settled * T) {
       if (T + step > highestTemperature25) break
-      return finishEntropy(out, at, p, s, T, step)
+      asked[2] = T
+      asked[3] = step
+      return finishEntropy(out, at)
     }
     // s is concave in T: a bounded step never swings.
     T = Math.min(1075, Math.max(265, T + Math.min(step, T)))
     stuck = T === 1075 || T === 265 ? stuck + 1 : 0
   }
-  if (T < 300) return refuseEntropy(p, s)
-  return hotEntropy(out, at, p, s)
+  if (T < 300) return refuseEntropy()
+  return hotEntropy(out, at)
 }
 
-function steamGuess(p: number, s: number): number {
+/** Backward equations of region 2, Eqs. (25) to (27); T in g[0]. */
+function steamGuess(): void {
+  const p = asked[0] as number
+  const s = asked[1] as number
   const pi = p * 1e-6
-  if (p < lowestSaturationPressure) return 600
-  if (pi <= 4) return region2aTemperatureFromEntropy(Math.sqrt(Math.sqrt(pi)), s / 2e3 - 2)
-  if (s >= 5.85e3) return region2bTemperatureFromEntropy(pi, 10 - s / 785.3)
-  return region2cTemperatureFromEntropy(pi, 2 - s / 2925.1)
+  if (p < leastSaturation) {
+    g[0] = 600
+  } else if (pi <= 4) {
+    g[6] = Math.sqrt(Math.sqrt(pi))
+    g[7] = s / 2e3 - 2
+    region2aTemperatureFromEntropy(g)
+  } else if (s >= 5.85e3) {
+    g[6] = pi
+    g[7] = 10 - s / 785.3
+    region2bTemperatureFromEntropy(g)
+  } else {
+    g[6] = pi
+    g[7] = 2 - s / 2925.1
+    region2cTemperatureFromEntropy(g)
+  }
 }
 
 /** The last step of T, so short that the trapezium under T(s) is h to round-off. */
-function finishEntropy(
-  out: Float64Array,
-  at: number,
-  p: number,
-  s: number,
-  T: number,
-  step: number,
-): number {
+function finishEntropy(out: Float64Array, at: number): number {
+  const T = asked[2] as number
+  const step = asked[3] as number
   const end = T + step
-  if (end < lowestTemperature - temperatureSlack) return refuseEntropy(p, s)
-  const h = (point[Point.h] as number) + (T + 0.5 * step) * (s - (point[Point.s] as number))
-  return write(out, at, h, (point[Point.v] as number) + (point[Point.vT] as number) * step, end)
+  if (end < lowestTemperature - temperatureSlack) return refuseEntropy()
+  const rise = (asked[1] as number) - (point[ptS] as number)
+  out[at + outValue] = (point[ptH] as number) + (T + 0.5 * step) * rise
+  out[at + outFirst] = (point[ptV] as number) + (point[ptVT] as number) * step
+  out[at + outSecond] = end
+  return Outcome.fine
 }
 
-function refuseEntropy(p: number, s: number): number {
-  if (p < lowestSaturationPressure) region2Point(point, p, lowestTemperature)
+function refuseEntropy(): number {
+  const p = asked[0] as number
+  if (p < leastSaturation) region2Point(point, p, lowestTemperature)
   else region1Point(point, p, lowestTemperature)
-  return refuse(Outcome.entropyLow, s, point[Point.s] as number)
+  return refuse(Outcome.entropyLow, asked[1] as number, point[ptS] as number)
 }
 
 /** Above 1073.15 K: the gap there or region 5. */
-function hotEntropy(out: Float64Array, at: number, p: number, s: number): number {
+function hotEntropy(out: Float64Array, at: number): number {
+  const p = asked[0] as number
+  const s = asked[1] as number
   if (p > highestPressure5) {
     region2Point(point, p, highestTemperature25)
-    const most = point[Point.s] as number
+    const most = point[ptS] as number
     if (s > most * (1 + 1e-12)) return refuse(Outcome.entropyHigh, s, most)
-    return write(out, at, point[Point.h] as number, point[Point.v] as number, highestTemperature25)
+    return write(out, at, point[ptH] as number, point[ptV] as number, highestTemperature25)
   }
   sidesOfBorder25(p)
-  if (s < (highSide[Point.s] as number)) return gapForm(out, at, s, Point.s)
+  if (s < (highSide[ptS] as number)) return gapForm(out, at, ptS)
   let T = 1500
   for (let i = 0; i < MOST_STEPS; i++) {
     region5Point(point, p, T)
-    const step = ((s - (point[Point.s] as number)) * T) / (point[Point.cp] as number)
+    const step = ((s - (point[ptS] as number)) * T) / (point[ptCp] as number)
     if (Math.abs(step) < settled * T) {
       if (T + step > highestTemperature + temperatureSlack) break
-      return finishEntropy(out, at, p, s, T, step)
+      asked[2] = T
+      asked[3] = step
+      return finishEntropy(out, at)
     }
     if (T === 2400 && step > 0) break
     T = Math.min(2400, Math.max(1000, T + step))
   }
   region5Point(point, p, highestTemperature)
-  return refuse(Outcome.entropyHigh, s, point[Point.s] as number)
+  return refuse(Outcome.entropyHigh, s, point[ptS] as number)
 }
 
 /**
@@ -247,58 +324,60 @@ export function enthalpyAtPressureVolume(
   v: number,
 ): number {
   if (!(p >= lowestPressure && p <= highestPressure)) return refusePressure(p)
+  asked[0] = p
+  asked[1] = v
   if (!Number.isFinite(v)) return refuse(v > 0 ? Outcome.volumeHigh : Outcome.volumeLow, v, 0)
   let wetSlot = -1
-  if (p >= lowestSaturationPressure && p < criticalPressure) {
+  if (p >= leastSaturation && p < critical) {
     wetSlot = cachedSaturation(p)
-    const vL = saturationCache[wetSlot + Saturation.vL] as number
-    const vV = saturationCache[wetSlot + Saturation.vV] as number
-    if (v >= vL && v <= vV) return wetForm(out, at, wetSlot, v, Saturation.vL)
-    const T = saturationCache[wetSlot + Saturation.T] as number
-    if (p <= borderPressure13) {
+    const vL = cache[wetSlot + satVL] as number
+    const vV = cache[wetSlot + satVV] as number
+    if (v >= vL && v <= vV) return wetForm(out, at, wetSlot, satVL)
+    const T = cache[wetSlot + satT] as number
+    if (p <= pressure13) {
       return v < vL
         ? volumeWithin(out, at, p, v, 1, lowestTemperature, T)
         : steamVolume(out, at, p, v, T)
     }
   }
-  if (p < lowestSaturationPressure) return steamVolume(out, at, p, v, lowestTemperature)
+  if (p < leastSaturation) return steamVolume(out, at, p, v, lowestTemperature)
   return denseVolume(out, at, p, v)
 }
 
 /** Above 16.529 MPa and outside the two-phase zone. */
 function denseVolume(out: Float64Array, at: number, p: number, v: number): number {
   region1Point(point, p, borderTemperature13)
-  if (v <= (point[Point.v] as number)) {
+  if (v <= (point[ptV] as number)) {
     return volumeWithin(out, at, p, v, 1, lowestTemperature, borderTemperature13)
   }
   const T23 = borderTemperature23(p)
   region2Point(point, p, T23)
-  if (v >= (point[Point.v] as number)) return steamVolume(out, at, p, v, T23)
+  if (v >= (point[ptV] as number)) return steamVolume(out, at, p, v, T23)
   const rho = 1 / v
   const T = region3Temperature(field, p, rho, borderTemperature13, T23)
   if (T < borderTemperature13) {
     sidesOfBorder13(p)
-    return gapForm(out, at, v, Point.v)
+    return gapForm(out, at, ptV)
   }
   if (T > T23) {
     sidesOfBorder23(p)
-    return gapForm(out, at, v, Point.v)
+    return gapForm(out, at, ptV)
   }
-  const pT = field[Field.pT] as number
+  const pT = field[ofPT] as number
   // dT/dp at constant v is 1/pT; dT/dv at constant p follows from dp = 0.
-  const hp = (field[Field.hT] as number) / pT
-  const rhoToT = -(field[Field.pRho] as number) / pT
-  const hv = -((field[Field.hRho] as number) + (field[Field.hT] as number) * rhoToT) * rho * rho
-  return write(out, at, field[Field.h] as number, hp, hv)
+  const hp = (field[ofHT] as number) / pT
+  const rhoToT = -(field[ofPRho] as number) / pT
+  const hv = -((field[ofHRho] as number) + (field[ofHT] as number) * rhoToT) * rho * rho
+  return write(out, at, field[ofH] as number, hp, hv)
 }
 
 function steamVolume(out: Float64Array, at: number, p: number, v: number, from: number): number {
   region2Point(point, p, highestTemperature25)
-  const most = point[Point.v] as number
+  const most = point[ptV] as number
   if (v <= most * (1 + 1e-12)) return volumeWithin(out, at, p, v, 2, from, highestTemperature25)
   if (p > highestPressure5) return refuse(Outcome.volumeHigh, v, most)
   sidesOfBorder25(p)
-  if (v < (highSide[Point.v] as number)) return gapForm(out, at, v, Point.v)
+  if (v < (highSide[ptV] as number)) return gapForm(out, at, ptV)
   return volumeWithin(out, at, p, v, 5, highestTemperature25, highestTemperature)
 }
 
@@ -317,8 +396,8 @@ function volumeWithin(
   let T = 0.5 * (low + high)
   for (let i = 0; i < 200; i++) {
     regionPoint(region, p, T)
-    const slope = point[Point.vT] as number
-    const off = (point[Point.v] as number) - v
+    const slope = point[ptVT] as number
+    const off = (point[ptV] as number) - v
     // Water below its density maximum lies on the other branch.
     if (slope <= 0 || off < 0) low = T
     else high = T
@@ -329,15 +408,15 @@ function volumeWithin(
     if (step < 1e-14 * T) break
   }
   regionPoint(region, p, T)
-  const off = (point[Point.v] as number) - v
+  const off = (point[ptV] as number) - v
   if (Math.abs(off) > 1e-10 * v) {
-    return refuse(off > 0 ? Outcome.volumeLow : Outcome.volumeHigh, v, point[Point.v] as number)
+    return refuse(off > 0 ? Outcome.volumeLow : Outcome.volumeHigh, v, point[ptV] as number)
   }
-  const cp = point[Point.cp] as number
-  const vT = point[Point.vT] as number
-  const vp = point[Point.vp] as number
-  const hp = (point[Point.hp] as number) - (cp * vp) / vT
-  return write(out, at, point[Point.h] as number, hp, cp / vT)
+  const cp = point[ptCp] as number
+  const vT = point[ptVT] as number
+  const vp = point[ptVp] as number
+  const hp = (point[ptHp] as number) - (cp * vp) / vT
+  return write(out, at, point[ptH] as number, hp, cp / vT)
 }
 
 function regionPoint(region: number, p: number, T: number): void {

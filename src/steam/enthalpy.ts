@@ -189,7 +189,7 @@ function besideSaturation(
   const T = saturationCache[slot + Saturation.T] as number
   const v = saturationCache[slot + Saturation.vL + side] as number
   region3Field(field, 1 / v, T)
-  pointOfField(point, field, 1 / v, T)
+  pointOfField(point, field)
   const cp = point[Point.cp] as number
   const h = saturationCache[slot + Saturation.hL + side] as number
   const hp = saturationCache[slot + Saturation.hLp + side] as number

@@ -40,8 +40,8 @@ export function region3Point(point: Float64Array, p: number, T: number): void {
     if (p > saturated) low = 1 / (saturationCache[slot + Saturation.vL] as number)
     else high = 1 / (saturationCache[slot + Saturation.vV] as number)
   }
-  const rho = region3Density(field, p, T, 1 / region3VolumeOf(p, T), low, high)
-  pointOfField(point, field, rho, T)
+  region3Density(field, p, T, 1 / region3VolumeOf(p, T), low, high)
+  pointOfField(point, field)
 }
 
 /** Both sides of the border 1/3 at p (Pa). */

@@ -5,8 +5,8 @@
 
 /**
  * Slots of a saturation record: p (Pa), T (K), then h (J/kg), s (J/(kg K)), v (m3/kg) of saturated
- * liquid (L) and dry saturated steam (V), then the derivatives of the same to p. p is 0 while the
- * record is empty.
+ * liquid (L) and dry saturated steam (V), then the derivatives of the same to p; `log` is
+ * ln(p / 1 MPa). p is 0 while the record is empty.
  */
 export const Saturation = {
   p: 0,
@@ -24,8 +24,9 @@ export const Saturation = {
   sVp: 12,
   vLp: 13,
   vVp: 14,
+  log: 15,
 } as const
-export const SATURATION_SIZE = 15
+export const SATURATION_SIZE = 16
 
 /**
  * Slots of a state record: p (Pa), h (J/kg), T (K), s (J/(kg K)), v (m3/kg) and dryness fraction x

@@ -10,12 +10,29 @@ import {
 import { POINT_SIZE, Point, region1Point, region2Point } from './if97/point.ts'
 import { FIELD_SIZE, Field, region3Field, region3SaturatedDensity } from './if97/region3.ts'
 import {
+  saturationLine,
   saturationPressureOf,
   saturationSlope,
   saturationTemperatureOf,
 } from './if97/saturation-line.ts'
 import { Outcome, refuse } from './outcome.ts'
 import { Result, SATURATION_SIZE, Saturation } from './records.ts'
+
+// Slots and limits as constants of this module: an imported binding is looked up at each use.
+const {
+  T: satT,
+  Tp: satTp,
+  hL: satHL,
+  sL: satSL,
+  vL: satVL,
+  hLp: satHLp,
+  sLp: satSLp,
+  vLp: satVLp,
+  sV: satSV,
+  log: satLog,
+} = Saturation
+const { hp: ptHp, log: ptLog } = Point
+const pressure13 = borderPressure13
 
 /** The last pressure below the critical one at which saturated states are told apart, Pa. */
 const lastPressure = criticalPressure * (1 - 1e-12)
@@ -45,28 +62,32 @@ export function checkSaturationPressure(p: number): number {
  */
 export function cachedSaturation(p: number): number {
   const slot = (Math.imul((p * 64) | 0, 0x9e3779b1) >>> 23) * SATURATION_SIZE
-  if (cache[slot] !== p) computeSaturation(cache, slot, p, saturationTemperatureOf(p))
+  if (cache[slot] !== p) {
+    cache[slot] = p
+    saturationLine(cache, slot, slot + satT, slot + satTp)
+    completeSaturation(cache, slot)
+  }
   return slot
 }
 
 /** Where `cachedSaturation` leaves its records. */
 export const saturationCache: Float64Array = cache
 
-/** Fills a saturation record from p and the saturation temperature that belongs to it. */
-function computeSaturation(record: Float64Array, at: number, p: number, T: number): void {
-  const slope = saturationSlope(p, T)
-  record[at] = p
-  record[at + Saturation.T] = T
-  record[at + Saturation.Tp] = slope
-  if (p > borderPressure13) {
-    denseSide(record, at, 0, p, T, slope)
-    denseSide(record, at, 1, p, T, slope)
+/** Completes a saturation record that has p, T and dT/dp. */
+function completeSaturation(record: Float64Array, at: number): void {
+  const p = record[at] as number
+  const T = record[at + satT] as number
+  if (p > pressure13) {
+    denseSide(record, at, 0)
+    denseSide(record, at, 1)
+    record[at + satLog] = Math.log(p * 1e-6)
     return
   }
   region1Point(liquid, p, T)
   region2Point(vapour, p, T)
-  side(record, at, 0, liquid, T, slope)
-  side(record, at, 1, vapour, T, slope)
+  record[at + satLog] = vapour[ptLog] as number
+  side(record, at, 0, liquid)
+  side(record, at, 1, vapour)
 }
 
 /**
@@ -74,14 +95,10 @@ function computeSaturation(record: Float64Array, at: number, p: number, T: numbe
  * In the last 100 Pa below the critical pressure the two no longer meet to the digits of a double; there
  * the densities close in on the critical one with the square root of the gap, as they do before.
  */
-function denseSide(
-  record: Float64Array,
-  at: number,
-  shift: number,
-  p: number,
-  T: number,
-  slope: number,
-): void {
+function denseSide(record: Float64Array, at: number, shift: number): void {
+  const p = record[at] as number
+  const T = record[at + satT] as number
+  const slope = record[at + satTp] as number
   const gap = criticalPressure - p
   const sign = shift === 0 ? 1 : -1
   let rho: number
@@ -106,34 +123,28 @@ function denseSide(
   const v = 1 / rho
   const base = at + shift
   const pT = field[Field.pT] as number
-  record[base + Saturation.hL] = field[Field.h] as number
-  record[base + Saturation.sL] = field[Field.s] as number
-  record[base + Saturation.vL] = v
-  record[base + Saturation.hLp] =
-    (field[Field.hRho] as number) * rhoP + (field[Field.hT] as number) * slope
-  record[base + Saturation.sLp] = -pT * v * v * rhoP + ((field[Field.cv] as number) / T) * slope
-  record[base + Saturation.vLp] = -v * v * rhoP
+  record[base + satHL] = field[Field.h] as number
+  record[base + satSL] = field[Field.s] as number
+  record[base + satVL] = v
+  record[base + satHLp] = (field[Field.hRho] as number) * rhoP + (field[Field.hT] as number) * slope
+  record[base + satSLp] = -pT * v * v * rhoP + ((field[Field.cv] as number) / T) * slope
+  record[base + satVLp] = -v * v * rhoP
 }
 
 /** One side of the record: properties of a point and their derivatives along the line. */
-function side(
-  record: Float64Array,
-  at: number,
-  shift: number,
-  point: Float64Array,
-  T: number,
-  slope: number,
-): void {
+function side(record: Float64Array, at: number, shift: number, point: Float64Array): void {
+  const T = record[at + satT] as number
+  const slope = record[at + satTp] as number
   const v = point[2] as number
   const cp = point[3] as number
   const vT = point[4] as number
   const base = at + shift
-  record[base + Saturation.hL] = point[0] as number
-  record[base + Saturation.sL] = point[1] as number
-  record[base + Saturation.vL] = v
-  record[base + Saturation.hLp] = (point[Point.hp] as number) + cp * slope
-  record[base + Saturation.sLp] = (cp / T) * slope - vT
-  record[base + Saturation.vLp] = (point[5] as number) + vT * slope
+  record[base + satHL] = point[0] as number
+  record[base + satSL] = point[1] as number
+  record[base + satVL] = v
+  record[base + satHLp] = (point[ptHp] as number) + cp * slope
+  record[base + satSLp] = (cp / T) * slope - vT
+  record[base + satVLp] = (point[5] as number) + vT * slope
 }
 
 /**
@@ -158,7 +169,10 @@ export function saturationAtTemperature(record: Float64Array, at: number, T: num
   if (code !== Outcome.fine) return code
   const p = saturationPressureOf(T)
   if (p >= criticalPressure) return refuse(Outcome.temperatureHigh, T, criticalTemperature)
-  computeSaturation(record, at, p, T)
+  record[at] = p
+  record[at + satT] = T
+  record[at + satTp] = saturationSlope(p, T)
+  completeSaturation(record, at)
   return Outcome.fine
 }
 
@@ -203,8 +217,8 @@ function fillNodes(): void {
     const p = i === 0 ? lowestSaturationPressure : Math.min(saturationPressureOf(T), lastPressure)
     const slot = cachedSaturation(p)
     nodePressures[i] = p
-    nodes[i] = cache[slot + Saturation.sL] as number
-    nodes[NODES + i] = cache[slot + Saturation.sV] as number
+    nodes[i] = cache[slot + satSL] as number
+    nodes[NODES + i] = cache[slot + satSV] as number
   }
 }
 
@@ -255,11 +269,11 @@ function saturatedEnthalpyAtEntropy(
   let p = Math.min(above, Math.max(below, below * (above / below) ** part))
   let slot = cachedSaturation(p)
   for (let k = 0; k < 60; k++) {
-    const off = (cache[slot + Saturation.sL + side] as number) - s
+    const off = (cache[slot + satSL + side] as number) - s
     if (off === 0) break
     if (off < 0 === rises) below = p
     else above = p
-    let next = p - off / (cache[slot + Saturation.sLp + side] as number)
+    let next = p - off / (cache[slot + satSLp + side] as number)
     if (!(next > below && next < above)) {
       if (above - below <= 1e-14 * above) break
       next = 0.5 * (below + above)
@@ -269,11 +283,9 @@ function saturatedEnthalpyAtEntropy(
     slot = cachedSaturation(p)
     if (step <= 1e-13 * p) break
   }
-  const slope =
-    (cache[slot + Saturation.hLp + side] as number) /
-    (cache[slot + Saturation.sLp + side] as number)
-  const off = s - (cache[slot + Saturation.sL + side] as number)
-  out[at + Result.value] = (cache[slot + Saturation.hL + side] as number) + off * slope
+  const slope = (cache[slot + satHLp + side] as number) / (cache[slot + satSLp + side] as number)
+  const off = s - (cache[slot + satSL + side] as number)
+  out[at + Result.value] = (cache[slot + satHL + side] as number) + off * slope
   out[at + Result.first] = slope
   out[at + Result.second] = p
   return Outcome.fine

@@ -23,9 +23,27 @@ import {
   volumeAlong,
 } from './gap.ts'
 import { borderTemperature23 } from './if97/borders.ts'
-import { POINT_SIZE, Point, region1Point, region2Point, region5Point } from './if97/point.ts'
-import { FIELD_SIZE, Field, found, onLiquidSide, region3AtEnthalpy } from './if97/region3.ts'
 import {
+  POINT_SIZE,
+  Point,
+  region1Point,
+  region1PointOfTau,
+  region2Point,
+  region2PointOfTau,
+  region5Point,
+  settlePoint,
+} from './if97/point.ts'
+import {
+  FIELD_SIZE,
+  Field,
+  onLiquidSide,
+  region3AtEnthalpy,
+  Sought,
+  sought,
+} from './if97/region3.ts'
+import {
+  ASKED_SIZE,
+  Asked,
   region1TemperatureAtEnthalpy,
   region2TemperatureAtEnthalpy,
   region5TemperatureAtEnthalpy,
@@ -34,8 +52,58 @@ import { Outcome, refuse } from './outcome.ts'
 import { SATURATION_SIZE, Saturation, State } from './records.ts'
 import { cachedSaturation, saturationCache } from './saturation.ts'
 
+// Slots and limits as constants of this module: an imported binding is looked up at each use.
+const {
+  p: atP,
+  h: atH,
+  region: atRegion,
+  saturation: atSaturation,
+  T: atT,
+  Tp: atTp,
+  Th: atTh,
+  s: atS,
+  v: atV,
+  sp: atSp,
+  sh: atSh,
+  vp: atVp,
+  vh: atVh,
+  subcritical: atSubcritical,
+  x: atX,
+  xp: atXp,
+  xh: atXh,
+} = State
+const {
+  hL: satHL,
+  hV: satHV,
+  T: satT,
+  hLp: satHLp,
+  hVp: satHVp,
+  vL: satVL,
+  vV: satVV,
+  sL: satSL,
+  sV: satSV,
+  sLp: satSLp,
+  vLp: satVLp,
+  Tp: satTp,
+  sVp: satSVp,
+  vVp: satVVp,
+  log: satLog,
+} = Saturation
+const { h: ptH, v: ptV, T: ptT, cp: ptCp, vT: ptVT, hp: ptHp, s: ptS, vp: ptVp } = Point
+const { p: askP, h: askH, guess: askGuess, limit: askLimit, T: askT, tau: askTau } = Asked
+const pressure13 = borderPressure13
+const critical = criticalPressure
+const leastSaturation = lowestSaturationPressure
+const least = lowestPressure
+const most = highestPressure
+const coldest = lowestTemperature
+const border25 = highestTemperature25
+const border13 = borderTemperature13
+const saturationSize = SATURATION_SIZE
+const cache = saturationCache
+
 const point = new Float64Array(POINT_SIZE)
-const other = new Float64Array(POINT_SIZE)
+const asked = new Float64Array(ASKED_SIZE)
 const field = new Float64Array(FIELD_SIZE)
 
 // Where a state above 16.529 MPa lies to the two-phase zone.
@@ -79,312 +147,305 @@ export function stateAtPressureEnthalpy(
   p: number,
   h: number,
 ): number {
-  if (record[at + State.p] === p && record[at + State.h] === h && record[at + State.region] !== 0) {
-    return Outcome.fine
-  }
-  if (!(p >= lowestPressure && p <= highestPressure && Number.isFinite(h))) {
-    return refusePressure(p, h)
-  }
-  if (p >= criticalPressure) return dense(record, at, p, h, SUPERCRITICAL)
-  if (p < lowestSaturationPressure) return steam(record, at, p, h, 0)
-  const saturation = at + State.saturation
-  if (record[saturation] !== p) {
-    const slot = cachedSaturation(p)
-    for (let i = 0; i < SATURATION_SIZE; i++) {
-      record[saturation + i] = saturationCache[slot + i] as number
-    }
-  }
-  const hL = record[saturation + Saturation.hL] as number
-  if (h < hL - bandAround(hL)) {
-    return p > borderPressure13 ? dense(record, at, p, h, LIQUID) : liquid(record, at, p, h, 1)
-  }
-  const hV = record[saturation + Saturation.hV] as number
-  if (h > hV + bandAround(hV)) {
-    return p > borderPressure13 ? dense(record, at, p, h, VAPOUR) : steam(record, at, p, h, 1)
-  }
-  return wet(record, at, p, h)
+  // Short enough to be inlined: numbers passed on to a longer function would be allocated.
+  asked[askP] = p
+  asked[askH] = h
+  return solve(record, at)
 }
 
-function refusePressure(p: number, h: number): number {
-  if (!(p >= lowestPressure)) return refuse(Outcome.pressureLow, p, lowestPressure)
-  if (p > highestPressure) return refuse(Outcome.pressureHigh, p, highestPressure)
+function solve(record: Float64Array, at: number): number {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
+  if (record[at + atP] === p && record[at + atH] === h && record[at + atRegion] !== 0) {
+    return Outcome.fine
+  }
+  if (!(p >= least && p <= most && Number.isFinite(h))) return refuseAsked()
+  if (p >= critical) return dense(record, at, SUPERCRITICAL)
+  if (p < leastSaturation) return steam(record, at, 0)
+  const saturation = at + atSaturation
+  if (record[saturation] !== p) {
+    const slot = cachedSaturation(p)
+    for (let i = 0; i < saturationSize; i++) {
+      record[saturation + i] = cache[slot + i] as number
+    }
+  }
+  const hL = record[saturation + satHL] as number
+  if (h < hL - bandAround(hL)) {
+    return p > pressure13 ? dense(record, at, LIQUID) : liquid(record, at, 1)
+  }
+  const hV = record[saturation + satHV] as number
+  if (h > hV + bandAround(hV)) {
+    return p > pressure13 ? dense(record, at, VAPOUR) : steam(record, at, 1)
+  }
+  return wet(record, at)
+}
+
+function refuseAsked(): number {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
+  if (!(p >= least)) return refuse(Outcome.pressureLow, p, least)
+  if (p > most) return refuse(Outcome.pressureHigh, p, most)
   return refuse(h > 0 ? Outcome.enthalpyHigh : Outcome.enthalpyLow, h, 0)
 }
 
-/** The temperature that the record's state foretells at p and h; 0 when it is of another region. */
-function foretold(record: Float64Array, at: number, p: number, h: number, region: number): number {
-  if (record[at + State.region] !== region) return 0
-  return (
-    (record[at + State.T] as number) +
-    (record[at + State.Tp] as number) * (p - (record[at + State.p] as number)) +
-    (record[at + State.Th] as number) * (h - (record[at + State.h] as number))
-  )
+/** The guess: the temperature that the record's state foretells; 0 when it is of another region. */
+function foretell(record: Float64Array, at: number, region: number): void {
+  asked[askGuess] =
+    record[at + atRegion] === region
+      ? (record[at + atT] as number) +
+        (record[at + atTp] as number) * ((asked[askP] as number) - (record[at + atP] as number)) +
+        (record[at + atTh] as number) * ((asked[askH] as number) - (record[at + atH] as number))
+      : 0
 }
 
-function liquid(
-  record: Float64Array,
-  at: number,
-  p: number,
-  h: number,
-  subcritical: number,
-): number {
-  const ceiling =
-    p > borderPressure13
-      ? borderTemperature13
-      : (record[at + State.saturation + Saturation.T] as number)
-  const T = region1TemperatureAtEnthalpy(p, h, foretold(record, at, p, h, 1), ceiling)
-  if (!(T >= lowestTemperature - temperatureSlack)) {
-    region1Point(other, p, lowestTemperature)
-    return refuse(Outcome.enthalpyLow, h, other[Point.h] as number)
+function liquid(record: Float64Array, at: number, subcritical: number): number {
+  const p = asked[askP] as number
+  asked[askLimit] = p > pressure13 ? border13 : (record[at + atSaturation + satT] as number)
+  foretell(record, at, 1)
+  region1TemperatureAtEnthalpy(asked)
+  const T = asked[askT] as number
+  if (!(T >= coldest - temperatureSlack)) {
+    region1Point(point, p, coldest)
+    return refuse(Outcome.enthalpyLow, asked[askH] as number, point[ptH] as number)
   }
-  region1Point(point, p, T)
-  fill(record, at, p, h, T, 1, subcritical)
+  region1PointOfTau(point, p, asked[askTau] as number)
+  settlePoint(point, asked[askH] as number)
+  fill(record, at, 1, subcritical)
   return Outcome.fine
 }
 
-function steam(
-  record: Float64Array,
-  at: number,
-  p: number,
-  h: number,
-  subcritical: number,
-): number {
-  let floor = lowestTemperature
-  if (p > borderPressure13) floor = borderTemperature23(p)
-  else if (subcritical === 1) floor = record[at + State.saturation + Saturation.T] as number
-  const T =
-    h > highestEnthalpy2
-      ? highestTemperature
-      : region2TemperatureAtEnthalpy(p, h, foretold(record, at, p, h, 2), floor)
-  if (T > highestTemperature25) return hotSteam(record, at, p, h, subcritical)
-  if (T < lowestTemperature - temperatureSlack) {
-    region2Point(other, p, lowestTemperature)
-    return refuse(Outcome.enthalpyLow, h, other[Point.h] as number)
+function steam(record: Float64Array, at: number, subcritical: number): number {
+  const p = asked[askP] as number
+  if ((asked[askH] as number) > highestEnthalpy2) return hotSteam(record, at, subcritical)
+  if (p > pressure13) asked[askLimit] = borderTemperature23(p)
+  else if (subcritical === 1) {
+    asked[askLimit] = record[at + atSaturation + satT] as number
+  } else asked[askLimit] = coldest
+  foretell(record, at, 2)
+  region2TemperatureAtEnthalpy(asked)
+  const T = asked[askT] as number
+  if (T > border25) return hotSteam(record, at, subcritical)
+  if (T < coldest - temperatureSlack) {
+    region2Point(point, p, coldest)
+    return refuse(Outcome.enthalpyLow, asked[askH] as number, point[ptH] as number)
   }
-  region2Point(point, p, T)
-  fill(record, at, p, h, T, 2, subcritical)
+  const log =
+    subcritical === 1 ? (record[at + atSaturation + satLog] as number) : Math.log(p * 1e-6)
+  region2PointOfTau(point, p, asked[askTau] as number, log)
+  settlePoint(point, asked[askH] as number)
+  fill(record, at, 2, subcritical)
   return Outcome.fine
 }
 
 /** Beyond region 2: the gap at 1073.15 K or region 5. */
-function hotSteam(
-  record: Float64Array,
-  at: number,
-  p: number,
-  h: number,
-  subcritical: number,
-): number {
+function hotSteam(record: Float64Array, at: number, subcritical: number): number {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
   if (p > highestPressure5) {
-    region2Point(point, p, highestTemperature25)
-    const most = point[Point.h] as number
+    region2Point(point, p, border25)
+    const most = point[ptH] as number
     if (h > most * (1 + 1e-12)) return refuse(Outcome.enthalpyHigh, h, most)
-    fill(record, at, p, h, highestTemperature25, 2, subcritical)
+    fill(record, at, 2, subcritical)
     return Outcome.fine
   }
   sidesOfBorder25(p)
-  if (h < (highSide[Point.h] as number)) {
-    fillGap(record, at, p, h, 2, subcritical)
+  if (h < (highSide[ptH] as number)) {
+    fillGap(record, at, 2, subcritical)
     return Outcome.fine
   }
-  const T = region5TemperatureAtEnthalpy(p, h, foretold(record, at, p, h, 5))
+  foretell(record, at, 5)
+  region5TemperatureAtEnthalpy(asked)
+  const T = asked[askT] as number
   if (T > highestTemperature + temperatureSlack) {
-    region5Point(other, p, highestTemperature)
-    return refuse(Outcome.enthalpyHigh, h, other[Point.h] as number)
+    region5Point(point, p, highestTemperature)
+    return refuse(Outcome.enthalpyHigh, h, point[ptH] as number)
   }
   region5Point(point, p, T)
-  fill(record, at, p, h, T, 5, subcritical)
+  settlePoint(point, asked[askH] as number)
+  fill(record, at, 5, subcritical)
   return Outcome.fine
 }
 
 /** Writes a single-phase state from the forward equations in `point`. */
-function fill(
-  record: Float64Array,
-  at: number,
-  p: number,
-  h: number,
-  T: number,
-  region: number,
-  subcritical: number,
-): void {
-  const v = point[Point.v] as number
-  const Th = 1 / (point[Point.cp] as number)
-  const vT = point[Point.vT] as number
-  const Tp = -(point[Point.hp] as number) * Th
+function fill(record: Float64Array, at: number, region: number, subcritical: number): void {
+  const v = point[ptV] as number
+  const T = point[ptT] as number
+  const Th = 1 / (point[ptCp] as number)
+  const vT = point[ptVT] as number
+  const Tp = -(point[ptHp] as number) * Th
   const sh = 1 / T
-  record[at + State.p] = p
-  record[at + State.h] = h
-  record[at + State.T] = T
-  record[at + State.s] = point[Point.s] as number
-  record[at + State.v] = v
-  record[at + State.Tp] = Tp
-  record[at + State.Th] = Th
-  record[at + State.sp] = -v * sh
-  record[at + State.sh] = sh
-  record[at + State.vp] = (point[Point.vp] as number) + vT * Tp
-  record[at + State.vh] = vT * Th
-  record[at + State.region] = region
-  dryness(record, at, h, subcritical)
+  record[at + atP] = asked[askP] as number
+  record[at + atH] = asked[askH] as number
+  record[at + atT] = T
+  record[at + atS] = point[ptS] as number
+  record[at + atV] = v
+  record[at + atTp] = Tp
+  record[at + atTh] = Th
+  record[at + atSp] = -v * sh
+  record[at + atSh] = sh
+  record[at + atVp] = (point[ptVp] as number) + vT * Tp
+  record[at + atVh] = vT * Th
+  record[at + atRegion] = region
+  dryness(record, at, subcritical)
 }
 
 /** x with its partials from the saturation record, or zeros where it is not defined. */
-function dryness(record: Float64Array, at: number, h: number, subcritical: number): void {
-  record[at + State.subcritical] = subcritical
+function dryness(record: Float64Array, at: number, subcritical: number): void {
+  record[at + atSubcritical] = subcritical
   if (subcritical === 0) {
-    record[at + State.x] = 0
-    record[at + State.xp] = 0
-    record[at + State.xh] = 0
+    record[at + atX] = 0
+    record[at + atXp] = 0
+    record[at + atXh] = 0
     return
   }
-  const saturation = at + State.saturation
-  const hL = record[saturation + Saturation.hL] as number
-  const hLp = record[saturation + Saturation.hLp] as number
-  const xh = 1 / ((record[saturation + Saturation.hV] as number) - hL)
-  const x = (h - hL) * xh
-  record[at + State.x] = x
-  record[at + State.xh] = xh
-  record[at + State.xp] = -(hLp + x * ((record[saturation + Saturation.hVp] as number) - hLp)) * xh
+  const saturation = at + atSaturation
+  const hL = record[saturation + satHL] as number
+  const hLp = record[saturation + satHLp] as number
+  const xh = 1 / ((record[saturation + satHV] as number) - hL)
+  const x = ((asked[askH] as number) - hL) * xh
+  record[at + atX] = x
+  record[at + atXh] = xh
+  record[at + atXp] = -(hLp + x * ((record[saturation + satHVp] as number) - hLp)) * xh
 }
 
 /** Writes a state within a gap between two regions, from both sides of the border as gap.ts has them. */
-function fillGap(
-  record: Float64Array,
-  at: number,
-  p: number,
-  h: number,
-  region: number,
-  subcritical: number,
-): void {
+function fillGap(record: Float64Array, at: number, region: number, subcritical: number): void {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
   const T = border[0] as number
   const slope = border[1] as number
-  const low = lowSide[Point.h] as number
-  const width = (highSide[Point.h] as number) - low
+  const low = lowSide[ptH] as number
+  const width = (highSide[ptH] as number) - low
   const part = (h - low) / width
   const lowP = enthalpyAlong(lowSide, slope)
   const partP = -(lowP + part * (enthalpyAlong(highSide, slope) - lowP)) / width
-  const s = lowSide[Point.s] as number
-  const ds = (highSide[Point.s] as number) - s
-  const v = lowSide[Point.v] as number
-  const dv = (highSide[Point.v] as number) - v
+  const s = lowSide[ptS] as number
+  const ds = (highSide[ptS] as number) - s
+  const v = lowSide[ptV] as number
+  const dv = (highSide[ptV] as number) - v
   const sp = entropyAlong(lowSide, T, slope)
   const vp = volumeAlong(lowSide, slope)
-  record[at + State.p] = p
-  record[at + State.h] = h
-  record[at + State.T] = T
-  record[at + State.s] = s + part * ds
-  record[at + State.v] = v + part * dv
-  record[at + State.Tp] = slope
-  record[at + State.Th] = 0
-  record[at + State.sp] = sp + part * (entropyAlong(highSide, T, slope) - sp) + partP * ds
-  record[at + State.sh] = ds / width
-  record[at + State.vp] = vp + part * (volumeAlong(highSide, slope) - vp) + partP * dv
-  record[at + State.vh] = dv / width
-  record[at + State.region] = region
-  dryness(record, at, h, subcritical)
+  record[at + atP] = p
+  record[at + atH] = h
+  record[at + atT] = T
+  record[at + atS] = s + part * ds
+  record[at + atV] = v + part * dv
+  record[at + atTp] = slope
+  record[at + atTh] = 0
+  record[at + atSp] = sp + part * (entropyAlong(highSide, T, slope) - sp) + partP * ds
+  record[at + atSh] = ds / width
+  record[at + atVp] = vp + part * (volumeAlong(highSide, slope) - vp) + partP * dv
+  record[at + atVh] = dv / width
+  record[at + atRegion] = region
+  dryness(record, at, subcritical)
 }
 
 /**
  * Above 16.529 MPa: region 1, 3 or 2 (5) by the enthalpies at the borders. At a border region 1 or 2
  * goes first, so that an overlap of both sides has one answer.
  */
-function dense(record: Float64Array, at: number, p: number, h: number, side: number): number {
+function dense(record: Float64Array, at: number, side: number): number {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
   const subcritical = side === SUPERCRITICAL ? 0 : 1
   if (side !== VAPOUR && h < mostEnthalpy13) {
-    if (h < leastEnthalpy13) return liquid(record, at, p, h, subcritical)
-    region1Point(lowSide, p, borderTemperature13)
-    if (h <= (lowSide[Point.h] as number)) return liquid(record, at, p, h, subcritical)
+    if (h < leastEnthalpy13) return liquid(record, at, subcritical)
+    region1Point(lowSide, p, border13)
+    if (h <= (lowSide[ptH] as number)) return liquid(record, at, subcritical)
   }
   if (side !== LIQUID && h > leastEnthalpy23) {
-    if (h > mostEnthalpy23) return steam(record, at, p, h, subcritical)
+    if (h > mostEnthalpy23) return steam(record, at, subcritical)
     region2Point(highSide, p, borderTemperature23(p))
-    if (h >= (highSide[Point.h] as number)) return steam(record, at, p, h, subcritical)
+    if (h >= (highSide[ptH] as number)) return steam(record, at, subcritical)
   }
-  if (!solveDense(record, at, p, h, side)) return refuse(Outcome.enthalpyHigh, h, h)
-  const T = found[1] as number
-  if (T < borderTemperature13) {
+  if (!solveDense(record, at, side)) return refuse(Outcome.enthalpyHigh, h, h)
+  const T = field[Field.T] as number
+  if (T < border13) {
     sidesOfBorder13(p)
-    fillGap(record, at, p, h, 1, subcritical)
+    fillGap(record, at, 1, subcritical)
   } else if (side !== LIQUID && T > borderTemperature23(p)) {
     sidesOfBorder23(p)
-    fillGap(record, at, p, h, 3, subcritical)
-  } else fillField(record, at, p, h, subcritical)
+    fillGap(record, at, 3, subcritical)
+  } else fillField(record, at, subcritical)
   return Outcome.fine
 }
 
-/** Density and temperature of region 3 into `found`, from the record's state when it foretells them. */
-function solveDense(record: Float64Array, at: number, p: number, h: number, side: number): boolean {
+/** The field of region 3, started from the record's state where that foretells it. */
+function solveDense(record: Float64Array, at: number, side: number): boolean {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
   const liquidSide = side === LIQUID || (side === SUPERCRITICAL && onLiquidSide(p, h))
-  const T = foretold(record, at, p, h, 3)
-  if (T !== 0) {
+  sought[Sought.p] = p
+  sought[Sought.value] = h
+  if (record[at + atRegion] === 3) {
+    foretell(record, at, 3)
     const v =
-      (record[at + State.v] as number) +
-      (record[at + State.vp] as number) * (p - (record[at + State.p] as number)) +
-      (record[at + State.vh] as number) * (h - (record[at + State.h] as number))
-    if (region3AtEnthalpy(field, p, h, liquidSide, 1 / v, T)) {
+      (record[at + atV] as number) +
+      (record[at + atVp] as number) * (p - (record[at + atP] as number)) +
+      (record[at + atVh] as number) * (h - (record[at + atH] as number))
+    sought[Sought.rho] = 1 / v
+    sought[Sought.T] = asked[askGuess] as number
+    if (region3AtEnthalpy(field, liquidSide)) {
       if (side === SUPERCRITICAL) return true
       // A first guess from across the two-phase zone may settle there: only the own side counts.
-      const saturation = at + State.saturation
-      const v3 = 1 / (found[0] as number)
-      if (side === LIQUID && v3 <= (record[saturation + Saturation.vL] as number)) return true
-      if (side === VAPOUR && v3 >= (record[saturation + Saturation.vV] as number)) return true
+      const saturation = at + atSaturation
+      const v3 = 1 / (field[Field.rho] as number)
+      if (side === LIQUID && v3 <= (record[saturation + satVL] as number)) return true
+      if (side === VAPOUR && v3 >= (record[saturation + satVV] as number)) return true
     }
   }
-  return region3AtEnthalpy(field, p, h, liquidSide, 0, 0)
+  sought[Sought.rho] = 0
+  return region3AtEnthalpy(field, liquidSide)
 }
 
-/** Writes a state of region 3 from `field` and `found`. */
-function fillField(
-  record: Float64Array,
-  at: number,
-  p: number,
-  h: number,
-  subcritical: number,
-): void {
-  const v = 1 / (found[0] as number)
-  const T = found[1] as number
+/** Writes a state of region 3 from `field`. */
+function fillField(record: Float64Array, at: number, subcritical: number): void {
+  const v = 1 / (field[Field.rho] as number)
+  const T = field[Field.T] as number
   const pRho = field[Field.pRho] as number
   const pT = field[Field.pT] as number
   const hRho = field[Field.hRho] as number
   const hT = field[Field.hT] as number
   const share = 1 / (pRho * hT - pT * hRho)
   const sh = 1 / T
-  record[at + State.p] = p
-  record[at + State.h] = h
-  record[at + State.T] = T
-  record[at + State.s] = field[Field.s] as number
-  record[at + State.v] = v
-  record[at + State.Tp] = -hRho * share
-  record[at + State.Th] = pRho * share
-  record[at + State.sp] = -v * sh
-  record[at + State.sh] = sh
-  record[at + State.vp] = -v * v * hT * share
-  record[at + State.vh] = v * v * pT * share
-  record[at + State.region] = 3
-  dryness(record, at, h, subcritical)
+  record[at + atP] = asked[askP] as number
+  record[at + atH] = asked[askH] as number
+  record[at + atT] = T
+  record[at + atS] = field[Field.s] as number
+  record[at + atV] = v
+  record[at + atTp] = -hRho * share
+  record[at + atTh] = pRho * share
+  record[at + atSp] = -v * sh
+  record[at + atSh] = sh
+  record[at + atVp] = -v * v * hT * share
+  record[at + atVh] = v * v * pT * share
+  record[at + atRegion] = 3
+  dryness(record, at, subcritical)
 }
 
-function wet(record: Float64Array, at: number, p: number, h: number): number {
-  const saturation = at + State.saturation
-  dryness(record, at, h, 1)
-  const x = record[at + State.x] as number
-  const xp = record[at + State.xp] as number
-  const xh = record[at + State.xh] as number
-  const s = record[saturation + Saturation.sL] as number
-  const ds = (record[saturation + Saturation.sV] as number) - s
-  const sp = record[saturation + Saturation.sLp] as number
-  const v = record[saturation + Saturation.vL] as number
-  const dv = (record[saturation + Saturation.vV] as number) - v
-  const vp = record[saturation + Saturation.vLp] as number
-  record[at + State.p] = p
-  record[at + State.h] = h
-  record[at + State.T] = record[saturation + Saturation.T] as number
-  record[at + State.s] = s + x * ds
-  record[at + State.v] = v + x * dv
-  record[at + State.Tp] = record[saturation + Saturation.Tp] as number
-  record[at + State.Th] = 0
-  record[at + State.sp] = sp + x * ((record[saturation + Saturation.sVp] as number) - sp) + xp * ds
-  record[at + State.sh] = xh * ds
-  record[at + State.vp] = vp + x * ((record[saturation + Saturation.vVp] as number) - vp) + xp * dv
-  record[at + State.vh] = xh * dv
-  record[at + State.region] = 4
+function wet(record: Float64Array, at: number): number {
+  const saturation = at + atSaturation
+  dryness(record, at, 1)
+  const x = record[at + atX] as number
+  const xp = record[at + atXp] as number
+  const xh = record[at + atXh] as number
+  const s = record[saturation + satSL] as number
+  const ds = (record[saturation + satSV] as number) - s
+  const sp = record[saturation + satSLp] as number
+  const v = record[saturation + satVL] as number
+  const dv = (record[saturation + satVV] as number) - v
+  const vp = record[saturation + satVLp] as number
+  record[at + atP] = asked[askP] as number
+  record[at + atH] = asked[askH] as number
+  record[at + atT] = record[saturation + satT] as number
+  record[at + atS] = s + x * ds
+  record[at + atV] = v + x * dv
+  record[at + atTp] = record[saturation + satTp] as number
+  record[at + atTh] = 0
+  record[at + atSp] = sp + x * ((record[saturation + satSVp] as number) - sp) + xp * ds
+  record[at + atSh] = xh * ds
+  record[at + atVp] = vp + x * ((record[saturation + satVVp] as number) - vp) + xp * dv
+  record[at + atVh] = xh * dv
+  record[at + atRegion] = 4
   return Outcome.fine
 }

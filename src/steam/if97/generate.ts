@@ -4,6 +4,7 @@
  * coefficient rows; test/steam/unroll.ts writes them and a test holds the committed files against
  * the rows.
  */
+import { lowestSaturationPressure } from '../constants.ts'
 import {
   region1,
   region1TemperatureOfEnthalpy,
@@ -33,11 +34,12 @@ import {
 } from './rows/region3.ts'
 import { region5Ideal, region5Residual } from './rows/region5.ts'
 import type { Term } from './rows/term.ts'
+import { saturationTemperatureOf } from './saturation-line.ts'
 
 /** Lines of one function's body and the powers already there. */
 class Body {
   readonly lines: string[] = []
-  private readonly ladders = new Map<string, Set<number>>()
+  private readonly ladders = new Map<string, Map<number, number>>()
 
   say(line: string): void {
     this.lines.push(line)
@@ -60,19 +62,28 @@ class Body {
     this.ladder(reciprocal, negative)
   }
 
+  /** Each power from the two that are ready soonest: the depth of the products is what takes time. */
   private ladder(base: string, wanted: number[]): void {
-    const there = this.ladders.get(base) ?? new Set([1])
-    this.ladders.set(base, there)
+    const depths = this.ladders.get(base) ?? new Map([[1, 0]])
+    this.ladders.set(base, depths)
     const ensure = (e: number): void => {
-      if (there.has(e)) return
-      const ready = [...there].sort((x, y) => y - x)
-      let first = ready.find((x) => there.has(e - x))
-      if (first === undefined) {
-        first = ready.find((x) => x < e) as number
-        ensure(e - first)
+      if (depths.has(e)) return
+      let best: number | undefined
+      let least = Number.POSITIVE_INFINITY
+      for (const [first, depth] of depths) {
+        const second = depths.get(e - first)
+        if (second === undefined || Math.max(depth, second) >= least) continue
+        best = first
+        least = Math.max(depth, second)
       }
-      this.say(`const ${rung(base, e)} = ${rung(base, first)} * ${rung(base, e - first)}`)
-      there.add(e)
+      if (best === undefined) {
+        best = e >> 1
+        ensure(best)
+        ensure(e - best)
+        least = Math.max(depths.get(best) as number, depths.get(e - best) as number)
+      }
+      this.say(`const ${rung(base, e)} = ${rung(base, best)} * ${rung(base, e - best)}`)
+      depths.set(e, least + 1)
     }
     for (const e of [...wanted].sort((x, y) => x - y)) ensure(e)
   }
@@ -96,46 +107,48 @@ function scaled(factor: number, name: string): string {
   return `${factor} * ${name}`
 }
 
-/** An expression a + b + c of parts, with the signs drawn in. */
-function added(parts: string[]): string {
-  return parts.reduce((sum, part) =>
-    part.startsWith('-') ? `${sum} - ${part.slice(1)}` : `${sum} + ${part}`,
-  )
+function groupedBy(rows: readonly Term[], key: (row: Term) => number): Map<number, Term[]> {
+  const groups = new Map<number, Term[]>()
+  for (const row of rows) {
+    const group = groups.get(key(row))
+    if (group) group.push(row)
+    else groups.set(key(row), [row])
+  }
+  return groups
 }
 
 function byI(rows: readonly Term[]): Map<number, Term[]> {
-  const groups = new Map<number, Term[]>()
-  for (const row of rows) {
-    const group = groups.get(row.I)
-    if (group) group.push(row)
-    else groups.set(row.I, [row])
-  }
-  return groups
+  return groupedBy(rows, ({ I }) => I)
 }
 
 /** A running sum that starts with its first part. */
 class Sum {
   private started = false
-  private readonly name: string
   private readonly body: Body
+  private readonly as: string
 
-  constructor(body: Body, name: string) {
+  constructor(body: Body, as: string) {
     this.body = body
-    this.name = name
+    this.as = as
+  }
+
+  /** The sum's name; '' while it is empty. */
+  get name(): string {
+    return this.started ? this.as : ''
   }
 
   add(part: string): void {
     if (!this.started) {
-      this.body.say(`let ${this.name} = ${part}`)
+      this.body.say(`let ${this.as} = ${part}`)
       this.started = true
-    } else if (part.startsWith('-')) this.body.say(`${this.name} -= ${part.slice(1)}`)
-    else this.body.say(`${this.name} += ${part}`)
+    } else if (part.startsWith('-')) this.body.say(`${this.as} -= ${part.slice(1)}`)
+    else this.body.say(`${this.as} += ${part}`)
   }
 }
 
 /**
- * sum of n x^I y^J with its logarithmic derivatives, written into `f`: the value, x d/dx, x^2 d2/dx2,
- * y d/dy, xy d2/dxdy, y^2 d2/dy2 in the constants f, fx, fxx, fy, fxy, fyy of the body.
+ * sum of n x^I y^J with its logarithmic derivatives, in the names f, fx, fxx, fy, fxy, fyy of the body:
+ * the sums of t, I t, I^2 t, J t, I J t, J^2 t over the terms t. Terms of one I are summed first.
  */
 function sumWithSecondDerivatives(body: Body, rows: readonly Term[], x: string, y: string): void {
   body.powers(
@@ -153,14 +166,30 @@ function sumWithSecondDerivatives(body: Body, rows: readonly Term[], x: string, 
   const fxy = new Sum(body, 'fxy')
   const fyy = new Sum(body, 'fyy')
   for (const [I, group] of byI(rows)) {
-    const id = `${I}`.replace('-', 'm')
+    const id = named(I)
+    const [first] = group
+    if (group.length === 1 && first !== undefined && first.J !== 0 && I !== 0) {
+      body.say(`const t${id} = ${first.n} * ${powerName(x, I)} * ${powerName(y, first.J)}`)
+      body.say(`const u${id} = ${scaled(I, `t${id}`)}`)
+      body.say(`const w${id} = ${scaled(first.J, `t${id}`)}`)
+      f.add(`t${id}`)
+      fx.add(`u${id}`)
+      fxx.add(scaled(I, `u${id}`))
+      fy.add(`w${id}`)
+      fxy.add(scaled(first.J, `u${id}`))
+      fyy.add(scaled(first.J, `w${id}`))
+      continue
+    }
     const [zero, one, two] = groupSums(body, group, y, id)
     const times = (name: string): string => (I === 0 ? name : `${name} * ${powerName(x, I)}`)
     if (zero !== '') {
       body.say(`const p${id} = ${times(zero)}`)
       f.add(`p${id}`)
-      if (I !== 0) fx.add(scaled(I, `p${id}`))
-      if (I !== 0 && I !== 1) fxx.add(scaled(I * (I - 1), `p${id}`))
+      if (I !== 0) {
+        body.say(`const u${id} = ${scaled(I, `p${id}`)}`)
+        fx.add(`u${id}`)
+        fxx.add(scaled(I, `u${id}`))
+      }
     }
     if (one !== '') {
       body.say(`const q${id} = ${times(one)}`)
@@ -171,39 +200,43 @@ function sumWithSecondDerivatives(body: Body, rows: readonly Term[], x: string, 
   }
 }
 
-/** The sums over one I of t, J t and J(J - 1) t with t = n y^J; '' where a sum has no term. */
-function groupSums(body: Body, group: Term[], y: string, id: string): [string, string, string] {
-  const zero: string[] = []
-  const one: string[] = []
-  const two: string[] = []
+/** The sums over one I of t, J t and J^2 t with t = n y^J; '' where a sum has no term. */
+function groupSums(
+  body: Body,
+  group: readonly Term[],
+  y: string,
+  id: string,
+): [string, string, string] {
+  const sums = [new Sum(body, `a${id}`), new Sum(body, `b${id}`), new Sum(body, `c${id}`)] as const
   for (const { J, n } of group) {
     if (J === 0) {
-      zero.push(`${n}`)
+      sums[0].add(`${n}`)
       continue
     }
-    const t = `t${id}x${J}`.replace('-', 'm')
+    const t = `t${id}x${named(J)}`
     body.say(`const ${t} = ${n} * ${powerName(y, J)}`)
-    zero.push(t)
-    one.push(scaled(J, t))
-    if (J !== 1) two.push(scaled(J * (J - 1), t))
+    sums[0].add(t)
+    if (J === 1) {
+      sums[1].add(t)
+      sums[2].add(t)
+      continue
+    }
+    body.say(`const j${t} = ${scaled(J, t)}`)
+    sums[1].add(`j${t}`)
+    sums[2].add(scaled(J, `j${t}`))
   }
-  return [named(body, `a${id}`, zero), named(body, `b${id}`, one), named(body, `c${id}`, two)]
+  return [sums[0].name, sums[1].name, sums[2].name]
 }
 
-/** A sum of parts under a name, term by term; the part itself when there is only one. */
-function named(body: Body, name: string, parts: string[]): string {
-  if (parts.length === 0) return ''
-  if (parts.length === 1 && /^[a-z]\w*$/.test(parts[0] as string)) return parts[0] as string
-  if (added(parts).length <= 80) {
-    body.say(`const ${name} = ${added(parts)}`)
-    return name
-  }
-  const sum = new Sum(body, name)
-  for (const part of parts) sum.add(part)
-  return name
+/** A number as part of a name. */
+function named(value: number): string {
+  return `${value}`.replace('-', 'm')
 }
 
-/** The sums J t, J(J-1) t, J(J-1)(J-2) t over all rows: y d/dy to y^3 d3/dy3 as fy, fyy, fyyy. */
+/**
+ * The sums J t, J^2 t, J^3 t over all terms t = n x^I y^J, in the names fy, fyy, fyyy. Terms of one J
+ * are summed first.
+ */
 function sumWithSlopes(body: Body, rows: readonly Term[], x: string, y: string): void {
   const used = rows.filter((row) => row.J !== 0)
   body.powers(
@@ -217,27 +250,20 @@ function sumWithSlopes(body: Body, rows: readonly Term[], x: string, y: string):
   const fy = new Sum(body, 'fy')
   const fyy = new Sum(body, 'fyy')
   const fyyy = new Sum(body, 'fyyy')
-  for (const [I, group] of byI(used)) {
-    const id = `${I}`.replace('-', 'm')
-    const one: string[] = []
-    const two: string[] = []
-    const three: string[] = []
-    for (const { J, n } of group) {
-      const t = `t${id}x${J}`.replace('-', 'm')
-      body.say(`const ${t} = ${n * J} * ${powerName(y, J)}`)
-      one.push(t)
-      if (J !== 1) two.push(scaled(J - 1, t))
-      if (J !== 1 && J !== 2) three.push(scaled((J - 1) * (J - 2), t))
+  for (const [J, group] of groupedBy(used, ({ J }) => J)) {
+    const id = named(J)
+    const sum = new Sum(body, `a${id}`)
+    for (const { I, n } of group) sum.add(I === 0 ? `${n}` : `${n} * ${powerName(x, I)}`)
+    body.say(`const t${id} = ${sum.name} * ${powerName(y, J)}`)
+    if (J === 1) {
+      for (const sum of [fy, fyy, fyyy]) sum.add(`t${id}`)
+      continue
     }
-    const times = (name: string): string => (I === 0 ? name : `${name} * ${powerName(x, I)}`)
-    const names = [
-      named(body, `a${id}`, one),
-      named(body, `b${id}`, two),
-      named(body, `c${id}`, three),
-    ]
-    if (names[0]) fy.add(times(names[0]))
-    if (names[1]) fyy.add(times(names[1]))
-    if (names[2]) fyyy.add(times(names[2]))
+    body.say(`const u${id} = ${scaled(J, `t${id}`)}`)
+    body.say(`const w${id} = ${scaled(J, `u${id}`)}`)
+    fy.add(`u${id}`)
+    fyy.add(`w${id}`)
+    fyyy.add(scaled(J, `w${id}`))
   }
 }
 
@@ -253,43 +279,55 @@ function plainSum(body: Body, rows: readonly Term[], x: string, y: string): void
   )
   const f = new Sum(body, 'f')
   for (const [I, group] of byI(rows)) {
-    const parts = group.map(({ J, n }) => (J === 0 ? `${n}` : `${n} * ${powerName(y, J)}`))
-    const id = `${I}`.replace('-', 'm')
-    const name = named(body, `a${id}`, parts)
-    f.add(I === 0 ? name : `${name} * ${powerName(x, I)}`)
+    const sum = new Sum(body, `a${named(I)}`)
+    for (const { J, n } of group) sum.add(J === 0 ? `${n}` : `${n} * ${powerName(y, J)}`)
+    f.add(I === 0 ? sum.name : `${sum.name} * ${powerName(x, I)}`)
   }
 }
 
-/** The ideal part of regions 2 and 5 without ln pi: adds o, oy, oyy (y d/dy, y^2 d2/dy2). */
-function idealPart(body: Body, rows: readonly Term[], y: string, third: boolean): void {
+/**
+ * The ideal part of regions 2 and 5 without ln pi: o, oy, oyy, oyyy hold the sums of t, J t, J^2 t,
+ * J^3 t over t = n y^J; with `slopes` those of the slopes alone.
+ */
+function idealPart(body: Body, rows: readonly Term[], y: string, slopes: boolean): void {
   body.powers(
     y,
     rows.map((row) => row.J),
   )
-  const sums: string[][] = [[], [], [], []]
+  const [o, oy, oyy, oyyy] = ['o', 'oy', 'oyy', 'oyyy'].map((name) => new Sum(body, name)) as [
+    Sum,
+    Sum,
+    Sum,
+    Sum,
+  ]
   for (const { J, n } of rows) {
     if (J === 0) {
-      sums[0]?.push(`${n}`)
+      if (!slopes) o.add(`${n}`)
       continue
     }
-    const t = `o${J}`.replace('-', 'm')
+    const t = `o${named(J)}`
     body.say(`const ${t} = ${n} * ${powerName(y, J)}`)
-    sums[0]?.push(t)
-    sums[1]?.push(scaled(J, t))
-    if (J !== 1) sums[2]?.push(scaled(J * (J - 1), t))
-    if (J !== 1 && J !== 2) sums[3]?.push(scaled(J * (J - 1) * (J - 2), t))
+    if (!slopes) o.add(t)
+    let power = t
+    for (const [k, sum] of [oy, oyy, oyyy].entries()) {
+      if (k === 2 && !slopes) continue
+      if (J !== 1 && k < (slopes ? 2 : 1)) {
+        body.say(`const ${'jk'[k]}${t} = ${scaled(J, power)}`)
+        power = `${'jk'[k]}${t}`
+        sum.add(power)
+      } else sum.add(scaled(J, power))
+    }
   }
-  const names = ['o', 'oy', 'oyy', 'oyyy']
-  sums.forEach((parts, k) => {
-    if ((k === 0 && third) || (k === 3 && !third)) return
-    const sum = new Sum(body, names[k] as string)
-    for (const part of parts) sum.add(part)
-  })
 }
 
-function functionText(doc: string, head: string, body: Body): string {
+/** What every generated function works on: up to six outputs from slot 0, its inputs from slot 6. */
+const inputs = ['g[6]', 'g[7]', 'g[8]']
+
+function functionText(doc: string, name: string, names: readonly string[], body: Body): string {
   const comment = wrapped(doc)
-  return `${comment}\nexport function ${head} {\n${body.lines.map((l) => `  ${l}`).join('\n')}\n}\n`
+  const read = names.map((input, i) => `const ${input} = ${inputs[i]} as number`)
+  const lines = [...read, ...body.lines].map((line) => `  ${line}`)
+  return `${comment}\nexport function ${name}(g: Float64Array): void {\n${lines.join('\n')}\n}\n`
 }
 
 function wrapped(doc: string): string {
@@ -333,24 +371,26 @@ function region1File(): string {
   body.say('const ry = 1 / y')
   body.say('g[0] = f')
   body.say('g[1] = -fx * rx')
-  body.say('g[2] = fxx * rx * rx')
+  body.say('g[2] = (fxx - fx) * rx * rx')
   body.say('g[3] = fy * ry')
   body.say('g[4] = -fxy * rx * ry')
-  body.say('g[5] = fyy * ry * ry')
+  body.say('g[5] = (fyy - fy) * ry * ry')
   text += functionText(
-    'gamma of region 1 and its derivatives, with x = 7.1 - pi and y = tau - 1.222: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.',
-    'region1Potential(g: Float64Array, x: number, y: number): void',
+    'gamma of region 1 and its derivatives, from x = 7.1 - pi and y = tau - 1.222: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.',
+    'region1Potential',
+    ['x', 'y'],
     settled(body),
   )
   body = new Body()
   sumWithSlopes(body, region1, 'x', 'y')
   body.say('const ry = 1 / y')
   body.say('g[0] = fy * ry')
-  body.say('g[1] = fyy * ry * ry')
-  body.say('g[2] = fyyy * ry * ry * ry')
+  body.say('g[1] = (fyy - fy) * ry * ry')
+  body.say('g[2] = (fyyy - 3 * fyy + 2 * fy) * ry * ry * ry')
   text += `\n${functionText(
     'The first three derivatives to tau of gamma of region 1, with x = 7.1 - pi and y = tau - 1.222.',
-    'region1Slopes(g: Float64Array, x: number, y: number): void',
+    'region1Slopes',
+    ['x', 'y'],
     settled(body),
   )}`
   text += `\n${backward('region1TemperatureFromEnthalpy', 'T / K of region 1, x = p / 1 MPa, y = h / 2500 kJ/kg + 1.', region1TemperatureOfEnthalpy)}`
@@ -361,44 +401,86 @@ function region1File(): string {
 function backward(name: string, doc: string, rows: readonly Term[]): string {
   const body = new Body()
   plainSum(body, rows, 'x', 'y')
-  body.say('return f')
-  return functionText(doc, `${name}(x: number, y: number): number`, settled(body))
+  body.say('g[0] = f')
+  return functionText(doc, name, ['x', 'y'], settled(body))
 }
 
-function region2File(): string {
-  let text = header('IAPWS R7-97(2012), Eqs. (16), (17) and (22) to (27)')
-  let body = new Body()
+/** Below this pressure (MPa) the terms of region 2 that stay under round-off are left out. */
+const lowPressure = 0.3
+
+/**
+ * The terms of region 2 that matter up to a pressure (MPa): those that reach 1e-16 of any derivative of
+ * gamma that a state is made of. A term is largest along the saturation line, where tau is.
+ */
+function termsBelow(pressure: number): Term[] {
+  const most = Math.log(pressure * 1e6)
+  const least = Math.log(lowestSaturationPressure)
+  return region2Residual.filter(({ I, J, n }) => {
+    for (let i = 0; i <= 500; i++) {
+      const p = Math.exp(least + ((most - least) * i) / 500)
+      const tau = 540 / saturationTemperatureOf(p)
+      const y = tau - 0.5
+      const t = Math.abs(n * (p * 1e-6) ** I * y ** J)
+      // gamma_tau is above 4 and gamma_tau tau near -4 there; pi gamma_pi and pi^2 gamma_pi pi near 1.
+      const inTau = Math.max((t * J) / y, (t * J * (J - 1)) / (y * y)) / 4
+      const inPi = Math.max(t * I * I, (t * I * J * tau) / y)
+      if (Math.max(inTau, inPi) > 1e-16) return true
+    }
+    return false
+  })
+}
+
+function potential2(name: string, rows: readonly Term[], doc: string): string {
+  const body = new Body()
   body.say('const y = tau - 0.5')
-  sumWithSecondDerivatives(body, region2Residual, 'x', 'y')
+  sumWithSecondDerivatives(body, rows, 'x', 'y')
   idealPart(body, region2Ideal, 'tau', false)
   body.say('const rx = 1 / x')
   body.say('const ry = 1 / y')
   body.say('const rt = 1 / tau')
   body.say('g[0] = o + f + logarithm')
   body.say('g[1] = (1 + fx) * rx')
-  body.say('g[2] = (fxx - 1) * rx * rx')
+  body.say('g[2] = (fxx - fx - 1) * rx * rx')
   body.say('g[3] = oy * rt + fy * ry')
   body.say('g[4] = fxy * rx * ry')
-  body.say('g[5] = oyy * rt * rt + fyy * ry * ry')
-  text += functionText(
-    'gamma of region 2 and its derivatives, with x = pi and logarithm = ln pi: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.',
-    'region2Potential(g: Float64Array, x: number, tau: number, logarithm: number): void',
+  body.say('g[5] = (oyy - oy) * rt * rt + (fyy - fy) * ry * ry')
+  return functionText(
+    `gamma of region 2 and its derivatives${doc}, from x = pi and logarithm = ln pi: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.`,
+    name,
+    ['x', 'tau', 'logarithm'],
     settled(body),
   )
-  body = new Body()
+}
+
+function slopes2(name: string, rows: readonly Term[], doc: string): string {
+  const body = new Body()
   body.say('const y = tau - 0.5')
-  sumWithSlopes(body, region2Residual, 'x', 'y')
+  sumWithSlopes(body, rows, 'x', 'y')
   idealPart(body, region2Ideal, 'tau', true)
   body.say('const ry = 1 / y')
   body.say('const rt = 1 / tau')
   body.say('g[0] = oy * rt + fy * ry')
-  body.say('g[1] = oyy * rt * rt + fyy * ry * ry')
-  body.say('g[2] = oyyy * rt * rt * rt + fyyy * ry * ry * ry')
-  text += `\n${functionText(
-    'The first three derivatives to tau of gamma of region 2, with x = pi.',
-    'region2Slopes(g: Float64Array, x: number, tau: number): void',
+  body.say('g[1] = (oyy - oy) * rt * rt + (fyy - fy) * ry * ry')
+  body.say('const oThird = oyyy - 3 * oyy + 2 * oy')
+  body.say('const fThird = fyyy - 3 * fyy + 2 * fy')
+  body.say('g[2] = oThird * rt * rt * rt + fThird * ry * ry * ry')
+  return functionText(
+    `The first three derivatives to tau of gamma of region 2${doc}, with x = pi.`,
+    name,
+    ['x', 'tau'],
     settled(body),
-  )}`
+  )
+}
+
+function region2File(): string {
+  const low = termsBelow(lowPressure)
+  const below = ` below ${lowPressure} MPa, without the terms under round-off there`
+  let text = header('IAPWS R7-97(2012), Eqs. (16), (17) and (22) to (27)')
+  text += `/** pi below which the shorter sums hold. */\nexport const lowPressure2 = ${lowPressure}\n\n`
+  text += potential2('region2Potential', region2Residual, '')
+  text += `\n${potential2('region2LowPotential', low, below)}`
+  text += `\n${slopes2('region2Slopes', region2Residual, '')}`
+  text += `\n${slopes2('region2LowSlopes', low, below)}`
   text += `\n${backward('region2aTemperatureFromEnthalpy', 'T / K of subregion 2a, x = p / 1 MPa, y = h / 2000 kJ/kg - 2.1.', region2aTemperatureOfEnthalpy)}`
   text += `\n${backward('region2bTemperatureFromEnthalpy', 'T / K of subregion 2b, x = p / 1 MPa - 2, y = h / 2000 kJ/kg - 2.6.', region2bTemperatureOfEnthalpy)}`
   text += `\n${backward('region2cTemperatureFromEnthalpy', 'T / K of subregion 2c, x = p / 1 MPa + 25, y = h / 2000 kJ/kg - 1.8.', region2cTemperatureOfEnthalpy)}`
@@ -417,13 +499,14 @@ function region3File(): string {
   body.say('const ry = 1 / y')
   body.say(`g[0] = ${region3LogDelta} * logarithm + f`)
   body.say(`g[1] = (${region3LogDelta} + fx) * rx`)
-  body.say(`g[2] = (fxx - ${region3LogDelta}) * rx * rx`)
+  body.say(`g[2] = (fxx - fx - ${region3LogDelta}) * rx * rx`)
   body.say('g[3] = fy * ry')
   body.say('g[4] = fxy * rx * ry')
-  body.say('g[5] = fyy * ry * ry')
+  body.say('g[5] = (fyy - fy) * ry * ry')
   text += functionText(
     'phi of region 3 and its derivatives, with x = delta, y = tau and logarithm = ln delta: writes phi, d/ddelta, d2/ddelta2, d/dtau, d2/ddeltadtau, d2/dtau2.',
-    'region3Potential(g: Float64Array, x: number, y: number, logarithm: number): void',
+    'region3Potential',
+    ['x', 'y', 'logarithm'],
     settled(body),
   )
   const rows: [string, string, readonly Term[]][] = [
@@ -481,13 +564,14 @@ function region5File(): string {
   body.say('const ry = 1 / y')
   body.say('g[0] = o + f + logarithm')
   body.say('g[1] = (1 + fx) * rx')
-  body.say('g[2] = (fxx - 1) * rx * rx')
+  body.say('g[2] = (fxx - fx - 1) * rx * rx')
   body.say('g[3] = (oy + fy) * ry')
   body.say('g[4] = fxy * rx * ry')
-  body.say('g[5] = (oyy + fyy) * ry * ry')
+  body.say('g[5] = (oyy + fyy - oy - fy) * ry * ry')
   text += functionText(
     'gamma of region 5 and its derivatives, with x = pi, y = tau and logarithm = ln pi: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.',
-    'region5Potential(g: Float64Array, x: number, y: number, logarithm: number): void',
+    'region5Potential',
+    ['x', 'y', 'logarithm'],
     settled(body),
   )
   return text

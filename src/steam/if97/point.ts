@@ -5,47 +5,140 @@
  */
 import { gasConstant } from '../constants.ts'
 import { region1Potential } from './unrolled-region1.ts'
-import { region2Potential } from './unrolled-region2.ts'
+import { lowPressure2, region2LowPotential, region2Potential } from './unrolled-region2.ts'
 import { region5Potential } from './unrolled-region5.ts'
 
-/** Slots of a point. */
-export const Point = { h: 0, s: 1, v: 2, cp: 3, vT: 4, vp: 5, hp: 6 } as const
-export const POINT_SIZE = 7
+/**
+ * Slots of a point; p (Pa), T (K), the reduced inverse temperature tau and,
+ * for steam, ln(p / 1 MPa) are its inputs.
+ */
+export const Point = {
+  h: 0,
+  s: 1,
+  v: 2,
+  cp: 3,
+  vT: 4,
+  vp: 5,
+  hp: 6,
+  p: 7,
+  T: 8,
+  tau: 9,
+  log: 10,
+} as const
+export const POINT_SIZE = 11
 
-const g = new Float64Array(6)
+// Inputs and outputs pass through arrays: a number passed to or from a function that is not inlined
+// would be allocated.
+const g = new Float64Array(9)
+// A constant of this module: an imported binding is looked up at each use.
+const R = gasConstant
+const lowPressure = lowPressure2
 
-/** Fills a point from gamma's derivatives in `g` with the reducing temperature and pressure. */
-function fromGibbs(point: Float64Array, T: number, Tstar: number, pstar: number): void {
-  const tau = Tstar / T
+/** R T*, R / p*, 1 / p* and T* of a region's reducing quantities. */
+function scalesOf(Tstar: number, pstar: number): Float64Array {
+  return Float64Array.of(R * Tstar, R / pstar, 1 / pstar, Tstar)
+}
+const scales1 = scalesOf(1386, 16.53e6)
+const scales2 = scalesOf(540, 1e6)
+const scales5 = scalesOf(1000, 1e6)
+
+/** Fills a point from gamma's derivatives in `g`. */
+function fromGibbs(point: Float64Array, scales: Float64Array): void {
+  const T = point[8] as number
+  const perVolume = scales[1] as number
+  const tau = point[9] as number
   const gTau = g[3] as number
   const gPi = g[1] as number
-  const volumeScale = gasConstant / pstar
-  point[0] = gasConstant * Tstar * gTau
-  point[1] = gasConstant * (tau * gTau - (g[0] as number))
-  point[2] = volumeScale * T * gPi
-  point[3] = -gasConstant * tau * tau * (g[5] as number)
-  point[4] = volumeScale * (gPi - tau * (g[4] as number))
-  point[5] = (volumeScale * T * (g[2] as number)) / pstar
+  const gPiTau = g[4] as number
+  const volumeT = perVolume * T
+  point[0] = (scales[0] as number) * gTau
+  point[1] = R * (tau * gTau - (g[0] as number))
+  point[2] = volumeT * gPi
+  point[3] = -R * tau * tau * (g[5] as number)
+  point[4] = perVolume * (gPi - tau * gPiTau)
+  point[5] = volumeT * (scales[2] as number) * (g[2] as number)
   // v - T dv/dT without the cancellation that it has in a thin gas
-  point[6] = volumeScale * Tstar * (g[4] as number)
+  point[6] = perVolume * (scales[3] as number) * gPiTau
+}
+
+function region1At(point: Float64Array): void {
+  g[6] = 7.1 - (point[7] as number) * (scales1[2] as number)
+  g[7] = (point[9] as number) - 1.222
+  region1Potential(g)
+  fromGibbs(point, scales1)
+}
+
+function region2At(point: Float64Array): void {
+  const pi = (point[7] as number) * 1e-6
+  g[6] = pi
+  g[7] = point[9] as number
+  g[8] = point[10] as number
+  if (pi < lowPressure) region2LowPotential(g)
+  else region2Potential(g)
+  fromGibbs(point, scales2)
+}
+
+function region5At(point: Float64Array): void {
+  g[6] = (point[7] as number) * 1e-6
+  g[7] = point[9] as number
+  g[8] = point[10] as number
+  region5Potential(g)
+  fromGibbs(point, scales5)
 }
 
 /** Region 1 at p (Pa) and T (K). */
 export function region1Point(point: Float64Array, p: number, T: number): void {
-  region1Potential(g, 7.1 - p / 16.53e6, 1386 / T - 1.222)
-  fromGibbs(point, T, 1386, 16.53e6)
+  point[7] = p
+  point[8] = T
+  point[9] = 1386 / T
+  region1At(point)
 }
 
 /** Region 2 at p (Pa) and T (K). */
 export function region2Point(point: Float64Array, p: number, T: number): void {
-  const pi = p * 1e-6
-  region2Potential(g, pi, 540 / T, Math.log(pi))
-  fromGibbs(point, T, 540, 1e6)
+  point[7] = p
+  point[8] = T
+  point[9] = 540 / T
+  point[10] = Math.log(p * 1e-6)
+  region2At(point)
 }
 
 /** Region 5 at p (Pa) and T (K). */
 export function region5Point(point: Float64Array, p: number, T: number): void {
-  const pi = p * 1e-6
-  region5Potential(g, pi, 1000 / T, Math.log(pi))
-  fromGibbs(point, T, 1000, 1e6)
+  point[7] = p
+  point[8] = T
+  point[9] = 1000 / T
+  point[10] = Math.log(p * 1e-6)
+  region5At(point)
+}
+
+/** Region 1 at p (Pa) and tau = 1386 K / T. */
+export function region1PointOfTau(point: Float64Array, p: number, tau: number): void {
+  point[7] = p
+  point[8] = 1386 / tau
+  point[9] = tau
+  region1At(point)
+}
+
+/** Region 2 at p (Pa), tau = 540 K / T and ln(p / 1 MPa). */
+export function region2PointOfTau(point: Float64Array, p: number, tau: number, log: number): void {
+  point[7] = p
+  point[8] = 540 / tau
+  point[9] = tau
+  point[10] = log
+  region2At(point)
+}
+
+/**
+ * Moves a point by the last, tiny step of T that brings its enthalpy to h (J/kg) to round-off: T, s and v
+ * follow to first order, the derivatives stay.
+ */
+export function settlePoint(point: Float64Array, h: number): void {
+  const T = point[8] as number
+  const off = h - (point[0] as number)
+  const step = off / (point[3] as number)
+  point[0] = h
+  point[1] = (point[1] as number) + off / T
+  point[2] = (point[2] as number) + step * (point[4] as number)
+  point[8] = T + step
 }

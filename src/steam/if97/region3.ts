@@ -18,27 +18,46 @@ import {
   region3Potential,
 } from './unrolled-region3.ts'
 
-/** Slots of a field. */
-export const Field = { p: 0, h: 1, s: 2, pRho: 3, pT: 4, hRho: 5, hT: 6, cv: 7 } as const
-export const FIELD_SIZE = 8
+/** Slots of a field; rho (kg/m3) and T (K) are its inputs. */
+export const Field = {
+  p: 0,
+  h: 1,
+  s: 2,
+  pRho: 3,
+  pT: 4,
+  hRho: 5,
+  hT: 6,
+  cv: 7,
+  rho: 8,
+  T: 9,
+} as const
+export const FIELD_SIZE = 10
 
-const g = new Float64Array(6)
+const g = new Float64Array(9)
+// Constants of this module: an imported binding is looked up at each use.
+const R = gasConstant
+const rhoC = criticalDensity
+const TC = criticalTemperature
 
-/** The field at a density (kg/m3) and a temperature (K). */
-export function region3Field(field: Float64Array, rho: number, T: number): void {
-  const delta = rho / criticalDensity
-  const tau = criticalTemperature / T
-  region3Potential(g, delta, tau, Math.log(delta))
+function fieldAt(field: Float64Array): void {
+  const rho = field[8] as number
+  const T = field[9] as number
+  const delta = rho / rhoC
+  const tau = TC / T
+  g[6] = delta
+  g[7] = tau
+  g[8] = Math.log(delta)
+  region3Potential(g)
   const dPhi = delta * (g[1] as number)
   const tPhi = tau * (g[3] as number)
   const dtPhi = delta * tau * (g[4] as number)
-  const rt = gasConstant * T
-  const cv = -gasConstant * tau * tau * (g[5] as number)
+  const rt = R * T
+  const cv = -R * tau * tau * (g[5] as number)
   const pRho = rt * (2 * dPhi + delta * delta * (g[2] as number))
-  const pT = rho * gasConstant * (dPhi - dtPhi)
+  const pT = rho * R * (dPhi - dtPhi)
   field[0] = rho * rt * dPhi
   field[1] = rt * (tPhi + dPhi)
-  field[2] = gasConstant * (tPhi - (g[0] as number))
+  field[2] = R * (tPhi - (g[0] as number))
   field[3] = pRho
   field[4] = pT
   field[5] = (pRho - (T * pT) / rho) / rho
@@ -46,121 +65,142 @@ export function region3Field(field: Float64Array, rho: number, T: number): void 
   field[7] = cv
 }
 
+/** The field at a density (kg/m3) and a temperature (K). */
+export function region3Field(field: Float64Array, rho: number, T: number): void {
+  field[8] = rho
+  field[9] = T
+  fieldAt(field)
+}
+
 /** Least dp/drho, Pa m3/kg, that partials at constant T divide by: it is 0 at the critical point. */
 const leastSlope = 1e-6
 
-/** Turns a field at rho and T into a point (h, s, v, cp, dv/dT, dv/dp, dh/dp). */
-export function pointOfField(
-  point: Float64Array,
-  field: Float64Array,
-  rho: number,
-  T: number,
-): void {
-  const pRho = Math.max(field[Field.pRho] as number, leastSlope)
-  const v = 1 / rho
-  const pT = field[Field.pT] as number
+// Slots and limits as constants of this module: an imported binding is looked up at each use.
+const {
+  T: atT,
+  pRho: atPRho,
+  rho: atRho,
+  pT: atPT,
+  h: atH,
+  s: atS,
+  cv: atCv,
+  p: atP,
+  hRho: atHRho,
+  hT: atHT,
+} = Field
+const { h: ptH, s: ptS, v: ptV, cp: ptCp, vT: ptVT, vp: ptVp, hp: ptHp, p: ptP, T: ptT } = Point
+
+/** Turns a field into a point (h, s, v, cp, dv/dT, dv/dp, dh/dp). */
+export function pointOfField(point: Float64Array, field: Float64Array): void {
+  const T = field[atT] as number
+  const pRho = Math.max(field[atPRho] as number, leastSlope)
+  const v = 1 / (field[atRho] as number)
+  const pT = field[atPT] as number
   const vT = (v * v * pT) / pRho
-  point[Point.h] = field[Field.h] as number
-  point[Point.s] = field[Field.s] as number
-  point[Point.v] = v
-  point[Point.cp] = (field[Field.cv] as number) + T * pT * vT
-  point[Point.vT] = vT
-  point[Point.vp] = (-v * v) / pRho
-  point[Point.hp] = v - T * vT
+  point[ptH] = field[atH] as number
+  point[ptS] = field[atS] as number
+  point[ptV] = v
+  point[ptCp] = (field[atCv] as number) + T * pT * vT
+  point[ptVT] = vT
+  point[ptVp] = (-v * v) / pRho
+  point[ptHp] = v - T * vT
+  point[ptP] = field[atP] as number
+  point[ptT] = T
 }
 
-/** Density and temperature, the answer of the solvers in two unknowns. */
-export const found = new Float64Array(2)
+/**
+ * What a state of region 3 is sought from: p (Pa), h (J/kg) or s (J/(kg K)), and a guess of rho and T (rho
+ * 0: the backward equations). The answer is left in the field.
+ */
+export const Sought = { p: 0, value: 1, rho: 2, T: 3 } as const
+export const sought = new Float64Array(4)
 
 /** Step (as part of rho and T) after which the error left is round-off: Newton squares it. */
 const settled = 1e-8
 const MOST_STEPS = 40
 
-const scratch = new Float64Array(FIELD_SIZE)
-
 /**
- * rho and T of p (Pa) and h (J/kg), left in `found`; `field` then holds the field there. The guess is
- * rho and T; rho 0 starts from the backward equations. Answers whether it converged.
+ * The field at `sought` p and h. `liquidSide` chooses subregion 3a of the backward equations. Answers
+ * whether it converged.
  */
-export function region3AtEnthalpy(
-  field: Float64Array,
-  p: number,
-  h: number,
-  liquidSide: boolean,
-  rhoGuess: number,
-  TGuess: number,
-): boolean {
-  let rho = rhoGuess
-  let T = TGuess
+export function region3AtEnthalpy(field: Float64Array, liquidSide: boolean): boolean {
+  const rho = sought[Sought.rho] as number
+  const T = sought[Sought.T] as number
   if (!(rho > 50 && rho < 900 && T > 600 && T < 900)) {
-    const pi = p * 1e-8
+    const pi = (sought[Sought.p] as number) * 1e-8
+    const h = sought[Sought.value] as number
     if (liquidSide) {
-      rho = 1 / (0.0028 * region3aVolumeFromEnthalpy(pi + 0.128, h / 2.1e6 - 0.727))
-      T = 760 * region3aTemperatureFromEnthalpy(pi + 0.24, h / 2.3e6 - 0.615)
+      backward(pi + 0.128, h / 2.1e6 - 0.727)
+      region3aVolumeFromEnthalpy(g)
+      sought[Sought.rho] = 1 / (0.0028 * (g[0] as number))
+      backward(pi + 0.24, h / 2.3e6 - 0.615)
+      region3aTemperatureFromEnthalpy(g)
+      sought[Sought.T] = 760 * (g[0] as number)
     } else {
-      rho = 1 / (0.0088 * region3bVolumeFromEnthalpy(pi + 0.0661, h / 2.8e6 - 0.72))
-      T = 860 * region3bTemperatureFromEnthalpy(pi + 0.298, h / 2.8e6 - 0.72)
+      backward(pi + 0.0661, h / 2.8e6 - 0.72)
+      region3bVolumeFromEnthalpy(g)
+      sought[Sought.rho] = 1 / (0.0088 * (g[0] as number))
+      backward(pi + 0.298, h / 2.8e6 - 0.72)
+      region3bTemperatureFromEnthalpy(g)
+      sought[Sought.T] = 860 * (g[0] as number)
     }
   }
-  for (let i = 0; i < MOST_STEPS; i++) {
-    region3Field(field, rho, T)
-    const pRho = field[Field.pRho] as number
-    const pT = field[Field.pT] as number
-    const hRho = field[Field.hRho] as number
-    const hT = field[Field.hT] as number
-    const offP = (field[Field.p] as number) - p
-    const offH = (field[Field.h] as number) - h
-    const det = pRho * hT - pT * hRho
-    const dRho = (offP * hT - offH * pT) / det
-    const dT = (offH * pRho - offP * hRho) / det
-    const factor = Math.min(1, (0.1 * rho) / Math.abs(dRho), 30 / Math.abs(dT))
-    rho -= factor * dRho
-    T -= factor * dT
-    if (Math.abs(dRho) < settled * rho && Math.abs(dT) < settled * T) {
-      region3Field(field, rho, T)
-      found[0] = rho
-      found[1] = T
-      return true
-    }
-  }
-  return false
+  return closeIn(field, atH)
 }
 
-/** rho and T of p (Pa) and s (J/(kg K)), as `region3AtEnthalpy`. */
-export function region3AtEntropy(
-  field: Float64Array,
-  p: number,
-  s: number,
-  liquidSide: boolean,
-): boolean {
-  const pi = p * 1e-8
-  let rho: number
-  let T: number
+/** The field at `sought` p and s, as `region3AtEnthalpy`. */
+export function region3AtEntropy(field: Float64Array, liquidSide: boolean): boolean {
+  const pi = (sought[Sought.p] as number) * 1e-8
+  const s = sought[Sought.value] as number
   if (liquidSide) {
-    rho = 1 / (0.0028 * region3aVolumeFromEntropy(pi + 0.187, s / 4.4e3 - 0.755))
-    T = 760 * region3aTemperatureFromEntropy(pi + 0.24, s / 4.4e3 - 0.703)
+    backward(pi + 0.187, s / 4.4e3 - 0.755)
+    region3aVolumeFromEntropy(g)
+    sought[Sought.rho] = 1 / (0.0028 * (g[0] as number))
+    backward(pi + 0.24, s / 4.4e3 - 0.703)
+    region3aTemperatureFromEntropy(g)
+    sought[Sought.T] = 760 * (g[0] as number)
   } else {
-    rho = 1 / (0.0088 * region3bVolumeFromEntropy(pi + 0.298, s / 5.3e3 - 0.816))
-    T = 860 * region3bTemperatureFromEntropy(pi + 0.76, s / 5.3e3 - 0.818)
+    backward(pi + 0.298, s / 5.3e3 - 0.816)
+    region3bVolumeFromEntropy(g)
+    sought[Sought.rho] = 1 / (0.0088 * (g[0] as number))
+    backward(pi + 0.76, s / 5.3e3 - 0.818)
+    region3bTemperatureFromEntropy(g)
+    sought[Sought.T] = 860 * (g[0] as number)
   }
+  return closeIn(field, atS)
+}
+
+function backward(x: number, y: number): void {
+  g[6] = x
+  g[7] = y
+}
+
+/** Newton's steps in rho and T towards p and a second property, whose slot of the field is given. */
+function closeIn(field: Float64Array, slot: number): boolean {
+  const p = sought[Sought.p] as number
+  const value = sought[Sought.value] as number
+  let rho = sought[Sought.rho] as number
+  let T = sought[Sought.T] as number
   for (let i = 0; i < MOST_STEPS; i++) {
     region3Field(field, rho, T)
-    const pRho = field[Field.pRho] as number
-    const pT = field[Field.pT] as number
-    const sRho = -pT / (rho * rho)
-    const sT = (field[Field.cv] as number) / T
-    const offP = (field[Field.p] as number) - p
-    const offS = (field[Field.s] as number) - s
-    const det = pRho * sT - pT * sRho
-    const dRho = (offP * sT - offS * pT) / det
-    const dT = (offS * pRho - offP * sRho) / det
-    const factor = Math.min(1, (0.1 * rho) / Math.abs(dRho), 30 / Math.abs(dT))
+    const pRho = field[atPRho] as number
+    const pT = field[atPT] as number
+    const toRho = slot === atH ? (field[atHRho] as number) : -pT / (rho * rho)
+    const toT = slot === atH ? (field[atHT] as number) : (field[atCv] as number) / T
+    const offP = (field[atP] as number) - p
+    const off = (field[slot] as number) - value
+    const share = 1 / (pRho * toT - pT * toRho)
+    const dRho = (offP * toT - off * pT) * share
+    const dT = (off * pRho - offP * toRho) * share
+    const sizeRho = Math.abs(dRho)
+    const sizeT = Math.abs(dT)
+    let factor = 1
+    if (sizeRho > 0.1 * rho) factor = (0.1 * rho) / sizeRho
+    if (factor * sizeT > 30) factor = 30 / sizeT
     rho -= factor * dRho
     T -= factor * dT
-    if (Math.abs(dRho) < settled * rho && Math.abs(dT) < settled * T) {
+    if (sizeRho < settled * rho && sizeT < settled * T) {
       region3Field(field, rho, T)
-      found[0] = rho
-      found[1] = T
       return true
     }
   }
@@ -184,10 +224,10 @@ export function region3Density(
   let rho = guess > low && guess < high ? guess : 0.5 * (low + high)
   for (let i = 0; i < 200; i++) {
     region3Field(field, rho, T)
-    const off = (field[Field.p] as number) - p
+    const off = (field[atP] as number) - p
     if (off < 0) below = rho
     else above = rho
-    const step = off / (field[Field.pRho] as number)
+    const step = off / (field[atPRho] as number)
     if (Math.abs(step) < 1e-14 * rho) break
     let next = rho - step
     if (!(next >= below && next <= above)) next = 0.5 * (below + above)
@@ -209,7 +249,7 @@ export function region3Temperature(
   let T = 0.5 * (low + high)
   for (let i = 0; i < MOST_STEPS; i++) {
     region3Field(field, rho, T)
-    const step = ((field[Field.p] as number) - p) / (field[Field.pT] as number)
+    const step = ((field[atP] as number) - p) / (field[atPT] as number)
     T = Math.min(high + 50, Math.max(low - 50, T - step))
     if (Math.abs(step) < 1e-10 * T) break
   }
@@ -238,7 +278,7 @@ const vapourFit = [
 function fitted(z: number, coefficients: readonly number[]): number {
   let sum = 0
   for (let i = coefficients.length - 1; i >= 0; i--) sum = sum * z + (coefficients[i] as number)
-  return criticalDensity + z * sum
+  return rhoC + z * sum
 }
 
 /**
@@ -258,17 +298,15 @@ export function region3SaturatedDensity(
   let last = Number.POSITIVE_INFINITY
   for (let i = 0; i < MOST_STEPS; i++) {
     region3Field(field, rho, T)
-    const step = ((field[Field.p] as number) - p) / (field[Field.pRho] as number)
+    const step = ((field[atP] as number) - p) / (field[atPRho] as number)
     const size = Math.abs(step)
     // Round-off reached: steps no longer shrink.
     if (i > 3 && size >= last) break
     last = size
     rho -= step
-    if (size < 1e-14 * rho) break
+    // Newton squares the error as part of the distance to the critical density.
+    if (size < 1e-8 * Math.abs(rho - rhoC)) break
   }
   region3Field(field, rho, T)
   return rho
 }
-
-/** The field in use by callers that keep none of their own. */
-export const region3Scratch: Float64Array = scratch

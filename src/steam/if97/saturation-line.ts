@@ -41,3 +41,31 @@ export function saturationSlope(p: number, T: number): number {
   const thetaToT = 1 - n9 / (apart * apart)
   return (-toBeta / (toTheta * thetaToT)) * (beta / (4 * p))
 }
+
+/**
+ * T (K) and dT/dp (K/Pa) of a pressure in Pa, from slot `at` of an array into the slots given: Eq. (31) and
+ * the slope of the implicit equation in one go.
+ */
+export function saturationLine(
+  record: Float64Array,
+  at: number,
+  temperatureSlot: number,
+  slopeSlot: number,
+): void {
+  const p = record[at] as number
+  const beta2 = Math.sqrt(p * 1e-6)
+  const beta = Math.sqrt(beta2)
+  const e = beta2 + n3 * beta + n6
+  const f = n1 * beta2 + n4 * beta + n7
+  const g = n2 * beta2 + n5 * beta + n8
+  const root = Math.sqrt(f * f - 4 * e * g)
+  const d = (2 * g) / (-f - root)
+  const sum = n10 + d
+  const T = 0.5 * (sum - Math.sqrt(sum * sum - 4 * (n9 + n10 * d)))
+  // d is theta: e theta^2 + f theta + g = 0, and its derivative to theta is the root.
+  const toBeta = d * (d * (2 * beta + n3) + 2 * n1 * beta + n4) + 2 * n2 * beta + n5
+  const apart = T - n10
+  const thetaToT = 1 - n9 / (apart * apart)
+  record[temperatureSlot] = T
+  record[slopeSlot] = (-toBeta * beta) / (4 * p * root * thetaToT)
+}
