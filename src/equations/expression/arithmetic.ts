@@ -169,6 +169,7 @@ const logarithmOperation: Operation = {
   evaluate(tape, row) {
     const k = tape.first[row]!
     const a = tape.values[tape.operands[k]!]!
+    if (a === 0) return Outcome.unbounded
     if (!(a > 0)) return Outcome.outsideDomain
     tape.values[tape.slotOf(row)] = Math.log(a)
     tape.partials[k] = 1 / a
