@@ -132,20 +132,24 @@ function curveInOrder(curve: Curve): unknown {
 
 const widest = 100
 
-/** JSON, an object or list on one line where it fits. Keys without a value are left out. */
-function written(value: unknown, indent: string): string {
+/**
+ * JSON, an object or list on one line where it fits. Keys without a value are left out. `before`: the
+ * characters that stand before it on its line.
+ */
+function written(value: unknown, indent: string, before = indent.length): string {
   const line = onOneLine(value)
-  if (line.length + indent.length <= widest || typeof value !== 'object' || value === null) {
-    return line
-  }
+  // A comma may follow.
+  const fits = before + line.length + 1 <= widest
+  if (fits || typeof value !== 'object' || value === null) return line
   const inner = `${indent}  `
   if (Array.isArray(value)) {
     const lines = value.map((one) => inner + written(one, inner))
     return `[\n${lines.join(',\n')}\n${indent}]`
   }
-  const lines = membersOf(value).map(
-    ([key, one]) => `${inner}${JSON.stringify(key)}: ${written(one, inner)}`,
-  )
+  const lines = membersOf(value).map(([key, one]) => {
+    const start = `${inner}${JSON.stringify(key)}: `
+    return start + written(one, inner, start.length)
+  })
   return `{\n${lines.join(',\n')}\n${indent}}`
 }
 
