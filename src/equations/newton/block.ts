@@ -3,7 +3,11 @@ import type { GradientProgram } from './gradient.ts'
 import { Factors, SparseLU } from './sparse-lu.ts'
 import { type Bounds, type Step, StepOutcome, stepOutcome } from './step.ts'
 
-/** Newton iterations before giving up. */
+/** Starts tried before giving up. */
+const mostStarts = 6
+/** Steps aside from points where the linearised block is singular. */
+const mostNudges = 4
+/** Newton iterations from one start before giving up. */
 const mostIterations = 60
 /** Step length below which the line search gives up. */
 const shortest = 1 / 4096
@@ -41,6 +45,10 @@ export class BlockStep implements Step {
   private readonly residual: Float64Array
   private readonly step: Float64Array
   private readonly start: Float64Array
+  private readonly origin: Float64Array
+  private lower: Float64Array
+  private upper: Float64Array
+  private firstWorst = 0
 
   constructor(
     prelude: Int32Array,
@@ -72,20 +80,77 @@ export class BlockStep implements Step {
     this.residual = new Float64Array(n)
     this.step = new Float64Array(n)
     this.start = new Float64Array(n)
+    this.origin = new Float64Array(n)
+    this.lower = bounds.lower
+    this.upper = bounds.upper
   }
 
   run(tape: Tape): number {
     this.iterations = 0
     const before = tape.evaluate(this.prelude)
     if (before !== Outcome.fine) return stepOutcome(before)
+    const { bounds } = this
+    if (this.linear) return this.iterate(tape, bounds.lower, bounds.upper)
+    this.remember(tape)
+    this.origin.set(this.start)
+    let first: number = StepOutcome.notConverged
+    // Sensible answers are looked for first, from several starts; then any answer at all.
+    for (let attempt = 0; attempt < 2 * mostStarts; attempt++) {
+      const isSensible = attempt < mostStarts
+      this.restart(tape, attempt % mostStarts)
+      const outcome = this.iterate(
+        tape,
+        isSensible ? bounds.sensibleLower : bounds.lower,
+        isSensible ? bounds.sensibleUpper : bounds.upper,
+      )
+      if (outcome === StepOutcome.solved) return outcome
+      if (attempt === 0) {
+        first = outcome
+        this.firstWorst = this.worst
+      }
+    }
+    this.restart(tape, 0)
+    this.worst = this.firstWorst
+    // That an iteration cannot go on does not prove that there is no answer.
+    const proves = first === StepOutcome.singular || first === StepOutcome.contradictory
+    return proves ? first : StepOutcome.notConverged
+  }
+
+  /** Puts the variables at one of the starts; the first is where they were. */
+  private restart(tape: Tape, choice: number): void {
+    const { factors, values } = this.bounds
+    for (let j = 0; j < this.n; j++) {
+      const index = this.variableSlots[j]!
+      const from = this.origin[j]!
+      const factor = factors[index]
+      const value = values[index]
+      if (choice === 0) tape.values[index] = from
+      else if (factor) tape.values[index] = from * factor[choice % factor.length]!
+      else if (value && choice > 2) tape.values[index] = value[choice % value.length]!
+      else tape.values[index] = from
+    }
+  }
+
+  private iterate(tape: Tape, lower: Float64Array, upper: Float64Array): number {
+    this.lower = lower
+    this.upper = upper
     this.clamp(tape)
     let outcome = tape.evaluate(this.rows)
     if (outcome !== Outcome.fine) return stepOutcome(outcome)
     let previous = Number.POSITIVE_INFINITY
     let polishing = false
-    while (this.iterations < mostIterations) {
+    let nudges = 0
+    for (let iteration = 0; iteration < mostIterations; iteration++) {
       this.iterations++
-      if (!this.linearise(tape)) return this.singularOutcome()
+      if (!this.linearise(tape)) {
+        const verdict = this.singularOutcome()
+        // Only where the equations hold, or wherever one looks, is a block singular.
+        if (this.linear || verdict === StepOutcome.singular || nudges >= mostNudges) return verdict
+        nudges++
+        outcome = this.nudge(tape, nudges)
+        if (outcome !== Outcome.fine) return stepOutcome(outcome)
+        continue
+      }
       this.factors.solve(this.residual, this.step)
       const length = this.unscaleStep()
       if (!Number.isFinite(length)) return StepOutcome.notConverged
@@ -97,6 +162,18 @@ export class BlockStep implements Step {
       if (this.linear) polishing = true
     }
     return StepOutcome.notConverged
+  }
+
+  /** Steps a little aside, each variable another way, always the same. */
+  private nudge(tape: Tape, count: number): number {
+    for (let j = 0; j < this.n; j++) {
+      const index = this.variableSlots[j]!
+      const side = ((j * 7 + count * 3) % 5) - 2
+      const size = Math.max(Math.abs(tape.values[index]!), this.bounds.scale[index]! * 1e-2)
+      tape.values[index]! += 0.01 * count * side * size
+    }
+    this.clamp(tape)
+    return tape.evaluate(this.rows)
   }
 
   /** Recomputes the scaled factors at the present values; false when they are singular. */
@@ -144,7 +221,7 @@ export class BlockStep implements Step {
   }
 
   private clamp(tape: Tape): void {
-    const { lower, upper } = this.bounds
+    const { lower, upper } = this
     for (let j = 0; j < this.n; j++) {
       const index = this.variableSlots[j]!
       const value = tape.values[index]!
@@ -153,7 +230,7 @@ export class BlockStep implements Step {
   }
 
   private move(tape: Tape, share: number): void {
-    const { lower, upper } = this.bounds
+    const { lower, upper } = this
     for (let j = 0; j < this.n; j++) {
       const index = this.variableSlots[j]!
       const from = this.start[j]!

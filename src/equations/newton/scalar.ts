@@ -26,6 +26,8 @@ export class ScalarStep implements Step {
   private readonly bounds: Bounds
   private readonly linear: boolean
   private readonly slope = new Float64Array(1)
+  private lower = 0
+  private upper = 0
 
   constructor(
     prelude: Int32Array,
@@ -51,6 +53,14 @@ export class ScalarStep implements Step {
     const before = tape.evaluate(this.prelude)
     if (before !== Outcome.fine) return stepOutcome(before)
     if (this.linear) return this.solveLinear(tape)
+    const { bounds, variable } = this
+    const start = tape.values[variable]!
+    this.lower = bounds.sensibleLower[variable]!
+    this.upper = bounds.sensibleUpper[variable]!
+    if (this.newton(tape) || this.search(tape) === StepOutcome.solved) return StepOutcome.solved
+    tape.values[variable] = start
+    this.lower = bounds.lower[variable]!
+    this.upper = bounds.upper[variable]!
     return this.newton(tape) ? StepOutcome.solved : this.search(tape)
   }
 
@@ -78,9 +88,7 @@ export class ScalarStep implements Step {
 
   /** Newton's method from the value at hand, with a bracket as soon as both signs have been seen. */
   private newton(tape: Tape): boolean {
-    const { variable, bounds } = this
-    const lower = bounds.lower[variable]!
-    const upper = bounds.upper[variable]!
+    const { variable, lower, upper } = this
     let x = Math.min(upper, Math.max(lower, tape.values[variable]!))
     let below = Number.NaN
     let above = Number.NaN
@@ -130,9 +138,7 @@ export class ScalarStep implements Step {
 
   /** Looks over the range for a change of sign and closes in on it. */
   private search(tape: Tape): number {
-    const { variable, bounds } = this
-    const lower = bounds.lower[variable]!
-    const upper = bounds.upper[variable]!
+    const { variable, bounds, lower, upper } = this
     let previous = Number.NaN
     let previousX = Number.NaN
     let seen = false

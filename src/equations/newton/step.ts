@@ -39,11 +39,19 @@ export function stepOutcome(outcome: number): number {
   }
 }
 
-/** By variable, SI: the physical range and a size that makes changes comparable. */
+/** By variable, SI. */
 export interface Bounds {
+  /** The range in which an answer may lie at all. */
   readonly lower: Float64Array
   readonly upper: Float64Array
+  /** The range in which an answer makes sense, looked at first: flows forward, efficiencies to 1. */
+  readonly sensibleLower: Float64Array
+  readonly sensibleUpper: Float64Array
+  /** A size that makes changes of different quantities comparable. */
   readonly scale: Float64Array
+  /** Values to try in place of a first guess that leads nowhere: times the guess, and outright. */
+  readonly factors: readonly (readonly number[] | undefined)[]
+  readonly values: readonly (readonly number[] | undefined)[]
 }
 
 export interface Step {
