@@ -106,7 +106,18 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
   return (
     // Keys reach the units and streams within, which have the focus.
     // biome-ignore lint/a11y/noStaticElementInteractions: see above
-    <div ref={box} className="canvas" onKeyDown={onCanvasKey}>
+    <div
+      ref={box}
+      className="canvas"
+      tabIndex={-1}
+      onKeyDown={onCanvasKey}
+      onPointerDown={(event) => {
+        // Keys after a click on bare paper are meant for the canvas.
+        if (event.target instanceof Element && event.target.matches('.react-flow__pane')) {
+          box.current?.focus({ preventScroll: true })
+        }
+      }}
+    >
       <ReactFlow
         nodes={nodes}
         edges={edges}
@@ -142,6 +153,7 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
         minZoom={0.2}
         maxZoom={3}
         proOptions={proOptions}
+        ariaLabelConfig={descriptions}
       >
         <ViewportPortal>
           <ShaftLines />
@@ -165,6 +177,9 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
 }
 
 const panButtons = [1]
+const descriptions = {
+  'edge.a11yDescription.default': 'Enter selects, Delete removes, arrows lead on to the units.',
+}
 const proOptions = { hideAttribution: true }
 
 /** Room under the drawing for the legend, and round it, px. */

@@ -13,6 +13,7 @@ import type { PlacedUnit } from './sheet.ts'
 import { toSheet } from './view.ts'
 
 const square = 6.5
+const dot = 8
 
 /** The ports of a unit: squares to drag from; while a connection is drawn, those that can take it. */
 export function Ports({ unit }: { readonly unit: PlacedUnit }) {
@@ -34,7 +35,15 @@ export function Ports({ unit }: { readonly unit: PlacedUnit }) {
         const over = connecting?.over?.reference === port.reference
         const state =
           isStart || over || chosen === port.reference ? 'lit' : target ? 'able' : 'shown'
-        return <Port key={port.name} port={port} origin={unit.at} state={state} />
+        return (
+          <Port
+            key={port.name}
+            port={port}
+            origin={unit.at}
+            away={unit.body.width <= dot ? dot / 2 : 0}
+            state={state}
+          />
+        )
       })}
     </g>
   )
@@ -43,12 +52,14 @@ export function Ports({ unit }: { readonly unit: PlacedUnit }) {
 function Port(props: {
   readonly port: SheetPort
   readonly origin: Point
+  /** Off the symbol, px: round a dot the squares would hide it. */
+  readonly away: number
   readonly state: 'shown' | 'able' | 'lit'
 }) {
-  const { port, origin, state } = props
+  const { port, origin, away, state } = props
   const [ox, oy] = outward[port.side]
-  const x = port.point[0] - origin[0]
-  const y = port.point[1] - origin[1]
+  const x = port.point[0] - origin[0] + away * ox
+  const y = port.point[1] - origin[1] + away * oy
   const label = labelPlace(x, y, ox, oy)
   return (
     <g

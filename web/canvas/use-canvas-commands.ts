@@ -27,6 +27,8 @@ function removeSelected(): void {
       withAxesKept(layoutOf(plant, layoutId), removeItems(plant, layoutId, selected)),
   )
   select([])
+  // The focus went with what was deleted.
+  document.querySelector<HTMLElement>('.canvas')?.focus({ preventScroll: true })
   say(selected.length === 1 ? 'Deleted.' : `${selected.length} things deleted.`)
 }
 
