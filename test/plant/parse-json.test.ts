@@ -51,7 +51,7 @@ describe('broken text is placed', () => {
 })
 
 describe('what is JSON is read as such', () => {
-  test('any value comes back', () => {
+  test('any value comes back', { timeout: 60_000 }, () => {
     fc.assert(
       fc.property(fc.jsonValue({ maxDepth: 4 }), fc.nat(4), (value, indent) => {
         const text = JSON.stringify(value, null, indent)
@@ -76,7 +76,7 @@ describe('what is JSON is read as such', () => {
     expect(({} as { a?: number }).a).toBeUndefined()
   })
 
-  test('accepts just what the platform accepts, twins apart', () => {
+  test('accepts just what the platform accepts, twins apart', { timeout: 60_000 }, () => {
     const pieces = fc.constantFrom(
       '{',
       '}',

@@ -323,7 +323,9 @@ describe('what a plant merely lacks passes', () => {
 })
 
 describe('whatever the text', () => {
-  test('damaged files never throw, and are refused in one line or read', () => {
+  test('damaged files never throw, and are refused in one line or read', {
+    timeout: 60_000,
+  }, () => {
     const text = JSON.stringify(sample())
     const cut = fc.tuple(fc.nat(text.length), fc.nat(12), fc.string({ maxLength: 4 }))
     fc.assert(
@@ -341,7 +343,7 @@ describe('whatever the text', () => {
     )
   })
 
-  test('any value in any place never throws', () => {
+  test('any value in any place never throws', { timeout: 60_000 }, () => {
     const places: (string | number)[][] = []
     const walk = (value: unknown, path: (string | number)[]) => {
       places.push(path)

@@ -82,7 +82,7 @@ describe('whatever the value', () => {
   )
   const anySet = fc.constantFrom(...unitSets.map(({ name }) => name))
 
-  test('the text holds figures and no NaN', () => {
+  test('the text holds figures and no NaN', { timeout: 60_000 }, () => {
     fc.assert(
       fc.property(fc.double(), fc.constantFrom(...dimensions), anySet, (value, dimension, set) => {
         for (const digits of ['shown', 'given', 'all'] as const) {
@@ -95,7 +95,7 @@ describe('whatever the value', () => {
     )
   })
 
-  test('the text for editing brings the value back', () => {
+  test('the text for editing brings the value back', { timeout: 60_000 }, () => {
     const value = fc.double({ min: 1e-9, max: 1e12, noNaN: true })
     fc.assert(
       fc.property(value, anyUnit, anySet, (si, [dimension, unit], set) => {
@@ -110,7 +110,9 @@ describe('whatever the value', () => {
     )
   })
 
-  test('the text shown can be typed again, digit groups, minus and all', () => {
+  test('the text shown can be typed again, digit groups, minus and all', {
+    timeout: 60_000,
+  }, () => {
     const value = fc.double({ min: 1, max: 1e9, noNaN: true })
     fc.assert(
       fc.property(value, anyUnit, (si, [dimension, unit]) => {

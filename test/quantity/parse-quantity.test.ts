@@ -145,7 +145,7 @@ describe('what cannot be read says why, and what to write', () => {
     expect(refusal(text, dimension)).toMatch(expected)
   })
 
-  test('no text throws or gives what is not a number', () => {
+  test('no text throws or gives what is not a number', { timeout: 60_000 }, () => {
     const pieces = fc.constantFrom(
       '1',
       '.',

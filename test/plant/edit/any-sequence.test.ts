@@ -1,33 +1,39 @@
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
-import { type Catalogue, standardCatalogue } from '../../src/plant/catalogue.ts'
+import { type Catalogue, standardCatalogue } from '../../../src/plant/catalogue.ts'
 import {
   applyDifference,
   difference,
   equalParts,
   invertDifference,
-} from '../../src/plant/difference.ts'
-import type { Given, Layout, Plant } from '../../src/plant/document.ts'
+} from '../../../src/plant/difference.ts'
+import type { Given, Layout, Plant } from '../../../src/plant/document.ts'
 import {
   canConnect,
   canReconnect,
   connect,
   reconnect,
   renumberPort,
-} from '../../src/plant/edit/connect.ts'
-import { EditRefused } from '../../src/plant/edit/edit-refused.ts'
-import { removeItems } from '../../src/plant/edit/remove-items.ts'
-import { setGiven } from '../../src/plant/edit/set-given.ts'
-import { putOnShaft, setGenerator } from '../../src/plant/edit/shafts.ts'
-import { canInsertOnStream, insertOnStream, setBends } from '../../src/plant/edit/streams.ts'
-import { setTitle } from '../../src/plant/edit/titles.ts'
-import { addUnit, mirrorUnits, moveUnits, setLabel, setOption } from '../../src/plant/edit/units.ts'
-import { emptyPlant } from '../../src/plant/empty-plant.ts'
-import { portsOf } from '../../src/plant/ports.ts'
-import { quantitiesOfId } from '../../src/plant/quantities.ts'
-import { readPlant } from '../../src/plant/read-plant.ts'
-import { writePlant } from '../../src/plant/write-plant.ts'
-import { invented } from './invented-catalogue.ts'
+} from '../../../src/plant/edit/connect.ts'
+import { EditRefused } from '../../../src/plant/edit/edit-refused.ts'
+import { removeItems } from '../../../src/plant/edit/remove-items.ts'
+import { setGiven } from '../../../src/plant/edit/set-given.ts'
+import { putOnShaft, setGenerator } from '../../../src/plant/edit/shafts.ts'
+import { canInsertOnStream, insertOnStream, setBends } from '../../../src/plant/edit/streams.ts'
+import { setTitle } from '../../../src/plant/edit/titles.ts'
+import {
+  addUnit,
+  mirrorUnits,
+  moveUnits,
+  setLabel,
+  setOption,
+} from '../../../src/plant/edit/units.ts'
+import { emptyPlant } from '../../../src/plant/empty-plant.ts'
+import { portsOf } from '../../../src/plant/ports.ts'
+import { quantitiesOfId } from '../../../src/plant/quantities.ts'
+import { readPlant } from '../../../src/plant/read-plant.ts'
+import { writePlant } from '../../../src/plant/write-plant.ts'
+import { invented } from '../invented-catalogue.ts'
 
 /*
  * Any sequence of edits keeps a plant that its own file brings back unchanged, shares what it did not
