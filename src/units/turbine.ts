@@ -20,6 +20,7 @@ import {
   wetPart,
 } from '../steam/operations.ts'
 import { commonPractice, energy, one } from './common.ts'
+import { mixedEnthalpy } from './heat-transfer.ts'
 import { defineUnitKind, type FreezeRule, type Shape } from './kind.ts'
 
 const perGroup = { port: 'bleed', extra: 1 } as const
@@ -183,6 +184,15 @@ export const turbine = defineUnitKind({
       each: perBleed,
       when: withMoistureRemoval,
     },
+    bleedSteam: {
+      label: 'Bleed steam',
+      symbol: 'm',
+      dimension: 'massFlow',
+      help: 'Flow of the bleed less the water that is taken out with it.',
+      possible: { least: 0 },
+      each: perBleed,
+      when: withMoistureRemoval,
+    },
     power: {
       label: 'Power',
       symbol: 'P',
@@ -249,10 +259,10 @@ export const turbine = defineUnitKind({
         const water = times(q.moistureRemoval[i]!, moisture(end.p, end.h))
         const liquid = liquidEnthalpy(end.p)
         const rest = divide(minus(end.h, times(water, liquid)), minus(one, water))
-        equations[`bleedState${i + 1}`] = equal(
-          outlet.h,
-          plus(rest, divide(times(times(water, through), minus(liquid, rest)), outlet.m)),
-        )
+        const removed = times(water, through)
+        const bled = plus(times(removed, liquid), times(minus(outlet.m, removed), rest))
+        equations[`bleedState${i + 1}`] = equal(outlet.h, mixedEnthalpy(bled, outlet.m, rest))
+        equations[`bleedSteam${i + 1}`] = equal(q.bleedSteam[i]!, minus(outlet.m, removed))
         start = { p: end.p, h: rest }
       }
     }
