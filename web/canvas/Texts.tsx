@@ -139,7 +139,7 @@ function Part(props: { readonly id: string; readonly name: TagQuantity; readonly
   return (
     <span className="stream-tag-part">
       <Quantity path={`${props.id}.${name}`} dimension={dimensions[name]} />
-      {name === 'x' && <span className="quantity-unit">dry</span>}
+      {name === 'x' && <span className="quantity-unit">{'\u2009'}dry</span>}
     </span>
   )
 }
