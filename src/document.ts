@@ -34,12 +34,8 @@ export { kindNamed as kindOf, kinds } from './units/index.ts'
 export type {
   KindGroup,
   OptionDescription,
-  OptionList,
-  PortDescription,
-  ProcessPath,
   QuantityDescription,
   QuantityTable,
-  Shape,
 } from './units/kind.ts'
 
 /** What every stream has; all of these can be given. */

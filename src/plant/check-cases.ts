@@ -1,5 +1,4 @@
 import { checkCurve, givensAt } from './check-given.ts'
-import type { NoteRepair } from './check-layout.ts'
 import type { Case, Layout } from './document.ts'
 import type { KnownPaths } from './known-paths.ts'
 import { suggestion } from './nearest-name.ts'
@@ -14,6 +13,7 @@ import {
   textListAt,
   within,
 } from './place.ts'
+import type { NoteRepair } from './remark.ts'
 
 const caseKeys = [
   'id',

@@ -18,8 +18,7 @@ import {
   textListAt,
   within,
 } from './place.ts'
-/** Notes a repair: what was missing at a place, and what stands there now. */
-export type NoteRepair = (place: string, what: string, where?: readonly string[]) => void
+import type { NoteRepair } from './remark.ts'
 
 const layoutKeys = [
   'id',

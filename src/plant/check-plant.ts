@@ -1,9 +1,9 @@
 import { type Catalogue, standardCatalogue } from './catalogue.ts'
-import { checkLayout, type NoteRepair } from './check-layout.ts'
+import { checkLayout } from './check-layout.ts'
 import type { Layout, Plant } from './document.ts'
 import { currentVersion } from './migrate.ts'
 import { listAt, refuse, refuseTwins, strictObjectAt, textAt, Unusable } from './place.ts'
-import type { Remark } from './remark.ts'
+import type { NoteRepair, Remark } from './remark.ts'
 
 export type ReadResult =
   /** `repairs`: what the file lacked and what was put there; its physics is never touched. */

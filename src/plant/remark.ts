@@ -7,3 +7,6 @@ export interface Remark {
   readonly quantities: readonly string[]
   readonly message: string
 }
+
+/** Notes a repair: what was missing at a place, and what stands there now. */
+export type NoteRepair = (place: string, what: string, where?: readonly string[]) => void

@@ -298,7 +298,7 @@ describe.each([
           expect(writePlant(back.plant, catalogue)).toBe(text)
         }
       }),
-      { numRuns: 50 },
+      { numRuns: 30 },
     )
   })
 
