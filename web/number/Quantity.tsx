@@ -23,17 +23,19 @@ interface Props {
   /** Saves looking the path up. */
   readonly dimension?: Dimension
   readonly showUnit?: boolean
+  /** The state is said in words beside it. */
+  readonly silent?: boolean
 }
 
 /** A number of the plant with its unit, showing at a glance whether it went in or came out. */
-export function Quantity({ path, dimension, showUnit = true }: Props) {
+export function Quantity({ path, dimension, showUnit = true, silent = false }: Props) {
   const { state, text, unit } = useNumberText(path, dimension)
   return (
     <span className="quantity" data-state={state}>
-      {state === 'open' && <Mark name="open" spoken />}
-      {state === 'conflicting' && <Mark name="error" spoken />}
+      {state === 'open' && <Mark name="open" spoken={!silent} />}
+      {state === 'conflicting' && <Mark name="error" spoken={!silent} />}
       <span className="quantity-value">{text}</span>
-      {showUnit && unit !== '' && <span className="quantity-unit">{unit}</span>}
+      {showUnit && unit !== '' && <span className="quantity-unit">{`\u2009${unit}`}</span>}
     </span>
   )
 }

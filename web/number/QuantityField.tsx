@@ -43,7 +43,7 @@ let openings = 0
  * What cannot be read is said beneath, and stays to be mended.
  */
 export function QuantityField({ path, label, description, showUnit = true }: Props) {
-  const { state, value, given, text, unit } = useNumberText(path, description.dimension)
+  const { state, value, given, unit } = useNumberText(path, description.dimension)
   const units = useUnitChoice()
   const [editing, setEditing] = useState<Editing | null>(null)
   const wanted = useFocusWanted(path)
@@ -151,7 +151,6 @@ export function QuantityField({ path, label, description, showUnit = true }: Pro
         type="button"
         className="quantity-field"
         data-path={path}
-        aria-label={`${label}: ${text} ${unit}, ${words[state]}`}
         title={usualText(description, units)}
         onClick={() => begin()}
         onKeyDown={(event) => {
@@ -164,7 +163,9 @@ export function QuantityField({ path, label, description, showUnit = true }: Pro
         }}
       >
         {given !== undefined && typeof given !== 'number' && <span className="curve">curve</span>}
-        <Quantity path={path} dimension={description.dimension} showUnit={showUnit} />
+        <span className="visually-hidden">{label}: </span>
+        <Quantity path={path} dimension={description.dimension} showUnit={showUnit} silent />
+        <span className="visually-hidden">, {words[state]}</span>
       </button>
     )
   }

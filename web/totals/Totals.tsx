@@ -86,7 +86,7 @@ function Chief({ name, label, basis }: Total) {
         {state === 'open' && <Mark name="open" />}
         <span className="quantity" data-state={state}>
           <span className="quantity-value">{text}</span>
-          <span className="quantity-unit">{unit}</span>
+          <span className="quantity-unit">{`\u2009${unit}`}</span>
         </span>
       </button>
       <Change name={name} />
@@ -104,7 +104,7 @@ function Other({ name, label }: Total) {
       <button type="button" onClick={() => show(name)}>
         <span className="quantity" data-state={state}>
           <span className="quantity-value">{text}</span>
-          <span className="quantity-unit">{unit}</span>
+          <span className="quantity-unit">{`\u2009${unit}`}</span>
         </span>
       </button>
     </div>
