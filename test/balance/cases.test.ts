@@ -1,7 +1,7 @@
 import { readdirSync, readFileSync } from 'node:fs'
 import { describe, expect, test } from 'vitest'
-import { type Given, type Layout, readPlant } from '../../src/document.ts'
-import { type AskedBalance, balanceOf } from '../../src/engine.ts'
+import { applyOverrides, readPlant } from '../../src/document.ts'
+import { type AskedBalance, balanceOfCase } from '../../src/engine.ts'
 import { type ExpectedFile, type ExpectedRun, faultsOf, nameOf } from './expected-run.ts'
 
 /*
@@ -35,36 +35,18 @@ describe.each(names)('%s', (name) => {
 
 /** What the command line would print; a line of text where the file or the call is unusable. */
 function answerTo(text: string, run: ExpectedRun): AskedBalance | string {
-  const plant = readPlant(text)
-  if (plant.outcome === 'unusable') return plant.message
-  const { layouts } = plant.plant
-  const layout =
-    run.layout === null ? layouts[0] : layouts.find((candidate) => candidate.id === run.layout)
+  const read = readPlant(text)
+  if (read.outcome === 'unusable') return read.message
+  const { layouts } = read.plant
+  const layout = run.layout === null ? layouts[0] : layouts.find(({ id }) => id === run.layout)
   if (layout === undefined) return `there is no layout ${run.layout}`
+  const overrides = { free: run.free, set: run.set }
+  const checked = applyOverrides(layout, overrides)
+  if (checked.outcome === 'unusable') return checked.message
+  const solved = balanceOfCase(read.plant, layout.id, run.case, overrides)
+  if (solved.outcome === 'unusable') return solved.message
   // As the command line prints it: without what JSON cannot say.
-  return JSON.parse(JSON.stringify(balanceOf(overridden(layout, run)))) as AskedBalance
-}
-
-/** First all that is freed, then all that is set. */
-function overridden(layout: Layout, { free, set }: ExpectedRun): Layout {
-  const change = <T extends { readonly given: Layout['plant']['given'] }>(
-    id: string,
-    owner: T,
-  ): T => {
-    const given: Record<string, Given> = { ...owner.given }
-    const own = (path: string): boolean => path.startsWith(`${id}.`)
-    const nameIn = (path: string): string => path.slice(id.length + 1)
-    for (const path of free) if (own(path)) delete given[nameIn(path)]
-    for (const [path, value] of Object.entries(set)) if (own(path)) given[nameIn(path)] = value
-    return { ...owner, given }
-  }
-  return {
-    ...layout,
-    units: layout.units.map((unit) => change(unit.id, unit)),
-    streams: layout.streams.map((stream) => change(stream.id, stream)),
-    shafts: layout.shafts.map((shaft) => change(shaft.id, shaft)),
-    plant: change('plant', layout.plant),
-  }
+  return JSON.parse(JSON.stringify(solved.balance)) as AskedBalance
 }
 
 /** Paths of numbers that JSON could not have carried. */
