@@ -75,18 +75,3 @@ export function arrowOf(route: Route, length: number, halfWidth: number): string
   const b: Point = along ? [foot[0], foot[1] + halfWidth] : [foot[0] + halfWidth, foot[1]]
   return `M${short(tip[0])} ${short(tip[1])}L${short(a[0])} ${short(a[1])}L${short(b[0])} ${short(b[1])}Z`
 }
-
-/** The point halfway along a route, and whether it lies on a level straight. */
-export function midway(route: Route): { readonly point: Point; readonly level: boolean } {
-  let total = 0
-  for (let i = 1; i < route.length; i++) total += distance(route[i - 1] as Point, route[i] as Point)
-  let left = total / 2
-  for (let i = 1; i < route.length; i++) {
-    const a = route[i - 1] as Point
-    const b = route[i] as Point
-    const here = distance(a, b)
-    if (left <= here) return { point: toward(a, b, left), level: a[1] === b[1] }
-    left -= here
-  }
-  return { point: route[0] ?? [0, 0], level: true }
-}
