@@ -1,4 +1,10 @@
-/** The plant file as it stands in memory: coherent SI, pressures absolute. Documents are never changed in place. */
+/**
+ * The plant file as it stands in memory: coherent SI, pressures absolute. Documents are never changed
+ * in place. Beside physics the file keeps what the drawing needs: `at` and `mirrored` of a unit,
+ * `bends` of a stream, `label` of a stream or shaft. In a file `given`, `shafts`, `pumps`, `plant`,
+ * `cases` and `stated` may be absent and then hold nothing; every other key without a question mark
+ * is required, names, labels and places excepted, which are repaired.
+ */
 
 /** A given that depends on another quantity: points with rising r, or a power law through one point. */
 export type Curve =
