@@ -1,4 +1,4 @@
-import { useLayoutEffect, useRef, useState } from 'react'
+import { useRef, useState } from 'react'
 import type { QuantityEntry } from '../../src/document.ts'
 import { focusNumber, useFocusWantedAmong } from '../number/focus.ts'
 import { free, give } from '../number/give.ts'
@@ -46,6 +46,16 @@ function Row({ entry, given }: { entry: QuantityEntry; given: boolean }) {
   )
 }
 
+function Side({ name }: { name: string }) {
+  return (
+    <tr>
+      <th colSpan={3} scope="colgroup" className="card-side">
+        {name}
+      </th>
+    </tr>
+  )
+}
+
 /**
  * Which quantities stay open in a solved plant: they only describe, and nothing needs them. One digit
  * an entry. While the plant is not solved none counts as such: any may be the one that is missing.
@@ -85,14 +95,6 @@ export function CardRows({ content }: { content: CardContent }) {
   const solved = content.entries.filter((_, i) => sides[i] === '0' && (all || idle[i] === '0'))
   const hidden = content.entries.length - given.length - solved.length
 
-  // A row that changes sides takes the focus along.
-  const focused = useRef<string | null>(null)
-  useLayoutEffect(() => {
-    const mark = focused.current
-    if (sides === '' || !mark || document.activeElement !== document.body) return
-    table.current?.querySelector<HTMLElement>(mark)?.focus()
-  }, [sides])
-
   if (content.entries.length === 0) {
     return <p className="card-part muted">No numbers of its own: its streams have them.</p>
   }
@@ -100,15 +102,6 @@ export function CardRows({ content }: { content: CardContent }) {
     <table
       ref={table}
       className="card-rows"
-      onFocus={(event) => {
-        const { path, turn } = event.target.dataset
-        focused.current = turn ? `[data-turn="${turn}"]` : path ? `[data-path="${path}"]` : null
-      }}
-      onBlur={(event) => {
-        if (event.relatedTarget && !table.current?.contains(event.relatedTarget)) {
-          focused.current = null
-        }
-      }}
       onKeyDown={(event) => {
         const step = { ArrowDown: 1, ArrowUp: -1 }[event.key]
         if (step && table.current && moveFocus(table.current, step)) {
@@ -117,41 +110,24 @@ export function CardRows({ content }: { content: CardContent }) {
         }
       }}
     >
-      {given.length > 0 && (
-        <tbody aria-label="Given">
-          <tr>
-            <th colSpan={3} scope="rowgroup" className="card-side">
-              Given
-            </th>
-          </tr>
-          {given.map((entry) => (
-            <Row key={entry.path} entry={entry} given />
-          ))}
-        </tbody>
-      )}
-      {solved.length > 0 && (
-        <tbody aria-label="Solved">
-          <tr>
-            <th colSpan={3} scope="rowgroup" className="card-side">
-              Solved
-            </th>
-          </tr>
-          {solved.map((entry) => (
-            <Row key={entry.path} entry={entry} given={false} />
-          ))}
-        </tbody>
-      )}
-      {hidden > 0 && (
-        <tbody>
-          <tr>
+      {/* All rows in one body: one that changes sides moves, and keeps its open field and the focus. */}
+      <tbody>
+        {[
+          ...(given.length > 0 ? [<Side key="given" name="Given" />] : []),
+          ...given.map((entry) => <Row key={entry.path} entry={entry} given />),
+          ...(solved.length > 0 ? [<Side key="solved" name="Solved" />] : []),
+          ...solved.map((entry) => <Row key={entry.path} entry={entry} given={false} />),
+        ]}
+        {hidden > 0 && (
+          <tr key="more">
             <td colSpan={3} className="card-more">
               <button type="button" onClick={() => setAll(true)}>
                 and {hidden} open
               </button>
             </td>
           </tr>
-        </tbody>
-      )}
+        )}
+      </tbody>
     </table>
   )
 }

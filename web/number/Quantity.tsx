@@ -18,18 +18,18 @@ export function useNumberText(
   return { ...number, text, unit }
 }
 
-interface Props {
-  readonly path: string
-  /** Saves looking the path up. */
-  readonly dimension?: Dimension
+export type NumberText = ReturnType<typeof useNumberText>
+
+interface TextProps {
+  readonly number: NumberText
   readonly showUnit?: boolean
   /** The state is said in words beside it. */
   readonly silent?: boolean
 }
 
-/** A number of the plant with its unit, showing at a glance whether it went in or came out. */
-export function Quantity({ path, dimension, showUnit = true, silent = false }: Props) {
-  const { state, text, unit } = useNumberText(path, dimension)
+/** A number at hand, drawn so that one glance shows whether it went in or came out. */
+export function QuantityText({ number, showUnit = true, silent = false }: TextProps) {
+  const { state, text, unit } = number
   return (
     <span className="quantity" data-state={state}>
       {state === 'open' && <Mark name="open" spoken={!silent} />}
@@ -38,4 +38,16 @@ export function Quantity({ path, dimension, showUnit = true, silent = false }: P
       {showUnit && unit !== '' && <span className="quantity-unit">{`\u2009${unit}`}</span>}
     </span>
   )
+}
+
+interface Props {
+  readonly path: string
+  /** Saves looking the path up. */
+  readonly dimension?: Dimension
+  readonly showUnit?: boolean
+}
+
+/** A number of the plant with its unit, showing at a glance whether it went in or came out. */
+export function Quantity({ path, dimension, showUnit = true }: Props) {
+  return <QuantityText number={useNumberText(path, dimension)} showUnit={showUnit} />
 }

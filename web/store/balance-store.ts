@@ -198,18 +198,18 @@ export function readPhase(streamId: string): Phase {
 }
 
 /**
- * True where a quantity without a value has none to have: the dryness of superheated steam, say.
- * False while something could still fix it.
+ * What the balance has of a quantity: its value, SI; `none` where it has no value to have (the dryness
+ * of superheated steam, say); null while something could still fix it.
  */
-export function useMeaningless(path: string): boolean {
+export function useOutcome(path: string): number | 'none' | null {
   return useBalanceStore((state) => {
-    if (!state.index.paths.has(path) || state.open.has(path)) return false
-    if (valueIn(state.index, state.balance, path) !== null) return false
+    const value = valueIn(state.index, state.balance, path)
+    if (value !== null || !state.index.paths.has(path) || state.open.has(path)) return value
     const owner = path.slice(0, path.indexOf('.'))
-    return (
+    const isSettled =
       state.balance?.status === 'solved' ||
       valueIn(state.index, state.balance, `${owner}.h`) !== null
-    )
+    return isSettled ? 'none' : null
   })
 }
 
