@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest'
+import { crossings } from '../../web/canvas/crossings.ts'
 import type { Box, Point, Side } from '../../web/canvas/geometry.ts'
 import {
   cornersNeeded,
-  crossings,
   findRoute,
   passesThrough,
   type Route,

@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import type { Layout, Stream, Unit } from '../../src/document.ts'
 import { passesThrough, type Route } from '../../web/canvas/routing.ts'
-import { drawSheet, placeUnits } from '../../web/canvas/sheet.ts'
+import { drawSheet } from '../../web/canvas/sheet.ts'
+import { placeUnits } from '../../web/canvas/standing.ts'
 
 const unit = (id: string, kind: string, at: readonly [number, number], more = {}): Unit => ({
   id,

@@ -18,10 +18,10 @@ import './canvas.css'
 import { moveUnits } from '../../src/document.ts'
 import { editLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
+import { Announcer } from './Announcer.tsx'
 import { CanvasControls } from './CanvasControls.tsx'
 import { ConnectionPreview } from './ConnectionPreview.tsx'
 import { followPlant, tagsBeyond, useCanvasStore } from './canvas-store.ts'
-import { useConnectingStore } from './connecting-store.ts'
 import { EmptyCanvas } from './EmptyCanvas.tsx'
 import { around, type Box, type Point } from './geometry.ts'
 import { onCanvasKey } from './keyboard.ts'
@@ -29,8 +29,8 @@ import { Legend } from './Legend.tsx'
 import { insertWhereDropped, rememberStreams } from './placing.ts'
 import { ShaftLines } from './ShaftLines.tsx'
 import { StreamEdge } from './StreamEdge.tsx'
-import type { PlacedUnit } from './sheet.ts'
 import { streamNameId, unitNameId } from './spoken-names.tsx'
+import type { PlacedUnit } from './standing.ts'
 import { Texts } from './Texts.tsx'
 import { UnitNode } from './UnitNode.tsx'
 import { useCanvasCommands } from './use-canvas-commands.ts'
@@ -385,22 +385,4 @@ function hoverOff(): void {
 
 function clearSelection(event: React.MouseEvent): void {
   if (!event.shiftKey) useSelectionStore.getState().select([])
-}
-
-/** Says aloud what happened on the canvas. */
-function Announcer() {
-  const notice = useConnectingStore((state) => state.notice)
-  const connecting = useConnectingStore((state) => state.connecting)
-  const choosing = useConnectingStore((state) => state.choosing)
-  const chosen = choosing?.ports[choosing.at]
-  const text = chosen
-    ? `Connect from ${chosen.label}. Arrows choose, Enter takes.`
-    : connecting?.over && !connecting.pointer
-      ? `To ${connecting.over.label}, ${connecting.over.reference}`
-      : (notice?.text ?? '')
-  return (
-    <div className="visually-hidden" role="status" aria-live="polite">
-      {text}
-    </div>
-  )
 }

@@ -9,7 +9,7 @@ import {
   useConnectingStore,
 } from './connecting-store.ts'
 import { outward, type Point } from './geometry.ts'
-import type { PlacedUnit } from './sheet.ts'
+import type { PlacedUnit } from './standing.ts'
 import { toSheet } from './view.ts'
 
 const square = 6.5

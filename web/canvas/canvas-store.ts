@@ -11,7 +11,8 @@ import {
   placeLabels,
   placeTags,
 } from './labelling.ts'
-import { drawSheet, emptySheet, generatorBox, type PlacedUnit, type Sheet } from './sheet.ts'
+import { drawSheet, emptySheet, generatorBox, type Sheet } from './sheet.ts'
+import type { PlacedUnit } from './standing.ts'
 import { type TagChoice, useTagStore } from './tag-store.ts'
 
 interface CanvasState {

@@ -5,7 +5,7 @@ import { useCanvasStore } from './canvas-store.ts'
 import { outward, type Point, type Side } from './geometry.ts'
 import { type ConnectionEnd, connectEnds, judge, layoutOf, type Verdict, wayOf } from './joins.ts'
 import { placesOf } from './ports.ts'
-import type { PlacedUnit } from './sheet.ts'
+import type { PlacedUnit } from './standing.ts'
 import { withAxesKept, withEndsTurned } from './steady.ts'
 import { toSheet } from './view.ts'
 

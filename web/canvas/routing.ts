@@ -153,8 +153,8 @@ function conflictPrice(a: Point, b: Point, { level, upright }: Straights): numbe
   const at = isLevel ? a[1] : a[0]
   const from = isLevel ? a[0] : a[1]
   const to = isLevel ? b[0] : b[1]
-  const least = from < to ? from : to
-  const most = from < to ? to : from
+  const least = Math.min(from, to)
+  const most = Math.max(from, to)
   let sum = 0
   const parallel = isLevel ? level : upright
   for (let i = 0; i < parallel.length; i += 3) {
@@ -400,26 +400,4 @@ export function routeThrough(from: Terminal, to: Terminal, bends: readonly Point
     level = !level
   }
   return tidied(points)
-}
-
-/** Where the upright straights of a route cross level ones of others: there a bridge is drawn. */
-export function crossings(route: Route, others: Iterable<Route>): Point[] {
-  const found: Point[] = []
-  for (const other of others) {
-    if (other === route) continue
-    for (let i = 1; i < route.length; i++) {
-      const a = route[i - 1] as Point
-      const b = route[i] as Point
-      if (a[0] !== b[0]) continue
-      const top = Math.min(a[1], b[1])
-      const bottom = Math.max(a[1], b[1])
-      for (let j = 1; j < other.length; j++) {
-        const c = other[j - 1] as Point
-        const d = other[j] as Point
-        if (c[1] !== d[1] || c[1] <= top || c[1] >= bottom) continue
-        if (a[0] > Math.min(c[0], d[0]) && a[0] < Math.max(c[0], d[0])) found.push([a[0], c[1]])
-      }
-    }
-  }
-  return found
 }

@@ -1,7 +1,7 @@
 import { type Layout, mirrorUnits, moveUnits, type Plant } from '../../src/document.ts'
 import { layoutOf } from './joins.ts'
 import { strain } from './routing.ts'
-import { placeUnits, type Standing } from './sheet.ts'
+import { placeUnits, type Standing } from './standing.ts'
 import type { Anchor } from './symbols/symbol.ts'
 
 /** What an edit of the structure does to the drawing, beyond what was asked for. */
