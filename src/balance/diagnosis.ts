@@ -289,7 +289,7 @@ function noAnswer(
   switch (program.outcomes[k]) {
     case StepOutcome.outsideRange: {
       // Run again, so that the refusal read is this block's.
-      program.steps[k]!.run(program.tape)
+      program.steps[k]!.run(program.tape, 0)
       const { quantity, value, limit } = rangeProblem()
       const dimension = dimensionOfRange[quantity] ?? 'number'
       return `${name}: ${target} would need steam at a ${quantity} of ${wording.value(value, dimension)}, beyond ${wording.value(limit, dimension)}, where the properties (IAPWS-IF97) end.`

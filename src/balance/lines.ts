@@ -1,6 +1,6 @@
 import type { Layout } from '../plant/document.ts'
 import { portNamed } from '../units/kind.ts'
-import type { PlacedUnit } from './system.ts'
+import type { PlacedUnit } from './placed-unit.ts'
 
 /** Units reached from a line's end in one direction, through whatever only passes the flow on. */
 function ends(

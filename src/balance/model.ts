@@ -1,6 +1,6 @@
 import { Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
-import { Differences } from './differences.ts'
+import { type Difference, Differences } from './differences.ts'
 import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
 import { analyse, type Structure } from './structure.ts'
@@ -44,7 +44,7 @@ export class Model {
   }
 
   /** Temperature differences that must not be below zero, K, as far as they are known. */
-  differences(): readonly { owner: string; name: string; value: number }[] {
+  differences(): readonly Difference[] {
     this.differencesRead ??= new Differences(this.system)
     return this.differencesRead.read(this.values, this.program.lost)
   }
@@ -78,6 +78,17 @@ export class Model {
     const iterations = this.program.solve((known) => this.fillStarts(known))
     this.isWarm = this.firstFailure() < 0
     return iterations
+  }
+
+  /**
+   * Solves again from another of the starts, in case a block has a further answer. Returns whether
+   * there was one; the values are then those.
+   */
+  solveOtherwise(choice: number): boolean {
+    this.program.forget()
+    this.program.solve((known) => this.fillStarts(known), choice)
+    this.isWarm = this.firstFailure() < 0
+    return this.isWarm
   }
 
   private fillStarts(known: (index: number) => boolean): void {

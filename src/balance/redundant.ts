@@ -41,40 +41,57 @@ export function redundantEquations(system: System): ReadonlySet<number> {
   return redundant
 }
 
-function leaveOutMassBalances(system: System, redundant: Set<number>): void {
+export interface MassBalance {
+  /** Its place among the system's equations. */
+  readonly equation: number
+  readonly owner: string
+  /** Places of the streams in it. */
+  readonly streams: readonly number[]
+  /** It holds a port without a stream. */
+  readonly isOpen: boolean
+}
+
+/** The balances that sum flows with coefficients of plus or minus one. */
+export function massBalancesOf(system: System): MassBalance[] {
   const { layout, equations, variables } = system
   const placeOf = new Map(layout.streams.map((stream, k) => [stream.id, k]))
-  const circuits = new Partition(layout.streams.length)
-  /** By stream: how many of its two ends a mass balance closes. */
-  const closedEnds = new Int32Array(layout.streams.length)
-  const open = new Uint8Array(layout.streams.length)
-  const balances: { equation: number; streams: number[] }[] = []
+  const balances: MassBalance[] = []
   equations.forEach(({ equation, owner }, e) => {
     if (equation.role !== 'mass') return
-    const streams: number[] = []
-    let hasOpenPort = false
-    const placed = system.unitOf.get(owner)!
-    // The ports are asked, not the variables: a flow given as 0 or 1 is folded away.
     const used = new Set<number>()
     const take = (expression: Expression): void =>
       forEachVariable(expression, ({ index }) => used.add(index))
     take(equation.left)
     take(equation.right)
-    for (const index of used) if (variables[index]!.isPhantom) hasOpenPort = true
-    for (const id of placed.streams.values()) {
+    const streams: number[] = []
+    // The ports are asked, not the variables: a flow given as 0 or 1 is folded away.
+    for (const id of system.unitOf.get(owner)!.streams.values()) {
       const place = placeOf.get(id)!
       const flow = system.streamBase[place]!
       if (used.has(flow) || isFolded(system, flow)) streams.push(place)
     }
+    const isOpen = [...used].some((index) => variables[index]!.isPhantom)
+    balances.push({ equation: e, owner, streams, isOpen })
+  })
+  return balances
+}
+
+function leaveOutMassBalances(system: System, redundant: Set<number>): void {
+  const count = system.layout.streams.length
+  const circuits = new Partition(count)
+  /** By stream: how many of its two ends a mass balance closes. */
+  const closedEnds = new Int32Array(count)
+  const open = new Uint8Array(count)
+  const balances = massBalancesOf(system).filter(({ streams }) => streams.length > 0)
+  for (const { streams, isOpen } of balances) {
     for (const place of streams) {
       closedEnds[place]!++
       circuits.join(streams[0]!, place)
-      if (hasOpenPort) open[place] = 1
+      if (isOpen) open[place] = 1
     }
-    if (streams.length > 0) balances.push({ equation: e, streams })
-  })
+  }
   const isOpen = new Map<number, boolean>()
-  for (let place = 0; place < layout.streams.length; place++) {
+  for (let place = 0; place < count; place++) {
     const root = circuits.find(place)
     if (closedEnds[place]! < 2 || open[place]) isOpen.set(root, true)
     else if (!isOpen.has(root)) isOpen.set(root, false)

@@ -1,8 +1,8 @@
 import type { Expression } from '../equations/expression/index.ts'
 import type { SecondLawRole, TotalName } from '../units/kind.ts'
 import type { Model } from './model.ts'
+import type { PlacedUnit } from './placed-unit.ts'
 import { type States, streamResults } from './states.ts'
-import type { PlacedUnit } from './system.ts'
 
 /** Second law and closure of one unit, SI; NaN where it is not determined or has no meaning. */
 export interface UnitAudit {

@@ -1,3 +1,4 @@
+import { mostStarts } from '../equations/newton/index.ts'
 import type { Finding, Status } from '../messages.ts'
 import { checkAnswer } from './checks.ts'
 import { diagnose } from './diagnosis.ts'
@@ -21,9 +22,12 @@ export function solve(model: Model, results: Results = new Results(model)): Bala
   const iterations = model.solve()
   results.refresh()
   const diagnosis = diagnose(model)
-  const checks = checkAnswer(model, results)
-  const impossible = checks.some((finding) => finding.severity === 'error')
-  const status = diagnosis.status === 'solved' && impossible ? 'infeasible' : diagnosis.status
+  let checks = checkAnswer(model, results)
+  if (diagnosis.status === 'solved' && isImpossible(checks) && model.program.hasChoice) {
+    checks = seekPossible(model, results) ?? checks
+  }
+  const status =
+    diagnosis.status === 'solved' && isImpossible(checks) ? 'infeasible' : diagnosis.status
   const undetermined: string[] = []
   const unbounded: string[] = []
   const { variables } = model.system
@@ -43,4 +47,26 @@ export function solve(model: Model, results: Results = new Results(model)): Bala
     unbounded,
     iterations,
   }
+}
+
+function isImpossible(checks: readonly Finding[]): boolean {
+  return checks.some((finding) => finding.severity === 'error')
+}
+
+/**
+ * The equations may have another answer that is possible where the first is not. Leaves the first
+ * in place when there is none.
+ */
+function seekPossible(model: Model, results: Results): Finding[] | undefined {
+  const first = model.values.slice()
+  for (let choice = 1; choice < mostStarts; choice++) {
+    if (!model.solveOtherwise(choice)) continue
+    results.refresh()
+    const checks = checkAnswer(model, results)
+    if (!isImpossible(checks)) return checks
+  }
+  model.values.set(first)
+  model.solveOtherwise(0)
+  results.refresh()
+  return undefined
 }

@@ -1,3 +1,4 @@
+import type { Expression } from '../equations/expression/index.ts'
 import {
   enthalpyAtPressureEntropy,
   enthalpyAtPressureTemperature,
@@ -11,8 +12,11 @@ import {
   stateAtPressureEnthalpy,
 } from '../steam/index.ts'
 import type { PortDescription, Start } from '../units/kind.ts'
+import { ExpressionValues } from './expression-values.ts'
+import type { PlacedUnit } from './placed-unit.ts'
 import { ordinaryValue } from './ranges.ts'
-import type { PlacedUnit, System } from './system.ts'
+import { balanceFlows } from './start-flows.ts'
+import type { System } from './system.ts'
 
 /** Superheated steam of which nothing is known, J/kg. */
 const superheatedEnthalpy = 3.4e6
@@ -20,6 +24,10 @@ const superheatedEnthalpy = 3.4e6
 const bleedShare = 0.06
 /** How far below saturation heated water starts, K. */
 const nearSaturation = 3
+/** Power of a plant for each kg/s of its main steam, J/kg. */
+const specificPower = 1.1e6
+/** Passes over the equations that give a quantity outright. */
+const outrightPasses = 4
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
 
@@ -252,13 +260,10 @@ export class Starts {
     return h1 - expansionEfficiency * (h1 - this.result[0]!)
   }
 
+  /** Flows of ordinary size, then shifted as little as it takes for the balances to close. */
   private fillFlows(): void {
     const { system, values } = this
-    let largest = 0
-    for (const base of system.streamBase) {
-      if (this.known(base) && Math.abs(values[base]!) > largest) largest = Math.abs(values[base]!)
-    }
-    if (largest === 0) largest = 100
+    const largest = this.mainFlow()
     for (const placed of system.units) {
       for (const { description, base } of this.portsOf(placed)) {
         if (this.known(base)) continue
@@ -266,17 +271,47 @@ export class Starts {
         values[base] = isBleed ? bleedShare * largest : largest
       }
     }
+    balanceFlows(system, values, this.known, bleedShare * largest)
   }
 
-  /** Powers and heats in the proportions of a plant, so that their differences and ratios make sense. */
+  /** The largest known flow, else what a known power or heat would take. */
+  private mainFlow(): number {
+    const { system, values } = this
+    let largest = 0
+    for (const base of system.streamBase) {
+      if (this.known(base) && Math.abs(values[base]!) > largest) largest = Math.abs(values[base]!)
+    }
+    if (largest > 0) return largest
+    let power = 0
+    system.variables.forEach(({ description }, index) => {
+      const isPower = description.dimension === 'power' || description.dimension === 'heatFlow'
+      if (isPower && this.known(index)) power = Math.max(power, Math.abs(values[index]!))
+    })
+    return power > 0 ? power / specificPower : 100
+  }
+
+  /** What equations give outright follows from the first guesses: powers, heats, totals, ratios. */
   private fillQuantities(): void {
     const { system, values } = this
-    for (let v = 0; v < system.variables.length; v++) {
-      const { description, owner, isState } = system.variables[v]!
-      if (this.known(v) || isState) continue
-      if (description.dimension === 'power') {
-        values[v] = system.unitOf.get(owner)?.kind.shaft === 'driven' ? 1e5 : 1e7
-      } else if (description.dimension === 'heatFlow') values[v] = 3e7
+    const targets: number[] = []
+    const expressions: Expression[] = []
+    for (const { equation } of system.equations) {
+      const { left, right } = equation
+      if (left.kind !== 'variable') continue
+      if (system.variables[left.index]!.isState || this.known(left.index)) continue
+      targets.push(left.index)
+      expressions.push(right)
+    }
+    const outright = new ExpressionValues(expressions, system.variables.length)
+    outright.load(values)
+    // Totals follow from parts: a few passes carry values through all of them.
+    for (let pass = 0; pass < outrightPasses; pass++) {
+      targets.forEach((index, place) => {
+        const value = outright.read(place)
+        if (value === undefined) return
+        values[index] = value
+        outright.set(index, value)
+      })
     }
   }
 }

@@ -3,6 +3,7 @@ import {
   type Equation,
   type Expression,
   equal,
+  minus,
   plus,
   type Variable,
   variable,
@@ -12,6 +13,7 @@ import type { Dimension } from '../quantity/dimension.ts'
 import {
   dryness,
   entropy,
+  saturationTemperature,
   subcooling,
   superheat,
   temperature,
@@ -20,7 +22,6 @@ import {
 import { kindNamed, plantQuantities, quantitiesOfShaft, streamQuantities } from '../units/index.ts'
 import {
   numberedPort,
-  type PortDescription,
   type PortExpressions,
   type QuantityDescription,
   type QuantityTable,
@@ -33,6 +34,7 @@ import { plantEquations } from '../units/plant-totals.ts'
 import { shaftEquations } from '../units/shaft.ts'
 import { curveOf } from './given-curve.ts'
 import { joinsFiredUnitAndTurbine } from './lines.ts'
+import type { Connection, PlacedUnit } from './placed-unit.ts'
 
 /** A quantity of the layout that takes part in the equations. */
 export interface SystemVariable {
@@ -52,29 +54,6 @@ export interface SystemEquation {
   readonly equation: Equation
   /** This is a given curve of that variable, or the steam relation of a given stream quantity. */
   readonly origin: 'unit' | 'steam' | 'curve'
-}
-
-/** A stream at a port. */
-export interface Connection {
-  /** Numbered name of the port. */
-  readonly name: string
-  /** Its name in the kind's table. */
-  readonly port: string
-  readonly description: PortDescription
-  readonly stream: string
-}
-
-/** A unit with its kind, its shape and the streams at its ports. */
-export interface PlacedUnit {
-  readonly unit: Unit
-  readonly kind: UnitKind
-  readonly shape: Shape
-  /** Stream ids by numbered port name. */
-  readonly streams: ReadonlyMap<string, string>
-  /** The same by port, with what the kind says of it, in the kind's order. */
-  readonly connections: readonly Connection[]
-  /** Port names that need a stream and have none. */
-  readonly open: readonly string[]
 }
 
 /** What a unit exchanges with the world beside its streams: plain quantities or constants. */
@@ -234,31 +213,43 @@ class Assembly {
     const m = this.add(`${id}.m`, owner, streamQuantities.m, given.m, !isPhantom, isPhantom)
     const p = this.add(`${id}.p`, owner, streamQuantities.p, given.p, !isPhantom, isPhantom)
     const h = this.add(`${id}.h`, owner, streamQuantities.h, given.h, !isPhantom, isPhantom)
+    const quantities = new Map<StreamRelation, Expression>()
     const related = (name: StreamRelation): Expression => {
       const relation = streamRelations[name](p, h)
       const value = given[name]
       if (value === undefined) return relation
       const quantity = this.add(`${id}.${name}`, owner, streamQuantities[name], value)
+      quantities.set(name, quantity)
+      // Temperature beside another distance from saturation fixes the pressure outright.
+      const saturated = name === 'T' ? this.saturationBy(quantity, quantities, given) : undefined
       this.equations.push({
         owner,
         key: `${name}Relation`,
-        equation: equal(quantity, relation),
+        equation: saturated
+          ? equal(saturationTemperature(p), saturated)
+          : equal(quantity, relation),
         origin: 'steam',
       })
       return quantity
     }
     related('superheat')
     related('subcooling')
-    return {
-      id,
-      m,
-      p,
-      h,
-      T: related('T'),
-      s: related('s'),
-      x: related('x'),
-      v: volume(p, h),
-    }
+    const x = related('x')
+    return { id, m, p, h, T: related('T'), s: related('s'), x, v: volume(p, h) }
+  }
+
+  /** The saturation temperature that a given temperature and what is given beside it imply. */
+  private saturationBy(
+    T: Expression,
+    quantities: ReadonlyMap<StreamRelation, Expression>,
+    given: Readonly<Record<string, Given>>,
+  ): Expression | undefined {
+    const superheated = quantities.get('superheat')
+    if (superheated) return minus(T, superheated)
+    const subcooled = quantities.get('subcooling')
+    if (subcooled) return plus(T, subcooled)
+    const { x } = given
+    return typeof x === 'number' && x >= 0 && x <= 1 ? T : undefined
   }
 
   private placeUnit(unit: Unit, streams: ReadonlyMap<string, string>): PlacedUnit {

@@ -1,12 +1,4 @@
-import {
-  constant,
-  divide,
-  equal,
-  massBalance,
-  minus,
-  plus,
-  times,
-} from '../equations/expression/index.ts'
+import { constant, equal, massBalance, minus, plus, times } from '../equations/expression/index.ts'
 import { liquidEnthalpy } from '../steam/operations.ts'
 import {
   commonPractice,
@@ -87,7 +79,7 @@ export const boiler = defineUnitKind({
       pressureLoss: pressureLoss(feedwater, steam, q.pressureLossFraction),
       lossLaw: lossLaw(feedwater, steam, q.lossConstant),
       energyBalance: equal(q.heat, minus(energyOut, energyIn)),
-      fuel: equal(q.fuelHeat, divide(q.heat, q.efficiency)),
+      fuel: equal(times(q.fuelHeat, q.efficiency), q.heat),
       ...(blowdown && {
         blowdownFlow: equal(blowdown.m, times(q.blowdownFraction, steam.m)),
         blowdownPressure: equal(blowdown.p, q.drumPressure),

@@ -1,13 +1,12 @@
 import {
   constant,
-  divide,
   type Expression,
   equal,
   minus,
   signedSquare,
   times,
 } from '../equations/expression/index.ts'
-import type { PortDescription, PortExpressions, QuantityDescription } from './kind.ts'
+import type { PortExpressions, QuantityDescription } from './kind.ts'
 
 /*
  * What several kinds declare alike: ports and quantities in the same words, and the relations that
@@ -17,8 +16,6 @@ import type { PortDescription, PortExpressions, QuantityDescription } from './ki
 export const commonPractice = 'common practice'
 
 export const one = constant(1)
-
-export const port = <const D extends PortDescription>(description: D): D => description
 
 export const pressureLossFraction = (usual: number, range: readonly [number, number]) =>
   ({
@@ -95,9 +92,4 @@ export function lossLaw(
 /** m h of a stream, W. */
 export function energy(stream: PortExpressions): Expression {
   return times(stream.m, stream.h)
-}
-
-/** Heat over efficiency, W. */
-export function fuelFor(heatFlow: Expression, efficiency: Expression): Expression {
-  return divide(heatFlow, efficiency)
 }

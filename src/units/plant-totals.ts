@@ -1,11 +1,10 @@
 import {
-  constant,
-  divide,
   type Equation,
   type Expression,
   equal,
   minus,
   plus,
+  times,
 } from '../equations/expression/index.ts'
 import type { QuantityTable, TotalName } from './kind.ts'
 
@@ -165,6 +164,8 @@ export function plantEquations(
   quantity: (name: PlantQuantity) => Expression,
 ): Record<string, Equation> {
   const q = quantity
+  const ratio = (name: PlantQuantity, part: Expression, whole: Expression): Equation =>
+    equal(times(q(name), whole), part)
   return {
     heatInput: equal(q('heatInput'), sum('heatInput')),
     turbineHeat: equal(
@@ -181,18 +182,17 @@ export function plantEquations(
     auxiliaryPower: equal(q('auxiliaryPower'), plus(sum('electricPower'), q('otherAuxiliary'))),
     netPower: equal(q('netPower'), minus(q('grossPower'), q('auxiliaryPower'))),
     heatRejected: equal(q('heatRejected'), sum('heatRejected')),
-    cycleEfficiency: equal(q('cycleEfficiency'), divide(q('cyclePower'), q('heatInput'))),
-    grossTurbineHeatRate: equal(
-      q('grossTurbineHeatRate'),
-      divide(q('turbineHeat'), q('grossPower')),
+    // Ratios as products: with the ratio given they are linear in what it relates.
+    cycleEfficiency: ratio('cycleEfficiency', q('cyclePower'), q('heatInput')),
+    grossTurbineHeatRate: ratio('grossTurbineHeatRate', q('turbineHeat'), q('grossPower')),
+    netTurbineHeatRate: ratio(
+      'netTurbineHeatRate',
+      q('turbineHeat'),
+      minus(q('grossPower'), sum('electricPower')),
     ),
-    netTurbineHeatRate: equal(
-      q('netTurbineHeatRate'),
-      divide(q('turbineHeat'), minus(q('grossPower'), sum('electricPower'))),
-    ),
-    unitHeatRate: equal(q('unitHeatRate'), divide(q('fuelHeat'), q('netPower'))),
-    unitEfficiency: equal(q('unitEfficiency'), divide(constant(1), q('unitHeatRate'))),
-    backWorkRatio: equal(q('backWorkRatio'), divide(q('pumpPower'), q('turbinePower'))),
-    steamRate: equal(q('steamRate'), divide(sum('boilerSteam'), q('netPower'))),
+    unitHeatRate: ratio('unitHeatRate', q('fuelHeat'), q('netPower')),
+    unitEfficiency: ratio('unitEfficiency', q('netPower'), q('fuelHeat')),
+    backWorkRatio: ratio('backWorkRatio', q('pumpPower'), q('turbinePower')),
+    steamRate: ratio('steamRate', sum('boilerSteam'), q('netPower')),
   }
 }

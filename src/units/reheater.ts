@@ -1,4 +1,4 @@
-import { divide, equal, massBalance, minus, plus } from '../equations/expression/index.ts'
+import { equal, massBalance, minus, plus, times } from '../equations/expression/index.ts'
 import {
   efficiencyOfFiring,
   energy,
@@ -44,7 +44,7 @@ export const reheater = defineUnitKind({
       q.heat,
       minus(energy(outlet), spray ? plus(energy(inlet), energy(spray)) : energy(inlet)),
     ),
-    fuel: equal(q.fuelHeat, divide(q.heat, q.efficiency)),
+    fuel: equal(times(q.fuelHeat, q.efficiency), q.heat),
   }),
   totals: ({ quantities: q }) => ({ heatInput: q.heat, fuelHeat: q.fuelHeat }),
   freezing: () => [{ quantity: 'lossConstant', frees: ['pressureLossFraction'] }],

@@ -1,5 +1,6 @@
 import { portNamed } from '../../units/kind.ts'
-import type { PlacedUnit, System } from '../system.ts'
+import type { PlacedUnit } from '../placed-unit.ts'
+import type { System } from '../system.ts'
 import { PressureClasses } from './pressure-classes.ts'
 
 /**

@@ -1,7 +1,8 @@
 import type { Given, Layout, Unit } from '../../plant/document.ts'
 import { type FreezeRule, portNamed } from '../../units/kind.ts'
+import type { PlacedUnit } from '../placed-unit.ts'
 import type { Balance } from '../solve.ts'
-import type { PlacedUnit, System } from '../system.ts'
+import type { System } from '../system.ts'
 import { freedPressures } from './freed-pressures.ts'
 
 /** Givens of a layout by path, being changed on the way to a case. */

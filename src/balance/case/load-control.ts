@@ -1,6 +1,6 @@
 import type { Case } from '../../plant/document.ts'
+import type { PlacedUnit } from '../placed-unit.ts'
 import type { Balance } from '../solve.ts'
-import type { PlacedUnit } from '../system.ts'
 import type { GivenTable } from './freeze.ts'
 
 /** Quantities freed so that the load can change; empty where nothing fits. */

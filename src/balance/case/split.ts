@@ -1,7 +1,7 @@
 import type { Layout, Unit } from '../../plant/document.ts'
 import { Model } from '../model.ts'
+import type { PlacedUnit } from '../placed-unit.ts'
 import { type Balance, solve } from '../solve.ts'
-import type { PlacedUnit } from '../system.ts'
 import type { GivenTable } from './freeze.ts'
 import { PressureClasses } from './pressure-classes.ts'
 

@@ -4,7 +4,7 @@ import { Factors, SparseLU } from './sparse-lu.ts'
 import { type Bounds, type Step, StepOutcome, stepOutcome } from './step.ts'
 
 /** Starts tried before giving up. */
-const mostStarts = 6
+export const mostStarts = 6
 /** Steps aside from points where the linearised block is singular. */
 const mostNudges = 4
 /** Newton iterations from one start before giving up. */
@@ -85,7 +85,7 @@ export class BlockStep implements Step {
     this.upper = bounds.upper
   }
 
-  run(tape: Tape): number {
+  run(tape: Tape, choice: number): number {
     this.iterations = 0
     const before = tape.evaluate(this.prelude)
     if (before !== Outcome.fine) return stepOutcome(before)
@@ -97,7 +97,7 @@ export class BlockStep implements Step {
     // Sensible answers are looked for first, from several starts; then any answer at all.
     for (let attempt = 0; attempt < 2 * mostStarts; attempt++) {
       const isSensible = attempt < mostStarts
-      this.restart(tape, attempt % mostStarts)
+      this.restart(tape, (attempt + choice) % mostStarts)
       const outcome = this.iterate(
         tape,
         isSensible ? bounds.sensibleLower : bounds.lower,

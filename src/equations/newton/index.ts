@@ -1,3 +1,4 @@
+export { mostStarts } from './block.ts'
 export { GradientProgram } from './gradient.ts'
 export { type Block, Program } from './program.ts'
 export { Factors, SparseLU } from './sparse-lu.ts'

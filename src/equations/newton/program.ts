@@ -70,7 +70,7 @@ export class Program {
    * Returns the number of Newton iterations of the hardest block. `guess` is called once before
    * the first block that iterates, with a test of which variables are known by then.
    */
-  solve(guess?: (known: (index: number) => boolean) => void): number {
+  solve(guess?: (known: (index: number) => boolean) => void, choice = 0): number {
     let iterations = 0
     let guessed = guess === undefined
     for (let k = 0; k < this.steps.length; k++) {
@@ -79,7 +79,7 @@ export class Program {
         guessed = true
         guess!(this.knownBefore(k))
       }
-      const used = this.run(k)
+      const used = this.run(k, choice)
       if (used > iterations) iterations = used
     }
     this.changed.fill(0)
@@ -95,6 +95,11 @@ export class Program {
     return (index) => !unknown.has(index) && this.lost[index] === 0
   }
 
+  /** Some block may have more than one answer. */
+  get hasChoice(): boolean {
+    return this.steps.some((step) => step.needsGuess)
+  }
+
   /** Solves everything again at the next call, whatever has changed. */
   forget(): void {
     this.fresh = true
@@ -106,13 +111,13 @@ export class Program {
     return false
   }
 
-  private run(k: number): number {
+  private run(k: number, choice: number): number {
     const step = this.steps[k]!
     const { variables } = this.blocks[k]!
     const inputs = this.inputs[k]!
     let missing = false
     for (let i = 0; i < inputs.length; i++) if (this.lost[inputs[i]!]) missing = true
-    const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape)
+    const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape, choice)
     this.outcomes[k] = outcome
     const state = outcome === StepOutcome.solved ? 0 : outcome === StepOutcome.unbounded ? 2 : 1
     for (const index of variables) {

@@ -55,8 +55,11 @@ export interface Bounds {
 }
 
 export interface Step {
-  /** Solves the block from the values at hand; returns a `StepOutcome`. */
-  run(tape: Tape): number
+  /**
+   * Solves the block from the values at hand; returns a `StepOutcome`. `choice` picks among the
+   * other starts that the bounds offer, where there may be more than one answer.
+   */
+  run(tape: Tape, choice: number): number
   /** The answer may depend on where it starts. */
   readonly needsGuess: boolean
   /** Newton iterations of the last run. */
