@@ -9,7 +9,7 @@ import { Quantity } from '../number/Quantity.tsx'
 import { QuantityField } from '../number/QuantityField.tsx'
 import { usePhase, useValue } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
-import { useSelectionStore } from '../store/selection-store.ts'
+import { useHovered, useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { Swatch } from './Swatch.tsx'
 import { type StreamRow, stateRows } from './stream-rows.ts'
@@ -64,7 +64,7 @@ function Phase({ id }: { id: string }) {
 
 const Row = memo(function Row({ row, index }: { row: StreamRow; index: number }) {
   const { id, name, chosen } = row
-  const hovered = useSelectionStore((state) => state.hovered === id)
+  const hovered = useHovered(id)
   const { select, hover } = useSelectionStore.getState()
   return (
     <tr

@@ -2,7 +2,7 @@ import { memo, useMemo } from 'react'
 import { type Dimension, formatQuantity, unitOf } from '../../src/document.ts'
 import { readValue, useBalanceStore } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
-import { useSelectionStore } from '../store/selection-store.ts'
+import { useHovered, useSelected, useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { type UnitStreams, unitBalance, unitStreams } from './unit-balances.ts'
 
@@ -26,8 +26,8 @@ function Cell({
 const Row = memo(function Row({ its }: { its: UnitStreams }) {
   const { id, label } = its.unit
   useBalanceStore((state) => state.balance)
-  const selected = useSelectionStore((state) => state.selected.includes(id))
-  const hovered = useSelectionStore((state) => state.hovered === id)
+  const selected = useSelected(id)
+  const hovered = useHovered(id)
   const { select, hover } = useSelectionStore.getState()
   const { massIn, massOut, energyIn, energyOut } = unitBalance(its, readValue)
   const both = energyIn !== null && energyOut !== null
