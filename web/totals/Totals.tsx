@@ -9,7 +9,7 @@ import { Mark } from '../number/Mark.tsx'
 import { useNumberText } from '../number/Quantity.tsx'
 import { useBalanceStore, useValue, useValueBefore } from '../store/balance-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
-import { useUnitChoice } from '../store/settings-store.ts'
+import { useSettingsStore, useUnitChoice } from '../store/settings-store.ts'
 import './totals.css'
 
 interface Total {
@@ -127,9 +127,9 @@ function LastEdit() {
 
 /** The plant's totals, each with what the last edit did to it. */
 export function Totals() {
-  const stale = useBalanceStore((state) => state.trouble !== null)
+  const unitSet = useSettingsStore((state) => state.unitSet)
   return (
-    <section className="totals" aria-label="Plant totals" data-stale={stale}>
+    <section className="totals" aria-label="Plant totals" data-units={unitSet}>
       <div className="totals-chief">
         {chief.map((total) => (
           <Chief key={total.name} {...total} />
