@@ -111,6 +111,9 @@ const LIQUID = 0
 const VAPOUR = 1
 const SUPERCRITICAL = 2
 
+/** How far a state of region 3 foretells another one, J/kg. */
+const nearEnthalpy = 1e5
+
 // Bounds of h (J/kg) along the borders 1/3 and 2/3 from 16.529 to 100 MPa.
 const leastEnthalpy13 = 1.55e6
 const mostEnthalpy13 = 1.68e6
@@ -377,7 +380,7 @@ function solveDense(record: Float64Array, at: number, side: number): boolean {
   const liquidSide = side === LIQUID || (side === SUPERCRITICAL && onLiquidSide(p, h))
   sought[Sought.p] = p
   sought[Sought.value] = h
-  if (record[at + atRegion] === 3) {
+  if (record[at + atRegion] === 3 && near(record, at, p, h)) {
     foretell(record, at, 3)
     const v =
       (record[at + atV] as number) +
@@ -385,7 +388,7 @@ function solveDense(record: Float64Array, at: number, side: number): boolean {
       (record[at + atVh] as number) * (h - (record[at + atH] as number))
     sought[Sought.rho] = 1 / v
     sought[Sought.T] = asked[askGuess] as number
-    if (region3AtEnthalpy(field, liquidSide)) {
+    if (region3AtEnthalpy(field, liquidSide) && (field[Field.pRho] as number) > 0) {
       if (side === SUPERCRITICAL) return true
       // A first guess from across the two-phase zone may settle there: only the own side counts.
       const saturation = at + atSaturation
@@ -396,6 +399,14 @@ function solveDense(record: Float64Array, at: number, side: number): boolean {
   }
   sought[Sought.rho] = 0
   return region3AtEnthalpy(field, liquidSide)
+}
+
+/** Whether the record's state lies so near that its partials point at the one asked for. */
+function near(record: Float64Array, at: number, p: number, h: number): boolean {
+  return (
+    Math.abs(p - (record[at + atP] as number)) < 0.1 * p &&
+    Math.abs(h - (record[at + atH] as number)) < nearEnthalpy
+  )
 }
 
 /** Writes a state of region 3 from `field`. */

@@ -266,6 +266,9 @@ function stateAtEnthalpyEntropy(h: number, s: number): SteamState | SteamRange {
   return stateOf(bestP, h)
 }
 
+/** How far beyond 0 and 1 a dryness fraction still counts as saturated. */
+const besideWet = 1e-8
+
 /** Points of an isotherm that are looked at between its ends, to tell one answer from several. */
 const ISOTHERM_POINTS = 160
 
@@ -292,13 +295,17 @@ function stateOnIsotherm(
     const wetLow = saturation[slot] as number
     const wetHigh = saturation[slot + 1] as number
     branch(T, lowestPressure, p * (1 - 1e-9), value, of, answers, extremes)
-    if (value >= wetLow && value <= wetHigh) {
-      answers.push(wetState(T, (value - wetLow) / (wetHigh - wetLow)))
-    }
+    const x = (value - wetLow) / (wetHigh - wetLow)
+    if (x >= 0 && x <= 1) answers.push(wetState(T, x))
     extremes.low = Math.min(extremes.low, wetLow)
     extremes.high = Math.max(extremes.high, wetHigh)
     branch(T, p * (1 + 1e-9), most, value, of, answers, extremes)
+    // The branches end a little before saturation: what lies between counts as saturated.
+    if (answers.length === 0 && x > -besideWet && x < 1 + besideWet) {
+      answers.push(wetState(T, x < 0.5 ? 0 : 1))
+    }
   } else branch(T, lowestPressure, most, value, of, answers, extremes)
+  if (answers.length === 0) closeToEnd(T, most, value, of, answers)
   const [first] = answers
   if (first === undefined) {
     const low = !(value >= extremes.low)
@@ -356,6 +363,22 @@ function branch(
     f0 = f1
     p1 = p2
     f1 = f2
+  }
+}
+
+/** The state at the isotherm's end where the value lies beyond it by no more than round-off. */
+function closeToEnd(
+  T: number,
+  most: number,
+  value: number,
+  of: number,
+  answers: SteamState[],
+): void {
+  for (const p of [lowestPressure, most]) {
+    if (pointAtPressureTemperature(point, p, T) !== Outcome.fine) continue
+    const end = point[of] as number
+    const scale = of === Point.s ? 1e3 : 1e6
+    if (Math.abs(value - end) <= 1e-11 * Math.max(scale, Math.abs(end))) push(T, p, answers)
   }
 }
 

@@ -135,6 +135,7 @@ export interface PlainField {
   h: number
   u: number
   s: number
+  cv: number
   cp: number
   w: number
   pRho: number
@@ -158,6 +159,7 @@ export function plainRegion3(rho: number, T: number): PlainField {
     h: R * T * (tau * f.fy + delta * f.fx),
     u: R * T * tau * f.fy,
     s: R * (tau * f.fy - f.f),
+    cv,
     cp: cv + (T * pT * pT) / (rho * rho * pRho),
     w: Math.sqrt(pRho + (T * pT * pT) / (rho * rho * cv)),
     pRho,
