@@ -37,6 +37,7 @@ export type {
   QuantityDescription,
   QuantityTable,
 } from './units/kind.ts'
+export { phaseNames } from './units/phases.ts'
 
 /** What every stream has; all of these can be given. */
 export const streamQuantities: QuantityTable = standardCatalogue.streamQuantities

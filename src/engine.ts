@@ -1,3 +1,230 @@
 /** Door for the worker and the command line: everything that solves. */
+
+import type { ProcessName } from './balance/answer.ts'
+import { solveCase } from './balance/case/solve-case.ts'
+import { curvesOf, isobarsOf } from './balance/chart-data.ts'
+import { Model } from './balance/model.ts'
+import { domePoints } from './balance/paths.ts'
+import { Results } from './balance/results.ts'
+import { type Balance, solve } from './balance/solve.ts'
+import type { Answer, BalanceMessage, NamesMessage, Request } from './messages.ts'
+import type { Layout } from './plant/document.ts'
+
+/** Answers the window's requests; keeps the last model, so that an edit of a value solves warm. */
+export interface Engine {
+  answer(request: Request): Answer[]
+}
+
+/** `clock` tells the time in ms. */
+export function createEngine(clock: () => number = Date.now): Engine {
+  let kept: { model: Model; results: Results; signature: string; number: number } | undefined
+  let counter = 0
+  let domeSent = false
+  let namesSent = 0
+
+  /** A case is solved afresh: its givens follow from the design's solution. */
+  function caseOf(request: Request): { balance: Balance; number: number } | string {
+    const solved = solveCase(request.plant, request.layout, request.case)
+    if (solved.outcome === 'unusable') return solved.message
+    const { balance, remarks } = solved
+    counter++
+    kept = undefined
+    return {
+      balance: { ...balance, findings: [...remarks, ...balance.findings] },
+      number: counter,
+    }
+  }
+
+  function modelFor(layout: Layout): { model: Model; results: Results; number: number } {
+    const signature = signatureOf(layout)
+    if (kept !== undefined && kept.signature === signature && update(kept.model, layout))
+      return kept
+    const model = new Model(layout)
+    counter++
+    kept = { model, results: new Results(model), signature, number: counter }
+    return kept
+  }
+
+  return {
+    answer(request) {
+      const start = clock()
+      const answers: Answer[] = []
+      const layout = request.plant.layouts.find((one) => one.id === request.layout)
+      if (layout === undefined) {
+        return [
+          {
+            type: 'unusable',
+            sequence: request.sequence,
+            message: `The plant has no layout ${request.layout}.`,
+          },
+        ]
+      }
+      if (!domeSent) {
+        domeSent = true
+        answers.push({ type: 'dome', points: domePoints() })
+      }
+      try {
+        let balance: Balance
+        let number: number
+        if (isCase(layout, request.case)) {
+          const solved = caseOf(request)
+          if (typeof solved === 'string') {
+            return [...answers, { type: 'unusable', sequence: request.sequence, message: solved }]
+          }
+          balance = solved.balance
+          number = solved.number
+        } else {
+          const found = modelFor(layout)
+          balance = solve(found.model, found.results)
+          number = found.number
+        }
+        if (namesSent !== number) {
+          namesSent = number
+          answers.push(namesOf(balance, number))
+        }
+        answers.push({
+          ...balanceMessage(request, balance, number),
+          milliseconds: clock() - start,
+        })
+      } catch (error) {
+        // A programming mistake must not leave the window waiting for an answer.
+        kept = undefined
+        answers.push({
+          type: 'unusable',
+          sequence: request.sequence,
+          message: `The balance failed: ${error instanceof Error ? error.message : String(error)}`,
+        })
+      }
+      return answers
+    },
+  }
+}
+
+/** Whether a case changes anything: the design case of a layout only names it. */
+function isCase(layout: Layout, id: string | null): boolean {
+  const chosen = layout.cases.find((one) => one.id === id)
+  if (chosen === undefined) return false
+  const { frozen, loadControl, given = {}, free = [], outOfService = [] } = chosen
+  return (
+    frozen === true ||
+    loadControl !== undefined ||
+    Object.keys(given).length > 0 ||
+    free.length > 0 ||
+    outOfService.length > 0
+  )
+}
+
+/** What must stay the same for a model to serve a layout with other values. */
+function signatureOf(layout: Layout): string {
+  const givens = (given: Layout['plant']['given']): string =>
+    Object.entries(given)
+      .map(([name, value]) =>
+        typeof value === 'number' ? name : `${name}:${JSON.stringify(value)}`,
+      )
+      .join(',')
+  return [
+    layout.id,
+    `${layout.ambient.T},${layout.ambient.p}`,
+    ...layout.units.map(
+      (unit) =>
+        `${unit.id}|${unit.kind}|${unit.label}|${JSON.stringify(unit.options ?? {})}|${givens(unit.given)}`,
+    ),
+    ...layout.streams.map(
+      (stream) =>
+        `${stream.id}|${stream.from}|${stream.to}|${stream.label ?? ''}|${givens(stream.given)}`,
+    ),
+    ...layout.shafts.map(
+      (shaft) =>
+        `${shaft.id}|${shaft.turbines}|${shaft.pumps}|${shaft.generator}|${shaft.label ?? ''}|${givens(shaft.given)}`,
+    ),
+    givens(layout.plant.given),
+  ].join(';')
+}
+
+/** Takes over the values of a layout with the same signature; false where one folds or unfolds. */
+function update(model: Model, layout: Layout): boolean {
+  const take = (owner: string, given: Layout['plant']['given']): boolean => {
+    for (const [name, value] of Object.entries(given)) {
+      if (typeof value !== 'number') continue
+      const index = model.system.indexOf.get(`${owner}.${name}`)
+      if (index !== undefined && !model.set(index, value)) return false
+    }
+    return true
+  }
+  return (
+    layout.units.every((unit) => take(unit.id, unit.given)) &&
+    layout.streams.every((stream) => take(stream.id, stream.given)) &&
+    layout.shafts.every((shaft) => take(shaft.id, shaft.given)) &&
+    take('plant', layout.plant.given)
+  )
+}
+
+function namesOf({ model, results }: Balance, structure: number): NamesMessage {
+  const processes: ProcessName[] = []
+  for (const { unit, kind, shape, streams } of model.system.units) {
+    for (const { from, to } of kind.paths(shape)) {
+      const first = streams.get(from)
+      const last = streams.get(to)
+      if (first !== undefined && last !== undefined) {
+        processes.push({ unit: unit.id, from: first, to: last })
+      }
+    }
+  }
+  return {
+    type: 'names',
+    structure,
+    paths: results.paths,
+    streams: model.system.layout.streams.map((stream) => stream.id),
+    processes,
+  }
+}
+
+function balanceMessage(
+  request: Request,
+  balance: Balance,
+  structure: number,
+): Omit<BalanceMessage, 'milliseconds'> {
+  const { model, results } = balance
+  const { missing, excess, equationCount, blocks } = model.structure
+  return {
+    type: 'balance',
+    sequence: request.sequence,
+    structure,
+    status: balance.status,
+    values: results.values.slice(),
+    phases: results.states.phases.slice(),
+    findings: balance.findings,
+    ledger: {
+      unknowns: equationCount + missing - excess,
+      equations: equationCount,
+      blocks: blocks.length,
+      iterations: balance.iterations,
+      missing,
+      excess,
+    },
+    closure: balance.closure,
+    undetermined: balance.undetermined,
+    unbounded: balance.unbounded,
+    curves: curvesOf(balance),
+    isobars: isobarsOf(balance),
+  }
+}
+
+/** Buffers that may be handed over instead of copied. */
+export function transferables(answer: Answer): ArrayBuffer[] {
+  if (answer.type === 'dome') return [answer.points.buffer as ArrayBuffer]
+  if (answer.type !== 'balance') return []
+  const { values, phases, curves, isobars } = answer
+  return [
+    values,
+    phases,
+    curves.points,
+    curves.starts,
+    curves.flows,
+    isobars.pressures,
+    isobars.points,
+    isobars.starts,
+  ].map((array) => array.buffer as ArrayBuffer)
+}
+
 export { type AskedBalance, balanceOf, balanceOfCase } from './balance/balance-of.ts'
-export { createEngine, type Engine, transferables } from './balance/engine.ts'

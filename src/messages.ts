@@ -1,60 +1,9 @@
 /** What the window and the worker say to each other. Types only. */
-import type { Given, Plant } from './plant/document.ts'
+import type { Finding, ProcessName, Status } from './balance/answer.ts'
+import type { Curves, Isobars } from './balance/chart-data.ts'
+import type { Plant } from './plant/document.ts'
 
-export type Status = 'solved' | 'underspecified' | 'overspecified' | 'infeasible' | 'notConverged'
-
-/** An edit that mends a finding: give the quantity (at `value` when one suggests itself) or free it. */
-export interface Remedy {
-  readonly action: 'give' | 'free'
-  readonly path: string
-  /** SI; the last value solved or the usual one, when there is one. */
-  readonly value?: Given
-}
-
-export interface Finding {
-  readonly severity: 'error' | 'caution' | 'remark'
-  readonly code: string
-  /** Ids of units, streams and shafts to highlight. */
-  readonly where: readonly string[]
-  /** Paths, those that a user would know first leading. */
-  readonly quantities: readonly string[]
-  /** What is so; figures in SI appear as `{path}` never: text is ready to read. */
-  readonly message: string
-  /** What to do about it. */
-  readonly advice?: string
-  readonly missing?: number
-  readonly excess?: number
-  readonly remedies?: readonly Remedy[]
-}
-
-/** A piece of a printed equation: text, a quantity that can be asked in turn, or a number. */
-export type Token = string | { readonly path: string } | { readonly constant: number }
-
-/** Where a number comes from. */
-export interface Origin {
-  readonly path: string
-  /**
-   * `given`; fixed by one equation `alone`, or `together` with the others of its block; a
-   * `property` read off solved quantities; `open` while nothing fixes it.
-   */
-  readonly how: 'given' | 'alone' | 'together' | 'property' | 'open'
-  /** Whose equation it is, and which. */
-  readonly owner?: string
-  readonly key?: string
-  readonly statement: readonly Token[]
-  /** Quantities solved at once with it. */
-  readonly with: readonly string[]
-  /** Quantities that went into the equation. */
-  readonly inputs: readonly string[]
-}
-
-/** One process of a unit on a chart. */
-export interface ProcessName {
-  readonly unit: string
-  /** Stream ids at its ends. */
-  readonly from: string
-  readonly to: string
-}
+export type { Finding, Origin, ProcessName, Remedy, Status, Token } from './balance/answer.ts'
 
 /** Window to worker. */
 export type Request = {
@@ -75,9 +24,6 @@ export interface NamesMessage {
   readonly processes: readonly ProcessName[]
 }
 
-/** Phase codes of `BalanceMessage.phases`. */
-export const phaseNames = ['none', 'liquid', 'wet', 'vapour', 'supercritical'] as const
-
 export interface BalanceMessage {
   readonly type: 'balance'
   readonly sequence: number
@@ -85,7 +31,7 @@ export interface BalanceMessage {
   readonly status: Status
   /** In the order of `paths`, SI; NaN stands for null and is never shown. */
   readonly values: Float64Array
-  /** In the order of `streams`; indexes of `phaseNames`. */
+  /** In the order of `streams`; indexes of `phaseNames` (document.ts). */
   readonly phases: Uint8Array
   readonly findings: readonly Finding[]
   readonly ledger: {
@@ -103,18 +49,8 @@ export interface BalanceMessage {
   } | null
   readonly undetermined: readonly string[]
   readonly unbounded: readonly string[]
-  /** Process paths as true states: triples s, T, h; process i has points starts[i] to starts[i + 1]. */
-  readonly curves: {
-    readonly points: Float64Array
-    readonly starts: Uint32Array
-    readonly flows: Float64Array
-  }
-  /** Lines of constant pressure of the plant, as triples s, T, h. */
-  readonly isobars: {
-    readonly pressures: Float64Array
-    readonly points: Float64Array
-    readonly starts: Uint32Array
-  }
+  readonly curves: Curves
+  readonly isobars: Isobars
   /** Time the worker took, ms. */
   readonly milliseconds: number
 }

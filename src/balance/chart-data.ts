@@ -1,13 +1,28 @@
-import type { BalanceMessage } from '../messages.ts'
 import { isobarPoints, isobarPressures, PointList, processPoints } from './paths.ts'
 import type { Balance } from './solve.ts'
 import { Phase } from './states.ts'
+
+/** Process paths as true states: triples s, T, h; path i has points starts[i] to starts[i + 1]. */
+export interface Curves {
+  readonly points: Float64Array
+  readonly starts: Uint32Array
+  /** Flow along each path, kg/s. */
+  readonly flows: Float64Array
+}
+
+/** Lines of constant pressure of the plant, as triples s, T, h. */
+export interface Isobars {
+  /** Pa. */
+  readonly pressures: Float64Array
+  readonly points: Float64Array
+  readonly starts: Uint32Array
+}
 
 /** Isobars reach at least this temperature, K. */
 const lowestTop = 620
 
 /** Every process of every unit as a path of true states, and the flow along it. */
-export function curvesOf({ model, results }: Balance): BalanceMessage['curves'] {
+export function curvesOf({ model, results }: Balance): Curves {
   const list = new PointList()
   const starts: number[] = [0]
   const flows: number[] = []
@@ -45,7 +60,7 @@ export function curvesOf({ model, results }: Balance): BalanceMessage['curves'] 
 }
 
 /** Lines of constant pressure through the plant's states, up to its highest temperature. */
-export function isobarsOf({ results }: Balance): BalanceMessage['isobars'] {
+export function isobarsOf({ results }: Balance): Isobars {
   const { states } = results
   const count = states.phases.length
   const pressures = new Float64Array(count)

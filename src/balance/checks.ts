@@ -1,5 +1,5 @@
-import type { Finding } from '../messages.ts'
 import type { Given, Layout } from '../plant/document.ts'
+import type { Finding } from './answer.ts'
 import { error, Wording } from './findings.ts'
 import type { Model } from './model.ts'
 import type { Results } from './results.ts'

@@ -1,8 +1,8 @@
-import type { Finding, Remedy } from '../messages.ts'
 import type { Given, Layout } from '../plant/document.ts'
 import { describeQuantity, labelOf } from '../plant/quantities.ts'
 import type { Dimension } from '../quantity/dimension.ts'
 import { formatQuantity } from '../quantity/format-quantity.ts'
+import type { Finding, Remedy } from './answer.ts'
 import type { Model } from './model.ts'
 
 /** What a user would know first leads: flows, pressures, temperatures, approaches, powers. */

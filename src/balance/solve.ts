@@ -1,5 +1,5 @@
 import { mostStarts } from '../equations/newton/index.ts'
-import type { Finding, Status } from '../messages.ts'
+import type { Finding, Status } from './answer.ts'
 import { checkAnswer } from './checks.ts'
 import { diagnose } from './diagnosis.ts'
 import type { Model } from './model.ts'

@@ -9,7 +9,7 @@ import {
 } from '../steam/index.ts'
 import type { Model } from './model.ts'
 
-/** Indexes of `phaseNames` in messages.ts. */
+/** Indexes of `phaseNames` of units/phases.ts. */
 export const Phase = { none: 0, liquid: 1, wet: 2, vapour: 3, supercritical: 4 } as const
 
 /** A state this close to saturation, relative to its enthalpy, is wet. */

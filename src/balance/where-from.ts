@@ -6,7 +6,7 @@ import {
   solveFor,
   variable,
 } from '../equations/expression/index.ts'
-import type { Origin, Token } from '../messages.ts'
+import type { Origin, Token } from './answer.ts'
 import type { Model } from './model.ts'
 import { auditNames } from './second-law.ts'
 import { streamResults } from './states.ts'

@@ -8,10 +8,10 @@ interface Props {
 
 const form: Form = { options: {}, counts: {} }
 const sketch = [
-  ['boiler', 8, 16],
-  ['turbine', 136, 24],
-  ['condenser', 232, 36],
-  ['pump', 176, 124],
+  ['boiler', 8, 16, ''],
+  ['turbine', 136, 24, ''],
+  ['condenser', 232, 36, ''],
+  ['pump', 176, 124, ' scale(-1 1) translate(-32 0)'],
 ] as const
 
 /** The empty canvas: three steps to a plant, or one that is there. */
@@ -20,11 +20,8 @@ export function EmptyCanvas({ onOpenExample, onOpenFile }: Props) {
     <div className="empty-canvas">
       <svg width={304} height={168} className="empty-sketch" aria-hidden="true">
         <path d="M40 16V4H144V30M184 74V96H208V20H264V40M264 96V140H204M180 140H40V120" />
-        {sketch.map(([kind, x, y]) => (
-          <g
-            key={kind}
-            transform={`translate(${x} ${y})${kind === 'pump' ? ' scale(-1 1) translate(-32 0)' : ''}`}
-          >
+        {sketch.map(([kind, x, y, mirrored]) => (
+          <g key={kind} transform={`translate(${x} ${y})${mirrored}`}>
             <UnitSymbol kind={kind} form={form} />
           </g>
         ))}

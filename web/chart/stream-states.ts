@@ -1,5 +1,5 @@
+import { phaseNames } from '../../src/document.ts'
 import type { BalanceMessage, NamesMessage } from '../../src/messages.ts'
-import { phaseNames } from '../../src/messages.ts'
 
 /** The state of a stream, SI; `m` and `x` are NaN where nothing fixes them. */
 export interface StreamState {

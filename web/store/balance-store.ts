@@ -1,10 +1,6 @@
 import { create } from 'zustand'
-import {
-  type BalanceMessage,
-  type DomeMessage,
-  type NamesMessage,
-  phaseNames,
-} from '../../src/messages.ts'
+import { phaseNames } from '../../src/document.ts'
+import type { BalanceMessage, DomeMessage, NamesMessage } from '../../src/messages.ts'
 
 export type Phase = (typeof phaseNames)[number]
 

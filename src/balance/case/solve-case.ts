@@ -1,6 +1,6 @@
-import type { Finding } from '../../messages.ts'
 import type { Case, Layout, Plant } from '../../plant/document.ts'
 import type { Overrides } from '../../plant/overrides.ts'
+import type { Finding } from '../answer.ts'
 import { Wording } from '../findings.ts'
 import { Model } from '../model.ts'
 import { type Balance, solve } from '../solve.ts'
