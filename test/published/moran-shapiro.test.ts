@@ -4,11 +4,16 @@ import { describeExample, kJ, MW, pumped, solutionOf, zero } from './examples.ts
 
 /* M. J. Moran and H. N. Shapiro, Fundamentals of Engineering Thermodynamics, chapter 8. */
 
-/** Saturated liquid, as the book takes cooling water: enthalpy and entropy, SI. */
-function water(celsius: number): { readonly h: number; readonly s: number } {
+/** Saturated liquid, as the book takes cold water, SI. */
+function water(celsius: number) {
   const record = new Float64Array(SATURATION_SIZE)
   saturationAtTemperature(record, 0, celsius + zero)
-  return { h: record[Saturation.hL]!, s: record[Saturation.sL]! }
+  return {
+    p: record[Saturation.p]!,
+    h: record[Saturation.hL]!,
+    s: record[Saturation.sL]!,
+    v: record[Saturation.vL]!,
+  }
 }
 
 const cold = water(15)
@@ -140,5 +145,69 @@ describeExample('MS-8.5', () => {
     m_steam_kg_h: pumped(at('main.m') * hour),
     w_net: pumped(at('plant.cyclePower') / at('main.m') / kJ),
     q_in: pumped(at('plant.heatInput') / at('main.m') / kJ),
+  }
+})
+
+describeExample('MS-8.6', () => {
+  const fired = { pressureLossFraction: 0, efficiency: 1 }
+  const stages = { groupEfficiency1: 1, groupEfficiency2: 1, wetnessFactor: 0, exhaustLoss: 0 }
+  const solve = (feed: Readonly<Record<string, number>>) =>
+    solutionOf({
+      units: {
+        b: ['boiler', fired],
+        hp: ['turbine', stages],
+        r: ['reheater', fired],
+        lp: ['turbine', stages],
+        c: ['condenser', { pressure: 8e3, subcooling: 0 }],
+        p1: ['pump', { efficiency: 1, driveEfficiency: 1 }],
+        d: ['mixingHeater', { subcooling: 0 }],
+        p2: ['pump', { efficiency: 1, driveEfficiency: 1 }],
+        h: ['surfaceHeater', { pressureLossFraction: 0 }],
+      },
+      streams: {
+        main: ['b.steam', 'hp.inlet', { p: 8e6, T: 480 + zero }],
+        toClosed: ['hp.bleed1', 'h.steam1', { p: 2e6 }],
+        cold: ['hp.exhaust', 'r.inlet', { p: 0.7e6 }],
+        hot: ['r.outlet', 'lp.inlet', { T: 440 + zero }],
+        toOpen: ['lp.bleed1', 'd.steam1', { p: 0.3e6 }],
+        exhaust: ['lp.exhaust', 'c.steam1'],
+        condensate: ['c.condensate', 'p1.suction'],
+        warm: ['p1.discharge', 'd.water1'],
+        hotWater: ['d.outlet', 'p2.suction'],
+        pumped: ['p2.discharge', 'h.water'],
+        feed: ['h.outlet', 'b.feedwater', feed],
+        drain: ['h.drain', 'd.drain1'],
+      },
+      shafts: { s: { turbines: ['hp', 'lp'] } },
+      plant: { otherAuxiliary: 0, ...netPower },
+    })
+  // The book takes compressed water as h' (T) + v' (p - psat); IF97 has it 4.9 kJ/kg lower.
+  const liquid = water(205)
+  const at = solve({ h: liquid.h + liquid.v * (8e6 - liquid.p) })
+  const exact = solve({ T: 205 + zero })
+  const m = at('main.m')
+  return {
+    h2: at('toClosed.h') / kJ,
+    h3: at('cold.h') / kJ,
+    h4: at('hot.h') / kJ,
+    h5: at('toOpen.h') / kJ,
+    h6: at('exhaust.h') / kJ,
+    h8: pumped(at('warm.h') / kJ),
+    h9: at('hotWater.h') / kJ,
+    h10: pumped(at('pumped.h') / kJ),
+    h11: at('feed.h') / kJ,
+    h12: at('drain.h') / kJ,
+    y1: pumped(at('toClosed.m') / m),
+    y2: pumped(at('toOpen.m') / m),
+    w_t1: at('hp.power') / m / kJ,
+    w_t2: pumped(at('lp.power') / m / kJ),
+    w_p1: pumped(at('p1.power') / m / kJ, 2e-4),
+    w_p2: pumped(at('p2.power') / m / kJ, 2e-3),
+    q_in: pumped(at('plant.heatInput') / m / kJ),
+    eta: pumped(at('plant.cycleEfficiency')),
+    m_steam_kg_h: pumped(m * hour),
+    h11_compressed_liquid_IF97: exact('feed.h') / kJ,
+    eta_with_IF97_h11: pumped(exact('plant.cycleEfficiency')),
+    TTD_K: exact('h.terminalDifference'),
   }
 })
