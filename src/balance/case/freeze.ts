@@ -41,10 +41,12 @@ export function withGivens(layout: Layout, table: GivenTable): Layout {
   }
 }
 
-/** What the freeze leaves behind for the report: quantities that could not be frozen. */
-export interface Unfrozen {
-  readonly unit: string
-  readonly quantity: string
+/** What the freeze did. */
+export interface Frozen {
+  /** Quantities that could not be frozen: they are not known in the hardware's solution. */
+  readonly unfrozen: readonly { readonly unit: string; readonly quantity: string }[]
+  /** By path of a given that was replaced: the hardware quantity that took its place. */
+  readonly replaced: ReadonlyMap<string, string>
 }
 
 /**
@@ -57,9 +59,10 @@ export function freeze(
   hardware: Balance,
   table: GivenTable,
   special: ReadonlyMap<string, number>,
-): Unfrozen[] {
+): Frozen {
   const { system } = design.model
-  const unfrozen: Unfrozen[] = []
+  const unfrozen: { unit: string; quantity: string }[] = []
+  const replaced = new Map<string, string>()
   const frozenShells = new Set<string>()
   const generatorShafts = new Set(
     system.layout.shafts
@@ -74,6 +77,11 @@ export function freeze(
     const rules = kind.freezing({ shape, drivesGenerator: generatorShafts.has(unit.id) })
     for (const rule of rules) {
       const outcome = apply(rule, placed, other, design, hardware, table, special)
+      if (outcome === 'frozen') {
+        for (const name of rule.frees) {
+          replaced.set(`${unit.id}.${name}`, `${unit.id}.${rule.quantity}`)
+        }
+      }
       if (outcome === 'unknown') unfrozen.push({ unit: unit.id, quantity: rule.quantity })
       if (outcome === 'frozen' && rule.frees.includes('pressure')) frozenShells.add(unit.id)
     }
@@ -84,7 +92,7 @@ export function freeze(
     (path) => table.has(path),
   )
   for (const path of paths) table.delete(path)
-  return unfrozen
+  return { unfrozen, replaced }
 }
 
 function apply(

@@ -137,7 +137,8 @@ class CaseSolver {
         if (path.includes('.groupEfficiency')) table.set(path, value)
       }
     }
-    for (const { unit, quantity } of freeze(design, hardware, table, special)) {
+    const { unfrozen } = freeze(design, hardware, table, special)
+    for (const { unit, quantity } of unfrozen) {
       remarks.push({
         severity: 'remark',
         code: 'not-frozen',
