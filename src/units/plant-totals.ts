@@ -1,7 +1,9 @@
 import {
+  divide,
   type Equation,
   type Expression,
   equal,
+  isConstant,
   minus,
   plus,
   times,
@@ -164,8 +166,9 @@ export function plantEquations(
   quantity: (name: PlantQuantity) => Expression,
 ): Record<string, Equation> {
   const q = quantity
+  // A whole given as 0 would leave no ratio in the product, and the part no freedom.
   const ratio = (name: PlantQuantity, part: Expression, whole: Expression): Equation =>
-    equal(times(q(name), whole), part)
+    isConstant(whole, 0) ? equal(q(name), divide(part, whole)) : equal(times(q(name), whole), part)
   return {
     heatInput: equal(q('heatInput'), sum('heatInput')),
     turbineHeat: equal(
