@@ -1,12 +1,14 @@
 import { forEachVariableOf } from '../equations/expression/index.ts'
 import { StepOutcome } from '../equations/newton/index.ts'
+import { withGivens } from '../plant/overrides.ts'
 import { rangeProblem } from '../steam/index.ts'
 import { streamQuantities } from '../units/index.ts'
 import { portNamed } from '../units/kind.ts'
 import type { Finding, Status } from './answer.ts'
 import { error, ownersOf, ranked, remedies, Wording } from './findings.ts'
 import type { Model } from './model.ts'
-import type { Misfit } from './structure.ts'
+import { analyse, type Misfit } from './structure.ts'
+import { assemble } from './system.ts'
 
 /*
  * Where the words of graph theory and numerics become words of the plant: what is missing, what is
@@ -143,9 +145,12 @@ function underspecified(model: Model, parts: readonly Misfit[], wording: Wording
 
 function overspecified(model: Model, parts: readonly Misfit[], wording: Wording): Finding {
   const excess = parts.reduce((sum, part) => sum + part.count, 0)
+  const known = parts.flatMap((part) => part.variables)
   const quantities = ranked(
     model,
-    parts.flatMap((part) => part.variables.map((v) => model.system.variables[v]!.path)),
+    [...new Set([...known, ...foldedInto(model, parts)])].map(
+      (v) => model.system.variables[v]!.path,
+    ),
     false,
   )
   const first = quantities.slice(0, 4).map((path) => wording.quantity(path))
@@ -160,6 +165,30 @@ function overspecified(model: Model, parts: readonly Misfit[], wording: Wording)
       remedies: remedies('free', quantities, () => undefined),
     },
   )
+}
+
+/**
+ * Givens of exactly 0 or 1 are folded into the equations, so that the structure does not show them;
+ * those of the part that lower its count when freed.
+ */
+function foldedInto(model: Model, parts: readonly Misfit[]): number[] {
+  const { layout, given, curved, variables } = model.system
+  const unfolded = assemble(layout, { ...model.options, fold: false })
+  const candidates = new Set<number>()
+  for (const part of parts) {
+    for (const e of part.equations) {
+      for (const v of variablesOf(unfolded.equations[e]!.equation)) {
+        if ((given[v] === 0 || given[v] === 1) && !curved[v]) candidates.add(v)
+      }
+    }
+  }
+  return [...candidates].filter((v) => {
+    const freed = assemble(
+      withGivens(layout, new Map([[variables[v]!.path, undefined]])),
+      model.options,
+    )
+    return analyse(freed).excess < model.structure.excess
+  })
 }
 
 /** The first block of the core without an answer, in words. */

@@ -1,4 +1,12 @@
-import { type Equation, equal, massBalance, plus, times } from '../equations/expression/index.ts'
+import {
+  divide,
+  type Equation,
+  equal,
+  isConstant,
+  massBalance,
+  plus,
+  times,
+} from '../equations/expression/index.ts'
 import { defineUnitKind } from './kind.ts'
 
 export const branch = defineUnitKind({
@@ -29,7 +37,10 @@ export const branch = defineUnitKind({
     outlet.forEach((stream, k) => {
       equations[`pressure${k + 1}`] = equal(stream.p, inlet.p)
       equations[`enthalpy${k + 1}`] = equal(stream.h, inlet.h)
-      equations[`share${k + 1}`] = equal(stream.m, times(q.share[k]!, inlet.m))
+      // Of no flow at all a share says nothing, unless it is given: then this outlet has none.
+      equations[`share${k + 1}`] = isConstant(inlet.m, 0)
+        ? equal(q.share[k]!, divide(stream.m, inlet.m))
+        : equal(stream.m, times(q.share[k]!, inlet.m))
     })
     return equations
   },

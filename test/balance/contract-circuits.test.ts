@@ -177,6 +177,21 @@ describe('relations between intensive quantities hold at zero flow too', () => {
     expect(answer.at('on.m')).toBe(30)
   })
 
+  test('a branch of no flow at all: its outlets have none, its shares mean nothing', () => {
+    const dry = changed(idle, { free: ['br.share2'], set: { 'all.m': 0, 'br.share1': 0.3 } })
+    // Beside it something that does flow, or nothing would fix the size of the plant.
+    const answer = solvedAnswerOf({
+      ...dry,
+      units: { ...dry.units, river: ['supply'], sea: ['offtake'] },
+      streams: { ...dry.streams, aside: ['river.outlet', 'sea.inlet', { p: 1e5, T: 290, m: 1 }] },
+    })
+    expect(answer.at('on.m')).toBeCloseTo(0, 12)
+    expect(answer.at('idle.m')).toBeCloseTo(0, 12)
+    expect(answer.at('br.share1')).toBe(0.3)
+    expect(answer.at('br.share2')).toBeNaN()
+    expect(answer.at('end.h')).toBe(answer.at('all.h'))
+  })
+
   test('a heat loss without a flow to take it from has no answer', () => {
     const answer = answerOf(changed(idle, { set: { 'line.heatLoss': 1e4 } }))
     expect(answer.status).not.toBe('solved')

@@ -117,6 +117,20 @@ describe('overspecified', () => {
     }
   })
 
+  test('a loss given as 0 is named like any other number', () => {
+    const full = changed(cycle, { set: { 'b.pressureLossFraction': 0, 'feed.p': 6.5e6 } })
+    expect([...answerOf(full).finding('overspecified').quantities].sort()).toEqual(
+      ['b.pressureLossFraction', 'feed.p', 'main.p'].sort(),
+    )
+    const cooling = changed(cycle, { set: { 'c.coolingRise': 0, 'c.coolingInletT': 290 } })
+    const { quantities } = answerOf(cooling).finding('overspecified')
+    expect(quantities).toContain('c.coolingRise')
+    for (const path of quantities) {
+      const { findings } = answerOf(changed(cooling, { free: [path] }))
+      expect([path, ...findings.map(({ code }) => code)]).not.toContain('overspecified')
+    }
+  })
+
   test('a given share too many contradicts even where the numbers agree', () => {
     const answer = answerOf(split([0.5, 0.5], { m: 10 }))
     expect(answer.status).toBe('overspecified')
