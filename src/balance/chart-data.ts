@@ -1,4 +1,6 @@
-import { isobarPoints, isobarPressures, PointList, processPoints } from './paths.ts'
+import type { Model } from './model.ts'
+import { PathStore } from './path-store.ts'
+import { type Course, isobarPoints, isobarPressures, processPoints } from './paths.ts'
 import type { Balance } from './solve.ts'
 import { Phase } from './states.ts'
 
@@ -18,50 +20,79 @@ export interface Isobars {
   readonly starts: Uint32Array
 }
 
-/** Isobars reach at least this temperature, K. */
+/** Isobars reach at least this temperature, K, */
 const lowestTop = 620
+/** and beyond that move in steps, so that an edit of the hottest state does not draw all of them anew. */
+const topStep = 25
+
+/** A process of a unit between two streams, by their places. */
+interface Process {
+  readonly course: Course
+  readonly first: number
+  readonly last: number
+  /** The first process of its unit. */
+  readonly begins: boolean
+}
+
+/** What is kept from balance to balance of one model: a path whose ends stay where they were is copied. */
+interface Kept {
+  readonly processes: readonly Process[]
+  readonly paths: PathStore
+  readonly isobars: PathStore
+}
+
+const keptOf = new WeakMap<Model, Kept>()
+
+function keptFor(model: Model, placeOf: ReadonlyMap<string, number>): Kept {
+  let kept = keptOf.get(model)
+  if (kept === undefined) {
+    const processes: Process[] = []
+    for (const { kind, shape, streams } of model.system.units) {
+      let begins = true
+      for (const { from, to, course } of kind.paths(shape)) {
+        const first = streams.get(from)
+        const last = streams.get(to)
+        if (first === undefined || last === undefined) continue
+        processes.push({ course, first: placeOf.get(first)!, last: placeOf.get(last)!, begins })
+        begins = false
+      }
+    }
+    kept = { processes, paths: new PathStore(), isobars: new PathStore() }
+    keptOf.set(model, kept)
+  }
+  return kept
+}
 
 /** Every process of every unit as a path of true states, and the flow along it. */
 export function curvesOf({ model, results }: Balance): Curves {
-  const list = new PointList()
-  const starts: number[] = [0]
-  const flows: number[] = []
   const { states, placeOf } = results
-  for (const { kind, shape, streams } of model.system.units) {
-    let flowOfUnit = Number.NaN
-    for (const { from, to, course } of kind.paths(shape)) {
-      const first = streams.get(from)
-      const last = streams.get(to)
-      if (first === undefined || last === undefined) continue
-      const a = placeOf.get(first)!
-      const b = placeOf.get(last)!
-      processPoints(
-        course,
-        states.get(a, 'p'),
-        states.get(a, 'h'),
-        states.get(b, 'p'),
-        states.get(b, 'h'),
-        list,
-      )
-      starts.push(list.count)
-      // Along an expansion the flow shrinks at every bleed; elsewhere it is that of the entry.
-      if (course === 'expansion') {
-        const passed = Number.isNaN(flowOfUnit) ? states.get(a, 'm') : flowOfUnit
-        flows.push(passed)
-        flowOfUnit = passed - states.get(b, 'm')
-      } else flows.push(states.get(a, 'm'))
-    }
-  }
-  return {
-    points: list.copy(),
-    starts: Uint32Array.from(starts),
-    flows: Float64Array.from(flows),
-  }
+  const { processes, paths } = keptFor(model, placeOf)
+  const starts = new Uint32Array(processes.length + 1)
+  const flows = new Float64Array(processes.length)
+  paths.begin()
+  let flowOfUnit = Number.NaN
+  processes.forEach(({ course, first, last, begins }, k) => {
+    const p1 = states.get(first, 'p')
+    const h1 = states.get(first, 'h')
+    const p2 = states.get(last, 'p')
+    const h2 = states.get(last, 'h')
+    if (!paths.copy(p1, h1, p2, h2)) processPoints(course, p1, h1, p2, h2, paths.list)
+    starts[k + 1] = paths.end()
+    if (begins) flowOfUnit = Number.NaN
+    // Along an expansion the flow shrinks at every bleed; elsewhere it is that of the entry.
+    if (course === 'expansion') {
+      const passed = Number.isNaN(flowOfUnit) ? states.get(first, 'm') : flowOfUnit
+      flows[k] = passed
+      flowOfUnit = passed - states.get(last, 'm')
+    } else flows[k] = states.get(first, 'm')
+  })
+  return { points: paths.list.copy(), starts, flows }
 }
 
 /** Lines of constant pressure through the plant's states, up to its highest temperature. */
-export function isobarsOf({ results }: Balance): Isobars {
-  const { states } = results
+export function isobarsOf({ model, results }: Balance): Isobars {
+  const { states, placeOf } = results
+  const { isobars } = keptFor(model, placeOf)
   const count = states.phases.length
   const pressures = new Float64Array(count)
   const flows = new Float64Array(count)
@@ -70,14 +101,14 @@ export function isobarsOf({ results }: Balance): Isobars {
     pressures[k] = states.get(k, 'p')
     flows[k] = states.get(k, 'm')
     const T = states.get(k, 'T')
-    if (T + 30 > highest) highest = T + 30
+    if (T + 30 > highest) highest = topStep * Math.ceil((T + 30) / topStep)
   }
   const chosen = isobarPressures(pressures, flows, (k) => states.phases[k] === Phase.liquid)
-  const list = new PointList()
   const starts = new Uint32Array(chosen.length + 1)
+  isobars.begin()
   chosen.forEach((p, k) => {
-    isobarPoints(p, list, highest)
-    starts[k + 1] = list.count
+    if (!isobars.copy(p, highest, p, 0)) isobarPoints(p, isobars.list, highest)
+    starts[k + 1] = isobars.end()
   })
-  return { pressures: chosen, points: list.copy(), starts }
+  return { pressures: chosen, points: isobars.list.copy(), starts }
 }

@@ -1,4 +1,4 @@
-import { Program, StepOutcome } from '../equations/newton/index.ts'
+import { type Guess, Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
 import { type Difference, Differences } from './differences.ts'
 import { boundsOf } from './ranges.ts'
@@ -75,7 +75,7 @@ export class Model {
       if (this.firstFailure() < 0) return iterations
       this.program.forget()
     }
-    const iterations = this.program.solve((known) => this.fillStarts(known))
+    const iterations = this.program.solve(this.guess)
     this.isWarm = this.firstFailure() < 0
     return iterations
   }
@@ -86,14 +86,14 @@ export class Model {
    */
   solveOtherwise(choice: number): boolean {
     this.program.forget()
-    this.program.solve((known) => this.fillStarts(known), choice)
+    this.program.solve(this.guess, choice)
     this.isWarm = this.firstFailure() < 0
     return this.isWarm
   }
 
-  private fillStarts(known: (index: number) => boolean): void {
-    new Starts(this.system, this.values, known).fill()
-    if (this.seed === undefined) return
+  private readonly guess: Guess = (known, choice) => {
+    new Starts(this.system, this.values, known, choice).fill()
+    if (this.seed === undefined || choice > 0) return
     this.system.variables.forEach(({ path }, index) => {
       if (known(index)) return
       const value = this.seed!(path)

@@ -26,6 +26,18 @@ export class PointList {
     this.count += 1
   }
 
+  /** Takes over the points `start` to `end` (exclusive) of another list. */
+  append(other: PointList, start: number, end: number): void {
+    const needed = POINT_SIZE * (this.count + end - start)
+    if (needed > this.values.length) {
+      const larger = new Float64Array(Math.max(needed, 2 * this.values.length))
+      larger.set(this.values)
+      this.values = larger
+    }
+    this.values.set(other.values.subarray(POINT_SIZE * start, POINT_SIZE * end), POINT_SIZE * this.count)
+    this.count += end - start
+  }
+
   clear(): void {
     this.count = 0
   }

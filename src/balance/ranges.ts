@@ -38,13 +38,6 @@ const ranges: Readonly<Record<Dimension, readonly [lower: number, upper: number,
 /** A reversed flow this small, as a part of the scale, is round-off on the way to no flow. */
 const flowSlack = 1e-3
 
-/** Pressures to try, times the first guess. */
-const pressureFactors = [1, 3, 10, 0.3, 30, 0.1]
-/** Enthalpies to try: feedwater, wet steam, steam, hot steam. J/kg. */
-const enthalpies = [8e5, 2.6e6, 2.9e6, 3.4e6]
-/** Flows to try, times the first guess. */
-const flowFactors = [1, 0.3, 3, 0.1, 1, 10]
-
 export function boundsOf(variables: readonly SystemVariable[]): Bounds {
   const count = variables.length
   const lower = new Float64Array(count)
@@ -52,8 +45,6 @@ export function boundsOf(variables: readonly SystemVariable[]): Bounds {
   const sensibleLower = new Float64Array(count)
   const sensibleUpper = new Float64Array(count)
   const scale = new Float64Array(count)
-  const factors: Bounds['factors'][number][] = new Array(count)
-  const values: Bounds['values'][number][] = new Array(count)
   variables.forEach(({ description, isState, isPhantom }, k) => {
     const { dimension, possible } = description
     const range = ranges[dimension]
@@ -65,10 +56,8 @@ export function boundsOf(variables: readonly SystemVariable[]): Bounds {
       ? -flowSlack * range[2]
       : Math.max(range[0], (possible?.least ?? possible?.above ?? range[0]) - 1e-9)
     sensibleUpper[k] = Math.min(range[1], (possible?.most ?? possible?.below ?? range[1]) + 1e-9)
-    factors[k] = dimension === 'pressure' ? pressureFactors : isFlow ? flowFactors : undefined
-    values[k] = dimension === 'specificEnthalpy' && isState ? enthalpies : undefined
   })
-  return { lower, upper, sensibleLower, sensibleUpper, scale, factors, values }
+  return { lower, upper, sensibleLower, sensibleUpper, scale }
 }
 
 /** A value of ordinary size for a quantity of which nothing is known. */

@@ -20,6 +20,7 @@ export interface Balance {
 /** Solves a model (again) and says how it ended. */
 export function solve(model: Model, results: Results = new Results(model)): Balance {
   const iterations = model.solve()
+  if (model.firstFailure() >= 0) seekSolvable(model)
   results.refresh()
   const diagnosis = diagnose(model)
   let checks = checkAnswer(model, results)
@@ -69,4 +70,11 @@ function seekPossible(model: Model, results: Results): Finding[] | undefined {
   model.solveOtherwise(0)
   results.refresh()
   return undefined
+}
+
+/** A block may have no answer because an earlier one took another of its own. */
+function seekSolvable(model: Model): void {
+  if (!model.program.hasChoice) return
+  for (let choice = 1; choice < mostStarts; choice++) if (model.solveOtherwise(choice)) return
+  model.solveOtherwise(0)
 }

@@ -28,6 +28,12 @@ const nearSaturation = 3
 const specificPower = 1.1e6
 /** Passes over the equations that give a quantity outright. */
 const outrightPasses = 4
+/** Decades by which other choices scatter pressures and flows. */
+const pressureScatter = 0.7
+const flowScatter = 0.4
+/** Ranges in which other choices scatter enthalpies, J/kg. */
+const waterEnthalpies = [1e5, 1.2e6] as const
+const steamEnthalpies = [2.3e6, 3.5e6] as const
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
 
@@ -47,13 +53,18 @@ export class Starts {
   private readonly system: System
   private readonly values: Float64Array
   private readonly known: (index: number) => boolean
+  private readonly choice: number
   private readonly place = new Map<string, number>()
   private readonly saturation = new Float64Array(SATURATION_SIZE)
   private readonly state = new Float64Array(STATE_SIZE)
   private readonly result = new Float64Array(RESULT_SIZE + 8)
 
-  /** `known` tells which values are given or solved already; the others are overwritten. */
-  constructor(system: System, values: Float64Array, known: (index: number) => boolean) {
+  /**
+   * `known` tells which values are given or solved already; the others are overwritten. Choices
+   * other than 0 scatter the usual guess, each always the same way.
+   */
+  constructor(system: System, values: Float64Array, known: (index: number) => boolean, choice = 0) {
+    this.choice = choice
     this.system = system
     this.values = values
     this.known = known
@@ -68,9 +79,43 @@ export class Starts {
       if (!this.known(v)) values[v] = ordinaryValue(system.variables[v]!)
     }
     this.fillPressures()
+    if (this.choice > 0) this.scatterPressures()
     this.fillEnthalpies()
+    if (this.choice > 0) this.scatterEnthalpies()
     this.fillFlows()
     this.fillQuantities()
+  }
+
+  /** Between -1 and 1, the same for the same variable and choice. */
+  private scatter(index: number): number {
+    // A multiplicative hash (D. E. Knuth, The Art of Computer Programming 3, 6.4).
+    const hash = Math.imul(index + 1, 2654435761) ^ Math.imul(this.choice, 40503 * 65537)
+    return (Math.imul(hash ^ (hash >>> 15), 2246822519) >>> 8) / 2 ** 23 - 1
+  }
+
+  private scatterPressures(): void {
+    const { system, values } = this
+    system.variables.forEach(({ description }, index) => {
+      if (this.known(index) || description.dimension !== 'pressure') return
+      const p = values[index]! * 10 ** (pressureScatter * this.scatter(index))
+      values[index] = Math.min(90e6, Math.max(700, p))
+    })
+  }
+
+  private scatterEnthalpies(): void {
+    for (const placed of this.system.units) {
+      for (const { base, description } of this.portsOf(placed)) {
+        if (description.direction !== 'out' || this.known(base + 2)) continue
+        const u = this.scatter(base + 2)
+        const isWater =
+          description.carries === 'water' ||
+          (description.carries === 'any' && this.values[base + 2]! < 1.5e6)
+        const [low, high] = isWater ? waterEnthalpies : steamEnthalpies
+        const h = low + ((high - low) * (u + 1)) / 2
+        // Half the choices keep what the kind says and scatter only pressures and flows.
+        if (this.choice % 2 === 0) this.values[base + 2] = h
+      }
+    }
   }
 
   /** First variable of the stream at a port, or undefined. */
@@ -269,6 +314,7 @@ export class Starts {
         if (this.known(base)) continue
         const isBleed = description.repeated === true && placed.kind.shaft === 'driving'
         values[base] = isBleed ? bleedShare * largest : largest
+        if (this.choice > 0) values[base]! *= 10 ** (flowScatter * this.scatter(base))
       }
     }
     balanceFlows(system, values, this.known, bleedShare * largest)

@@ -1,10 +1,13 @@
 import { Outcome, type Tape } from '../expression/index.ts'
 import type { GradientProgram } from './gradient.ts'
+import { solveSingular } from './rank.ts'
 import { Factors, SparseLU } from './sparse-lu.ts'
-import { type Bounds, type Step, StepOutcome, stepOutcome } from './step.ts'
+import { type Bounds, type Restart, type Step, StepOutcome, stepOutcome } from './step.ts'
 
 /** Starts tried before giving up. */
-export const mostStarts = 6
+export const mostStarts = 10
+/** A singular block larger than this is not looked into. */
+const mostDense = 400
 /** Steps aside from points where the linearised block is singular. */
 const mostNudges = 4
 /** Newton iterations from one start before giving up. */
@@ -85,7 +88,7 @@ export class BlockStep implements Step {
     this.upper = bounds.upper
   }
 
-  run(tape: Tape, choice: number): number {
+  run(tape: Tape, choice: number, restart?: Restart): number {
     this.iterations = 0
     const before = tape.evaluate(this.prelude)
     if (before !== Outcome.fine) return stepOutcome(before)
@@ -94,10 +97,13 @@ export class BlockStep implements Step {
     this.remember(tape)
     this.origin.set(this.start)
     let first: number = StepOutcome.notConverged
+    const starts = restart === undefined ? 1 : mostStarts
     // Sensible answers are looked for first, from several starts; then any answer at all.
-    for (let attempt = 0; attempt < 2 * mostStarts; attempt++) {
-      const isSensible = attempt < mostStarts
-      this.restart(tape, (attempt + choice) % mostStarts)
+    for (let attempt = 0; attempt < 2 * starts; attempt++) {
+      const isSensible = attempt < starts
+      this.recall(tape)
+      const which = (attempt + choice) % starts
+      if (which > 0) restart?.(which)
       const outcome = this.iterate(
         tape,
         isSensible ? bounds.sensibleLower : bounds.lower,
@@ -109,26 +115,16 @@ export class BlockStep implements Step {
         this.firstWorst = this.worst
       }
     }
-    this.restart(tape, 0)
+    this.recall(tape)
     this.worst = this.firstWorst
     // That an iteration cannot go on does not prove that there is no answer.
     const proves = first === StepOutcome.singular || first === StepOutcome.contradictory
     return proves ? first : StepOutcome.notConverged
   }
 
-  /** Puts the variables at one of the starts; the first is where they were. */
-  private restart(tape: Tape, choice: number): void {
-    const { factors, values } = this.bounds
-    for (let j = 0; j < this.n; j++) {
-      const index = this.variableSlots[j]!
-      const from = this.origin[j]!
-      const factor = factors[index]
-      const value = values[index]
-      if (choice === 0) tape.values[index] = from
-      else if (factor) tape.values[index] = from * factor[choice % factor.length]!
-      else if (value && choice > 2) tape.values[index] = value[choice % value.length]!
-      else tape.values[index] = from
-    }
+  /** Puts the variables back to where they were. */
+  private recall(tape: Tape): void {
+    for (let j = 0; j < this.n; j++) tape.values[this.variableSlots[j]!] = this.origin[j]!
   }
 
   private iterate(tape: Tape, lower: Float64Array, upper: Float64Array): number {
@@ -143,12 +139,19 @@ export class BlockStep implements Step {
     for (let iteration = 0; iteration < mostIterations; iteration++) {
       this.iterations++
       if (!this.linearise(tape)) {
-        const verdict = this.singularOutcome()
-        // Only where the equations hold, or wherever one looks, is a block singular.
-        if (this.linear || verdict === StepOutcome.singular || nudges >= mostNudges) return verdict
-        nudges++
-        outcome = this.nudge(tape, nudges)
-        if (outcome !== Outcome.fine) return stepOutcome(outcome)
+        const verdict = this.singularStep()
+        if (verdict !== StepOutcome.solved) {
+          // Only wherever one looks do the equations contradict each other.
+          if (this.linear || verdict === StepOutcome.singular || nudges >= mostNudges)
+            return verdict
+          nudges++
+          outcome = this.nudge(tape, nudges)
+          if (outcome !== Outcome.fine) return stepOutcome(outcome)
+          continue
+        }
+        this.unscaleStep()
+        outcome = this.linear ? this.fullStep(tape) : this.search(tape)
+        if (outcome !== StepOutcome.solved) return outcome
         continue
       }
       this.factors.solve(this.residual, this.step)
@@ -201,12 +204,27 @@ export class BlockStep implements Step {
     return this.factors.factorise(scaled) === Factors.fine
   }
 
-  private singularOutcome(): number {
-    const row = Math.max(0, this.factors.singularRow)
-    this.worst = row
+  /**
+   * Where the linearised block is singular: a step that satisfies it all the same, when its
+   * equations agree; `singular` when they hold already, `contradictory` when they do not agree.
+   */
+  private singularStep(): number {
+    this.worst = Math.max(0, this.factors.singularRow)
     let largest = 0
     for (let i = 0; i < this.n; i++) largest = Math.max(largest, Math.abs(this.residual[i]!))
-    return largest <= agreement ? StepOutcome.singular : StepOutcome.contradictory
+    if (largest <= agreement) return StepOutcome.singular
+    if (this.n > mostDense) return StepOutcome.contradictory
+    const { entryFirst } = this.gradient
+    const { solution, misfit } = solveSingular(
+      this.n,
+      entryFirst,
+      this.columnOf,
+      this.scaled,
+      this.residual,
+    )
+    if (misfit > agreement * Math.max(1, largest)) return StepOutcome.contradictory
+    this.step.set(solution)
+    return StepOutcome.solved
   }
 
   /** Turns the scaled solution into a change of the variables; returns its largest scaled part. */

@@ -70,16 +70,16 @@ export class Program {
    * Returns the number of Newton iterations of the hardest block. `guess` is called once before
    * the first block that iterates, with a test of which variables are known by then.
    */
-  solve(guess?: (known: (index: number) => boolean) => void, choice = 0): number {
+  solve(guess?: Guess, choice = 0): number {
     let iterations = 0
     let guessed = guess === undefined
     for (let k = 0; k < this.steps.length; k++) {
       if (!this.fresh && !this.isTouched(k) && this.outcomes[k] === StepOutcome.solved) continue
       if (!guessed && this.steps[k]!.needsGuess) {
         guessed = true
-        guess!(this.knownBefore(k))
+        guess!(this.knownBefore(k), 0)
       }
-      const used = this.run(k, choice)
+      const used = this.run(k, choice, guess)
       if (used > iterations) iterations = used
     }
     this.changed.fill(0)
@@ -111,13 +111,14 @@ export class Program {
     return false
   }
 
-  private run(k: number, choice: number): number {
+  private run(k: number, choice: number, guess: Guess | undefined): number {
     const step = this.steps[k]!
     const { variables } = this.blocks[k]!
     const inputs = this.inputs[k]!
+    const restart = guess && ((which: number) => guess(this.knownBefore(k), which))
     let missing = false
     for (let i = 0; i < inputs.length; i++) if (this.lost[inputs[i]!]) missing = true
-    const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape, choice)
+    const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape, choice, restart)
     this.outcomes[k] = outcome
     const state = outcome === StepOutcome.solved ? 0 : outcome === StepOutcome.unbounded ? 2 : 1
     for (const index of variables) {
@@ -127,6 +128,9 @@ export class Program {
     return step.iterations
   }
 }
+
+/** Fills in first guesses for what is not known; the choice picks one of several. */
+export type Guess = (known: (index: number) => boolean, choice: number) => void
 
 type StepDraft = (builder: TapeBuilder, adjoint: Float64Array, bounds: Bounds) => Step
 

@@ -49,17 +49,17 @@ export interface Bounds {
   readonly sensibleUpper: Float64Array
   /** A size that makes changes of different quantities comparable. */
   readonly scale: Float64Array
-  /** Values to try in place of a first guess that leads nowhere: times the guess, and outright. */
-  readonly factors: readonly (readonly number[] | undefined)[]
-  readonly values: readonly (readonly number[] | undefined)[]
 }
+
+/** Puts the unknowns at another first guess; 0 is the usual one. */
+export type Restart = (choice: number) => void
 
 export interface Step {
   /**
    * Solves the block from the values at hand; returns a `StepOutcome`. `choice` picks among the
-   * other starts that the bounds offer, where there may be more than one answer.
+   * other starts that `restart` offers, where there may be more than one answer.
    */
-  run(tape: Tape, choice: number): number
+  run(tape: Tape, choice: number, restart?: Restart): number
   /** The answer may depend on where it starts. */
   readonly needsGuess: boolean
   /** Newton iterations of the last run. */
