@@ -34,7 +34,10 @@ export class PointList {
       larger.set(this.values)
       this.values = larger
     }
-    this.values.set(other.values.subarray(POINT_SIZE * start, POINT_SIZE * end), POINT_SIZE * this.count)
+    this.values.set(
+      other.values.subarray(POINT_SIZE * start, POINT_SIZE * end),
+      POINT_SIZE * this.count,
+    )
     this.count += end - start
   }
 

@@ -198,11 +198,12 @@ function addCrossings(a: number, b: number, after: number, last: number): number
 
 /**
  * Writes the states of a process after those already in `out` and returns how many they are: none
- * where no state lies within the formulation, else two to forty-eight.
+ * where no state lies within the formulation, else two to forty-eight (`throttledLine`: twice that).
  *
  * `line`: p and h change in proportion. `isenthalp`: at constant h, p spaced evenly in its
  * logarithm. `expansion`, `compression`: (h - h1) / (h(p, s1) - h1) stays what it is over the whole
- * process, p spaced in its logarithm. Pressures in Pa, enthalpies in J/kg.
+ * process, p spaced in its logarithm. `throttledLine`: an isenthalp down to p2, then a line at that
+ * pressure. Pressures in Pa, enthalpies in J/kg.
  */
 export function processPoints(
   process: Course,
@@ -213,6 +214,14 @@ export function processPoints(
   out: PointList,
 ): number {
   if (!(p1 > 0 && p2 > 0 && Number.isFinite(p1 + p2) && Number.isFinite(h1 + h2))) return 0
+  if (process === 'throttledLine') {
+    if (!(p1 > p2)) return processPoints('line', p1, h1, p2, h2, out)
+    const throttled = processPoints('isenthalp', p1, h1, p2, h1, out)
+    if (h1 === h2) return throttled
+    // The state behind the throttle ends one part and begins the other.
+    if (throttled > 0) out.count -= 1
+    return Math.max(0, throttled - 1) + processPoints('line', p2, h1, p2, h2, out)
+  }
   course.set(process, p1, h1, p2, h2)
   clearNodes()
   // An end outside the formulation moves inward to the first state that is within.

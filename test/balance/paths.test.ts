@@ -235,6 +235,33 @@ describe('a throttle', () => {
   })
 })
 
+describe('a drain throttled into a vessel', () => {
+  // Some 184 K drain at 13 bar into a shell of 2 bar, where it leaves as saturated liquid.
+  const [p1, h1, p2] = [13e5, 780e3, 2e5] as const
+  const end = saturatedAt(p2).liquid.h
+  const points = process('throttledLine', p1, h1, p2, end)
+
+  it('keeps its enthalpy down to the pressure of the vessel and follows that pressure on', () => {
+    const behind = stateAt(p2, h1)
+    const kink = points.findIndex(({ s }) => Math.abs(s - behind.s) < 1e-6)
+    expect(kink).toBeGreaterThan(0)
+    for (const point of points.slice(0, kink + 1)) expect(point.h).toBeCloseTo(h1, 3)
+    for (const point of points.slice(kink)) expectPoint(stateAt(p2, point.h), point)
+    expectPoint(points[0], stateAt(p1, h1))
+    expectPoint(points.at(-1), stateAt(p2, end))
+  })
+
+  it('takes no state twice and does not depend on the path drawn before', () => {
+    process('expansion', 6.2e5, 3140e3, 5200, 2400e3)
+    expect(process('throttledLine', p1, h1, p2, end)).toEqual(points)
+    for (let i = 1; i < points.length; i += 1) expect(points[i]).not.toEqual(points[i - 1])
+  })
+
+  it('is a plain line where there is nothing to throttle', () => {
+    expect(process('throttledLine', p2, h1, p2, end)).toEqual(process('line', p2, h1, p2, end))
+  })
+})
+
 describe('an expansion', () => {
   const [p1, h1, p2, h2] = [6.2e5, 3140e3, 5200, 2400e3] as const
   const points = process('expansion', p1, h1, p2, h2)
