@@ -123,12 +123,8 @@ describe('overspecified', () => {
       ['b.pressureLossFraction', 'feed.p', 'main.p'].sort(),
     )
     const cooling = changed(cycle, { set: { 'c.coolingRise': 0, 'c.coolingInletT': 290 } })
-    const { quantities } = answerOf(cooling).finding('overspecified')
-    expect(quantities).toContain('c.coolingRise')
-    for (const path of quantities) {
-      const { findings } = answerOf(changed(cooling, { free: [path] }))
-      expect([path, ...findings.map(({ code }) => code)]).not.toContain('overspecified')
-    }
+    expect(answerOf(cooling).finding('overspecified').quantities).toContain('c.coolingRise')
+    expect(answerOf(changed(cooling, { free: ['c.coolingRise'] })).status).toBe('solved')
   })
 
   test('a given share too many contradicts even where the numbers agree', () => {

@@ -28,7 +28,7 @@ def values(points):
     q = np.array([p[1] for p in points], float)
     curve = PchipInterpolator(r, q, extrapolate=False)
     slope = curve.derivative()
-    inside = np.unique(np.concatenate([np.linspace(r[0], r[-1], 13), (r[:-1] + r[1:]) / 2, r]))
+    inside = np.unique(np.concatenate([np.linspace(r[0], r[-1], 5), (r[:-1] + r[1:]) / 2, r]))
     rows = [[float(x), float(curve(x))] for x in inside]
     for x in (r[0] - 3, r[-1] + 5):
         end = 0 if x < r[0] else -1
