@@ -30,6 +30,9 @@ const field = new Float64Array(FIELD_SIZE)
 const leastDensity = 40
 const mostDensity = 900
 
+/** Below this temperature (K) p(rho) keeps rising for a while within the two-phase zone. */
+const clearOfCritical = 640
+
 /** Region 3 at p (Pa) and T (K) as a point. Not for a pair on the saturation line. */
 export function region3Point(point: Float64Array, p: number, T: number): void {
   let low = leastDensity
@@ -37,8 +40,10 @@ export function region3Point(point: Float64Array, p: number, T: number): void {
   if (T < criticalTemperature) {
     const saturated = Math.min(saturationPressureOf(T), criticalPressure * (1 - 1e-12))
     const slot = cachedSaturation(saturated)
-    if (p > saturated) low = 1 / (saturationCache[slot + Saturation.vL] as number)
-    else high = 1 / (saturationCache[slot + Saturation.vV] as number)
+    // At 623.15 K the record is of regions 1 and 2: the formulation's jump needs some room.
+    const room = T < clearOfCritical ? 1e-3 : 0
+    if (p > saturated) low = (1 - room) / (saturationCache[slot + Saturation.vL] as number)
+    else high = (1 + room) / (saturationCache[slot + Saturation.vV] as number)
   }
   region3Density(field, p, T, 1 / region3VolumeOf(p, T), low, high)
   pointOfField(point, field)

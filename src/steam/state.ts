@@ -123,7 +123,7 @@ const mostEnthalpy23 = 2.83e6
 /** Within this part of h' or h'' a state counts as saturated, so as wet. */
 const saturationBand = 1e-9
 /** Least width of that band, J/kg: h' passes through zero near 273.16 K. */
-const leastBand = 1e-4
+const leastBand = 1e-6
 /** Above every enthalpy of region 2, J/kg: 4160.7 kJ/kg at 1073.15 K and no pressure. */
 const highestEnthalpy2 = 4.17e6
 /** Round-off allowed at the limits of temperature, K. */

@@ -305,7 +305,7 @@ function stateOnIsotherm(
       answers.push(wetState(T, x < 0.5 ? 0 : 1))
     }
   } else branch(T, lowestPressure, most, value, of, answers, extremes)
-  if (answers.length === 0) closeToEnd(T, most, value, of, answers)
+  closeToEnd(T, most, value, of, answers)
   const [first] = answers
   if (first === undefined) {
     const low = !(value >= extremes.low)
@@ -375,6 +375,7 @@ function closeToEnd(
   answers: SteamState[],
 ): void {
   for (const p of [lowestPressure, most]) {
+    if (answers.some((answer) => Math.abs(answer.p / p - 1) < 1e-6)) continue
     if (pointAtPressureTemperature(point, p, T) !== Outcome.fine) continue
     const end = point[of] as number
     const scale = of === Point.s ? 1e3 : 1e6
