@@ -4,14 +4,16 @@ import { usePlantStore } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { free, give } from './give.ts'
 import { Mark } from './Mark.tsx'
-import { useNumberText } from './Quantity.tsx'
-import { fieldText, readTyped, stepOf, usualText } from './typed-number.ts'
+import { fieldText, fieldUnit, readTyped, stepOf, usualText } from './typed-number.ts'
+import { useNumber } from './use-number.ts'
 
 interface Editing {
   readonly text: string
   /** The text as the field opened: left so, the value keeps all its digits. */
   readonly first: string
   readonly value: number | null
+  /** Name of the unit in force when the field opened: bare numbers have it, whatever their size. */
+  readonly unit: string
   readonly error?: string
   /** Key under which the arrow keys' steps join into one undo step. */
   readonly merge: string
@@ -36,7 +38,7 @@ let openings = 0
 /** The open field of a number, in the units in force; what is typed may name its own unit. */
 export function NumberInput(props: Props) {
   const { path, label, description, showUnit = true, typed: opener, onClose } = props
-  const { value, given, unit } = useNumberText(path, description.dimension)
+  const { value, given } = useNumber(path)
   const units = useUnitChoice()
   const input = useRef<HTMLInputElement>(null)
   const noteId = useId()
@@ -46,11 +48,14 @@ export function NumberInput(props: Props) {
   const [editing, setEditing] = useState<Editing>(() => {
     openings += 1
     const start = value ?? description.usual ?? null
-    const first = start === null ? '' : fieldText(start, description, units, given !== undefined)
+    const unit = fieldUnit(start, description, units)
+    const first =
+      start === null ? '' : fieldText(start, description, units, given !== undefined, unit)
     return {
       text: opener ?? first,
       first,
       value: start,
+      unit,
       merge: `field/${path}/${openings}`,
       stepped: false,
       before: given,
@@ -76,7 +81,7 @@ export function NumberInput(props: Props) {
       close(sure)
       return
     }
-    const typed = readTyped(editing.text, path, description, units)
+    const typed = readTyped(editing.text, path, description, units, editing.unit)
     if (typed.outcome === 'refused') {
       setEditing({ ...editing, error: typed.message })
       return
@@ -96,16 +101,25 @@ export function NumberInput(props: Props) {
   /** Changes the value by practical steps, and solves at once. */
   const step = (by: number) => {
     const untouched = editing.text === editing.first
-    const typed = untouched ? null : readTyped(editing.text, path, description, units)
+    const typed = untouched ? null : readTyped(editing.text, path, description, units, editing.unit)
     const from = untouched ? editing.value : typed?.outcome === 'value' ? typed.value : null
     if (from === null) return
-    const shown = fieldText(from + by * stepOf(description, from), description, units, true)
-    const next = readTyped(shown, path, description, units)
+    const { unit } = editing
+    const shown = fieldText(from + by * stepOf(description, from), description, units, true, unit)
+    const next = readTyped(shown, path, description, units, unit)
     if (next.outcome === 'refused') setEditing({ ...editing, error: next.message })
     else if (next.outcome === 'value') {
       give(path, next.value, editing)
       const { merge, before } = editing
-      setEditing({ text: shown, first: shown, value: next.value, merge, before, stepped: true })
+      setEditing({
+        text: shown,
+        first: shown,
+        value: next.value,
+        unit,
+        merge,
+        before,
+        stepped: true,
+      })
     }
   }
 
@@ -142,7 +156,7 @@ export function NumberInput(props: Props) {
         onBlur={() => commit(false)}
         onKeyDown={onKeyDown}
       />
-      {showUnit && unit !== '' && <span className="quantity-unit">{unit}</span>}
+      {showUnit && editing.unit !== '' && <span className="quantity-unit">{editing.unit}</span>}
       {note && (
         <span
           id={noteId}

@@ -3,6 +3,7 @@ import {
   parseQuantity,
   type QuantityDescription,
   type UnitChoice,
+  unitOf,
   whyNotGiven,
 } from '../../src/document.ts'
 import { readLayout } from '../store/plant-store.ts'
@@ -19,9 +20,11 @@ export function readTyped(
   path: string,
   description: QuantityDescription,
   units: UnitChoice,
+  /** Name of the unit that stands beside the field: a bare number has it. */
+  unit?: string,
 ): Typed {
   if (text.trim() === '') return { outcome: 'empty' }
-  const parsed = parseQuantity(text, description.dimension, units)
+  const parsed = parseQuantity(text, description.dimension, units, unitOption(unit))
   if (parsed.outcome === 'unreadable') return { outcome: 'refused', message: parsed.message }
   const why = whyNotGiven(readLayout(), path, parsed.value)
   if (why) return { outcome: 'refused', message: why }
@@ -38,9 +41,26 @@ export function fieldText(
   description: QuantityDescription,
   units: UnitChoice,
   given: boolean,
+  /** Name of the unit that stands beside the field, whatever would suit the value. */
+  unit?: string,
 ): string {
-  return formatQuantity(value, description.dimension, units, { digits: given ? 'given' : 'shown' })
-    .text
+  return formatQuantity(value, description.dimension, units, {
+    digits: given ? 'given' : 'shown',
+    ...unitOption(unit),
+  }).text
+}
+
+/** The name of the unit in which a field opens: it stays while the field is open. */
+export function fieldUnit(
+  value: number | null,
+  description: QuantityDescription,
+  units: UnitChoice,
+): string {
+  return unitOf(description.dimension, units, value ?? undefined).name
+}
+
+function unitOption(unit: string | undefined): { readonly unit?: string } {
+  return unit === undefined ? {} : { unit }
 }
 
 /** What one press of an arrow key changes a value by, SI. */
@@ -54,7 +74,8 @@ export function usualText(description: QuantityDescription, units: UnitChoice): 
   const say = (value: number) => formatQuantity(value, dimension, units, { digits: 'given' })
   const because = basis ? ` (${basis})` : ''
   if (range) {
-    const [least, most] = [say(range[0]), say(range[1])]
+    const most = say(range[1])
+    const least = formatQuantity(range[0], dimension, units, { digits: 'given', unit: most.unit })
     return `Usual ${least.text} to ${most.text} ${most.unit}`.trimEnd() + because
   }
   if (usual !== undefined) {
