@@ -201,8 +201,7 @@ function failureOf(
   const { system, program, structure } = model
   const outcome = program.outcomes[k]!
   const block = structure.blocks[k]!
-  const worst = block.equations[program.steps[k]!.worst] ?? block.equations[0]!
-  const { owner, key } = system.equations[worst]!
+  const { owner, key } = system.equations[program.worstEquation(k)]!
   const unknowns = block.variables
     .filter((v) => !system.variables[v]!.isPhantom)
     .map((v) => system.variables[v]!.path)

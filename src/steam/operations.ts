@@ -159,6 +159,7 @@ function saturationQuantity(
   value: number,
   slope: number,
   invert?: Operation['invert'],
+  isGentle = false,
 ): Operation {
   return {
     name,
@@ -170,6 +171,7 @@ function saturationQuantity(
       return Outcome.fine
     },
     ...(invert && { invert }),
+    ...(isGentle && { gentle: true }),
     print: called(name),
   }
 }
@@ -180,8 +182,20 @@ const saturationTemperatureOperation = saturationQuantity(
   Saturation.Tp,
   (target) => apply(saturationPressureOperation, target),
 )
-const liquidEnthalpyOperation = saturationQuantity("h'", Saturation.hL, Saturation.hLp)
-const vapourEnthalpyOperation = saturationQuantity("h''", Saturation.hV, Saturation.hVp)
+const liquidEnthalpyOperation = saturationQuantity(
+  "h'",
+  Saturation.hL,
+  Saturation.hLp,
+  undefined,
+  true,
+)
+const vapourEnthalpyOperation = saturationQuantity(
+  "h''",
+  Saturation.hV,
+  Saturation.hVp,
+  undefined,
+  true,
+)
 
 /** T(p, h) - Tsat(p); given as 0 it means dry saturated steam. */
 const superheatOperation = differenceToSaturation('superheat', 1, () => enthalpyFromSuperheat)
@@ -220,7 +234,12 @@ type OneOperandForm = (out: Float64Array, at: number, a: number) => number
 /** Values, two partials and a warm start. */
 const formSize = 4
 
-function form2(name: string, compute: TwoOperandForm, invert: Operation['invert']): Operation {
+function form2(
+  name: string,
+  compute: TwoOperandForm,
+  invert: Operation['invert'],
+  isGentle = false,
+): Operation {
   return {
     name,
     memory: formSize + 2,
@@ -242,6 +261,7 @@ function form2(name: string, compute: TwoOperandForm, invert: Operation['invert'
       return Outcome.fine
     },
     invert,
+    ...(isGentle && { gentle: true }),
     print: called(name),
   }
 }
@@ -293,11 +313,13 @@ const enthalpyFromSuperheat = form2(
   'h',
   enthalpyAtPressureSuperheat,
   back(() => superheatOperation),
+  true,
 )
 const enthalpyFromSubcooling = form2(
   'h',
   enthalpyAtPressureSubcooling,
   back(() => subcoolingOperation),
+  true,
 )
 const saturationPressureOperation = form1('psat', saturationPressure, (target) =>
   apply(saturationTemperatureOperation, target),

@@ -189,5 +189,11 @@ export const condenser = defineUnitKind({
       course: 'throttledLine' as const,
     })),
   ],
+  heatPassage: {
+    cold: { inletTemperature: 'coolingInletT', rise: 'coolingRise' },
+    hot: { from: 'steam', to: 'condensate' },
+    shell: 'saturated',
+    differences: [{ quantity: 'terminalDifference', end: 'hot', fromSaturation: true }],
+  },
   starts: { condensate: 'liquid' },
 })

@@ -66,6 +66,7 @@ export const heatExchanger = defineUnitKind({
       q.heat,
       q.hotEndDifference,
       q.coldEndDifference,
+      'hot',
     ),
   }),
   freezing: () => [
@@ -76,6 +77,15 @@ export const heatExchanger = defineUnitKind({
     { from: 'hot', to: 'hotOutlet', course: 'line' },
     { from: 'cold', to: 'coldOutlet', course: 'line' },
   ],
+  heatPassage: {
+    cold: { from: 'cold', to: 'coldOutlet' },
+    hot: { from: 'hot', to: 'hotOutlet' },
+    shell: 'counterflow',
+    differences: [
+      { quantity: 'hotEndDifference', end: 'hot' },
+      { quantity: 'coldEndDifference', end: 'cold' },
+    ],
+  },
   passes: [
     ['hot', 'hotOutlet'],
     ['cold', 'coldOutlet'],

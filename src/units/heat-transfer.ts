@@ -3,10 +3,8 @@ import {
   type Equation,
   type Expression,
   equal,
-  exponential,
   isConstant,
   minus,
-  negate,
   type Operation,
   Outcome,
   times,
@@ -56,27 +54,50 @@ const reciprocalMean: Operation = {
   print: ([a, b]) => ({ text: `1/LMTD(${a!.text}, ${b!.text})`, strength: 2 }),
 }
 
-/** (a - b)/heat, 1/(W/K); 0 where no heat passes: how much faster one side changes than the other. */
-const capacityDifference: Operation = {
-  name: 'capacityDifference',
+/** (e^x - 1)/x, 1 at x = 0: positive, rising and smooth everywhere. */
+const meanExponential: Operation = {
+  name: 'meanExponential',
+  evaluate(tape, row) {
+    const k = tape.first[row]!
+    const x = tape.values[tape.operands[k]!]!
+    if (x > largestExponent) return Outcome.outsideDomain
+    const slot = tape.slotOf(row)
+    if (Math.abs(x) < 1e-4) {
+      tape.values[slot] = 1 + x * (1 / 2 + x * (1 / 6 + x / 24))
+      tape.partials[k] = 1 / 2 + x * (1 / 3 + x / 8)
+      return Outcome.fine
+    }
+    const mean = Math.expm1(x) / x
+    tape.values[slot] = mean
+    tape.partials[k] = (Math.exp(x) - mean) / x
+    return Outcome.fine
+  },
+  print: ([x]) => ({ text: `mean exponential(${x!.text})`, strength: 4 }),
+}
+/** Beyond it an iteration has gone astray. */
+const largestExponent = 100
+
+/** conductance (a - b)/heat, the transfer units by which one side changes more than the other. */
+const unitsDifference: Operation = {
+  name: 'unitsDifference',
   evaluate(tape, row) {
     const k = tape.first[row]!
     const { values, operands, partials } = tape
+    const conductance = values[operands[k]!]!
+    const difference = values[operands[k + 1]!]!
     const heat = values[operands[k + 2]!]!
-    const slot = tape.slotOf(row)
-    if (heat === 0) {
-      values[slot] = 0
-      partials.fill(0, k, k + 3)
-      return Outcome.fine
-    }
-    const quotient = (values[operands[k]!]! - values[operands[k + 1]!]!) / heat
-    values[slot] = quotient
-    partials[k] = 1 / heat
-    partials[k + 1] = -1 / heat
+    if (heat === 0) return Outcome.unbounded
+    const quotient = (conductance * difference) / heat
+    values[tape.slotOf(row)] = quotient
+    partials[k] = difference / heat
+    partials[k + 1] = conductance / heat
     partials[k + 2] = -quotient / heat
     return Outcome.fine
   },
-  print: ([a, b, heat]) => ({ text: `(${a!.text} − ${b!.text})/${heat!.text}`, strength: 2 }),
+  print: ([conductance, difference, heat]) => ({
+    text: `${conductance!.text} (${difference!.text})/${heat!.text}`,
+    strength: 2,
+  }),
 }
 
 /** Energy flow over mass flow, J/kg; a third value where nothing flows. */
@@ -113,25 +134,27 @@ export function mixedEnthalpy(
 }
 
 /**
- * conductance = heat/LMTD(a, b), a and b the differences at the zone's hot and cold end, K. `zone`
- * names it in findings.
+ * conductance = heat/LMTD(hot, cold), the differences at the zone's hot and cold end, K. `zone`
+ * names it in findings. Iterations use heat = conductance base (e^x - 1)/x with x = -conductance
+ * (base - other)/heat, the same relation in effectiveness form: it has a value for differences of
+ * any sign and no other root. `base` is the end whose difference is the larger.
  */
 export function transfer(
   zone: string,
   conductance: Expression,
   heat: Expression,
-  a: Expression,
-  b: Expression,
+  hot: Expression,
+  cold: Expression,
+  base: 'hot' | 'cold',
 ): Equation {
+  const [large, small] = base === 'hot' ? [hot, cold] : [cold, hot]
+  const units = apply(unitsDifference, conductance, minus(small, large), heat)
   return {
-    ...equal(conductance, times(heat, apply(reciprocalMean, a, b))),
-    iterated: minus(
-      times(a, exponential(negate(times(conductance, apply(capacityDifference, a, b, heat))))),
-      b,
-    ),
+    ...equal(conductance, times(heat, apply(reciprocalMean, hot, cold))),
+    iterated: minus(heat, times(conductance, times(large, apply(meanExponential, units)))),
     differences: {
-      [`at the hot end of ${zone}`]: a,
-      [`at the cold end of ${zone}`]: b,
+      [`at the hot end of ${zone}`]: hot,
+      [`at the cold end of ${zone}`]: cold,
     },
   }
 }

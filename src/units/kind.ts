@@ -183,6 +183,56 @@ export type Start =
   | 'expanded'
   | { readonly as: string }
 
+/**
+ * Where a unit passes heat on, for the chart of temperature against heat. Port names without number
+ * stand for all streams of a repeated port, mixed.
+ */
+export interface HeatPassage {
+  /** What takes the heat up: streams between ports, or cooling water by its temperatures. */
+  readonly cold:
+    | { readonly from: string; readonly to: string }
+    | { readonly inletTemperature: string; readonly rise: string }
+  /** What gives it. */
+  readonly hot: { readonly from: string; readonly to: string }
+  /**
+   * `counterflow`: both sides by their own states. `saturated`: the shell is at saturation but for a
+   * zone that cools the steam and one that cools the drain, where there are such.
+   */
+  readonly shell: 'counterflow' | 'saturated'
+  /** The quantity that the superheat left behind a desuperheating zone goes by; it is there with the zone. */
+  readonly residualSuperheat?: string
+  /** Differences of temperature that the trade has names for: quantities, and at which end they lie. */
+  readonly differences: readonly {
+    readonly quantity: string
+    readonly end: 'hot' | 'cold'
+    /** Counted from saturation, not from what enters there. */
+    readonly fromSaturation?: true
+  }[]
+}
+
+/** Solved numbers of a unit, SI; NaN where something is open. */
+export interface UnitNumbers {
+  readonly shape: Shape
+  /** By numbered name. */
+  port(name: string): { readonly m: number; readonly p: number; readonly h: number } | undefined
+  quantity(name: string): number
+}
+
+/** What works between two ports of a machine, SI. */
+export interface StageGroup {
+  readonly flow: number
+  /** The state in which it starts. */
+  readonly inletPressure: number
+  readonly inletEnthalpy: number
+  /** The end of its expansion line, before an exhaust loss. */
+  readonly outletPressure: number
+  readonly outletEnthalpy: number
+  /** What it gives to the shaft, W; over all groups the machine's power. */
+  readonly power: number
+  /** Quantities of the unit that belong to it. */
+  readonly quantities: Readonly<Record<'efficiency' | 'flowConstant', string>>
+}
+
 /** How exergy is accounted: contract, section 3, second law. */
 export type SecondLawRole = 'adiabatic' | 'losesHeat' | 'fired' | 'heated' | 'delivers' | 'edge'
 
@@ -263,6 +313,10 @@ export interface UnitKind<
   holdsPressure?(isGiven: (quantity: string) => boolean): boolean
   readonly secondLaw: SecondLawRole
   readonly paths: (shape: Shape) => readonly ProcessPath[]
+  /** Absent: passes no heat on from stream to stream. */
+  readonly heatPassage?: HeatPassage
+  /** What the machine consists of, in the direction of the flow. */
+  stageGroups?(unit: UnitNumbers): readonly StageGroup[]
   /** First guesses of what leaves: where an iteration starts when nothing better is known. */
   readonly starts: Readonly<Record<string, Start>>
   /** May leave at a higher pressure than it receives. */

@@ -151,5 +151,11 @@ export const mixingHeater = defineUnitKind({
       course: 'throttledLine' as const,
     })),
   ],
+  heatPassage: {
+    cold: { from: 'water', to: 'outlet' },
+    hot: { from: 'steam', to: 'outlet' },
+    shell: 'saturated',
+    differences: [],
+  },
   starts: { outlet: 'liquid', vent: 'dry' },
 })

@@ -214,6 +214,7 @@ export const surfaceHeater = defineUnitKind({
         zoneHeat,
         minus(shellTemperature, coldEnd),
         q.drainApproach,
+        'hot',
       )
     } else equations.drainState = equal(drain.h, liquidEnthalpy(q.pressure))
 
@@ -230,6 +231,7 @@ export const surfaceHeater = defineUnitKind({
         zoneHeat,
         minus(temperature(q.pressure, entering), outlet.T),
         minus(plus(shellTemperature, q.residualSuperheat), hotEnd),
+        'hot',
       )
     }
     equations.heatTransfer = transfer(
@@ -238,6 +240,7 @@ export const surfaceHeater = defineUnitKind({
       condensingHeat,
       minus(shellTemperature, hotEnd),
       minus(shellTemperature, coldEnd),
+      'cold',
     )
     return equations
   },
@@ -317,6 +320,16 @@ export const surfaceHeater = defineUnitKind({
     })),
     { from: 'water', to: 'outlet', course: 'line' },
   ],
+  heatPassage: {
+    cold: { from: 'water', to: 'outlet' },
+    hot: { from: 'steam', to: 'drain' },
+    shell: 'saturated',
+    residualSuperheat: 'residualSuperheat',
+    differences: [
+      { quantity: 'terminalDifference', end: 'hot', fromSaturation: true },
+      { quantity: 'drainApproach', end: 'cold' },
+    ],
+  },
   passes: [['water', 'outlet']],
   starts: { drain: 'liquid', outlet: 'heated' },
 })

@@ -11,6 +11,7 @@ import {
   square,
   times,
 } from '../equations/expression/index.ts'
+import { state } from '../steam/index.ts'
 import {
   enthalpyAtEntropy,
   entropy,
@@ -21,7 +22,13 @@ import {
 } from '../steam/operations.ts'
 import { commonPractice, energy, one } from './common.ts'
 import { mixedEnthalpy } from './heat-transfer.ts'
-import { defineUnitKind, type FreezeRule, type Shape } from './kind.ts'
+import {
+  defineUnitKind,
+  type FreezeRule,
+  type Shape,
+  type StageGroup,
+  type UnitNumbers,
+} from './kind.ts'
 
 const perGroup = { port: 'bleed', extra: 1 } as const
 const perBleed = { port: 'bleed', extra: 0 } as const
@@ -48,6 +55,53 @@ function wetFactor(
   const mean = divide(plus(yStart, yEnd), constant(2))
   const wet = wetPart(start.p, start.h, s, isentropicEnd)
   return minus(one, times(factor, times(wet, mean)))
+}
+
+/**
+ * The stage groups as the equations have them: a group starts where the valves or the group before it
+ * end, less what moisture removal takes out. What the valves and the exhaust lose counts with the group.
+ */
+function stageGroups({ shape, port, quantity }: UnitNumbers): StageGroup[] {
+  const inlet = port('inlet')
+  const last = (shape.streams.bleed ?? 0) + 1
+  const groups: StageGroup[] = []
+  if (!inlet) return groups
+  let { m: flow, p: inletPressure, h: entering } = inlet
+  let inletEnthalpy = entering
+  if (withAdmission(shape)) {
+    const before = state({ p: inletPressure, h: entering })
+    inletPressure *= 1 - quantity('admissionLossFraction')
+    const ideal = before.outcome === 'state' && state({ p: inletPressure, s: before.s })
+    const drop = ideal && ideal.outcome === 'state' ? entering - ideal.h : Number.NaN
+    inletEnthalpy = entering - quantity('admissionEfficiency') * drop
+  }
+  for (let i = 1; i <= last; i++) {
+    const outlet = port(i === last ? 'exhaust' : `bleed${i}`)
+    if (!outlet) break
+    const removes = i < last && withMoistureRemoval(shape)
+    const outletEnthalpy = removes
+      ? quantity(`groupEndEnthalpy${i}`)
+      : i === last
+        ? outlet.h - quantity('exhaustLoss')
+        : outlet.h
+    const leaving = removes ? outletEnthalpy : outlet.h
+    groups.push({
+      flow,
+      inletPressure,
+      inletEnthalpy,
+      outletPressure: outlet.p,
+      outletEnthalpy,
+      power: flow * (entering - leaving),
+      quantities: { efficiency: `groupEfficiency${i}`, flowConstant: `flowConstant${i}` },
+    })
+    const rest = flow - outlet.m
+    // What the bleed does not take of the energy at the group's end goes on.
+    entering = removes ? (flow * outletEnthalpy - outlet.m * outlet.h) / rest : outlet.h
+    inletEnthalpy = entering
+    inletPressure = outlet.p
+    flow = rest
+  }
+  return groups
 }
 
 export const turbine = defineUnitKind({
@@ -306,5 +360,6 @@ export const turbine = defineUnitKind({
     const ends = ['inlet', ...Array.from({ length: bleeds }, (_, k) => `bleed${k + 1}`), 'exhaust']
     return ends.slice(1).map((to, k) => ({ from: ends[k]!, to, course: 'expansion' as const }))
   },
+  stageGroups,
   starts: { bleed: 'expanded', exhaust: 'expanded' },
 })

@@ -88,6 +88,59 @@ function preferredVariable(expression: Expression): number | undefined {
   return undefined
 }
 
+/** A variable of an equation between two unknowns, as a function of the other. */
+export interface Assignment {
+  readonly variable: number
+  readonly from: number
+  readonly value: Expression
+}
+
+/**
+ * How an equation between just two unknowns can be assigned instead of iterated: the one in terms
+ * of the other, where that is linear or a gentle function. `preferred` is taken when both can.
+ */
+export function assignmentOf(
+  equation: Equation,
+  unknowns: readonly [number, number],
+  preferred: number,
+): Assignment | undefined {
+  const steam = preferredVariable(equation.left) ?? preferredVariable(equation.right)
+  const order =
+    steam !== undefined && unknowns.includes(steam)
+      ? [steam]
+      : preferred === unknowns[0]
+        ? [unknowns[0], unknowns[1]]
+        : [unknowns[1], unknowns[0]]
+  for (const target of order) {
+    const value = solveFor(equation, target)
+    if (value === undefined) continue
+    const from = target === unknowns[0] ? unknowns[1] : unknowns[0]
+    if (isLinearIn(value, from) || isGentle(value)) return { variable: target, from, value }
+  }
+  return undefined
+}
+
+function isGentle(value: Expression): boolean {
+  return (
+    value.kind === 'application' &&
+    value.operation.gentle === true &&
+    value.operands.every((operand) => operand.kind !== 'application')
+  )
+}
+
+/** Whether an expression is linear in a variable, with constant or given factors. */
+function isLinearIn(expression: Expression, index: number): boolean {
+  return degreeIn(expression, index) <= 1
+}
+
+function degreeIn(expression: Expression, index: number): number {
+  if (expression.kind === 'constant') return 0
+  if (expression.kind === 'variable') return expression.index === index ? 1 : 0
+  const degrees = expression.operands.map((operand) => degreeIn(operand, index))
+  if (degrees.every((degree) => degree === 0)) return 0
+  return expression.operation.degree?.(degrees) ?? 2
+}
+
 /** The residual in the form that iterates best, with the same variables. */
 export function iteratedResidual(equation: Equation): Expression {
   if (equation.iterated !== undefined) return equation.iterated

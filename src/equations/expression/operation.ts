@@ -80,6 +80,8 @@ export interface Operation {
    * is flat there, its inverse is not (a subcooling of 0 says nothing of h inside the dome).
    */
   readonly solveFor?: number
+  /** Has a value and a modest slope over its whole range, so that it may be assigned, not iterated. */
+  readonly gentle?: true
   /**
    * Degree of the result in chosen variables from the operands' degrees (0 constant, 1 linear,
    * 2 anything else). Absent: 0 when all are 0, else 2.

@@ -62,6 +62,19 @@ export class Tape implements Rows {
   }
 }
 
+/** Hands a value on, to a variable that is assigned and not iterated. */
+const copyOperation: Operation = {
+  name: 'copy',
+  evaluate(tape, row) {
+    const k = tape.first[row]!
+    tape.values[tape.slotOf(row)] = tape.values[tape.operands[k]!]!
+    tape.partials[k] = 1
+    return Outcome.fine
+  },
+  degree: ([degree]) => degree!,
+  print: ([operand]) => operand!,
+}
+
 /** Lowers expressions into a tape; what is shared by identity becomes one row. */
 export class TapeBuilder {
   private readonly values: number[]
@@ -123,12 +136,29 @@ export class TapeBuilder {
     return this.first[row]!
   }
 
-  /** Every row that the slots need, in an order in which they can be evaluated. */
-  rowsBehind(slots: readonly number[]): Int32Array {
+  /** Appends a row that gives a variable the value of a slot; returns the row. */
+  assign(variable: number, source: number): number {
+    const row = this.operations.length
+    this.operations.push(copyOperation)
+    this.operands.push(source)
+    this.first.push(this.operands.length)
+    this.slots.push(variable)
+    this.sources.push(-1)
+    this.memoryAt.push(this.memorySize)
+    this.degrees[variable] = this.degrees[source]!
+    return row
+  }
+
+  /**
+   * Every row that the slots need, in an order in which they can be evaluated. `assigned` names
+   * the rows that give variables their values.
+   */
+  rowsBehind(slots: readonly number[], assigned?: ReadonlyMap<number, number>): Int32Array {
     const rows = new Set<number>()
     const stack = [...slots]
     while (stack.length > 0) {
-      const row = this.rowOfSlot[stack.pop()!]!
+      const slot = stack.pop()!
+      const row = assigned?.get(slot) ?? this.rowOfSlot[slot]!
       if (row < 0 || rows.has(row)) continue
       rows.add(row)
       for (let k = this.first[row]!; k < this.first[row + 1]!; k++) stack.push(this.operands[k]!)

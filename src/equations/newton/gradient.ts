@@ -15,12 +15,16 @@ export class GradientProgram {
   readonly entryVariable: Int32Array
   private readonly adjoint: Float64Array
 
-  /** `isActive` tells which slots depend on the variables of interest. */
+  /**
+   * `isActive` tells which slots depend on the variables of interest, `assigned` which rows give
+   * variables their values.
+   */
   constructor(
     builder: TapeBuilder,
     seeds: readonly number[],
     isActive: (slot: number) => boolean,
     adjoint: Float64Array,
+    assigned?: ReadonlyMap<number, number>,
   ) {
     this.adjoint = adjoint
     this.seeds = Int32Array.from(seeds)
@@ -34,7 +38,7 @@ export class GradientProgram {
       const stack = [seed]
       while (stack.length > 0) {
         const slot = stack.pop()!
-        const row = builder.rowOf(slot)
+        const row = assigned?.get(slot) ?? builder.rowOf(slot)
         if (row < 0) {
           variables.add(slot)
           continue

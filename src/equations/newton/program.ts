@@ -1,4 +1,6 @@
 import {
+  type Assignment,
+  assignmentOf,
   type Equation,
   forEachVariableOf,
   iteratedResidual,
@@ -32,6 +34,7 @@ export class Program {
   /** By variable: it changed since the step that needs it last ran. */
   private readonly changed: Uint8Array
   private readonly inputs: readonly Int32Array[]
+  private readonly iterated: readonly (readonly number[])[]
   private fresh = true
 
   constructor(
@@ -44,7 +47,8 @@ export class Program {
     const drafts = blocks.map((block) => draftStep(builder, equations, block))
     this.tape = builder.finish()
     const adjoint = new Float64Array(this.tape.values.length)
-    this.steps = drafts.map((draft) => draft(builder, adjoint, bounds))
+    this.steps = drafts.map(({ step }) => step(builder, adjoint, bounds))
+    this.iterated = drafts.map((draft) => draft.equations)
     this.blocks = blocks
     this.outcomes = new Uint8Array(blocks.length)
     this.lost = new Uint8Array(variableCount)
@@ -105,6 +109,11 @@ export class Program {
     this.fresh = true
   }
 
+  /** The equation of a block that was missed most when it had no answer. */
+  worstEquation(k: number): number {
+    return this.iterated[k]![this.steps[k]!.worst] ?? this.blocks[k]!.equations[0]!
+  }
+
   private isTouched(k: number): boolean {
     const inputs = this.inputs[k]!
     for (let i = 0; i < inputs.length; i++) if (this.changed[inputs[i]!]) return true
@@ -132,7 +141,11 @@ export class Program {
 /** Fills in first guesses for what is not known; the choice picks one of several. */
 export type Guess = (known: (index: number) => boolean, choice: number) => void
 
-type StepDraft = (builder: TapeBuilder, adjoint: Float64Array, bounds: Bounds) => Step
+interface StepDraft {
+  /** Equations that the step iterates, or assigns. */
+  readonly equations: readonly number[]
+  readonly step: (builder: TapeBuilder, adjoint: Float64Array, bounds: Bounds) => Step
+}
 
 function draftStep(builder: TapeBuilder, equations: readonly Equation[], block: Block): StepDraft {
   if (block.equations.length === 1) {
@@ -141,32 +154,99 @@ function draftStep(builder: TapeBuilder, equations: readonly Equation[], block: 
     if (explicit !== undefined) {
       const slot = builder.lower(explicit)
       const rows = builder.rowsBehind([slot])
-      return () => new ExplicitStep(rows, slot, target)
+      return {
+        equations: block.equations,
+        step: () => new ExplicitStep(rows, slot, target),
+      }
     }
   }
   const from = builder.rowCount
   builder.activate(block.variables)
-  const seeds = block.equations.map((e) => builder.lower(iteratedResidual(equations[e]!)))
-  const degrees = new Map<number, number>()
+  const { assignments, equations: open, variables } = assignWithin(equations, block)
+  const assigned = new Map<number, number>()
+  for (const { variable, value } of assignments) {
+    assigned.set(variable, builder.assign(variable, builder.lower(value)))
+  }
+  const seeds = open.map((e) => builder.lower(iteratedResidual(equations[e]!)))
   let linear = true
   for (const seed of seeds) if (builder.degreeOf(seed) > 1) linear = false
-  const all = builder.rowsBehind(seeds)
-  const prelude = all.filter((row) => builder.degreeOf(builder.slotOfRow(row)) === 0)
-  const iterated = all.filter((row) => builder.degreeOf(builder.slotOfRow(row)) > 0)
-  for (const row of iterated) degrees.set(builder.slotOfRow(row), 1)
-  const active = new Set(block.variables)
+  // What is assigned must be evaluated even where no equation left asks for it.
+  const all = builder.rowsBehind([...seeds, ...assigned.keys()], assigned)
+  const isIterated = (row: number): boolean => builder.degreeOf(builder.slotOfRow(row)) > 0
+  const prelude = all.filter((row) => !isIterated(row))
+  const iterated = all.filter(isIterated)
+  const active = new Set<number>(block.variables)
+  for (const row of iterated) active.add(builder.slotOfRow(row))
   builder.deactivate(block.variables, from)
-  return (finished, adjoint, bounds) => {
-    const gradient = new GradientProgram(
-      finished,
-      seeds,
-      (slot) => degrees.has(slot) || active.has(slot),
-      adjoint,
-    )
-    return block.variables.length === 1
-      ? new ScalarStep(prelude, iterated, seeds[0]!, block.variables[0]!, gradient, bounds, linear)
-      : new BlockStep(prelude, iterated, seeds, block.variables, gradient, bounds, linear)
+  return {
+    equations: open,
+    step: (finished, adjoint, bounds) => {
+      const gradient = new GradientProgram(
+        finished,
+        seeds,
+        (slot) => active.has(slot),
+        adjoint,
+        assigned,
+      )
+      return variables.length === 1
+        ? new ScalarStep(prelude, iterated, seeds[0]!, variables[0]!, gradient, bounds, linear)
+        : new BlockStep(prelude, iterated, seeds, variables, gradient, bounds, linear)
+    },
   }
+}
+
+/**
+ * Equations between two of a block's unknowns give one in terms of the other: it is assigned and
+ * drops out of the iteration, as does its equation. In an order in which each finds what it needs.
+ */
+function assignWithin(
+  equations: readonly Equation[],
+  block: Block,
+): {
+  readonly assignments: readonly Assignment[]
+  readonly equations: readonly number[]
+  readonly variables: readonly number[]
+} {
+  const own = new Set(block.variables)
+  const byVariable = new Map<number, Assignment>()
+  const open: number[] = []
+  block.equations.forEach((e, k) => {
+    const unknowns: number[] = []
+    forEachVariableOf(equations[e]!, (index) => {
+      if (own.has(index)) unknowns.push(index)
+    })
+    const found =
+      unknowns.length === 2
+        ? assignmentOf(equations[e]!, [unknowns[0]!, unknowns[1]!], block.variables[k]!)
+        : undefined
+    if (found === undefined || byVariable.has(found.variable) || leadsTo(found, byVariable)) {
+      open.push(e)
+    } else byVariable.set(found.variable, found)
+  })
+  const assignments: Assignment[] = []
+  const done = new Set<number>()
+  const place = (assignment: Assignment): void => {
+    if (done.has(assignment.variable)) return
+    done.add(assignment.variable)
+    const before = byVariable.get(assignment.from)
+    if (before) place(before)
+    assignments.push(assignment)
+  }
+  for (const assignment of byVariable.values()) place(assignment)
+  return {
+    assignments,
+    equations: open,
+    variables: block.variables.filter((index) => !byVariable.has(index)),
+  }
+}
+
+/** Whether what an assignment starts from follows, step by step, from what it assigns. */
+function leadsTo(assignment: Assignment, byVariable: ReadonlyMap<number, Assignment>): boolean {
+  for (let at: number | undefined = assignment.from; at !== undefined; ) {
+    if (at === assignment.variable) return true
+    at = byVariable.get(at)?.from
+  }
+  return false
 }
 
 /** Variables that the block's equations need and that it does not solve for. */
