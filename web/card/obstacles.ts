@@ -1,12 +1,12 @@
 import type { Box, Obstacle } from './place-card.ts'
 
 /** What is drawn on the canvas, found by its classes. */
-const unitSelector = '.react-flow__node'
-const streamSelector = '.stream-line'
+const unitSelector = '.react-flow__node, .shaft .symbol'
+const lineSelector = '.stream-line, .shaft-line'
 const textSelector = '.unit-label, .stream-tag, .canvas-controls, .legend-group, .legend-ramp'
 /** Room to be left around things, px. */
 const around = 6
-/** How far apart a stream's line is looked at, px on screen. */
+/** How far apart a line is looked at, px on screen. */
 const pitch = 14
 
 /** Covering the selected thing itself is worst, then symbols, then texts, then lines. */
@@ -53,8 +53,9 @@ export function canvasObstacles(
     if (its) anchor = box
     obstacles.push({ ...box, weight: its ? weights.selected : weights.unit })
   }
-  for (const path of canvas.querySelectorAll<SVGPathElement>(streamSelector)) {
-    const its = path.closest('[data-stream]')?.getAttribute('data-stream') === selected
+  for (const path of canvas.querySelectorAll<SVGPathElement>(lineSelector)) {
+    const owner = path.closest<SVGElement>('[data-stream], [data-shaft]')?.dataset
+    const its = (owner?.stream ?? owner?.shaft) === selected
     if (its) anchor = boxOf(path, area)
     alongPath(path, area, obstacles, its ? weights.selected : weights.stream)
   }

@@ -1,4 +1,6 @@
-import { type RefObject, useCallback, useLayoutEffect, useRef, useState } from 'react'
+import { type RefObject, useCallback, useEffect, useLayoutEffect, useRef, useState } from 'react'
+import { useCanvasStore } from '../canvas/canvas-store.ts'
+import type { Sheet } from '../canvas/sheet.ts'
 import { canvasObstacles } from './obstacles.ts'
 import { placeCard } from './place-card.ts'
 
@@ -15,6 +17,17 @@ function within(place: Place, card: HTMLElement, area: HTMLElement): Place {
     left: Math.max(0, Math.min(place.left, area.clientWidth - card.offsetWidth)),
     top: Math.max(0, Math.min(place.top, area.clientHeight - card.offsetHeight)),
   }
+}
+
+/** Whether all that is drawn stands where it stood. */
+function standsStill(now: Sheet, then: Sheet): boolean {
+  const still = (here: ReadonlyMap<string, unknown>, there: ReadonlyMap<string, unknown>) =>
+    here.size === there.size && [...here].every(([id, one]) => there.get(id) === one)
+  return (
+    still(now.units, then.units) &&
+    still(now.streams, then.streams) &&
+    still(now.shafts, then.shafts)
+  )
 }
 
 /** Keeps a card where it covers nothing, or where the user has dragged it. */
@@ -46,6 +59,24 @@ export function usePlace(
     observer.observe(element)
     return () => observer.disconnect()
   }, [card, settle])
+
+  // What is drawn moves and grows while the card is open: it then makes way.
+  useEffect(() => {
+    let settled = useCanvasStore.getState().sheet
+    let frame = 0
+    const end = useCanvasStore.subscribe(({ sheet, moved: onTheWay }) => {
+      if (sheet === settled || onTheWay) return
+      if (!standsStill(sheet, settled)) {
+        cancelAnimationFrame(frame)
+        frame = requestAnimationFrame(settle)
+      }
+      settled = sheet
+    })
+    return () => {
+      end()
+      cancelAnimationFrame(frame)
+    }
+  }, [settle])
 
   const startMove = (event: React.PointerEvent) => {
     const element = card.current
