@@ -4,6 +4,7 @@ import { readLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useCanvasStore } from './canvas-store.ts'
 import { refuse, say } from './connecting-store.ts'
+import { focusItem } from './focus-item.ts'
 import { type Box, grown, onGrid, overlap, type Point, type Size } from './geometry.ts'
 import { layoutOf } from './joins.ts'
 import { boxesOf } from './labelling.ts'
@@ -63,7 +64,7 @@ export function carry(kind: string, pointer: number, start: Point): void {
 export function placeUnit(kind: string, at: Point): string | null {
   const { edit, layoutId } = usePlantStore.getState()
   const label = kindOf(kind)?.label ?? kind
-  let id: string | null = null
+  let id = ''
   const before = useCanvasStore.getState().sheet
   try {
     edit(`Place ${label.toLowerCase()}`, (plant) => {
@@ -82,10 +83,10 @@ export function placeUnit(kind: string, at: Point): string | null {
     refuse(error instanceof Error ? error.message : `No ${label.toLowerCase()} was placed.`, at)
     return null
   }
-  if (id !== null) {
-    useSelectionStore.getState().select([id])
-    say(`${label} placed.`)
-  }
+  useSelectionStore.getState().select([id])
+  // The keys that follow are meant for the new unit, as soon as it is drawn.
+  requestAnimationFrame(() => focusItem(id))
+  say(`${label} placed.`)
   return id
 }
 

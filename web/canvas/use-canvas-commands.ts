@@ -1,7 +1,7 @@
 import { useEffect } from 'react'
 import { useReactFlow } from 'reactflow'
-import { mirrorUnits, removeItems } from '../../src/document.ts'
-import { useCommandStore } from '../commands/command-store.ts'
+import { kinds, mirrorUnits, removeItems } from '../../src/document.ts'
+import { type Command, useCommandStore } from '../commands/command-store.ts'
 import { editLayout, readLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useCanvasStore } from './canvas-store.ts'
@@ -9,6 +9,7 @@ import { say } from './connecting-store.ts'
 import { layoutOf } from './joins.ts'
 import { connectFromHere } from './keyboard.ts'
 import { placeFreely } from './placing.ts'
+import { withSmallStart } from './spoken-names.tsx'
 import { withAxesKept } from './steady.ts'
 import { useTagStore } from './tag-store.ts'
 
@@ -32,6 +33,18 @@ function removeSelected(): void {
   say(selected.length === 1 ? 'Deleted.' : `${selected.length} things deleted.`)
 }
 
+/** 'Place a pump' for every kind, for the command box; a boiler on the empty sheet has a key of its own. */
+const placing = kinds.map(
+  ({ name, label }): Command => ({
+    id: `canvas.place-another-${name}`,
+    name: `Place ${/^[aeiou]/i.test(label) ? 'an' : 'a'} ${withSmallStart(label)}`,
+    group: 'Edit',
+    hidden: true,
+    enabled: () => name !== 'boiler' || readLayout().units.length > 0,
+    run: () => placeFreely(name),
+  }),
+)
+
 /** What the canvas can be told to do, by key, menu or command box. */
 export function useCanvasCommands(showWhole: (duration?: number) => void): void {
   const flow = useReactFlow()
@@ -54,6 +67,15 @@ export function useCanvasCommands(showWhole: (duration?: number) => void): void 
           keys: 'Mod+A',
           enabled: () => readLayout().units.length > 0,
           run: () => useSelectionStore.getState().select(readLayout().units.map((unit) => unit.id)),
+        },
+        {
+          id: 'canvas.select-none',
+          name: 'Select nothing',
+          group: 'Edit',
+          keys: 'Escape',
+          hidden: true,
+          enabled: () => useSelectionStore.getState().selected.length > 0,
+          run: () => useSelectionStore.getState().select([]),
         },
         {
           id: 'canvas.mirror',
@@ -83,6 +105,7 @@ export function useCanvasCommands(showWhole: (duration?: number) => void): void 
           enabled: () => readLayout().units.length === 0,
           run: () => placeFreely('boiler'),
         },
+        ...placing,
         {
           id: 'canvas.fit',
           name: 'Show the whole plant',
