@@ -1,26 +1,40 @@
 import type { Given, Layout } from '../plant/document.ts'
-import type { Finding } from './answer.ts'
+import type { Finding, Remedy } from './answer.ts'
 import { error, Wording } from './findings.ts'
+import { givensBehind } from './givens-behind.ts'
 import type { Model } from './model.ts'
 import type { Results } from './results.ts'
 
 /** A relative difference of this size is round-off: of pressures, flows and entropy flows. */
 const roundOff = 1e-8
+/** Remedies offered for an impossible answer. */
+const mostRemedies = 12
 /** A temperature difference of this size is round-off, K. */
 const differenceRoundOff = 1e-7
 
 /** Errors and cautions that the answer itself shows: what cannot be, and what is unusual. */
 export function checkAnswer(model: Model, results: Results): Finding[] {
   const wording = new Wording(model.system.layout)
-  return [
+  const findings = [
     ...flowChecks(model, results, wording),
     ...pressureChecks(model, results, wording),
     ...rangeChecks(model, wording),
     ...entropyChecks(model, results, wording),
     ...differenceChecks(model, wording),
+    ...divisorChecks(model, results, wording),
     ...curveChecks(model, results, wording),
     ...idleChecks(model.system.layout, wording),
   ]
+  return findings.map((finding) =>
+    finding.severity === 'error'
+      ? { ...finding, remedies: remediesFor(model, finding.quantities) }
+      : finding,
+  )
+}
+
+/** Givens on which an impossible number depends, nearest first: one of them is to be changed. */
+function remediesFor(model: Model, quantities: readonly string[]): Remedy[] {
+  return givensBehind(model, quantities, mostRemedies).map((path) => ({ action: 'give', path }))
 }
 
 function largestFlow(results: Results): number {
@@ -156,6 +170,28 @@ function rangeChecks(model: Model, wording: Wording): Finding[] {
     }
   })
   return findings
+}
+
+/** A given ratio of nothing to nothing: the products hold, but nothing is fixed by it. */
+function divisorChecks(model: Model, results: Results, wording: Wording): Finding[] {
+  const { system } = model
+  const size = Math.abs(results.value('plant.heatInput') ?? 0)
+  return model
+    .divisors()
+    .filter(({ owner, key, value }) => {
+      const index = system.indexOf.get(`${owner}.${key}`)
+      const isGiven = index !== undefined && !Number.isNaN(system.given[index]!)
+      return isGiven && Math.abs(value) <= roundOff * size
+    })
+    .map(({ owner, key }) =>
+      error(
+        'ratio-of-nothing',
+        [owner],
+        [`${owner}.${key}`],
+        `${wording.quantity(`${owner}.${key}`)} is given, but what it relates to comes out as zero: the given value cannot be reached.`,
+        { advice: 'Give another value, or another quantity.' },
+      ),
+    )
 }
 
 /** Temperature differences that must not be below zero, even where only a conductance would suffer. */

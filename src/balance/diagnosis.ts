@@ -6,6 +6,7 @@ import { streamQuantities } from '../units/index.ts'
 import { portNamed } from '../units/kind.ts'
 import type { Finding, Status } from './answer.ts'
 import { error, ownersOf, ranked, remedies, Wording } from './findings.ts'
+import { givensBehind } from './givens-behind.ts'
 import type { Model } from './model.ts'
 import { analyse, type Misfit } from './structure.ts'
 import { assemble } from './system.ts'
@@ -102,6 +103,9 @@ function turbinesOnTwoShafts(model: Model, wording: Wording): Finding[] {
   return findings
 }
 
+/** Remedies offered for a block without an answer. */
+const mostRemedies = 12
+
 const numberWord = (count: number): string =>
   count === 1 ? 'One number is' : `${count} numbers are`
 
@@ -173,11 +177,10 @@ function overspecified(model: Model, parts: readonly Misfit[], wording: Wording)
  */
 function foldedInto(model: Model, parts: readonly Misfit[]): number[] {
   const { layout, given, curved, variables } = model.system
-  const unfolded = assemble(layout, { ...model.options, fold: false })
   const candidates = new Set<number>()
   for (const part of parts) {
     for (const e of part.equations) {
-      for (const v of variablesOf(unfolded.equations[e]!.equation)) {
+      for (const v of variablesOf(model.unfolded.equations[e]!.equation)) {
         if ((given[v] === 0 || given[v] === 1) && !curved[v]) candidates.add(v)
       }
     }
@@ -205,7 +208,11 @@ function failureOf(
   const unknowns = block.variables
     .filter((v) => !system.variables[v]!.isPhantom)
     .map((v) => system.variables[v]!.path)
-  const givens = givensNear(model, block.equations)
+  const givens = givensBehind(
+    model,
+    block.variables.map((v) => system.variables[v]!.path),
+    mostRemedies,
+  )
   const quantities = ranked(model, [...new Set([...givens, ...unknowns])], false).slice(0, 12)
   const where = [...new Set([owner, ...ownersOf(quantities)])]
   const target = unknowns[0] === undefined ? wording.name(owner) : wording.quantity(unknowns[0])
@@ -266,6 +273,7 @@ function failureOf(
           {
             advice:
               'Check the given values around these units; start from a case that solves and change it in steps.',
+            remedies: remedies('give', givens, () => undefined),
           },
         ),
       }
@@ -274,23 +282,10 @@ function failureOf(
         status: 'infeasible',
         finding: error('no-answer', where, quantities, noAnswer(model, k, owner, target, wording), {
           advice: 'Change one of the given values named here.',
-          remedies: remedies('free', givens, () => undefined),
+          remedies: remedies('give', givens, () => undefined),
         }),
       }
   }
-}
-
-/** Given numbers in the equations of a block and in those that fix what goes into them. */
-function givensNear(model: Model, equations: readonly number[]): string[] {
-  const { system } = model
-  const paths: string[] = []
-  for (const [e, { equation }] of system.equations.entries()) {
-    if (!equations.includes(e)) continue
-    for (const index of variablesOf(equation)) {
-      if (!Number.isNaN(system.given[index]!)) paths.push(system.variables[index]!.path)
-    }
-  }
-  return paths
 }
 
 function variablesOf(equation: Parameters<typeof forEachVariableOf>[0]): number[] {

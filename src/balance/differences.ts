@@ -10,10 +10,19 @@ export interface Difference {
   readonly value: number
 }
 
-/** The temperature differences that equations declare, read after a solution. */
+/** What an equation divides by, in the equation's own units. */
+export interface Divisor {
+  readonly owner: string
+  readonly key: string
+  readonly value: number
+}
+
+/** The temperature differences and divisors that equations declare, read after a solution. */
 export class Differences {
   private readonly entries: { readonly owner: string; readonly name: string }[] = []
   private readonly expressions: ExpressionValues
+  private readonly divisorEntries: { readonly owner: string; readonly key: string }[] = []
+  private readonly divisorValues: ExpressionValues
 
   constructor(system: System) {
     const expressions: Expression[] = []
@@ -24,6 +33,25 @@ export class Differences {
       }
     }
     this.expressions = new ExpressionValues(expressions, system.variables.length)
+    const divisors: Expression[] = []
+    for (const { owner, key, equation } of system.equations) {
+      if (equation.divisor === undefined) continue
+      this.divisorEntries.push({ owner, key })
+      divisors.push(equation.divisor)
+    }
+    this.divisorValues = new ExpressionValues(divisors, system.variables.length)
+  }
+
+  /** Divisors that can be computed from the values. */
+  readDivisors(values: Float64Array, lost: Uint8Array): Divisor[] {
+    this.divisorValues.load(values)
+    const found: Divisor[] = []
+    this.divisorEntries.forEach(({ owner, key }, k) => {
+      if (this.divisorValues.variablesOf(k).some((index) => lost[index])) return
+      const value = this.divisorValues.read(k)
+      if (value !== undefined) found.push({ owner, key, value })
+    })
+    return found
   }
 
   /** Those that can be computed from the values. */

@@ -1,6 +1,6 @@
 import { type Guess, Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
-import { type Difference, Differences } from './differences.ts'
+import { type Difference, Differences, type Divisor } from './differences.ts'
 import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
 import { analyse, type Structure } from './structure.ts'
@@ -13,6 +13,7 @@ export class Model {
   readonly program: Program
   readonly options: AssemblyOptions
   private isWarm = false
+  private unfoldedSystem: System | undefined
   private seed: ((path: string) => number | null) | undefined
   private differencesRead: Differences | undefined
 
@@ -43,10 +44,22 @@ export class Model {
     return this.program.lost[index] ? null : this.values[index]!
   }
 
+  /** The same equations with no given folded into them. */
+  get unfolded(): System {
+    this.unfoldedSystem ??= assemble(this.system.layout, { ...this.options, fold: false })
+    return this.unfoldedSystem
+  }
+
   /** Temperature differences that must not be below zero, K, as far as they are known. */
   differences(): readonly Difference[] {
     this.differencesRead ??= new Differences(this.system)
     return this.differencesRead.read(this.values, this.program.lost)
+  }
+
+  /** What equations divide by, as far as it is known. */
+  divisors(): readonly Divisor[] {
+    this.differencesRead ??= new Differences(this.system)
+    return this.differencesRead.readDivisors(this.values, this.program.lost)
   }
 
   /** Changes a given number; false where that changes the structure and a new model is needed. */

@@ -309,15 +309,25 @@ const enthalpyFromVolume = form2(
   enthalpyAtPressureVolume,
   back(() => volumeOperation),
 )
+/** A superheat below zero is a subcooling, and the other way round. */
+const eitherSide =
+  (own: TwoOperandForm, other: TwoOperandForm): TwoOperandForm =>
+  (out, at, p, difference) => {
+    if (difference >= 0) return own(out, at, p, difference)
+    const outcome = other(out, at, p, -difference)
+    if (outcome === SteamOutcome.fine) out[at + 2] = -out[at + 2]!
+    return outcome
+  }
+
 const enthalpyFromSuperheat = form2(
   'h',
-  enthalpyAtPressureSuperheat,
+  eitherSide(enthalpyAtPressureSuperheat, enthalpyAtPressureSubcooling),
   back(() => superheatOperation),
   true,
 )
 const enthalpyFromSubcooling = form2(
   'h',
-  enthalpyAtPressureSubcooling,
+  eitherSide(enthalpyAtPressureSubcooling, enthalpyAtPressureSuperheat),
   back(() => subcoolingOperation),
   true,
 )

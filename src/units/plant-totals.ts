@@ -168,7 +168,9 @@ export function plantEquations(
   const q = quantity
   // A whole given as 0 would leave no ratio in the product, and the part no freedom.
   const ratio = (name: PlantQuantity, part: Expression, whole: Expression): Equation =>
-    isConstant(whole, 0) ? equal(q(name), divide(part, whole)) : equal(times(q(name), whole), part)
+    isConstant(whole, 0)
+      ? equal(q(name), divide(part, whole))
+      : { ...equal(times(q(name), whole), part), divisor: whole }
   return {
     heatInput: equal(q('heatInput'), sum('heatInput')),
     turbineHeat: equal(

@@ -15,6 +15,8 @@ export interface Equation {
   readonly role?: EquationRole
   /** The same relation as an expression that is zero and has a value wherever an iteration may go. */
   readonly iterated?: Expression
+  /** What the relation divides by: where it is zero the equation says nothing. */
+  readonly divisor?: Expression
   /** What must not be below zero where the equation holds, by name: temperature differences, K. */
   readonly differences?: Readonly<Record<string, Expression>>
 }
