@@ -84,8 +84,10 @@ export function CommandBox() {
         onKeyDown={(event) => {
           if (event.key === 'ArrowDown') setAt(Math.min(current + 1, results.length - 1))
           else if (event.key === 'ArrowUp') setAt(Math.max(current - 1, 0))
-          else if (event.key === 'Enter') take(results[current])
-          else if (event.key === 'Escape') {
+          else if (event.key === 'Enter') {
+            // Who types fast and presses Enter means what is typed, not the list that still hangs behind.
+            take(wanted === text ? results[current] : find(text, layout, commands)[0])
+          } else if (event.key === 'Escape') {
             if (text === '') input.current?.blur()
             setText('')
           } else return
