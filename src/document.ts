@@ -32,6 +32,11 @@ export * from './quantity/format-quantity.ts'
 export * from './quantity/parse-quantity.ts'
 export * from './quantity/unit-set.ts'
 export * from './quantity/units-of-measure.ts'
+export {
+  derivedStreamQuantities,
+  derivedUnitQuantities,
+  stageGroupQuantities,
+} from './units/derived-quantities.ts'
 export { kindNamed as kindOf, kinds } from './units/index.ts'
 export type {
   KindGroup,

@@ -2,7 +2,9 @@
 
 import type { ProcessName } from './balance/answer.ts'
 import { solveCase } from './balance/case/solve-case.ts'
-import { curvesOf, isobarsOf } from './balance/chart-data.ts'
+import { curvesOf, drynessLines, isobarsOf } from './balance/chart-data.ts'
+import { type DerivedNames, derivedNames, derivedOf } from './balance/derived.ts'
+import { heatProfilesOf } from './balance/heat-profile.ts'
 import { Model } from './balance/model.ts'
 import { domePoints } from './balance/paths.ts'
 import { Results } from './balance/results.ts'
@@ -21,6 +23,7 @@ export function createEngine(clock: () => number = Date.now): Engine {
   let counter = 0
   let domeSent = false
   let namesSent = 0
+  let names: DerivedNames = { paths: [], account: [] }
 
   /** A case is solved afresh: its givens follow from the design's solution. */
   function caseOf(request: Request): { balance: Balance; number: number } | string {
@@ -61,7 +64,7 @@ export function createEngine(clock: () => number = Date.now): Engine {
       }
       if (!domeSent) {
         domeSent = true
-        answers.push({ type: 'dome', points: domePoints() })
+        answers.push({ type: 'dome', points: domePoints(), dryness: drynessLines() })
       }
       try {
         let balance: Balance
@@ -80,10 +83,11 @@ export function createEngine(clock: () => number = Date.now): Engine {
         }
         if (namesSent !== number) {
           namesSent = number
-          answers.push(namesOf(balance, number))
+          names = derivedNames(balance)
+          answers.push(namesOf(balance, number, names))
         }
         answers.push({
-          ...balanceMessage(request, balance, number),
+          ...balanceMessage(request, balance, number, names),
           milliseconds: clock() - start,
         })
       } catch (error) {
@@ -159,7 +163,11 @@ function update(model: Model, layout: Layout): boolean {
   )
 }
 
-function namesOf({ model, results }: Balance, structure: number): NamesMessage {
+function namesOf(
+  { model, results }: Balance,
+  structure: number,
+  derived: DerivedNames,
+): NamesMessage {
   const processes: ProcessName[] = []
   for (const { unit, kind, shape, streams } of model.system.units) {
     for (const { from, to } of kind.paths(shape)) {
@@ -176,6 +184,7 @@ function namesOf({ model, results }: Balance, structure: number): NamesMessage {
     paths: results.paths,
     streams: model.system.layout.streams.map((stream) => stream.id),
     processes,
+    derived,
   }
 }
 
@@ -183,6 +192,7 @@ function balanceMessage(
   request: Request,
   balance: Balance,
   structure: number,
+  names: DerivedNames,
 ): Omit<BalanceMessage, 'milliseconds'> {
   const { model, results } = balance
   const { missing, excess, equationCount, blocks } = model.structure
@@ -207,14 +217,19 @@ function balanceMessage(
     unbounded: balance.unbounded,
     curves: curvesOf(balance),
     isobars: isobarsOf(balance),
+    derived: derivedOf(balance, names),
+    profiles: heatProfilesOf(balance),
   }
 }
 
 /** Buffers that may be handed over instead of copied. */
 export function transferables(answer: Answer): ArrayBuffer[] {
-  if (answer.type === 'dome') return [answer.points.buffer as ArrayBuffer]
+  if (answer.type === 'dome') {
+    const { points, dryness } = answer
+    return [points, dryness.points, dryness.starts].map((array) => array.buffer as ArrayBuffer)
+  }
   if (answer.type !== 'balance') return []
-  const { values, phases, curves, isobars } = answer
+  const { values, phases, curves, isobars, derived } = answer
   return [
     values,
     phases,
@@ -224,6 +239,8 @@ export function transferables(answer: Answer): ArrayBuffer[] {
     isobars.pressures,
     isobars.points,
     isobars.starts,
+    derived.values,
+    derived.account,
   ].map((array) => array.buffer as ArrayBuffer)
 }
 

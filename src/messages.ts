@@ -1,9 +1,13 @@
 /** What the window and the worker say to each other. Types only. */
 import type { Finding, ProcessName, Status } from './balance/answer.ts'
-import type { Curves, Isobars } from './balance/chart-data.ts'
+import type { Curves, DrynessLines, Isobars } from './balance/chart-data.ts'
+import type { Derived, DerivedNames } from './balance/derived.ts'
+import type { HeatProfile } from './balance/heat-profile.ts'
 import type { Plant } from './plant/document.ts'
 
 export type { Finding, Origin, ProcessName, Remedy, Status, Token } from './balance/answer.ts'
+export type { AccountItem, AccountName } from './balance/derived.ts'
+export type { HeatProfile, ProfileMark, ZoneName } from './balance/heat-profile.ts'
 
 /** Window to worker. */
 export type Request = {
@@ -22,6 +26,8 @@ export interface NamesMessage {
   readonly paths: readonly string[]
   readonly streams: readonly string[]
   readonly processes: readonly ProcessName[]
+  /** What is worked out from the balance for tables and charts, and cannot be given. */
+  readonly derived: DerivedNames
 }
 
 export interface BalanceMessage {
@@ -51,6 +57,10 @@ export interface BalanceMessage {
   readonly unbounded: readonly string[]
   readonly curves: Curves
   readonly isobars: Isobars
+  /** Exergy, stage groups, the plant's account: in the order of `derived` of the names. */
+  readonly derived: Derived
+  /** Temperature against heat of the heaters, exchangers and condensers. */
+  readonly profiles: readonly HeatProfile[]
   /** Time the worker took, ms. */
   readonly milliseconds: number
 }
@@ -59,6 +69,7 @@ export interface BalanceMessage {
 export interface DomeMessage {
   readonly type: 'dome'
   readonly points: Float64Array
+  readonly dryness: DrynessLines
 }
 
 /** The layout could not be read at all (a unit of unknown kind, say). */

@@ -1,4 +1,12 @@
+import {
+  criticalTemperature,
+  Outcome,
+  SATURATION_SIZE,
+  Saturation,
+  saturationAtTemperature,
+} from '../steam/index.ts'
 import type { Model } from './model.ts'
+import { PointList } from './path-points.ts'
 import { PathStore } from './path-store.ts'
 import { type Course, isobarPoints, isobarPressures, processPoints } from './paths.ts'
 import type { Balance } from './solve.ts'
@@ -19,6 +27,9 @@ export interface Isobars {
   readonly points: Float64Array
   readonly starts: Uint32Array
 }
+
+/** Temperature of the triple point, K. */
+const triplePoint = 273.16
 
 /** Isobars reach at least this temperature, K, */
 const lowestTop = 620
@@ -111,4 +122,37 @@ export function isobarsOf({ model, results }: Balance): Isobars {
     starts[k + 1] = isobars.end()
   })
   return { pressures: chosen, points: isobars.list.copy(), starts }
+}
+
+/** Lines of constant dryness, as triples s, T, h from 273.16 K up to the critical point. */
+export interface DrynessLines {
+  /** Dryness fractions, 0.1 to 0.9. */
+  readonly x: Float64Array
+  readonly points: Float64Array
+  readonly starts: Uint32Array
+}
+
+const drynessSteps = 60
+
+export function drynessLines(): DrynessLines {
+  const x = Float64Array.from({ length: 9 }, (_, i) => (i + 1) / 10)
+  const list = new PointList()
+  const starts = new Uint32Array(x.length + 1)
+  const record = new Float64Array(SATURATION_SIZE)
+  x.forEach((dryness, k) => {
+    for (let i = 0; i <= drynessSteps; i++) {
+      // Crowded at the top, where the lines bend.
+      const share = 1 - (1 - i / drynessSteps) ** 3
+      const T = Math.min(
+        triplePoint + (criticalTemperature - triplePoint) * share,
+        criticalTemperature * (1 - 1e-9),
+      )
+      if (saturationAtTemperature(record, 0, T) !== Outcome.fine) continue
+      const between = (liquid: number, dry: number): number =>
+        record[liquid]! + dryness * (record[dry]! - record[liquid]!)
+      list.add(between(Saturation.sL, Saturation.sV), T, between(Saturation.hL, Saturation.hV))
+    }
+    starts[k + 1] = list.count
+  })
+  return { x, points: list.copy(), starts }
 }

@@ -21,6 +21,8 @@ import { streamResults } from './states.ts'
 /** What enters or leaves the plant as a whole, or is lost within. */
 export type AccountItem =
   | 'fuel'
+  /** Heat to the steam, where nothing says how much fuel it takes. */
+  | 'heatInput'
   | 'recovered'
   | 'supply'
   | 'netPower'
@@ -62,7 +64,7 @@ const unitNames = Object.keys(derivedUnitQuantities) as (keyof typeof derivedUni
 const groupNames = Object.keys(stageGroupQuantities) as (keyof typeof stageGroupQuantities)[]
 
 /** Names and order of what `derivedOf` gives; the same as long as the structure is. */
-export function derivedNames({ model }: Balance): DerivedNames {
+export function derivedNames({ model, results }: Balance): DerivedNames {
   const { layout, units } = model.system
   const paths: string[] = []
   for (const { id } of layout.streams) for (const name of streamNames) paths.push(`${id}.${name}`)
@@ -73,7 +75,7 @@ export function derivedNames({ model }: Balance): DerivedNames {
       for (const name of groupNames) paths.push(`${placed.unit.id}.group${i}.${name}`)
     }
   }
-  return { paths, account: accountNames(units, layout.shafts) }
+  return { paths, account: accountNames(units, layout.shafts, results) }
 }
 
 /** A machine has as many groups as its efficiencies have numbers. */
@@ -86,6 +88,7 @@ function groupCount({ kind, shape }: PlacedUnit): number {
 function accountNames(
   units: readonly PlacedUnit[],
   shafts: readonly { readonly id: string }[],
+  results: Results,
 ): AccountName[] {
   const names: AccountName[] = []
   for (const { unit, kind, connections } of units) {
@@ -93,6 +96,10 @@ function accountNames(
     const add = (item: AccountItem, side: AccountName['side']) => names.push({ owner, item, side })
     switch (kind.secondLaw) {
       case 'fired':
+        if (results.value(`${owner}.fuelHeat`) === null) {
+          add('heatInput', 'enters')
+          continue
+        }
         add('fuel', 'enters')
         add('firingLoss', 'leaves')
         break
@@ -350,6 +357,7 @@ function unitAccount(
   switch (kind.secondLaw) {
     case 'fired':
       set('fuel', fuel, fuel)
+      set('heatInput', totals.heatInput ?? Number.NaN, its.leaving - its.entering)
       // What the flue carries off is worth nothing: it is destroyed with the rest.
       set('firingLoss', fuel - (totals.heatInput ?? Number.NaN), 0)
       break

@@ -6,6 +6,8 @@
  */
 import { readFileSync } from 'node:fs'
 import { curvesOf, isobarsOf } from '../../src/balance/chart-data.ts'
+import { derivedNames, derivedOf } from '../../src/balance/derived.ts'
+import { heatProfilesOf } from '../../src/balance/heat-profile.ts'
 import { Model } from '../../src/balance/model.ts'
 import { Results } from '../../src/balance/results.ts'
 import { solve } from '../../src/balance/solve.ts'
@@ -68,3 +70,6 @@ time(
   () => isobarsOf(balance),
 )
 time('isobars, edit', edit, () => isobarsOf(balance))
+const names = derivedNames(balance)
+time('derived', edit, () => derivedOf(balance, names))
+time('profiles, edit', edit, () => heatProfilesOf(balance))

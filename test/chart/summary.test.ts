@@ -13,6 +13,7 @@ const names: NamesMessage = {
   ],
   streams: ['main', 'open', 'last'],
   processes: [],
+  derived: { paths: [], account: [] },
 }
 const none = Number.NaN
 const balance: BalanceMessage = {
@@ -37,6 +38,8 @@ const balance: BalanceMessage = {
     points: new Float64Array(0),
     starts: Uint32Array.of(0),
   },
+  derived: { values: new Float64Array(0), account: new Float64Array(0) },
+  profiles: [],
   milliseconds: 1,
 }
 

@@ -8,6 +8,7 @@ const names: NamesMessage = {
   paths: ['main.m', 'main.T', 'well.m', 'well.T', 'plant.netPower'],
   streams: ['main', 'well'],
   processes: [],
+  derived: { paths: [], account: [] },
 }
 
 function balance(values: readonly number[], status: Status = 'solved'): BalanceMessage {

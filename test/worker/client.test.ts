@@ -33,7 +33,8 @@ class FakeWorker implements WorkerPort {
 }
 
 function names(structure: number): NamesMessage {
-  return { type: 'names', structure, paths: [], streams: [], processes: [] }
+  const derived = { paths: [], account: [] }
+  return { type: 'names', structure, paths: [], streams: [], processes: [], derived }
 }
 
 function balance(sequence: number, structure = 1): BalanceMessage {
