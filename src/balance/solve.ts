@@ -17,6 +17,9 @@ export interface Balance {
   readonly iterations: number
 }
 
+/** Iterations times unknowns spent on looking for another answer. */
+const mostSeeking = 40_000
+
 /** Solves a model (again) and says how it ended. */
 export function solve(model: Model, results: Results = new Results(model)): Balance {
   const iterations = model.solve()
@@ -60,7 +63,8 @@ function isImpossible(checks: readonly Finding[]): boolean {
  */
 function seekPossible(model: Model, results: Results): Finding[] | undefined {
   const first = model.values.slice()
-  for (let choice = 1; choice < mostStarts; choice++) {
+  const allowed = model.program.work + mostSeeking
+  for (let choice = 1; choice < mostStarts && model.program.work < allowed; choice++) {
     if (!model.solveOtherwise(choice)) continue
     results.refresh()
     const checks = checkAnswer(model, results)
@@ -75,6 +79,9 @@ function seekPossible(model: Model, results: Results): Finding[] | undefined {
 /** A block may have no answer because an earlier one took another of its own. */
 function seekSolvable(model: Model): void {
   if (!model.program.hasChoice) return
-  for (let choice = 1; choice < mostStarts; choice++) if (model.solveOtherwise(choice)) return
+  const allowed = model.program.work + mostSeeking
+  for (let choice = 1; choice < mostStarts && model.program.work < allowed; choice++) {
+    if (model.solveOtherwise(choice)) return
+  }
   model.solveOtherwise(0)
 }

@@ -21,6 +21,8 @@ export class Tape implements Rows {
   readonly slots: Int32Array
   readonly memory: Float64Array
   readonly memoryAt: Int32Array
+  /** How many of the slots are variables. */
+  readonly variableCount: number
   /** The row whose evaluation was refused last. */
   failedRow = -1
 
@@ -32,7 +34,9 @@ export class Tape implements Rows {
     slots: readonly number[]
     memoryAt: readonly number[]
     memorySize: number
+    variableCount: number
   }) {
+    this.variableCount = parts.variableCount
     this.values = Float64Array.from(parts.values)
     this.operations = parts.operations
     this.first = Int32Array.from(parts.first)
@@ -77,6 +81,7 @@ const copyOperation: Operation = {
 
 /** Lowers expressions into a tape; what is shared by identity becomes one row. */
 export class TapeBuilder {
+  readonly variableCount: number
   private readonly values: number[]
   private readonly operations: Operation[] = []
   private readonly first: number[] = [0]
@@ -86,15 +91,16 @@ export class TapeBuilder {
   /** By row: the row whose working memory it reads, or -1. */
   private readonly sources: number[] = []
   private memorySize = 0
-  private readonly slotOfExpression = new Map<Expression, number>()
+  private slotOfExpression = new Map<Expression, number>()
   private readonly constants = new Map<number, number>()
   /** Rows of operations that others read, by operation and operands. */
-  private readonly shared = new Map<Operation, Map<number, number>>()
+  private shared = new Map<Operation, Map<number, number>>()
   /** By slot: the degree in the variables that the caller calls active. */
   private readonly degrees: number[]
   private readonly rowOfSlot: number[]
 
   constructor(variableCount: number) {
+    this.variableCount = variableCount
     this.values = new Array(variableCount).fill(0)
     this.degrees = new Array(variableCount).fill(0)
     this.rowOfSlot = new Array(variableCount).fill(-1)
@@ -134,6 +140,19 @@ export class TapeBuilder {
 
   firstOperand(row: number): number {
     return this.first[row]!
+  }
+
+  /** Lowers with rows of its own: nothing is shared with what was lowered before or comes after. */
+  apart<T>(lowering: () => T): T {
+    const { slotOfExpression, shared } = this
+    this.slotOfExpression = new Map()
+    this.shared = new Map()
+    try {
+      return lowering()
+    } finally {
+      this.slotOfExpression = slotOfExpression
+      this.shared = shared
+    }
   }
 
   /** Appends a row that gives a variable the value of a slot; returns the row. */
@@ -256,6 +275,7 @@ export class TapeBuilder {
       slots: this.slots,
       memoryAt: this.memoryAt,
       memorySize: this.memorySize,
+      variableCount: this.variableCount,
     })
   }
 }

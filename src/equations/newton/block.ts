@@ -6,6 +6,8 @@ import { type Bounds, type Restart, type Step, StepOutcome, stepOutcome } from '
 
 /** Starts tried before giving up. */
 export const mostStarts = 10
+/** Iterations times unknowns before no further start is tried. */
+const mostWork = 12_000
 /** A singular block larger than this is not looked into. */
 const mostDense = 400
 /** Steps aside from points where the linearised block is singular. */
@@ -29,6 +31,7 @@ const agreement = 1e-9
 export class BlockStep implements Step {
   readonly needsGuess: boolean
   iterations = 0
+  readonly size: number
   worst = 0
   readonly variables: readonly number[]
   readonly gradient: GradientProgram
@@ -43,7 +46,7 @@ export class BlockStep implements Step {
   private readonly columnOf: Int32Array
   private readonly entries: Float64Array
   private readonly scaled: Float64Array
-  private readonly size: Float64Array
+  private readonly sizes: Float64Array
   private readonly rowScale: Float64Array
   private readonly residual: Float64Array
   private readonly step: Float64Array
@@ -64,6 +67,7 @@ export class BlockStep implements Step {
   ) {
     const n = variables.length
     this.n = n
+    this.size = n
     this.prelude = prelude
     this.rows = rows
     this.seeds = Int32Array.from(seeds)
@@ -78,7 +82,7 @@ export class BlockStep implements Step {
     this.factors = new SparseLU(n, gradient.entryFirst, this.columnOf)
     this.entries = new Float64Array(this.columnOf.length)
     this.scaled = new Float64Array(this.columnOf.length)
-    this.size = new Float64Array(n)
+    this.sizes = new Float64Array(n)
     this.rowScale = new Float64Array(n)
     this.residual = new Float64Array(n)
     this.step = new Float64Array(n)
@@ -100,6 +104,7 @@ export class BlockStep implements Step {
     const starts = restart === undefined ? 1 : mostStarts
     // Sensible answers are looked for first, from several starts; then any answer at all.
     for (let attempt = 0; attempt < 2 * starts; attempt++) {
+      if (this.iterations * this.n > mostWork) break
       const isSensible = attempt < starts
       this.recall(tape)
       const which = (attempt + choice) % starts
@@ -181,16 +186,16 @@ export class BlockStep implements Step {
 
   /** Recomputes the scaled factors at the present values; false when they are singular. */
   linearise(tape: Tape): boolean {
-    const { n, entries, scaled, columnOf, gradient, size, rowScale, residual } = this
+    const { n, entries, scaled, columnOf, gradient, sizes, rowScale, residual } = this
     gradient.evaluate(tape, entries)
     for (let j = 0; j < n; j++) {
       const index = this.variableSlots[j]!
-      size[j] = Math.max(Math.abs(tape.values[index]!), this.bounds.scale[index]! * 1e-2)
+      sizes[j] = Math.max(Math.abs(tape.values[index]!), this.bounds.scale[index]! * 1e-2)
     }
     for (let i = 0; i < n; i++) {
       let largest = 0
       for (let e = gradient.entryFirst[i]!; e < gradient.entryFirst[i + 1]!; e++) {
-        scaled[e] = entries[e]! * size[columnOf[e]!]!
+        scaled[e] = entries[e]! * sizes[columnOf[e]!]!
         const entry = Math.abs(scaled[e]!)
         if (entry > largest) largest = entry
       }
@@ -233,7 +238,7 @@ export class BlockStep implements Step {
     for (let j = 0; j < this.n; j++) {
       const part = Math.abs(this.step[j]!)
       if (!(part <= length)) length = part
-      this.step[j] = -this.step[j]! * this.size[j]!
+      this.step[j] = -this.step[j]! * this.sizes[j]!
     }
     return length
   }

@@ -1,5 +1,6 @@
 export { mostStarts } from './block.ts'
+export type { Block } from './draft.ts'
 export { GradientProgram } from './gradient.ts'
-export { type Block, type Guess, Program } from './program.ts'
+export { type Guess, Program } from './program.ts'
 export { Factors, SparseLU } from './sparse-lu.ts'
 export { type Bounds, StepOutcome } from './step.ts'

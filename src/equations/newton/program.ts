@@ -1,23 +1,6 @@
-import {
-  type Assignment,
-  assignmentOf,
-  type Equation,
-  forEachVariableOf,
-  iteratedResidual,
-  solveFor,
-  type Tape,
-  TapeBuilder,
-} from '../expression/index.ts'
-import { BlockStep } from './block.ts'
-import { GradientProgram } from './gradient.ts'
-import { ScalarStep } from './scalar.ts'
-import { type Bounds, ExplicitStep, type Step, StepOutcome } from './step.ts'
-
-/** Equations solved together for as many variables; equation k is matched to variable k. */
-export interface Block {
-  readonly equations: readonly number[]
-  readonly variables: readonly number[]
-}
+import { type Equation, forEachVariableOf, type Tape, TapeBuilder } from '../expression/index.ts'
+import { type Block, draftStep } from './draft.ts'
+import { type Bounds, type Step, StepOutcome } from './step.ts'
 
 /**
  * A structure ready to be solved: blocks in order, lowered into one tape. Explicit equations are
@@ -36,6 +19,8 @@ export class Program {
   private readonly inputs: readonly Int32Array[]
   private readonly iterated: readonly (readonly number[])[]
   private fresh = true
+  /** Iterations times unknowns, over all solutions so far. */
+  work = 0
 
   constructor(
     equations: readonly Equation[],
@@ -84,6 +69,7 @@ export class Program {
         guess!(this.knownBefore(k), 0)
       }
       const used = this.run(k, choice, guess)
+      this.work += used * this.steps[k]!.size
       if (used > iterations) iterations = used
     }
     this.changed.fill(0)
@@ -140,114 +126,6 @@ export class Program {
 
 /** Fills in first guesses for what is not known; the choice picks one of several. */
 export type Guess = (known: (index: number) => boolean, choice: number) => void
-
-interface StepDraft {
-  /** Equations that the step iterates, or assigns. */
-  readonly equations: readonly number[]
-  readonly step: (builder: TapeBuilder, adjoint: Float64Array, bounds: Bounds) => Step
-}
-
-function draftStep(builder: TapeBuilder, equations: readonly Equation[], block: Block): StepDraft {
-  if (block.equations.length === 1) {
-    const target = block.variables[0]!
-    const explicit = solveFor(equations[block.equations[0]!]!, target)
-    if (explicit !== undefined) {
-      const slot = builder.lower(explicit)
-      const rows = builder.rowsBehind([slot])
-      return {
-        equations: block.equations,
-        step: () => new ExplicitStep(rows, slot, target),
-      }
-    }
-  }
-  const from = builder.rowCount
-  builder.activate(block.variables)
-  const { assignments, equations: open, variables } = assignWithin(equations, block)
-  const assigned = new Map<number, number>()
-  for (const { variable, value } of assignments) {
-    assigned.set(variable, builder.assign(variable, builder.lower(value)))
-  }
-  const seeds = open.map((e) => builder.lower(iteratedResidual(equations[e]!)))
-  let linear = true
-  for (const seed of seeds) if (builder.degreeOf(seed) > 1) linear = false
-  // What is assigned must be evaluated even where no equation left asks for it.
-  const all = builder.rowsBehind([...seeds, ...assigned.keys()], assigned)
-  const isIterated = (row: number): boolean => builder.degreeOf(builder.slotOfRow(row)) > 0
-  const prelude = all.filter((row) => !isIterated(row))
-  const iterated = all.filter(isIterated)
-  const active = new Set<number>(block.variables)
-  for (const row of iterated) active.add(builder.slotOfRow(row))
-  builder.deactivate(block.variables, from)
-  return {
-    equations: open,
-    step: (finished, adjoint, bounds) => {
-      const gradient = new GradientProgram(
-        finished,
-        seeds,
-        (slot) => active.has(slot),
-        adjoint,
-        assigned,
-      )
-      return variables.length === 1
-        ? new ScalarStep(prelude, iterated, seeds[0]!, variables[0]!, gradient, bounds, linear)
-        : new BlockStep(prelude, iterated, seeds, variables, gradient, bounds, linear)
-    },
-  }
-}
-
-/**
- * Equations between two of a block's unknowns give one in terms of the other: it is assigned and
- * drops out of the iteration, as does its equation. In an order in which each finds what it needs.
- */
-function assignWithin(
-  equations: readonly Equation[],
-  block: Block,
-): {
-  readonly assignments: readonly Assignment[]
-  readonly equations: readonly number[]
-  readonly variables: readonly number[]
-} {
-  const own = new Set(block.variables)
-  const byVariable = new Map<number, Assignment>()
-  const open: number[] = []
-  block.equations.forEach((e, k) => {
-    const unknowns: number[] = []
-    forEachVariableOf(equations[e]!, (index) => {
-      if (own.has(index)) unknowns.push(index)
-    })
-    const found =
-      unknowns.length === 2
-        ? assignmentOf(equations[e]!, [unknowns[0]!, unknowns[1]!], block.variables[k]!)
-        : undefined
-    if (found === undefined || byVariable.has(found.variable) || leadsTo(found, byVariable)) {
-      open.push(e)
-    } else byVariable.set(found.variable, found)
-  })
-  const assignments: Assignment[] = []
-  const done = new Set<number>()
-  const place = (assignment: Assignment): void => {
-    if (done.has(assignment.variable)) return
-    done.add(assignment.variable)
-    const before = byVariable.get(assignment.from)
-    if (before) place(before)
-    assignments.push(assignment)
-  }
-  for (const assignment of byVariable.values()) place(assignment)
-  return {
-    assignments,
-    equations: open,
-    variables: block.variables.filter((index) => !byVariable.has(index)),
-  }
-}
-
-/** Whether what an assignment starts from follows, step by step, from what it assigns. */
-function leadsTo(assignment: Assignment, byVariable: ReadonlyMap<number, Assignment>): boolean {
-  for (let at: number | undefined = assignment.from; at !== undefined; ) {
-    if (at === assignment.variable) return true
-    at = byVariable.get(at)?.from
-  }
-  return false
-}
 
 /** Variables that the block's equations need and that it does not solve for. */
 function inputsOf(equations: readonly Equation[], block: Block): Int32Array {

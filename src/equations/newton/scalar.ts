@@ -17,6 +17,7 @@ const mostBisections = 200
 export class ScalarStep implements Step {
   readonly needsGuess: boolean
   iterations = 0
+  readonly size = 1
   readonly worst = 0
   private readonly prelude: Int32Array
   private readonly rows: Int32Array

@@ -64,6 +64,8 @@ export interface Step {
   readonly needsGuess: boolean
   /** Newton iterations of the last run. */
   readonly iterations: number
+  /** Unknowns that the step iterates. */
+  readonly size: number
   /** Which of the block's equations (its place in the block) missed most when there was no answer. */
   readonly worst: number
 }
@@ -72,6 +74,7 @@ export interface Step {
 export class ExplicitStep implements Step {
   readonly needsGuess = false
   readonly iterations = 0
+  readonly size = 0
   readonly worst = 0
   private readonly rows: Int32Array
   private readonly slot: number
@@ -88,5 +91,54 @@ export class ExplicitStep implements Step {
     if (outcome !== Outcome.fine) return stepOutcome(outcome)
     tape.values[this.variable] = tape.values[this.slot]!
     return StepOutcome.solved
+  }
+}
+
+/** An iteration, and searches on a tape of their own for when it fails; made when first needed. */
+export class FallbackStep implements Step {
+  readonly needsGuess = true
+  private readonly main: Step
+  private readonly variables: Int32Array
+  private readonly start: Float64Array
+  private readonly make: () => { readonly tape: Tape; readonly steps: readonly Step[] }
+  private made: { readonly tape: Tape; readonly steps: readonly Step[] } | undefined
+
+  constructor(
+    main: Step,
+    variables: readonly number[],
+    make: () => { readonly tape: Tape; readonly steps: readonly Step[] },
+  ) {
+    this.main = main
+    this.variables = Int32Array.from(variables)
+    this.start = new Float64Array(variables.length)
+    this.make = make
+  }
+
+  get iterations(): number {
+    return this.main.iterations
+  }
+
+  get worst(): number {
+    return this.main.worst
+  }
+
+  get size(): number {
+    return this.main.size
+  }
+
+  run(tape: Tape, choice: number, restart?: Restart): number {
+    for (let k = 0; k < this.start.length; k++) this.start[k] = tape.values[this.variables[k]!]!
+    const outcome = this.main.run(tape, choice, restart)
+    if (outcome === StepOutcome.solved) return outcome
+    this.made ??= this.make()
+    const { tape: own, steps } = this.made
+    for (const step of steps) {
+      own.values.set(tape.values.subarray(0, own.variableCount))
+      for (let k = 0; k < this.start.length; k++) own.values[this.variables[k]!] = this.start[k]!
+      if (step.run(own, choice) !== StepOutcome.solved) continue
+      for (const index of this.variables) tape.values[index] = own.values[index]!
+      return StepOutcome.solved
+    }
+    return outcome
   }
 }
