@@ -1,6 +1,7 @@
 import { type ReactNode, useEffect, useId, useRef, useState } from 'react'
 import { openKept } from '../files/keeping.ts'
 import { type KeptPlant, keptPlants } from '../files/kept-plants.ts'
+import { type Example, openExample, readExamples } from '../files/plant-file.ts'
 import { Icon } from '../strip/Icon.tsx'
 import { commandName, useCommandStore } from './command-store.ts'
 import { useDialogStore } from './dialog-store.ts'
@@ -129,7 +130,40 @@ function Kept() {
   )
 }
 
-const dialogs = { about: About, keys: Keys, kept: Kept }
+function Examples() {
+  const [examples, setExamples] = useState<readonly Example[] | null>(null)
+  const close = useDialogStore((state) => state.close)
+  useEffect(() => {
+    readExamples().then(setExamples, () => setExamples([]))
+  }, [])
+  return (
+    <Dialog title="Example plants">
+      {examples?.length === 0 && <p className="muted">The examples cannot be read.</p>}
+      <ul className="kept examples">
+        {examples?.map((example) => (
+          <li key={example.file}>
+            <button
+              type="button"
+              onClick={() => {
+                close()
+                void openExample(example)
+              }}
+            >
+              <strong>{example.title}</strong>
+              <span className="muted">{example.shows}</span>
+            </button>
+          </li>
+        ))}
+      </ul>
+      <p className="muted">
+        Invented plants with realistic numbers. An example opens as a plant of its own; the one
+        before stays kept in this browser.
+      </p>
+    </Dialog>
+  )
+}
+
+const dialogs = { about: About, keys: Keys, kept: Kept, examples: Examples }
 
 export function Dialogs() {
   const open = useDialogStore((state) => state.open)

@@ -1,6 +1,6 @@
 import { create } from 'zustand'
 
-export type DialogName = 'about' | 'keys' | 'kept'
+export type DialogName = 'about' | 'keys' | 'kept' | 'examples'
 
 interface DialogState {
   readonly open: DialogName | null

@@ -1,6 +1,6 @@
 import { emptyPlant } from '../../src/document.ts'
 import { openAsNew } from '../files/keeping.ts'
-import { chooseFile, openText, readExampleText, saveFile } from '../files/plant-file.ts'
+import { chooseFile, saveFile } from '../files/plant-file.ts'
 import { usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { type DrawerTab, type Theme, useSettingsStore } from '../store/settings-store.ts'
@@ -49,11 +49,9 @@ export const windowCommands: readonly Command[] = [
   },
   {
     id: 'open-example',
-    name: 'Open the example plant',
+    name: 'Open an example',
     group: 'Plant',
-    run: () => {
-      void readExampleText().then((text) => openText('The example plant', text))
-    },
+    run: () => useDialogStore.getState().show('examples'),
   },
   {
     id: 'save',
@@ -105,7 +103,7 @@ export const windowCommands: readonly Command[] = [
     id: 'edit-numbers',
     name: 'Numbers of the selected thing',
     group: 'Edit',
-    keys: 'F2',
+    keys: 'Mod+Enter',
     enabled: () => useSelectionStore.getState().selected.length === 1,
     run: () => document.querySelector<HTMLElement>('.card [data-path]')?.focus(),
   },

@@ -133,18 +133,44 @@ export function listenForDrops(): void {
   })
 }
 
-/** Text of the example plant; empty where it cannot be had. */
-export async function readExampleText(): Promise<string> {
+/** An example plant as the list of them has it. */
+export interface Example {
+  /** Name of the file in the folder of examples. */
+  readonly file: string
+  readonly title: string
+  /** What it shows, one sentence. */
+  readonly shows: string
+}
+
+const exampleFolder = 'examples/'
+/** The plant that the window opens with at first use. */
+const firstExample = 'tarn-vale-1.json'
+
+async function readText(address: string): Promise<string> {
+  const response = await fetch(address)
+  if (!response.ok) throw new Error(`${address} cannot be had (${response.status}).`)
+  return response.text()
+}
+
+/** The example plants, in the order in which they are offered. */
+export async function readExamples(): Promise<readonly Example[]> {
+  return JSON.parse(await readText(`${exampleFolder}index.json`))
+}
+
+export async function openExample({ file, title }: Example): Promise<void> {
   try {
-    const response = await fetch('examples/tarn-vale-1.json')
-    return response.ok ? await response.text() : ''
+    await openText(title, await readText(exampleFolder + file))
   } catch {
-    return ''
+    say('error', `${title} cannot be read. Open the window once with a network; it is then kept.`)
   }
 }
 
 /** The plant that the window shows at first use, or null where it cannot be had. */
 export async function readExample(): Promise<Plant | null> {
-  const read = readPlant(await readExampleText())
-  return read.outcome === 'plant' ? read.plant : null
+  try {
+    const read = readPlant(await readText(exampleFolder + firstExample))
+    return read.outcome === 'plant' ? read.plant : null
+  } catch {
+    return null
+  }
 }
