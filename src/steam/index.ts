@@ -18,7 +18,7 @@ export {
   saturationPressure,
   saturationTemperature,
 } from './saturation.ts'
-export { stateAtPressureEnthalpy } from './state.ts'
+export { stateAtPressureEnthalpy, stateAtRequest, stateRequest } from './state.ts'
 export {
   type StatePair,
   type SteamRange,
@@ -26,3 +26,4 @@ export {
   type SteamState,
   state,
 } from './states.ts'
+export { warmUp } from './warm-up.ts'

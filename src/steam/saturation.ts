@@ -34,6 +34,8 @@ const {
 const { hp: ptHp, log: ptLog } = Point
 const pressure13 = borderPressure13
 
+const saturationSize = SATURATION_SIZE
+
 /** The last pressure below the critical one at which saturated states are told apart, Pa. */
 const lastPressure = criticalPressure * (1 - 1e-12)
 
@@ -61,13 +63,17 @@ export function checkSaturationPressure(p: number): number {
  * `saturationCache`: answers with its offset there. It stays until the next call.
  */
 export function cachedSaturation(p: number): number {
-  const slot = (Math.imul((p * 64) | 0, 0x9e3779b1) >>> 23) * SATURATION_SIZE
+  const slot = (Math.imul((p * 64) | 0, 0x9e3779b1) >>> 23) * saturationSize
   if (cache[slot] !== p) {
     cache[slot] = p
-    saturationLine(cache, slot, slot + satT, slot + satTp)
-    completeSaturation(cache, slot)
+    renewSaturation(slot)
   }
   return slot
+}
+
+function renewSaturation(slot: number): void {
+  saturationLine(cache, slot, slot + satT, slot + satTp)
+  completeSaturation(cache, slot)
 }
 
 /** Where `cachedSaturation` leaves its records. */

@@ -27,11 +27,11 @@ import {
   POINT_SIZE,
   Point,
   region1Point,
-  region1PointOfTau,
+  region1Settled,
   region2Point,
-  region2PointOfTau,
+  region2Settled,
   region5Point,
-  settlePoint,
+  region5Settled,
 } from './if97/point.ts'
 import {
   FIELD_SIZE,
@@ -89,7 +89,20 @@ const {
   vVp: satVVp,
   log: satLog,
 } = Saturation
-const { h: ptH, v: ptV, T: ptT, cp: ptCp, vT: ptVT, hp: ptHp, s: ptS, vp: ptVp } = Point
+const {
+  h: ptH,
+  v: ptV,
+  T: ptT,
+  cp: ptCp,
+  vT: ptVT,
+  hp: ptHp,
+  s: ptS,
+  vp: ptVp,
+  p: ptP,
+  tau: ptTau,
+  log: ptLog,
+  goal: ptGoal,
+} = Point
 const { p: askP, h: askH, guess: askGuess, limit: askLimit, T: askT, tau: askTau } = Asked
 const pressure13 = borderPressure13
 const critical = criticalPressure
@@ -104,6 +117,8 @@ const cache = saturationCache
 
 const point = new Float64Array(POINT_SIZE)
 const asked = new Float64Array(ASKED_SIZE)
+/** p (Pa) and h (J/kg) of the state asked for, see `stateAtRequest`. */
+export const stateRequest: Float64Array = asked
 const field = new Float64Array(FIELD_SIZE)
 
 // Where a state above 16.529 MPa lies to the two-phase zone.
@@ -153,10 +168,14 @@ export function stateAtPressureEnthalpy(
   // Short enough to be inlined: numbers passed on to a longer function would be allocated.
   asked[askP] = p
   asked[askH] = h
-  return solve(record, at)
+  return stateAtRequest(record, at)
 }
 
-function solve(record: Float64Array, at: number): number {
+/**
+ * As `stateAtPressureEnthalpy`, from p and h in the first two slots of `stateRequest`: for callers that
+ * are too long to have that function inlined and would have their numbers allocated.
+ */
+export function stateAtRequest(record: Float64Array, at: number): number {
   const p = asked[askP] as number
   const h = asked[askH] as number
   if (record[at + atP] === p && record[at + atH] === h && record[at + atRegion] !== 0) {
@@ -211,8 +230,10 @@ function liquid(record: Float64Array, at: number, subcritical: number): number {
     region1Point(point, p, coldest)
     return refuse(Outcome.enthalpyLow, asked[askH] as number, point[ptH] as number)
   }
-  region1PointOfTau(point, p, asked[askTau] as number)
-  settlePoint(point, asked[askH] as number)
+  point[ptP] = p
+  point[ptTau] = asked[askTau] as number
+  point[ptGoal] = asked[askH] as number
+  region1Settled(point)
   fill(record, at, 1, subcritical)
   return Outcome.fine
 }
@@ -220,7 +241,7 @@ function liquid(record: Float64Array, at: number, subcritical: number): number {
 function steam(record: Float64Array, at: number, subcritical: number): number {
   const p = asked[askP] as number
   if ((asked[askH] as number) > highestEnthalpy2) return hotSteam(record, at, subcritical)
-  if (p > pressure13) asked[askLimit] = borderTemperature23(p)
+  if (p > pressure13) limitByBorder23()
   else if (subcritical === 1) {
     asked[askLimit] = record[at + atSaturation + satT] as number
   } else asked[askLimit] = coldest
@@ -234,8 +255,11 @@ function steam(record: Float64Array, at: number, subcritical: number): number {
   }
   const log =
     subcritical === 1 ? (record[at + atSaturation + satLog] as number) : Math.log(p * 1e-6)
-  region2PointOfTau(point, p, asked[askTau] as number, log)
-  settlePoint(point, asked[askH] as number)
+  point[ptP] = p
+  point[ptTau] = asked[askTau] as number
+  point[ptLog] = log
+  point[ptGoal] = asked[askH] as number
+  region2Settled(point)
   fill(record, at, 2, subcritical)
   return Outcome.fine
 }
@@ -263,8 +287,10 @@ function hotSteam(record: Float64Array, at: number, subcritical: number): number
     region5Point(point, p, highestTemperature)
     return refuse(Outcome.enthalpyHigh, h, point[ptH] as number)
   }
-  region5Point(point, p, T)
-  settlePoint(point, asked[askH] as number)
+  point[ptP] = p
+  point[ptT] = T
+  point[ptGoal] = h
+  region5Settled(point)
   fill(record, at, 5, subcritical)
   return Outcome.fine
 }
@@ -366,21 +392,32 @@ function dense(record: Float64Array, at: number, side: number): number {
   if (T < border13) {
     sidesOfBorder13(p)
     fillGap(record, at, 1, subcritical)
-  } else if (side !== LIQUID && T > borderTemperature23(p)) {
-    sidesOfBorder23(p)
-    fillGap(record, at, 3, subcritical)
-  } else fillField(record, at, subcritical)
+    return Outcome.fine
+  }
+  if (side !== LIQUID) {
+    limitByBorder23()
+    if (T > (asked[askLimit] as number)) {
+      sidesOfBorder23(p)
+      fillGap(record, at, 3, subcritical)
+      return Outcome.fine
+    }
+  }
+  fillField(record, at, subcritical)
   return Outcome.fine
+}
+
+function limitByBorder23(): void {
+  asked[askLimit] = borderTemperature23(asked[askP] as number)
 }
 
 /** The field of region 3, started from the record's state where that foretells it. */
 function solveDense(record: Float64Array, at: number, side: number): boolean {
   const p = asked[askP] as number
   const h = asked[askH] as number
-  const liquidSide = side === LIQUID || (side === SUPERCRITICAL && onLiquidSide(p, h))
   sought[Sought.p] = p
   sought[Sought.value] = h
-  if (record[at + atRegion] === 3 && near(record, at, p, h)) {
+  const liquidSide = side === LIQUID || (side === SUPERCRITICAL && onLiquidSide(sought))
+  if (record[at + atRegion] === 3 && near(record, at)) {
     foretell(record, at, 3)
     const v =
       (record[at + atV] as number) +
@@ -402,7 +439,9 @@ function solveDense(record: Float64Array, at: number, side: number): boolean {
 }
 
 /** Whether the record's state lies so near that its partials point at the one asked for. */
-function near(record: Float64Array, at: number, p: number, h: number): boolean {
+function near(record: Float64Array, at: number): boolean {
+  const p = asked[askP] as number
+  const h = asked[askH] as number
   return (
     Math.abs(p - (record[at + atP] as number)) < 0.1 * p &&
     Math.abs(h - (record[at + atH] as number)) < nearEnthalpy

@@ -15,8 +15,27 @@ import {
   saturationAtPressure,
   state,
   stateAtPressureEnthalpy,
+  warmUp,
 } from '../../src/steam/index.ts'
 import { plainDenseState, plainState } from '../reference/plain-if97.ts'
+
+// Before anything else is compiled: what the first plant waits for, as a worker starts it.
+const begun = performance.now()
+const passes = warmUp()
+const warmed = performance.now()
+const plant = new Float64Array(100 * STATE_SIZE)
+for (let pass = 0; pass < 12; pass++) {
+  const factor = 1 + 0.01 / (pass + 1) ** 3
+  for (let i = 0; i < 100; i++) {
+    const p = 3e3 * 5e3 ** (i / 100)
+    const h = [2.9e6, 0.4e6 * Math.min(1, 0.3 + i / 100), 1.2e6][i % 3] as number
+    stateAtPressureEnthalpy(plant, i * STATE_SIZE, p * factor, h * factor)
+  }
+}
+const solved = performance.now()
+console.log(
+  `warm-up ${(warmed - begun).toFixed(0)} ms (${passes} passes), then 12 passes over 100 states ${(solved - warmed).toFixed(1)} ms\n`,
+)
 
 /** States of one kind: pressures (Pa) and enthalpies (J/kg). */
 interface Sample {
@@ -81,11 +100,17 @@ const samples = [
   }),
 ]
 
+/** Median and least of repeated runs, ns per call. */
+interface Time {
+  readonly median: number
+  readonly least: number
+}
+
 /**
- * Median ns per call over the states of a sample. Short passes come first, so that the pass as a whole is
+ * Time per call over the states of a sample. Short passes come first, so that the pass as a whole is
  * compiled before it is timed.
  */
-function median(pass: (count: number) => void, count = COUNT, runs = RUNS): number {
+function time(pass: (count: number) => void, count = COUNT, runs = RUNS): Time {
   for (let i = 0; i < 5000; i++) pass(4)
   for (let i = 0; i < 100; i++) pass(count)
   const times: number[] = []
@@ -95,7 +120,7 @@ function median(pass: (count: number) => void, count = COUNT, runs = RUNS): numb
     times.push(Number(process.hrtime.bigint() - start) / count)
   }
   times.sort((x, y) => x - y)
-  return times[process.env.LEAST ? 0 : runs >> 1] as number
+  return { median: times[runs >> 1] as number, least: times[0] as number }
 }
 
 const records = new Float64Array(COUNT * STATE_SIZE)
@@ -151,33 +176,60 @@ function plain({ name, p, h }: Sample): (count: number) => void {
   }
 }
 
-const row = (cells: readonly (string | number)[]): void => {
-  const text = cells.map((cell, i) => {
-    const value = typeof cell === 'number' ? cell.toFixed(cell < 10 ? 1 : 0) : cell
-    return i === 0 ? value.padEnd(30) : value.padStart(10)
+const round = (value: number): string => value.toFixed(value < 10 ? 1 : 0)
+
+function row(name: string, cells: readonly (string | number | Time)[]): void {
+  const text = cells.map((cell) => {
+    if (typeof cell === 'string') return cell
+    return typeof cell === 'number' ? round(cell) : `${round(cell.median)} (${round(cell.least)})`
   })
-  console.log(text.join(''))
+  console.log(name.padEnd(30) + text.map((value) => value.padStart(16)).join(''))
 }
 
-console.log('State from p and h with all partials, ns per call (median)')
-row(['', 'warm', 'moved', 'cold', 'plain', 'ratio'])
+console.log('ns per call: median (least)')
+row('one dependent multiply-add', [
+  time((count) => {
+    let x = 1
+    for (let i = 0; i < 64 * count; i++) x = x * 1.0000001 + 1e-9
+    sink += x
+  }).median / 64,
+])
+console.log('\nState from p and h with all partials')
+row('', ['warm', 'moved', 'cold', 'plain', 'plain / cold'])
 for (const each of samples) {
-  const whenCold = median(cold(each))
+  const whenCold = time(cold(each))
   // the states are those of this sample: fill the records anew before each warm run
   cold(each)(COUNT)
-  const whenWarm = median(moving(each, 0, -1e-3))
+  const whenWarm = time(moving(each, 0, -1e-3))
   cold(each)(COUNT)
-  const whenMoved = median(moving(each, 1e-3, -1e-3))
-  const whenPlain = median(plain(each), COUNT, 11)
-  row([each.name, whenWarm, whenMoved, whenCold, whenPlain, whenPlain / whenCold])
+  const whenMoved = time(moving(each, 1e-3, -1e-3))
+  const whenPlain = time(plain(each), COUNT, 11)
+  const ratio = whenPlain.median / whenCold.median
+  row(each.name, [whenWarm, whenMoved, whenCold, whenPlain, ratio])
 }
 
-console.log('\nOther functions, ns per call (median)')
+const collect = (globalThis as { gc?: () => void }).gc
+if (collect !== undefined) {
+  console.log('\nBytes allocated per call')
+  for (const each of samples) {
+    cold(each)(COUNT)
+    const bytes = [moving(each, 0, -1e-3), moving(each, 1e-3, -1e-3)].map((pass) => {
+      for (let i = 0; i < 5000; i++) pass(4)
+      for (let i = 0; i < 100; i++) pass(COUNT)
+      collect()
+      const before = process.memoryUsage().heapUsed
+      for (let i = 0; i < 50; i++) pass(COUNT)
+      return (process.memoryUsage().heapUsed - before) / (50 * COUNT)
+    })
+    row(each.name, bytes)
+  }
+}
+
+console.log('\nOther functions')
 const [first, second, third, fourth] = samples as [Sample, Sample, Sample, Sample]
 let drift = 1
-row([
-  'saturation record',
-  median((count) => {
+row('saturation record', [
+  time((count) => {
     drift += 1e-9
     for (let i = 0; i < count; i++) {
       const at = i * SATURATION_SIZE
@@ -195,18 +247,16 @@ for (const { name, p, h } of [first, second, third, fourth]) {
       T[i] = found.T
     }
   }
-  row([
-    `h(p, s), ${name}`,
-    median((count) => {
+  row(`h(p, s), ${name}`, [
+    time((count) => {
       for (let i = 0; i < count; i++) {
         check(enthalpyAtPressureEntropy(results, i * RESULT_SIZE, p[i] as number, s[i] as number))
       }
     }),
   ])
   if (name === 'wet') continue
-  row([
-    `h(p, T), ${name}`,
-    median((count) => {
+  row(`h(p, T), ${name}`, [
+    time((count) => {
       for (let i = 0; i < count; i++) {
         check(
           enthalpyAtPressureTemperature(results, i * RESULT_SIZE, p[i] as number, T[i] as number),

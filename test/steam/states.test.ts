@@ -1,6 +1,15 @@
 /** States from any two quantities: values, phases, more than one answer, and what a refusal says. */
 import { describe, expect, it } from 'vitest'
-import { phaseOf, type SteamState, state } from '../../src/steam/index.ts'
+import {
+  phaseOf,
+  STATE_SIZE,
+  type SteamState,
+  state,
+  stateAtPressureEnthalpy,
+  stateAtRequest,
+  stateRequest,
+  warmUp,
+} from '../../src/steam/index.ts'
 
 function single(pair: Parameters<typeof state>[0]): SteamState {
   const found = state(pair)
@@ -165,5 +174,29 @@ describe('refusals', () => {
       expect(found.outcome, JSON.stringify(pair)).toBe('range')
       if (found.outcome === 'range') expect(found.message).toContain('not a number')
     }
+  })
+})
+
+describe('the hot function', () => {
+  it('takes p and h as arguments or from the request, with the same answer', () => {
+    const first = new Float64Array(STATE_SIZE)
+    const second = new Float64Array(STATE_SIZE)
+    for (const [p, h] of [
+      [1e5, 2e6],
+      [12e6, 3.4e6],
+      [25e6, 2e6],
+    ] as const) {
+      expect(stateAtPressureEnthalpy(first, 0, p, h)).toBe(0)
+      stateRequest[0] = p
+      stateRequest[1] = h
+      expect(stateAtRequest(second, 0)).toBe(0)
+      expect([...second]).toEqual([...first])
+    }
+  })
+
+  it('gives the same digits before and after the warm-up', () => {
+    const before = single({ p: 3e6, h: 3.1e6 })
+    expect(warmUp(20)).toBeGreaterThan(0)
+    expect(single({ p: 3e6, h: 3.1e6 })).toEqual(before)
   })
 })

@@ -9,8 +9,8 @@ import { lowPressure2, region2LowPotential, region2Potential } from './unrolled-
 import { region5Potential } from './unrolled-region5.ts'
 
 /**
- * Slots of a point; p (Pa), T (K), the reduced inverse temperature tau and,
- * for steam, ln(p / 1 MPa) are its inputs.
+ * Slots of a point; p (Pa), T (K), the reduced inverse temperature tau and, for steam, ln(p / 1 MPa) are
+ * its inputs, and the enthalpy aimed at (J/kg) where there is one.
  */
 export const Point = {
   h: 0,
@@ -24,8 +24,9 @@ export const Point = {
   T: 8,
   tau: 9,
   log: 10,
+  goal: 11,
 } as const
-export const POINT_SIZE = 11
+export const POINT_SIZE = 12
 
 // Inputs and outputs pass through arrays: a number passed to or from a function that is not inlined
 // would be allocated.
@@ -112,29 +113,34 @@ export function region5Point(point: Float64Array, p: number, T: number): void {
   region5At(point)
 }
 
-/** Region 1 at p (Pa) and tau = 1386 K / T. */
-export function region1PointOfTau(point: Float64Array, p: number, tau: number): void {
-  point[7] = p
-  point[8] = 1386 / tau
-  point[9] = tau
-  region1At(point)
-}
-
-/** Region 2 at p (Pa), tau = 540 K / T and ln(p / 1 MPa). */
-export function region2PointOfTau(point: Float64Array, p: number, tau: number, log: number): void {
-  point[7] = p
-  point[8] = 540 / tau
-  point[9] = tau
-  point[10] = log
-  region2At(point)
-}
-
 /**
- * Moves a point by the last, tiny step of T that brings its enthalpy to h (J/kg) to round-off: T, s and v
- * follow to first order, the derivatives stay.
+ * Region 1 at the point's p and tau = 1386 K / T, which is all but settled: T, s and v then follow the last,
+ * tiny step that brings h to the point's goal to round-off, to first order; the derivatives stay.
  */
-export function settlePoint(point: Float64Array, h: number): void {
+export function region1Settled(point: Float64Array): void {
+  point[8] = 1386 / (point[9] as number)
+  region1At(point)
+  settle(point)
+}
+
+/** Region 2 likewise, tau = 540 K / T, with ln(p / 1 MPa) in the point. */
+export function region2Settled(point: Float64Array): void {
+  point[8] = 540 / (point[9] as number)
+  region2At(point)
+  settle(point)
+}
+
+/** Region 5 likewise, with T and tau in the point. */
+export function region5Settled(point: Float64Array): void {
+  point[9] = 1000 / (point[8] as number)
+  point[10] = Math.log((point[7] as number) * 1e-6)
+  region5At(point)
+  settle(point)
+}
+
+function settle(point: Float64Array): void {
   const T = point[8] as number
+  const h = point[11] as number
   const off = h - (point[0] as number)
   const step = off / (point[3] as number)
   point[0] = h

@@ -182,7 +182,9 @@ function closeIn(field: Float64Array, slot: number): boolean {
   let rho = sought[Sought.rho] as number
   let T = sought[Sought.T] as number
   for (let i = 0; i < MOST_STEPS; i++) {
-    region3Field(field, rho, T)
+    field[8] = rho
+    field[9] = T
+    fieldAt(field)
     const pRho = field[atPRho] as number
     const pT = field[atPT] as number
     const toRho = slot === atH ? (field[atHRho] as number) : -pT / (rho * rho)
@@ -200,7 +202,9 @@ function closeIn(field: Float64Array, slot: number): boolean {
     rho -= factor * dRho
     T -= factor * dT
     if (sizeRho < settled * rho && sizeT < settled * T) {
-      region3Field(field, rho, T)
+      field[8] = rho
+      field[9] = T
+      fieldAt(field)
       return true
     }
   }
@@ -257,11 +261,12 @@ export function region3Temperature(
   return T
 }
 
-/** Whether an enthalpy (J/kg) lies on the liquid's side, subregion 3a, above the critical pressure. */
-export function onLiquidSide(p: number, h: number): boolean {
-  const pi = p * 1e-6
-  const [a, b, c, d] = boundary3ab
-  return h <= 1e3 * (a + pi * (b + pi * (c + pi * d)))
+const [ab1, ab2, ab3, ab4] = boundary3ab
+
+/** Whether the sought p and h lie on the liquid's side, subregion 3a, above the critical pressure. */
+export function onLiquidSide(of: Float64Array): boolean {
+  const pi = (of[Sought.p] as number) * 1e-6
+  return (of[Sought.value] as number) <= 1e3 * (ab1 + pi * (ab2 + pi * (ab3 + pi * ab4)))
 }
 
 /**
