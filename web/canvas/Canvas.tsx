@@ -111,6 +111,9 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
       className="canvas"
       tabIndex={-1}
       onKeyDown={onCanvasKey}
+      onPointerDownCapture={(event) => {
+        adding = event.shiftKey
+      }}
       onPointerDown={(event) => {
         // Keys after a click on bare paper are meant for the canvas.
         if (event.target instanceof Element && event.target.matches('.react-flow__pane')) {
@@ -322,10 +325,18 @@ function somethingMoved(moved: ReadonlyMap<string, Point>): boolean {
   return false
 }
 
+/** The pointer went down with Shift: what it selects joins what is selected. */
+let adding = false
+
 /** React Flow says what comes and goes; the selection itself is the window's. */
 function select(changes: readonly (NodeChange | EdgeChange)[]): void {
   const { selected, select: set } = useSelectionStore.getState()
   let next = selected
+  // React Flow lets go of units and streams only: a shaft, or the plant, it does not know.
+  if (!adding && changes.some((change) => change.type === 'select' && change.selected)) {
+    const { units, streams } = useCanvasStore.getState().sheet
+    next = next.filter((id) => units.has(id) || streams.has(id))
+  }
   for (const change of changes) {
     if (change.type !== 'select') continue
     next = change.selected
@@ -334,7 +345,7 @@ function select(changes: readonly (NodeChange | EdgeChange)[]): void {
         : [...next, change.id]
       : next.filter((id) => id !== change.id)
   }
-  if (next !== selected) set(next)
+  if (next.length !== selected.length || next.some((id, i) => id !== selected[i])) set(next)
 }
 
 let drags = 0
