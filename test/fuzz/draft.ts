@@ -1,4 +1,12 @@
-import type { Given, Layout, Plant, Shaft, Stream, Unit } from '../../src/plant/document.ts'
+import type {
+  Given,
+  Layout,
+  Options,
+  Plant,
+  Shaft,
+  Stream,
+  Unit,
+} from '../../src/plant/document.ts'
 
 type Givens = Record<string, Given>
 
@@ -16,13 +24,14 @@ export class Draft {
     return count
   }
 
-  add(kind: string, stem: string, given: Givens): string {
+  add(kind: string, stem: string, given: Givens, options: Options = {}): string {
     const id = `${stem}${this.count(`unit ${stem}`)}`
     this.units.push({
       id,
       kind,
       label: id.toUpperCase(),
       at: [80 + 160 * (this.units.length % 12), 40 + 160 * Math.floor(this.units.length / 12)],
+      ...(Object.keys(options).length > 0 && { options }),
       given,
     })
     return id

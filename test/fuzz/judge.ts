@@ -73,7 +73,7 @@ function openPlant({ model, results }: Balance): string | undefined {
   const { layout } = model.system
   const value = (path: string): number => results.value(path) ?? Number.NaN
   const kindOf = new Map(layout.units.map(({ id, kind }) => [id, kind]))
-  const owner = (port: string): string => port.slice(0, port.indexOf('.'))
+  const kindAt = (port: string): string => kindOf.get(port.slice(0, port.indexOf('.')))!
   let mass = 0
   let energy = 0
   let largest = 0
@@ -81,20 +81,19 @@ function openPlant({ model, results }: Balance): string | undefined {
     const m = value(`${id}.m`)
     const h = value(`${id}.h`)
     largest = Math.max(largest, m)
-    const sign =
-      (kindOf.get(owner(from)) === 'supply' ? 1 : 0) - (kindOf.get(owner(to)) === 'offtake' ? 1 : 0)
+    let sign = (kindAt(from) === 'supply' ? 1 : 0) - (kindAt(to) === 'offtake' ? 1 : 0)
+    // What a heat user keeps leaves the plant as what it sends back.
+    if (kindAt(from) === 'heatUser') sign -= 1 / value(`${from.split('.')[0]}.returnFraction`) - 1
     mass += sign * m
     energy += sign * m * h
   }
   for (const { id, kind } of layout.units) {
     if (kind === 'pipe') energy -= value(`${id}.heatLoss`)
   }
-  energy +=
-    value('plant.heatInput') +
-    value('plant.pumpPower') -
-    value('plant.turbinePower') -
-    value('plant.heatRejected')
-  const scale = Math.max(value('plant.heatInput'), largest * 1e5)
+  const plant = (name: string): number => value(`plant.${name}`)
+  energy += plant('heatInput') + plant('recoveredHeat') + plant('pumpPower')
+  energy -= plant('turbinePower') + plant('heatRejected') + plant('processHeat')
+  const scale = Math.max(plant('heatInput'), largest * 1e5)
   const closes = Math.abs(mass) <= 1e-8 * largest && Math.abs(energy) <= 1e-8 * scale
   return closes ? undefined : 'plant does not close'
 }
