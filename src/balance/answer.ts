@@ -46,6 +46,43 @@ export interface Origin {
   readonly with: readonly string[]
   /** Quantities that went into the equation. */
   readonly inputs: readonly string[]
+  /** The equation in figures, where it was asked for and has them. */
+  readonly worked?: Worked
+}
+
+/** A number as it is printed in a worked line. */
+export interface Figure {
+  readonly figure: string
+  /** Empty where there is none, or where it stands behind a bracket. */
+  readonly unit: string
+  /** The quantity whose number it is. */
+  readonly path?: string
+  /** The step whose result it is, counted from 0. */
+  readonly step?: number
+}
+
+/** A piece of a worked line: text, a quantity or a step by its symbol, or a figure. */
+export type Piece = string | { readonly path: string } | { readonly step: number } | Figure
+
+/** A value read off on the way: a property of steam, a mean difference, a curve. */
+export interface WorkedStep {
+  readonly symbols: readonly Piece[]
+  readonly figures: readonly Piece[]
+  readonly result: Figure
+}
+
+/**
+ * An equation worked out: every line gives its result again when it is reckoned from its own printed
+ * figures, in the units printed, without conversions (per cent aside).
+ */
+export interface Worked {
+  /** The whole equation: 'Q = m × (h2 − h1)'. */
+  readonly symbols: readonly Piece[]
+  /** In the order in which they are needed. */
+  readonly steps: readonly WorkedStep[]
+  /** What equals the result; both sides with '=' between them where the equation has no explicit form. */
+  readonly figures: readonly Piece[]
+  readonly result: Figure
 }
 
 /** One process of a unit on a chart. */

@@ -168,7 +168,10 @@ const signatures = new Map<Operation, Signature>([
 ])
 
 /** One operation on a tape of its own; undefined where it has no value. */
-function evaluator(operation: Operation, count: number): (operands: readonly number[]) => number | undefined {
+function evaluator(
+  operation: Operation,
+  count: number,
+): (operands: readonly number[]) => number | undefined {
   const builder = new TapeBuilder(count)
   const slot = builder.lower(
     apply(operation, ...Array.from({ length: count }, (_, k) => variable(k, ''))),
@@ -223,7 +226,7 @@ export function treeOf(
         return { type: 'power', base: first, exponent: second }
       case 'mixedEnthalpy': {
         const idle = operands[2]!
-        return valueOf(second) === 0 ? idle : { type: 'quotient', over: first, under: second }
+        return solvedValue(second) === 0 ? idle : { type: 'quotient', over: first, under: second }
       }
       case 'reciprocalMean': {
         const reciprocal = evaluator(operation, 2)
@@ -337,12 +340,12 @@ export function evaluate(
 }
 
 /** A node's value from the solution. */
-export function valueOf(node: StatementNode): number | undefined {
+export function solvedValue(node: StatementNode): number | undefined {
   return evaluate(node, (one) => (one.type === 'leaf' ? one.value : callValue(one)))
 }
 
 function callValue(call: Call): number | undefined {
-  const operands = call.operands.map(valueOf)
+  const operands = call.operands.map(solvedValue)
   return operands.some((value) => value === undefined)
     ? undefined
     : call.evaluate(operands as number[])
@@ -379,4 +382,3 @@ export function sidesFor(
     ? { left: equation.left, right: equation.right, isExplicit: false }
     : { left: variable(index, ''), right: explicit, isExplicit: true }
 }
-
