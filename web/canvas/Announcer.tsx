@@ -7,7 +7,7 @@ export function Announcer() {
   const choosing = useConnectingStore((state) => state.choosing)
   const chosen = choosing?.ports[choosing.at]
   const text = chosen
-    ? `Connect from ${chosen.label}. Arrows choose, Enter takes.`
+    ? `${choosing?.follow ? 'Place after' : 'Connect from'} ${chosen.label}. Arrows choose, Enter takes.`
     : connecting?.over && !connecting.pointer
       ? `To ${connecting.over.label}, ${connecting.over.reference}`
       : (notice?.text ?? '')

@@ -24,9 +24,14 @@ import { ConnectionPreview } from './ConnectionPreview.tsx'
 import { followPlant, tagsBeyond, useCanvasStore } from './canvas-store.ts'
 import { EmptyCanvas } from './EmptyCanvas.tsx'
 import { around, type Box, type Point } from './geometry.ts'
+import { KindMenu } from './KindMenu.tsx'
 import { onCanvasKey } from './keyboard.ts'
 import { Legend } from './Legend.tsx'
+import { motion } from './motion.ts'
+import { pin } from './pin-store.ts'
 import { insertWhereDropped, rememberStreams } from './placing.ts'
+import { RenameField } from './RenameField.tsx'
+import { startRenaming } from './rename-store.ts'
 import { ShaftLines } from './ShaftLines.tsx'
 import { StreamEdge } from './StreamEdge.tsx'
 import { streamNameId, unitNameId } from './spoken-names.tsx'
@@ -84,6 +89,10 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
         const at = flow.screenToFlowPosition({ x, y }, { snapToGrid: false })
         return [at.x, at.y]
       },
+      toClient: ([x, y]) => {
+        const at = flow.flowToScreenPosition({ x, y })
+        return [at.x, at.y]
+      },
       box: () => box.current?.getBoundingClientRect() ?? new DOMRect(),
     })
     return () => setView(null)
@@ -136,6 +145,8 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
         onNodeMouseLeave={hoverOff}
         onEdgeMouseEnter={hoverOn}
         onEdgeMouseLeave={hoverOff}
+        onNodeDoubleClick={renameItem}
+        onEdgeDoubleClick={renameItem}
         onPaneClick={clearSelection}
         onViewportChange={onViewportChange}
         snapToGrid
@@ -162,6 +173,7 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
           <ShaftLines />
           <Texts />
           <ConnectionPreview />
+          <RenameField />
         </ViewportPortal>
       </ReactFlow>
       {empty && (
@@ -172,8 +184,9 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
       )}
       <footer className="canvas-foot">
         <Legend />
-        <CanvasControls onFit={() => showWhole(120)} />
+        <CanvasControls onFit={() => showWhole(motion())} />
       </footer>
+      <KindMenu />
       <Announcer />
     </div>
   )
@@ -382,6 +395,7 @@ function dropMoved(): void {
     )
   }
   useCanvasStore.setState({ moved: null })
+  pin([...moved.keys()])
   const [only] = moved.keys()
   if (count === 1 && only) insertWhereDropped(only)
 }
@@ -392,6 +406,10 @@ function hoverOn(_: unknown, item: { readonly id: string }): void {
 
 function hoverOff(): void {
   useSelectionStore.getState().hover(null)
+}
+
+function renameItem(_: unknown, item: { readonly id: string }): void {
+  startRenaming(item.id)
 }
 
 function clearSelection(event: React.MouseEvent): void {

@@ -1,6 +1,7 @@
 import { useState } from 'react'
 import { useReactFlow } from 'reactflow'
 import { useCanvasStore } from './canvas-store.ts'
+import { motion } from './motion.ts'
 import { type TagsShown, tagQuantities, useTagStore } from './tag-store.ts'
 
 const which: readonly { readonly value: TagsShown; readonly label: string }[] = [
@@ -24,7 +25,7 @@ export function CanvasControls({ onFit }: { readonly onFit: () => void }) {
         type="button"
         aria-label="Zoom out"
         title="Zoom out"
-        onClick={() => void flow.zoomOut({ duration: 120 })}
+        onClick={() => void flow.zoomOut({ duration: motion() })}
       >
         −
       </button>
@@ -33,7 +34,7 @@ export function CanvasControls({ onFit }: { readonly onFit: () => void }) {
         className="canvas-zoom"
         aria-label={`Zoom ${Math.round(zoom * 100)} %, back to 100 %`}
         title="Back to 100 %"
-        onClick={() => void flow.zoomTo(1, { duration: 120 })}
+        onClick={() => void flow.zoomTo(1, { duration: motion() })}
       >
         {Math.round(zoom * 100)} %
       </button>
@@ -41,7 +42,7 @@ export function CanvasControls({ onFit }: { readonly onFit: () => void }) {
         type="button"
         aria-label="Zoom in"
         title="Zoom in"
-        onClick={() => void flow.zoomIn({ duration: 120 })}
+        onClick={() => void flow.zoomIn({ duration: motion() })}
       >
         +
       </button>

@@ -27,7 +27,7 @@ export function ConnectionPreview() {
   } else if (connecting?.stream) {
     text = connecting.from.direction === 'out' ? 'Puts a junction in' : 'Puts a branch in'
   } else if (chosen) {
-    text = `Connect from: ${chosen.label}${chosen.taken ? ' (puts a branch or junction in)' : ''}`
+    text = `${choosing?.follow ? 'Place after' : 'Connect from'}: ${chosen.label}${chosen.taken ? ' (puts a branch or junction in)' : ''}`
     at = chosen.point
   } else if (notice?.refused) {
     text = notice.text

@@ -8,6 +8,7 @@ import {
   startConnecting,
   useConnectingStore,
 } from './connecting-store.ts'
+import { offerFollowing } from './following.ts'
 import { outward, type Point } from './geometry.ts'
 import type { PlacedUnit } from './standing.ts'
 import { toSheet } from './view.ts'
@@ -111,7 +112,7 @@ function drag(port: SheetPort, pointer: number, start: Point): void {
     if (event.pointerId !== pointer) return
     stop()
     moveConnecting([event.clientX, event.clientY])
-    finishConnecting()
+    finishConnecting(offerFollowing)
   }
   const cancel = () => {
     stop()

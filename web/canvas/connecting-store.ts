@@ -43,6 +43,8 @@ interface ConnectingState {
     readonly unit: string
     readonly ports: readonly SheetPort[]
     readonly at: number
+    /** A new unit is to come at the port instead of one that is there. */
+    readonly follow?: true
   } | null
   /** Said in place, and aloud: why a connection was refused, what was done. */
   readonly notice: { readonly text: string; readonly at: Point; readonly refused: boolean } | null
@@ -109,6 +111,8 @@ export function startConnecting(from: SheetPort, pointer: Point | null): void {
 
 /** How near the pointer must come to a port, px on the screen. */
 const reach = 18
+/** A stream shorter than this was not drawn: the press was a click, px on the screen. */
+const leastDrawn = 24
 
 /** The pointer moves on: what it would connect to lights up. */
 export function moveConnecting(client: Point): void {
@@ -129,8 +133,27 @@ export function moveConnecting(client: Point): void {
       over = target
     }
   }
+  over ??= onUnit(connecting.targets, pointer, sheet.units.values())
   const stream = over ? null : streamUnder(pointer, 8 / zoom, sheet.streams.values())
   useConnectingStore.setState({ connecting: { ...connecting, pointer, over, stream } })
+}
+
+/** Over a unit away from its ports: the nearest port that can take the stream, or the nearest of all. */
+function onUnit(
+  targets: readonly Target[],
+  [x, y]: Point,
+  units: Iterable<PlacedUnit>,
+): Target | null {
+  for (const { id, body } of units) {
+    if (x < body.x || x > body.x + body.width || y < body.y || y > body.y + body.height) continue
+    const far = (one: Target) =>
+      (one.verdict.allowed ? (one.taken ? 1e4 : 0) : 1e6) +
+      Math.abs(one.point[0] - x) +
+      Math.abs(one.point[1] - y)
+    const own = targets.filter((one) => one.reference.startsWith(`${id}.`))
+    return own.sort((a, b) => far(a) - far(b))[0] ?? null
+  }
+  return null
 }
 
 /** The stream within `near` of a point. */
@@ -160,8 +183,11 @@ export function cancelConnecting(): void {
   useConnectingStore.setState(nothing)
 }
 
-/** The pointer lets go, or Enter is pressed: connects, or says why not. */
-export function finishConnecting(): void {
+/**
+ * The pointer lets go, or Enter is pressed: connects, or says why not. On bare paper what could come
+ * there is offered.
+ */
+export function finishConnecting(offer?: (from: SheetPort, at: Point) => void): void {
   const { connecting } = useConnectingStore.getState()
   if (!connecting) return
   const { from, over, stream, pointer } = connecting
@@ -171,6 +197,9 @@ export function finishConnecting(): void {
     else refuse(over.verdict.why, over.point)
   } else if (stream && pointer) {
     make({ port: from.reference }, { stream, at: onStream(stream, pointer) }, pointer)
+  } else if (offer && pointer) {
+    const drawn = Math.abs(pointer[0] - from.point[0]) + Math.abs(pointer[1] - from.point[1])
+    if (drawn * useCanvasStore.getState().zoom > leastDrawn) offer(from, pointer)
   }
 }
 
@@ -232,7 +261,7 @@ export function say(text: string): void {
 }
 
 /** By keys: first the port to start from, then the one to go to. */
-export function startByKeys(unitId: string): void {
+export function startByKeys(unitId: string, follow = false): void {
   const ports = portsOnSheet(unitId)
   // Outlets that are free first: what is wanted most.
   const order = (port: SheetPort) => (port.taken ? 2 : 0) + (port.direction === 'in' ? 1 : 0)
@@ -241,7 +270,7 @@ export function startByKeys(unitId: string): void {
   useConnectingStore.setState({
     connecting: null,
     notice: null,
-    choosing: { unit: unitId, ports: sorted, at: 0 },
+    choosing: { unit: unitId, ports: sorted, at: 0, ...(follow && { follow: true }) },
   })
 }
 
@@ -273,11 +302,15 @@ function targetsByKeys({ from, targets }: Connecting): Target[] {
   return targets.filter((one) => one.verdict.allowed).sort((a, b) => far(a) - far(b))
 }
 
-export function enterByKeys(): void {
+export function enterByKeys(offer: (from: SheetPort, at: null) => void): void {
   const { choosing, connecting } = useConnectingStore.getState()
   if (choosing) {
     const from = choosing.ports[choosing.at]
     if (!from) return
+    if (choosing.follow) {
+      offer(from, null)
+      return
+    }
     startConnecting(from, null)
     stepByKeys(1)
     const { connecting: begun } = useConnectingStore.getState()

@@ -10,7 +10,10 @@ import {
   stepByKeys,
   useConnectingStore,
 } from './connecting-store.ts'
+import { focusItem } from './focus-item.ts'
+import { offerFollowing } from './following.ts'
 import { centre, grid, type Point } from './geometry.ts'
+import { pin } from './pin-store.ts'
 
 /** Keys on the canvas: everything that the pointer does. */
 
@@ -28,13 +31,6 @@ function focused(target: EventTarget): { id: string; type: 'unit' | 'stream' } |
   const id = item?.getAttribute('data-id')
   if (!item || !id) return null
   return { id, type: item.classList.contains('react-flow__node') ? 'unit' : 'stream' }
-}
-
-export function focusItem(id: string): void {
-  const item = document.querySelector<HTMLElement | SVGElement>(
-    `.react-flow__node[data-id="${CSS.escape(id)}"], .react-flow__edge[data-id="${CSS.escape(id)}"]`,
-  )
-  item?.focus()
 }
 
 export function onCanvasKey(event: KeyboardEvent): void {
@@ -78,7 +74,7 @@ function connectingKey(event: KeyboardEvent): boolean {
       return true
     case 'Enter':
     case ' ':
-      enterByKeys()
+      enterByKeys(offerFollowing)
       return true
     case 'Escape':
       cancelConnecting()
@@ -88,8 +84,8 @@ function connectingKey(event: KeyboardEvent): boolean {
   }
 }
 
-/** Starts a connection from the unit that has the focus or is selected. */
-export function connectFromHere(): void {
+/** Starts a connection from the unit that has the focus or is selected; `follow`: to a new unit. */
+export function connectFromHere(follow = false): void {
   const item = document.activeElement && focused(document.activeElement)
   const { selected } = useSelectionStore.getState()
   const { units } = useCanvasStore.getState().sheet
@@ -97,7 +93,7 @@ export function connectFromHere(): void {
   if (unit === undefined) return
   // The keys that follow must reach the canvas.
   if (!item) focusItem(unit)
-  startByKeys(unit)
+  startByKeys(unit, follow)
 }
 
 export function nudge(ids: readonly string[], [dx, dy]: Point, steps = 1): void {
@@ -106,6 +102,7 @@ export function nudge(ids: readonly string[], [dx, dy]: Point, steps = 1): void 
     (plant, layoutId) => moveUnits(plant, layoutId, ids, [dx * grid * steps, dy * grid * steps]),
     { merge: `nudge ${ids.join()}` },
   )
+  pin(ids)
 }
 
 /** From a stream to the unit at that end of it; from a unit along a stream that leaves it that way. */

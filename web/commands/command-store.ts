@@ -10,6 +10,8 @@ export interface Command {
   readonly group: CommandGroup
   /** 'Mod+Shift+Z'; Mod is Ctrl, on a Mac the command key. Several are parted by a blank. */
   readonly keys?: string
+  /** The browser brings these keys as an event of its own (copy, paste): they are only shown. */
+  readonly native?: true
   /** The shortcut also works while a text field has the focus. */
   readonly inFields?: true
   /** Not in the menu: reached by its keys and the command box. */

@@ -49,7 +49,13 @@ function inField(target: EventTarget | null): boolean {
 /** How a shortcut reads on this machine: 'Ctrl Shift Z'. */
 export function keysText(keys: string): string {
   const [first = ''] = keys.split(' ')
-  const names: Record<string, string> = mac ? { Mod: '⌘', Shift: '⇧', Alt: '⌥' } : { Mod: 'Ctrl' }
+  const names: Record<string, string> = {
+    ...(mac ? { Mod: '⌘', Shift: '⇧', Alt: '⌥' } : { Mod: 'Ctrl' }),
+    ArrowLeft: '←',
+    ArrowRight: '→',
+    ArrowUp: '↑',
+    ArrowDown: '↓',
+  }
   return partsOf(first)
     .map((part) => names[part] ?? part)
     .join(mac ? '' : ' ')
@@ -62,6 +68,7 @@ function commandFor(event: KeyboardEvent): Command | undefined {
     .commands.find(
       (command) =>
         command.keys !== undefined &&
+        !command.native &&
         (!typing || command.inFields) &&
         command.keys.split(' ').some((keys) => matches(chordOf(keys), event)),
     )

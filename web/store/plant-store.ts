@@ -32,7 +32,7 @@ interface PlantState {
   readonly layoutId: string
   /** Null: the layout's own givens hold. */
   readonly caseId: string | null
-  /** Oldest first. */
+  /** Oldest first; all of the session, for a difference holds only what changed. */
   readonly past: readonly Step[]
   /** The next to redo last. */
   readonly future: readonly Step[]
@@ -50,9 +50,6 @@ interface PlantState {
   showLayout(id: string): void
   showCase(id: string | null): void
 }
-
-/** Steps kept. A difference holds only what changed, so this is some hundred kilobytes at most. */
-const deepest = 500
 
 /** The plant before the newest step, against which merged edits are taken anew. */
 let beforeNewest: Plant | null = null
@@ -115,7 +112,7 @@ export const usePlantStore = create<PlantState>()((set, get) => {
         merge !== undefined && newest?.merge === merge && state.future.length === 0 && beforeNewest
       const before = joins ? beforeNewest : state.plant
       const change_ = difference(before as Plant, after)
-      const earlier = joins ? state.past.slice(0, -1) : state.past.slice(-(deepest - 1))
+      const earlier = joins ? state.past.slice(0, -1) : state.past
       beforeNewest = before as Plant
       set({
         ...place(after, state.layoutId),

@@ -1,0 +1,3 @@
+export function printSheet(): void {
+  window.print()
+}
