@@ -32,8 +32,8 @@ test('machines among each other line up by their shafts', () => {
 })
 
 test('gaps become equal; the outermost stay', () => {
-  const row = [unit('a', 0, 0, 24, 24), unit('b', 40, 0, 40, 24), unit('c', 200, 0, 24, 24)]
-  // 224 from end to end, 88 filled: two gaps of 68.
-  expect(distributed(row, 'across')).toEqual({ a: [0, 0], b: [88, 0], c: [200, 0] })
+  const row = [unit('a', 0, 0, 24, 24), unit('b', 40, 0, 40, 24), unit('c', 208, 0, 24, 24)]
+  // 232 from end to end, 88 filled: two gaps of 72.
+  expect(distributed(row, 'across')).toEqual({ a: [0, 0], b: [96, 0], c: [208, 0] })
   expect(distributed(row.slice(0, 2), 'across')).toEqual({})
 })
