@@ -36,5 +36,7 @@ export const lowestSaturationPressure = 611.2126774443449
 /** Saturation pressure at 623.15 K by Eq. (30), Pa: above it saturated states are region 3's. */
 export const borderPressure13 = 16529164.25260448
 
-/** Lowest pressure accepted, Pa. The formulation has no lower limit; a condenser never gets there. */
+/**
+ * Lowest pressure accepted, Pa. The formulation has no lower limit; a condenser never gets there.
+ */
 export const lowestPressure = 1

@@ -1,7 +1,7 @@
 /**
  * Enthalpy from pressure and one more quantity, with exact partials. Every function writes a RESULT
- * (value, partial to p, partial to the second argument) and answers with an outcome; a result is left
- * as it was when the outcome is not fine.
+ * (value, partial to p, partial to the second argument) and answers with an outcome; a result is
+ * left as it was when the outcome is not fine.
  */
 import {
   borderPressure13,
@@ -46,8 +46,8 @@ export function write(
 }
 
 /**
- * h (J/kg) of pressure (Pa) and temperature (K) by the forward equation. Below the critical pressure a
- * T within 1e-6 K of saturation is `onSaturation`.
+ * h (J/kg) of pressure (Pa) and temperature (K) by the forward equation. Below the critical
+ * pressure a T within 1e-6 K of saturation is `onSaturation`.
  */
 export function enthalpyAtPressureTemperature(
   out: Float64Array,
@@ -122,8 +122,8 @@ export function refuseTemperature(T: number, low: number, high: number): number 
 }
 
 /**
- * h (J/kg) of pressure (Pa) and dryness fraction (not clamped: below 0 and above 1 the line between h'
- * and h'' is carried on). Refused without a saturation state.
+ * h (J/kg) of pressure (Pa) and dryness fraction (not clamped: below 0 and above 1 the line between
+ * h' and h'' is carried on). Refused without a saturation state.
  */
 export function enthalpyAtPressureDryness(
   out: Float64Array,
@@ -176,8 +176,8 @@ export function enthalpyAtPressureSuperheat(
 }
 
 /**
- * h within a millionth of a kelvin of saturation in region 3, where the density no longer follows from p
- * and T: the saturated enthalpy with cp at it.
+ * h within a millionth of a kelvin of saturation in region 3, where the density no longer follows
+ * from p and T: the saturated enthalpy with cp at it.
  */
 function besideSaturation(
   out: Float64Array,

@@ -1,7 +1,7 @@
 /**
- * The borders 1/3, 2/3 and 2/5, where the formulation itself jumps by up to some 0.1 kJ/kg: both sides
- * at a pressure, and what lies between them. A state within a gap takes the border's temperature, all
- * else passes linearly from one side to the other, like a change of phase.
+ * The borders 1/3, 2/3 and 2/5, where the formulation itself jumps by up to some 0.1 kJ/kg: both
+ * sides at a pressure, and what lies between them. A state within a gap takes the border's
+ * temperature, all else passes linearly from one side to the other, like a change of phase.
  */
 import {
   borderTemperature13,

@@ -6,7 +6,8 @@ export {
   enthalpyAtPressureSuperheat,
   enthalpyAtPressureTemperature,
 } from './enthalpy.ts'
-export { enthalpyAtPressureEntropy, enthalpyAtPressureVolume } from './enthalpy-isobar.ts'
+export { enthalpyAtPressureEntropy } from './enthalpy-at-entropy.ts'
+export { enthalpyAtPressureVolume } from './enthalpy-at-volume.ts'
 export { Outcome, type RangeProblem, type RangeQuantity, rangeProblem } from './outcome.ts'
 export { type Phase, phaseOf } from './phase.ts'
 export { RESULT_SIZE, Result, SATURATION_SIZE, Saturation, STATE_SIZE, State } from './records.ts'
@@ -19,11 +20,6 @@ export {
   saturationTemperature,
 } from './saturation.ts'
 export { stateAtPressureEnthalpy, stateAtRequest, stateRequest } from './state.ts'
-export {
-  type StatePair,
-  type SteamRange,
-  type SteamSeveral,
-  type SteamState,
-  state,
-} from './states.ts'
+export { type StatePair, state } from './states.ts'
+export type { SteamRange, SteamSeveral, SteamState } from './steam-state.ts'
 export { warmUp } from './warm-up.ts'

@@ -1,6 +1,7 @@
 /**
  * Outcomes of the steam functions. The hot functions answer with one of these small integers; 0 is
- * fine, anything else left the outputs as they were and set `rangeProblem`. An input that is not a number counts as too low.
+ * fine, anything else left the outputs as they were and set `rangeProblem`. An input that is not a
+ * number counts as too low.
  */
 export const Outcome = {
   fine: 0,

@@ -5,8 +5,9 @@ import { STATE_SIZE, State } from './records.ts'
 import { stateAtPressureEnthalpy } from './state.ts'
 
 /**
- * `wet` from saturated liquid to dry saturated steam, both included (within 1e-9 of either); beyond,
- * `liquid` and `vapour`, and `supercritical` where p and T are at or above the critical ones.
+ * `wet` from saturated liquid to dry saturated steam, both included (within 1e-9 of either);
+ * beyond, `liquid` and `vapour`, and `supercritical` where p and T are at or above the critical
+ * ones.
  */
 export type Phase = 'wet' | 'liquid' | 'vapour' | 'supercritical'
 

@@ -1,6 +1,6 @@
 /**
- * Records of the hot functions: slots of a Float64Array, all in SI units. A record may lie anywhere in
- * a larger array; functions take the array and the offset of the record's first slot.
+ * Records of the hot functions: slots of a Float64Array, all in SI units. A record may lie anywhere
+ * in a larger array; functions take the array and the offset of the record's first slot.
  */
 
 /**
@@ -30,11 +30,11 @@ export const SATURATION_SIZE = 16
 
 /**
  * Slots of a state record: p (Pa), h (J/kg), T (K), s (J/(kg K)), v (m3/kg) and dryness fraction x
- * (not clamped), each with its partials to p at constant h and to h at constant p. `region` is 1, 2,
- * 3, 4 (wet, both saturated states included) or 5, and 0 while the record is empty. `subcritical` is 1
- * where the dryness fraction is defined, from 611.213 Pa to below the critical pressure; elsewhere it is
- * 0 and x and its partials are 0. From `saturation` on the record holds the saturation record of p,
- * valid while `subcritical` is 1.
+ * (not clamped), each with its partials to p at constant h and to h at constant p. `region` is 1,
+ * 2, 3, 4 (wet, both saturated states included) or 5, and 0 while the record is empty.
+ * `subcritical` is 1 where the dryness fraction is defined, from 611.213 Pa to below the critical
+ * pressure; elsewhere it is 0 and x and its partials are 0. From `saturation` on the record holds
+ * the saturation record of p, valid while `subcritical` is 1.
  */
 export const State = {
   p: 0,

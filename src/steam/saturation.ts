@@ -43,14 +43,19 @@ const liquid = new Float64Array(POINT_SIZE)
 const vapour = new Float64Array(POINT_SIZE)
 const field = new Float64Array(FIELD_SIZE)
 
-/** Pa below the critical pressure from which saturated densities are carried on, see `denseSide`. */
+/**
+ * Pa below the critical pressure from which saturated densities are carried on, see `denseSide`.
+ */
 const lastGap = 100
 
 // Many streams of a plant share a pressure: saturation records already computed, found by a hash of p.
 const CACHE_RECORDS = 512
 const cache = new Float64Array(CACHE_RECORDS * SATURATION_SIZE)
 
-/** Whether a pressure has a saturation state (611.213 Pa to below the critical pressure), else why not. */
+/**
+ * Whether a pressure has a saturation state (611.213 Pa to below the critical pressure), else why
+ * not.
+ */
 export function checkSaturationPressure(p: number): number {
   if (p >= lowestSaturationPressure && p < criticalPressure) return Outcome.fine
   if (!(p >= lowestSaturationPressure))
@@ -97,9 +102,10 @@ function completeSaturation(record: Float64Array, at: number): void {
 }
 
 /**
- * One side of the record in region 3: T from the saturation line, the density from the basic equation.
- * In the last 100 Pa below the critical pressure the two no longer meet to the digits of a double; there
- * the densities close in on the critical one with the square root of the gap, as they do before.
+ * One side of the record in region 3: T from the saturation line, the density from the basic
+ * equation. In the last 100 Pa below the critical pressure the two no longer meet to the digits of
+ * a double; there the densities close in on the critical one with the square root of the gap, as
+ * they do before.
  */
 function denseSide(record: Float64Array, at: number, shift: number): void {
   const p = record[at] as number
@@ -167,8 +173,8 @@ export function saturationAtPressure(record: Float64Array, at: number, p: number
 }
 
 /**
- * Fills a saturation record from a temperature (K): p is the saturation pressure and T the temperature
- * asked for. Refused outside 273.15 K <= T < 647.096 K.
+ * Fills a saturation record from a temperature (K): p is the saturation pressure and T the
+ * temperature asked for. Refused outside 273.15 K <= T < 647.096 K.
  */
 export function saturationAtTemperature(record: Float64Array, at: number, T: number): number {
   const code = checkSaturationTemperature(T)
@@ -229,8 +235,8 @@ function fillNodes(): void {
 }
 
 /**
- * h'' (J/kg) of the dry saturated steam that has entropy s (J/(kg K)): [h'', dh''/ds, its pressure (Pa)].
- * Refused outside s'' at the critical point < s <= s'' at 273.15 K.
+ * h'' (J/kg) of the dry saturated steam that has entropy s (J/(kg K)): [h'', dh''/ds, its pressure
+ * (Pa)]. Refused outside s'' at the critical point < s <= s'' at 273.15 K.
  */
 export function drySaturatedEnthalpyAtEntropy(out: Float64Array, at: number, s: number): number {
   return saturatedEnthalpyAtEntropy(out, at, s, 1)

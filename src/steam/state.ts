@@ -1,4 +1,8 @@
-/** States from pressure and enthalpy, with all first partials: the kernel's hot function. */
+/**
+ * States from pressure and enthalpy, with all first partials: the kernel's hot function. One file,
+ * since its parts share arrays that are constants of the module; an imported array is looked up at
+ * each use.
+ */
 import {
   borderPressure13,
   borderTemperature13,
@@ -152,11 +156,11 @@ export function bandAround(h: number): number {
 
 /**
  * Fills a state record from pressure (Pa) and enthalpy (J/kg). The region is decided from h against
- * h'(p) and h''(p) first; T follows from the forward equation of the region to round-off. A state that
- * the record already holds is the first guess; it does not change the digits.
+ * h'(p) and h''(p) first; T follows from the forward equation of the region to round-off. A state
+ * that the record already holds is the first guess; it does not change the digits.
  *
- * Holds from 1 Pa to 100 MPa (50 MPa above 1073.15 K) and from 273.15 K to 2273.15 K. Below
- * 611.213 Pa there is steam only. An h within a gap between two regions takes the border's temperature.
+ * Holds from 1 Pa to 100 MPa (50 MPa above 1073.15 K) and from 273.15 K to 2273.15 K. Below 611.213
+ * Pa there is steam only. An h within a gap between two regions takes the border's temperature.
  * When the answer is not 0 the state is as it was.
  */
 export function stateAtPressureEnthalpy(
@@ -172,10 +176,33 @@ export function stateAtPressureEnthalpy(
 }
 
 /**
- * As `stateAtPressureEnthalpy`, from p and h in the first two slots of `stateRequest`: for callers that
- * are too long to have that function inlined and would have their numbers allocated.
+ * As `stateAtPressureEnthalpy`, from p and h in the first two slots of `stateRequest`: for callers
+ * that are too long to have that function inlined and would have their numbers allocated.
  */
 export function stateAtRequest(record: Float64Array, at: number): number {
+  const code = solve(record, at)
+  if (code !== Outcome.fine) restoreSaturation(record, at)
+  return code
+}
+
+/**
+ * After a refusal: the saturation record is again that of the state that the record still holds.
+ */
+function restoreSaturation(record: Float64Array, at: number): void {
+  if (record[at + atRegion] === 0 || record[at + atSubcritical] === 0) return
+  takeSaturation(record, at, record[at + atP] as number)
+}
+
+function takeSaturation(record: Float64Array, at: number, p: number): void {
+  const saturation = at + atSaturation
+  if (record[saturation] === p) return
+  const slot = cachedSaturation(p)
+  for (let i = 0; i < saturationSize; i++) {
+    record[saturation + i] = cache[slot + i] as number
+  }
+}
+
+function solve(record: Float64Array, at: number): number {
   const p = asked[askP] as number
   const h = asked[askH] as number
   if (record[at + atP] === p && record[at + atH] === h && record[at + atRegion] !== 0) {
@@ -184,13 +211,8 @@ export function stateAtRequest(record: Float64Array, at: number): number {
   if (!(p >= least && p <= most && Number.isFinite(h))) return refuseAsked()
   if (p >= critical) return dense(record, at, SUPERCRITICAL)
   if (p < leastSaturation) return steam(record, at, 0)
+  takeSaturation(record, at, p)
   const saturation = at + atSaturation
-  if (record[saturation] !== p) {
-    const slot = cachedSaturation(p)
-    for (let i = 0; i < saturationSize; i++) {
-      record[saturation + i] = cache[slot + i] as number
-    }
-  }
   const hL = record[saturation + satHL] as number
   if (h < hL - bandAround(hL)) {
     return p > pressure13 ? dense(record, at, LIQUID) : liquid(record, at, 1)
@@ -337,7 +359,10 @@ function dryness(record: Float64Array, at: number, subcritical: number): void {
   record[at + atXp] = -(hLp + x * ((record[saturation + satHVp] as number) - hLp)) * xh
 }
 
-/** Writes a state within a gap between two regions, from both sides of the border as gap.ts has them. */
+/**
+ * Writes a state within a gap between two regions, from both sides of the border as gap.ts has
+ * them.
+ */
 function fillGap(record: Float64Array, at: number, region: number, subcritical: number): void {
   const p = asked[askP] as number
   const h = asked[askH] as number
@@ -370,8 +395,8 @@ function fillGap(record: Float64Array, at: number, region: number, subcritical: 
 }
 
 /**
- * Above 16.529 MPa: region 1, 3 or 2 (5) by the enthalpies at the borders. At a border region 1 or 2
- * goes first, so that an overlap of both sides has one answer.
+ * Above 16.529 MPa: region 1, 3 or 2 (5) by the enthalpies at the borders. At a border region 1 or
+ * 2 goes first, so that an overlap of both sides has one answer.
  */
 function dense(record: Float64Array, at: number, side: number): number {
   const p = asked[askP] as number

@@ -1,9 +1,9 @@
 /**
- * Gets the hot functions compiled. The unrolled sums are long, and slow while the engine still interprets
- * them: some tens of microseconds a sum instead of a tenth of one.
+ * Gets the hot functions compiled. The unrolled sums are long, and slow while the engine still
+ * interprets them: some tens of microseconds a sum instead of a tenth of one.
  */
 import { enthalpyAtPressureTemperature } from './enthalpy.ts'
-import { enthalpyAtPressureEntropy } from './enthalpy-isobar.ts'
+import { enthalpyAtPressureEntropy } from './enthalpy-at-entropy.ts'
 import { RESULT_SIZE, STATE_SIZE, State } from './records.ts'
 import { stateAtPressureEnthalpy } from './state.ts'
 
@@ -24,8 +24,9 @@ const states: readonly (readonly [number, number])[] = [
 ]
 
 /**
- * Runs through states of every hot region until their functions are compiled, or for the time given (ms).
- * Called once before the first plant is solved; it changes no result. Answers with the passes made.
+ * Runs through states of every hot region until their functions are compiled, or for the time given
+ * (ms). Called once before the first plant is solved; it changes no result. Answers with the passes
+ * made.
  */
 export function warmUp(milliseconds = 150): number {
   const record = new Float64Array(STATE_SIZE * states.length)

@@ -1,9 +1,9 @@
 /**
- * Time of one state (T, s, v, x with all partials from p and h), in ns per call: medians over repeated
- * runs, beside the published sums written with Math.pow in the same run.
+ * Time of one state (T, s, v, x with all partials from p and h), in ns per call: medians over
+ * repeated runs, beside the published sums written with Math.pow in the same run.
  *
- * cold: an empty record and a pressure not met lately; warm: the record holds a state 0.1 % away in h at
- * the same pressure; moved: 0.1 % away in both p and h, so that saturation is new as well.
+ * cold: an empty record and a pressure not met lately; warm: the record holds a state 0.1 % away in
+ * h at the same pressure; moved: 0.1 % away in both p and h, so that saturation is new as well.
  */
 import {
   enthalpyAtPressureEntropy,
@@ -107,8 +107,8 @@ interface Time {
 }
 
 /**
- * Time per call over the states of a sample. Short passes come first, so that the pass as a whole is
- * compiled before it is timed.
+ * Time per call over the states of a sample. Short passes come first, so that the pass as a whole
+ * is compiled before it is timed.
  */
 function time(pass: (count: number) => void, count = COUNT, runs = RUNS): Time {
   for (let i = 0; i < 5000; i++) pass(4)

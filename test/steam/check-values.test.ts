@@ -1,6 +1,6 @@
 /**
- * Every row of the computer-program verification tables in test/reference/if97.json, to the digits that
- * the releases print. The tables' names name the release and the table.
+ * Every row of the computer-program verification tables in test/reference/if97.json, to the digits
+ * that the releases print. The tables' names name the release and the table.
  */
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'

@@ -34,8 +34,8 @@ function enthalpyOf(p: number, T: number): number {
 }
 
 /**
- * Derivative by central differences of two widths, extrapolated (Richardson). With it an estimate of its
- * own error: the part that the extrapolation changed.
+ * Derivative by central differences of two widths, extrapolated (Richardson). With it an estimate
+ * of its own error: the part that the extrapolation changed.
  */
 function differenceOf(f: (x: number) => number, x: number, step: number): [number, number] {
   const wide = (f(x + step) - f(x - step)) / (2 * step)

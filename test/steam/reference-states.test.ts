@@ -1,6 +1,6 @@
 /**
- * 50,500 states of an independent IF97 implementation (Debian's python3-iapws) and 1,500 of IAPWS-95, both
- * written by test/reference/steam-states.py.
+ * 50,500 states of an independent IF97 implementation (Debian's python3-iapws) and 1,500 of
+ * IAPWS-95, both written by test/reference/steam-states.py.
  */
 import { describe, expect, it } from 'vitest'
 import {
@@ -177,9 +177,10 @@ describe('against an independent implementation of IF97', () => {
 
 describe('against IAPWS-95', () => {
   /**
-   * What IF97 was fitted to within, from memory of R7-97 section 11 and of Wagner et al., J. Eng. Gas
-   * Turbines Power 122 (2000) 150: some 0.01 % in v of water, 0.05 % of steam, 0.2 % in region 3; some tenths
-   * of a kJ/kg in h, 1 kJ/kg in region 3; 1 % in cp and w, more along the pseudocritical line.
+   * What IF97 was fitted to within, from memory of R7-97 section 11 and of Wagner et al., J. Eng.
+   * Gas Turbines Power 122 (2000) 150: some 0.01 % in v of water, 0.05 % of steam, 0.2 % in region
+   * 3; some tenths of a kJ/kg in h, 1 kJ/kg in region 3; 1 % in cp and w, more along the
+   * pseudocritical line.
    */
   const limits = {
     1: { v: 1e-4, h: 300, s: 0.6, cp: 3e-3, w: 5e-3 },

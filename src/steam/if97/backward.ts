@@ -1,7 +1,7 @@
 /**
- * Backward equations that are only needed off the hot path, summed row by row: pressure from enthalpy and
- * entropy (IAPWS SR2-01(2014), SR4-04(2014)), the borders of regions in h and s (SR4-04(2014)) and
- * saturation in region 3 (SR3-03(2014)). SI units; all are first guesses.
+ * Backward equations that are only needed off the hot path, summed row by row: pressure from
+ * enthalpy and entropy (IAPWS SR2-01(2014), SR4-04(2014)), the borders of regions in h and s
+ * (SR4-04(2014)) and saturation in region 3 (SR3-03(2014)). SI units; all are first guesses.
  */
 import { borderPressure23 } from './borders.ts'
 import {
@@ -108,7 +108,9 @@ export function boundary23TemperatureOf(h: number, s: number): number {
   return 900 * sumOfTerms(boundary23Temperature, h / 3e6 - 0.727, s / 5.3e3 - 0.864)
 }
 
-/** Wet steam: T (K) of h (J/kg) and s (J/(kg K)) for s of at least s''(623.15 K), SR4-04 Eq. (9). */
+/**
+ * Wet steam: T (K) of h (J/kg) and s (J/(kg K)) for s of at least s''(623.15 K), SR4-04 Eq. (9).
+ */
 export function saturationTemperatureOfBoth(h: number, s: number): number {
   return (
     550 * sumOfTerms(saturationTemperatureOfEnthalpyEntropy, h / 2.8e6 - 0.119, s / 9.2e3 - 1.07)
@@ -125,7 +127,10 @@ export function saturationPressure3OfEntropy(s: number): number {
   return 22e6 * sumOfTerms(saturationPressureOfEntropy, s / 5.2e3 - 1.03, s / 5.2e3 - 0.699)
 }
 
-/** A first guess of p (Pa) from h (J/kg) and s (J/(kg K)); 0 within the wet region below s''(623.15 K). */
+/**
+ * A first guess of p (Pa) from h (J/kg) and s (J/(kg K)); 0 within the wet region below s''(623.15
+ * K).
+ */
 export function pressureGuess(h: number, s: number): number {
   if (s <= criticalEntropy) {
     if (h < liquidEnthalpyOf(Math.max(s, -0.15))) return 0

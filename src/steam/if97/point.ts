@@ -9,8 +9,8 @@ import { lowPressure2, region2LowPotential, region2Potential } from './unrolled-
 import { region5Potential } from './unrolled-region5.ts'
 
 /**
- * Slots of a point; p (Pa), T (K), the reduced inverse temperature tau and, for steam, ln(p / 1 MPa) are
- * its inputs, and the enthalpy aimed at (J/kg) where there is one.
+ * Slots of a point; p (Pa), T (K), the reduced inverse temperature tau and, for steam, ln(p / 1
+ * MPa) are its inputs, and the enthalpy aimed at (J/kg) where there is one.
  */
 export const Point = {
   h: 0,
@@ -114,8 +114,9 @@ export function region5Point(point: Float64Array, p: number, T: number): void {
 }
 
 /**
- * Region 1 at the point's p and tau = 1386 K / T, which is all but settled: T, s and v then follow the last,
- * tiny step that brings h to the point's goal to round-off, to first order; the derivatives stay.
+ * Region 1 at the point's p and tau = 1386 K / T, which is all but settled: T, s and v then follow
+ * the last, tiny step that brings h to the point's goal to round-off, to first order; the
+ * derivatives stay.
  */
 export function region1Settled(point: Float64Array): void {
   point[8] = 1386 / (point[9] as number)

@@ -1,7 +1,7 @@
 /**
- * Region 3 in density and temperature, with the solvers that find them. A FIELD holds, at rho and T:
- * p (Pa), h (J/kg), s (J/(kg K)), dp/drho and dp/dT, dh/drho and dh/dT, cv (J/(kg K)). The pairs (p, h)
- * and (p, s) stay regular through the critical point, where dp/drho vanishes.
+ * Region 3 in density and temperature, with the solvers that find them. A FIELD holds, at rho and
+ * T: p (Pa), h (J/kg), s (J/(kg K)), dp/drho and dp/dT, dh/drho and dh/dT, cv (J/(kg K)). The pairs
+ * (p, h) and (p, s) stay regular through the critical point, where dp/drho vanishes.
  */
 import { criticalDensity, criticalTemperature, gasConstant } from '../constants.ts'
 import { Point } from './point.ts'
@@ -72,7 +72,9 @@ export function region3Field(field: Float64Array, rho: number, T: number): void 
   fieldAt(field)
 }
 
-/** Least dp/drho, Pa m3/kg, that partials at constant T divide by: it is 0 at the critical point. */
+/**
+ * Least dp/drho, Pa m3/kg, that partials at constant T divide by: it is 0 at the critical point.
+ */
 const leastSlope = 1e-6
 
 // Slots and limits as constants of this module: an imported binding is looked up at each use.
@@ -109,8 +111,8 @@ export function pointOfField(point: Float64Array, field: Float64Array): void {
 }
 
 /**
- * What a state of region 3 is sought from: p (Pa), h (J/kg) or s (J/(kg K)), and a guess of rho and T (rho
- * 0: the backward equations). The answer is left in the field.
+ * What a state of region 3 is sought from: p (Pa), h (J/kg) or s (J/(kg K)), and a guess of rho and
+ * T (rho 0: the backward equations). The answer is left in the field.
  */
 export const Sought = { p: 0, value: 1, rho: 2, T: 3 } as const
 export const sought = new Float64Array(4)
@@ -120,8 +122,8 @@ const settled = 1e-8
 const MOST_STEPS = 40
 
 /**
- * The field at `sought` p and h. `liquidSide` chooses subregion 3a of the backward equations. Answers
- * whether it converged.
+ * The field at `sought` p and h. `liquidSide` chooses subregion 3a of the backward equations.
+ * Answers whether it converged.
  */
 export function region3AtEnthalpy(field: Float64Array, liquidSide: boolean): boolean {
   const rho = sought[Sought.rho] as number
@@ -175,7 +177,9 @@ function backward(x: number, y: number): void {
   g[7] = y
 }
 
-/** Newton's steps in rho and T towards p and a second property, whose slot of the field is given. */
+/**
+ * Newton's steps in rho and T towards p and a second property, whose slot of the field is given.
+ */
 function closeIn(field: Float64Array, slot: number): boolean {
   const p = sought[Sought.p] as number
   const value = sought[Sought.value] as number
@@ -212,8 +216,8 @@ function closeIn(field: Float64Array, slot: number): boolean {
 }
 
 /**
- * Density (kg/m3) of p (Pa) and T (K) between two densities that enclose it, p rising with rho between
- * them; `field` is left at the answer.
+ * Density (kg/m3) of p (Pa) and T (K) between two densities that enclose it, p rising with rho
+ * between them; `field` is left at the answer.
  */
 export function region3Density(
   field: Float64Array,
@@ -263,15 +267,17 @@ export function region3Temperature(
 
 const [ab1, ab2, ab3, ab4] = boundary3ab
 
-/** Whether the sought p and h lie on the liquid's side, subregion 3a, above the critical pressure. */
+/**
+ * Whether the sought p and h lie on the liquid's side, subregion 3a, above the critical pressure.
+ */
 export function onLiquidSide(of: Float64Array): boolean {
   const pi = (of[Sought.p] as number) * 1e-6
   return (of[Sought.value] as number) <= 1e3 * (ab1 + pi * (ab2 + pi * (ab3 + pi * ab4)))
 }
 
 /**
- * Densities of saturated liquid and steam between 16.5 MPa and the critical pressure, as rho_c + z f(z)
- * with z = sqrt((pc - p) / 1 MPa): our own fit, good to 0.5 %, only ever a first guess.
+ * Densities of saturated liquid and steam between 16.5 MPa and the critical pressure, as rho_c + z
+ * f(z) with z = sqrt((pc - p) / 1 MPa): our own fit, good to 0.5 %, only ever a first guess.
  */
 const liquidFit = [
   186.6916, -110.9288, 134.5618, -282.1322, 442.854, -392.6707, 192.5622, -49.06103, 5.07725,
@@ -287,9 +293,10 @@ function fitted(z: number, coefficients: readonly number[]): number {
 }
 
 /**
- * Density (kg/m3) of the saturated liquid (side 1) or the dry saturated steam (side -1) at a pair of p
- * (Pa) and T (K) on the saturation line, p in Pa below the critical pressure by `gap` Pa. From outside
- * the density that is sought p(rho) bends one way only, so that Newton's steps close in from there.
+ * Density (kg/m3) of the saturated liquid (side 1) or the dry saturated steam (side -1) at a pair
+ * of p (Pa) and T (K) on the saturation line, p in Pa below the critical pressure by `gap` Pa. From
+ * outside the density that is sought p(rho) bends one way only, so that Newton's steps close in
+ * from there.
  */
 export function region3SaturatedDensity(
   field: Float64Array,

@@ -1,6 +1,6 @@
 /**
- * The saturation line, region 4 of IAPWS R7-97(2012), Eqs. (29) to (31). One implicit quadratic holds
- * pressure and temperature together, so both directions are explicit.
+ * The saturation line, region 4 of IAPWS R7-97(2012), Eqs. (29) to (31). One implicit quadratic
+ * holds pressure and temperature together, so both directions are explicit.
  */
 import { region4 } from './rows/region4.ts'
 
@@ -43,8 +43,8 @@ export function saturationSlope(p: number, T: number): number {
 }
 
 /**
- * T (K) and dT/dp (K/Pa) of a pressure in Pa, from slot `at` of an array into the slots given: Eq. (31) and
- * the slope of the implicit equation in one go.
+ * T (K) and dT/dp (K/Pa) of a pressure in Pa, from slot `at` of an array into the slots given: Eq.
+ * (31) and the slope of the implicit equation in one go.
  */
 export function saturationLine(
   record: Float64Array,

@@ -1,6 +1,7 @@
 /**
- * T from p and h within one region, to round-off of the forward equation. With h = R T* dgamma/dtau the
- * equation to solve is one in tau alone; Halley's step converges with the third power of the error.
+ * T from p and h within one region, to round-off of the forward equation. With h = R T* dgamma/dtau
+ * the equation to solve is one in tau alone; Halley's step converges with the third power of the
+ * error.
  */
 import { gasConstant } from '../constants.ts'
 import { POINT_SIZE, Point, region5Point } from './point.ts'
@@ -19,24 +20,24 @@ const g = new Float64Array(9)
 const point5 = new Float64Array(POINT_SIZE)
 
 /**
- * What a temperature is sought from: p (Pa), h (J/kg), a guess of T (K; 0: the backward equations) and
- * the T (K) at which the region ends towards region 3 or saturation. The answer is left in T,
+ * What a temperature is sought from: p (Pa), h (J/kg), a guess of T (K; 0: the backward equations)
+ * and the T (K) at which the region ends towards region 3 or saturation. The answer is left in T,
  * and in tau for regions 1 and 2.
  */
 export const Asked = { p: 0, h: 1, guess: 2, limit: 3, T: 4, tau: 5 } as const
 export const ASKED_SIZE = 6
 
 /**
- * Below this step of tau (as part of tau) the error left, of the third power of the step, is below 1e-13:
- * `settlePoint` takes the rest.
+ * Below this step of tau (as part of tau) the error left, of the third power of the step, is below
+ * 1e-13: `settlePoint` takes the rest.
  */
 const settled = 1e-5
 /** Steps before a solution is given up; from the backward equations two are enough. */
 const MOST_STEPS = 30
 
 /**
- * Beyond a border (K) an iterate may stray this far: within the region h rises with T and the answer is
- * the only one, further out the equations bend back.
+ * Beyond a border (K) an iterate may stray this far: within the region h rises with T and the
+ * answer is the only one, further out the equations bend back.
  */
 const stray = 0.5
 
@@ -118,7 +119,9 @@ export function region2TemperatureAtEnthalpy(asked: Float64Array): void {
   asked[askT] = 540 / tau
 }
 
-/** Backward equations of region 2, Eqs. (22) to (24), with the boundary 2b/2c, Eq. (21); T in g[0]. */
+/**
+ * Backward equations of region 2, Eqs. (22) to (24), with the boundary 2b/2c, Eq. (21); T in g[0].
+ */
 function region2Guess(pi: number, h: number): void {
   const eta = h * (1 / 2e6)
   g[6] = pi

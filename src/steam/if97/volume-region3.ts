@@ -1,4 +1,7 @@
-/** Volume of region 3 from pressure and temperature, IAPWS SR5-05(2016): the first guess of a density. */
+/**
+ * Volume of region 3 from pressure and temperature, IAPWS SR5-05(2016): the first guess of a
+ * density.
+ */
 import { criticalPressure, criticalTemperature } from '../constants.ts'
 import { region3SubregionBoundaries } from './rows/boundaries.ts'
 import { region3Volume } from './rows/region3-volume.ts'
@@ -19,7 +22,9 @@ export function subregionBoundary(name: Boundary, p: number): number {
 /** Saturation pressure at 643.15 K, Pa: where the subregions near the critical point begin. */
 const nearCritical = 2.10434e7
 
-/** Below a pressure (Pa): boundaries in the order of temperature and the subregions between them. */
+/**
+ * Below a pressure (Pa): boundaries in the order of temperature and the subregions between them.
+ */
 const ranges: readonly (readonly [number, readonly Boundary[], string])[] = [
   [22.5e6, ['cd', 'qu', 'rx', 'jk'], 'cq?rk'],
   [23e6, ['cd', 'gh', 'mn', 'ef', 'op', 'ij', 'jk'], 'clmnopjk'],

@@ -1,22 +1,31 @@
 /**
- * Boundaries between regions and subregions: IAPWS R7-97(2012), IAPWS SR2-01(2014), SR3-03(2014), SR4-04(2014),
- * SR5-05(2016).
+ * Boundaries between regions and subregions: IAPWS R7-97(2012), IAPWS SR2-01(2014), SR3-03(2014),
+ * SR4-04(2014), SR5-05(2016).
  */
 import type { Term } from './term.ts'
 
-/** IAPWS R7-97(2012), Table 1, Eqs. (5) and (6): the boundary 2/3, p / MPa = n1 + n2 T + n3 T^2, T in K. */
+/**
+ * IAPWS R7-97(2012), Table 1, Eqs. (5) and (6): the boundary 2/3, p / MPa = n1 + n2 T + n3 T^2, T
+ * in K.
+ */
 export const boundary23 = [
   0.34805185628969e3, -0.11671859879975e1, 0.10192970039326e-2, 0.57254459862746e3,
   0.1391883977887e2,
 ] as const
 
-/** IAPWS R7-97(2012), Table 19, Eqs. (20) and (21): the boundary 2b/2c, p / MPa = n1 + n2 h + n3 h^2, h in kJ/kg. */
+/**
+ * IAPWS R7-97(2012), Table 19, Eqs. (20) and (21): the boundary 2b/2c, p / MPa = n1 + n2 h + n3
+ * h^2, h in kJ/kg.
+ */
 export const boundary2bc = [
   0.90584278514723e3, -0.67955786399241, 0.12809002730136e-3, 0.26526571908428e4,
   0.45257578905948e1,
 ] as const
 
-/** IAPWS SR2-01(2014), Table 5, Eq. (2): the boundary 2a/2b, h / (kJ/kg) as powers of s / (kJ/(kg K)). */
+/**
+ * IAPWS SR2-01(2014), Table 5, Eq. (2): the boundary 2a/2b, h / (kJ/kg) as powers of s / (kJ/(kg
+ * K)).
+ */
 export const boundary2ab = [
   -0.349898083432139e4, 0.257560716905876e4, -0.421073558227969e3, 0.276349063799944e2,
 ] as const
@@ -26,7 +35,10 @@ export const boundary3ab = [
   0.201464004206875e4, 0.374696550136983e1, -0.219921901054187e-1, 0.87513168600995e-4,
 ] as const
 
-/** IAPWS SR3-03(2014), Table 17, Eq. (10): p / 22 MPa = sum of n (eta - 1.02)^I (eta - 0.608)^J, eta = h / 2600 kJ/kg. */
+/**
+ * IAPWS SR3-03(2014), Table 17, Eq. (10): p / 22 MPa = sum of n (eta - 1.02)^I (eta - 0.608)^J, eta
+ * = h / 2600 kJ/kg.
+ */
 export const saturationPressureOfEnthalpy: readonly Term[] = [
   { I: 0, J: 0, n: 0.600073641753024 },
   { I: 1, J: 1, n: -0.936203654849857e1 },
@@ -44,7 +56,10 @@ export const saturationPressureOfEnthalpy: readonly Term[] = [
   { I: 36, J: 24, n: 0.813641294467829e38 },
 ]
 
-/** IAPWS SR3-03(2014), Table 19, Eq. (11): p / 22 MPa = sum of n (sigma - 1.03)^I (sigma - 0.699)^J, sigma = s / 5.2 kJ/(kg K). */
+/**
+ * IAPWS SR3-03(2014), Table 19, Eq. (11): p / 22 MPa = sum of n (sigma - 1.03)^I (sigma - 0.699)^J,
+ * sigma = s / 5.2 kJ/(kg K).
+ */
 export const saturationPressureOfEntropy: readonly Term[] = [
   { I: 0, J: 0, n: 0.639767553612785 },
   { I: 1, J: 1, n: -0.129727445396014e2 },
@@ -58,7 +73,10 @@ export const saturationPressureOfEntropy: readonly Term[] = [
   { I: 32, J: 18, n: 0.110649277244882e37 },
 ]
 
-/** IAPWS SR4-04(2014), Table 9, Eq. (3): h' / 1700 kJ/kg = sum of n (sigma - 1.09)^I (sigma + 0.366e-4)^J, sigma = s / 3.8 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 9, Eq. (3): h' / 1700 kJ/kg = sum of n (sigma - 1.09)^I (sigma +
+ * 0.366e-4)^J, sigma = s / 3.8 kJ/(kg K).
+ */
 export const liquidEnthalpy1: readonly Term[] = [
   { I: 0, J: 14, n: 0.332171191705237 },
   { I: 0, J: 36, n: 0.611217706323496e-3 },
@@ -89,7 +107,10 @@ export const liquidEnthalpy1: readonly Term[] = [
   { I: 32, J: 8, n: 0.655444787064505e2 },
 ]
 
-/** IAPWS SR4-04(2014), Table 10, Eq. (4): h' / 1700 kJ/kg = sum of n (sigma - 1.09)^I (sigma + 0.366e-4)^J, sigma = s / 3.8 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 10, Eq. (4): h' / 1700 kJ/kg = sum of n (sigma - 1.09)^I (sigma +
+ * 0.366e-4)^J, sigma = s / 3.8 kJ/(kg K).
+ */
 export const liquidEnthalpy3a: readonly Term[] = [
   { I: 0, J: 1, n: 0.822673364673336 },
   { I: 0, J: 4, n: 0.181977213534479 },
@@ -112,7 +133,10 @@ export const liquidEnthalpy3a: readonly Term[] = [
   { I: 32, J: 6, n: 0.63105253224098 },
 ]
 
-/** IAPWS SR4-04(2014), Table 16, Eq. (5): h'' / 2800 kJ/kg = exp(sum of n (1/sigma1 - 0.513)^I (sigma2 - 0.524)^J), sigma1 = s / 5.21 kJ/(kg K), sigma2 = s / 9.2 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 16, Eq. (5): h'' / 2800 kJ/kg = exp(sum of n (1/sigma1 - 0.513)^I
+ * (sigma2 - 0.524)^J), sigma1 = s / 5.21 kJ/(kg K), sigma2 = s / 9.2 kJ/(kg K).
+ */
 export const vapourEnthalpy2ab: readonly Term[] = [
   { I: 1, J: 8, n: -0.524581170928788e3 },
   { I: 1, J: 24, n: -0.926947218142218e7 },
@@ -146,7 +170,10 @@ export const vapourEnthalpy2ab: readonly Term[] = [
   { I: 36, J: 28, n: -0.710971318427851e39 },
 ]
 
-/** IAPWS SR4-04(2014), Table 17, Eq. (6): h'' / 2800 kJ/kg = (sum of n (sigma - 1.02)^I (sigma - 0.726)^J)^4, sigma = s / 5.9 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 17, Eq. (6): h'' / 2800 kJ/kg = (sum of n (sigma - 1.02)^I (sigma -
+ * 0.726)^J)^4, sigma = s / 5.9 kJ/(kg K).
+ */
 export const vapourEnthalpy2c3b: readonly Term[] = [
   { I: 0, J: 0, n: 0.104351280732769e1 },
   { I: 0, J: 3, n: -0.227807912708513e1 },
@@ -166,7 +193,10 @@ export const vapourEnthalpy2c3b: readonly Term[] = [
   { I: 36, J: 20, n: -0.116994334851995e41 },
 ]
 
-/** IAPWS SR4-04(2014), Table 23, Eq. (7): the boundary 1/3, h / 1700 kJ/kg = sum of n (sigma - 0.884)^I (sigma - 0.864)^J, sigma = s / 3.8 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 23, Eq. (7): the boundary 1/3, h / 1700 kJ/kg = sum of n (sigma -
+ * 0.884)^I (sigma - 0.864)^J, sigma = s / 3.8 kJ/(kg K).
+ */
 export const boundary13: readonly Term[] = [
   { I: 0, J: 0, n: 0.913965547600543 },
   { I: 1, J: -2, n: -0.430944856041991e-4 },
@@ -176,7 +206,10 @@ export const boundary13: readonly Term[] = [
   { I: 6, J: -3, n: -0.690815545851641e2 },
 ]
 
-/** IAPWS SR4-04(2014), Table 25, Eq. (8): T / 900 K = sum of n (eta - 0.727)^I (sigma - 0.864)^J, eta = h / 3000 kJ/kg, sigma = s / 5.3 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 25, Eq. (8): T / 900 K = sum of n (eta - 0.727)^I (sigma - 0.864)^J,
+ * eta = h / 3000 kJ/kg, sigma = s / 5.3 kJ/(kg K).
+ */
 export const boundary23Temperature: readonly Term[] = [
   { I: -12, J: 10, n: 0.62909626082981e-3 },
   { I: -10, J: 8, n: -0.823453502583165e-3 },
@@ -205,7 +238,10 @@ export const boundary23Temperature: readonly Term[] = [
   { I: 14, J: 1, n: 0.783237062349385e7 },
 ]
 
-/** IAPWS SR4-04(2014), Table 28, Eq. (9): T / 550 K = sum of n (eta - 0.119)^I (sigma - 1.07)^J, eta = h / 2800 kJ/kg, sigma = s / 9.2 kJ/(kg K); s >= s''(623.15 K). */
+/**
+ * IAPWS SR4-04(2014), Table 28, Eq. (9): T / 550 K = sum of n (eta - 0.119)^I (sigma - 1.07)^J, eta
+ * = h / 2800 kJ/kg, sigma = s / 9.2 kJ/(kg K); s >= s''(623.15 K).
+ */
 export const saturationTemperatureOfEnthalpyEntropy: readonly Term[] = [
   { I: 0, J: 0, n: 0.179882673606601 },
   { I: 0, J: 3, n: -0.267507455199603 },
@@ -247,8 +283,8 @@ export const saturationTemperatureOfEnthalpyEntropy: readonly Term[] = [
 
 /**
  * IAPWS SR5-05(2016), Tables 1 and 9: boundaries between the subregions of region 3, T / K = sum of
- * n pi^I with pi = p / 1 MPa; for ab, op and wx powers of ln pi. The boundary ef is the straight line
- * T / K = 3.727888004 (pi - 22.064) + 647.096.
+ * n pi^I with pi = p / 1 MPa; for ab, op and wx powers of ln pi. The boundary ef is the straight
+ * line T / K = 3.727888004 (pi - 22.064) + 647.096.
  */
 export const region3SubregionBoundaries = {
   ab: [

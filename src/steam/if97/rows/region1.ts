@@ -4,7 +4,10 @@
  */
 import type { Term } from './term.ts'
 
-/** IAPWS R7-97(2012), Table 2, Eq. (7): gamma = sum of n (7.1 - pi)^I (tau - 1.222)^J, pi = p / 16.53 MPa, tau = 1386 K / T. */
+/**
+ * IAPWS R7-97(2012), Table 2, Eq. (7): gamma = sum of n (7.1 - pi)^I (tau - 1.222)^J, pi = p /
+ * 16.53 MPa, tau = 1386 K / T.
+ */
 export const region1: readonly Term[] = [
   { I: 0, J: -2, n: 0.14632971213167 },
   { I: 0, J: -1, n: -0.84548187169114 },
@@ -42,7 +45,10 @@ export const region1: readonly Term[] = [
   { I: 32, J: -41, n: -0.93537087292458e-25 },
 ]
 
-/** IAPWS R7-97(2012), Table 6, Eq. (11): T / K = sum of n pi^I (eta + 1)^J, pi = p / 1 MPa, eta = h / 2500 kJ/kg. */
+/**
+ * IAPWS R7-97(2012), Table 6, Eq. (11): T / K = sum of n pi^I (eta + 1)^J, pi = p / 1 MPa, eta = h
+ * / 2500 kJ/kg.
+ */
 export const region1TemperatureOfEnthalpy: readonly Term[] = [
   { I: 0, J: 0, n: -0.23872489924521e3 },
   { I: 0, J: 1, n: 0.40421188637945e3 },
@@ -66,7 +72,10 @@ export const region1TemperatureOfEnthalpy: readonly Term[] = [
   { I: 6, J: 32, n: -0.15020185953503e-16 },
 ]
 
-/** IAPWS R7-97(2012), Table 8, Eq. (13): T / K = sum of n pi^I (sigma + 2)^J, pi = p / 1 MPa, sigma = s / 1 kJ/(kg K). */
+/**
+ * IAPWS R7-97(2012), Table 8, Eq. (13): T / K = sum of n pi^I (sigma + 2)^J, pi = p / 1 MPa, sigma
+ * = s / 1 kJ/(kg K).
+ */
 export const region1TemperatureOfEntropy: readonly Term[] = [
   { I: 0, J: 0, n: 0.17478268058307e3 },
   { I: 0, J: 1, n: 0.34806930892873e2 },
@@ -90,7 +99,10 @@ export const region1TemperatureOfEntropy: readonly Term[] = [
   { I: 4, J: 32, n: -0.30732199903668e-30 },
 ]
 
-/** IAPWS SR2-01(2014), Table 2, Eq. (1): p / 100 MPa = sum of n (eta + 0.05)^I (sigma + 0.05)^J, eta = h / 3400 kJ/kg, sigma = s / 7.6 kJ/(kg K). */
+/**
+ * IAPWS SR2-01(2014), Table 2, Eq. (1): p / 100 MPa = sum of n (eta + 0.05)^I (sigma + 0.05)^J, eta
+ * = h / 3400 kJ/kg, sigma = s / 7.6 kJ/(kg K).
+ */
 export const region1PressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 0, J: 0, n: -0.691997014660582 },
   { I: 0, J: 1, n: -0.18361254878756e2 },

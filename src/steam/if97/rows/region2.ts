@@ -1,10 +1,14 @@
 /**
- * Region 2 of IAPWS R7-97(2012): steam, 273.15 K <= T <= 623.15 K below psat(T), to 863.15 K below the
- * boundary 2/3, to 1073.15 K below 100 MPa, and its backward equations (R7-97, IAPWS SR2-01(2014)).
+ * Region 2 of IAPWS R7-97(2012): steam, 273.15 K <= T <= 623.15 K below psat(T), to 863.15 K below
+ * the boundary 2/3, to 1073.15 K below 100 MPa, and its backward equations (R7-97, IAPWS
+ * SR2-01(2014)).
  */
 import type { Term } from './term.ts'
 
-/** IAPWS R7-97(2012), Table 10, Eq. (16): gamma0 = ln pi + sum of n tau^J, pi = p / 1 MPa, tau = 540 K / T (I is not used). */
+/**
+ * IAPWS R7-97(2012), Table 10, Eq. (16): gamma0 = ln pi + sum of n tau^J, pi = p / 1 MPa, tau = 540
+ * K / T (I is not used).
+ */
 export const region2Ideal: readonly Term[] = [
   { I: 0, J: 0, n: -0.96927686500217e1 },
   { I: 0, J: 1, n: 0.10086655968018e2 },
@@ -65,15 +69,18 @@ export const region2Residual: readonly Term[] = [
 ]
 
 /**
- * IAPWS R7-97(2012), section 6.2, Eq. (18): the first two coefficients of the ideal part that hold for the
- * metastable vapour instead (tau^0 and tau^1).
+ * IAPWS R7-97(2012), section 6.2, Eq. (18): the first two coefficients of the ideal part that hold
+ * for the metastable vapour instead (tau^0 and tau^1).
  */
 export const region2MetastableIdeal: readonly Term[] = [
   { I: 0, J: 0, n: -0.96937268393049e1 },
   { I: 0, J: 1, n: 0.10087275970006e2 },
 ]
 
-/** IAPWS R7-97(2012), Table 16, Eq. (19): metastable vapour to 10 MPa, gammar = sum of n pi^I (tau - 0.5)^J. */
+/**
+ * IAPWS R7-97(2012), Table 16, Eq. (19): metastable vapour to 10 MPa, gammar = sum of n pi^I (tau -
+ * 0.5)^J.
+ */
 export const region2MetastableResidual: readonly Term[] = [
   { I: 1, J: 0, n: -0.73362260186506e-2 },
   { I: 1, J: 2, n: -0.88223831943146e-1 },
@@ -90,7 +97,10 @@ export const region2MetastableResidual: readonly Term[] = [
   { I: 5, J: 10, n: -0.2645650148281e-2 },
 ]
 
-/** IAPWS R7-97(2012), Table 20, Eq. (22): T / K = sum of n pi^I (eta - 2.1)^J, pi = p / 1 MPa, eta = h / 2000 kJ/kg. */
+/**
+ * IAPWS R7-97(2012), Table 20, Eq. (22): T / K = sum of n pi^I (eta - 2.1)^J, pi = p / 1 MPa, eta =
+ * h / 2000 kJ/kg.
+ */
 export const region2aTemperatureOfEnthalpy: readonly Term[] = [
   { I: 0, J: 0, n: 0.10898952318288e4 },
   { I: 0, J: 1, n: 0.84951654495535e3 },
@@ -128,7 +138,10 @@ export const region2aTemperatureOfEnthalpy: readonly Term[] = [
   { I: 7, J: 28, n: -0.62459855192507e2 },
 ]
 
-/** IAPWS R7-97(2012), Table 21, Eq. (23): T / K = sum of n (pi - 2)^I (eta - 2.6)^J, pi = p / 1 MPa, eta = h / 2000 kJ/kg. */
+/**
+ * IAPWS R7-97(2012), Table 21, Eq. (23): T / K = sum of n (pi - 2)^I (eta - 2.6)^J, pi = p / 1 MPa,
+ * eta = h / 2000 kJ/kg.
+ */
 export const region2bTemperatureOfEnthalpy: readonly Term[] = [
   { I: 0, J: 0, n: 0.14895041079516e4 },
   { I: 0, J: 1, n: 0.74307798314034e3 },
@@ -170,7 +183,10 @@ export const region2bTemperatureOfEnthalpy: readonly Term[] = [
   { I: 9, J: 40, n: 0.86934156344163e-14 },
 ]
 
-/** IAPWS R7-97(2012), Table 22, Eq. (24): T / K = sum of n (pi + 25)^I (eta - 1.8)^J, pi = p / 1 MPa, eta = h / 2000 kJ/kg. */
+/**
+ * IAPWS R7-97(2012), Table 22, Eq. (24): T / K = sum of n (pi + 25)^I (eta - 1.8)^J, pi = p / 1
+ * MPa, eta = h / 2000 kJ/kg.
+ */
 export const region2cTemperatureOfEnthalpy: readonly Term[] = [
   { I: -7, J: 0, n: -0.32368398555242e13 },
   { I: -7, J: 4, n: 0.73263350902181e13 },
@@ -197,7 +213,10 @@ export const region2cTemperatureOfEnthalpy: readonly Term[] = [
   { I: 6, J: 22, n: 0.12918582991878e-2 },
 ]
 
-/** IAPWS R7-97(2012), Table 25, Eq. (25): T / K = sum of n pi^I (sigma - 2)^J, pi = p / 1 MPa, sigma = s / 2 kJ/(kg K). */
+/**
+ * IAPWS R7-97(2012), Table 25, Eq. (25): T / K = sum of n pi^I (sigma - 2)^J, pi = p / 1 MPa, sigma
+ * = s / 2 kJ/(kg K).
+ */
 export const region2aTemperatureOfEntropy: readonly Term[] = [
   { I: -1.5, J: -24, n: -0.39235983861984e6 },
   { I: -1.5, J: -23, n: 0.5152657382727e6 },
@@ -247,7 +266,10 @@ export const region2aTemperatureOfEntropy: readonly Term[] = [
   { I: 1.5, J: 18, n: -0.82198102652018e-5 },
 ]
 
-/** IAPWS R7-97(2012), Table 26, Eq. (26): T / K = sum of n pi^I (10 - sigma)^J, pi = p / 1 MPa, sigma = s / 0.7853 kJ/(kg K). */
+/**
+ * IAPWS R7-97(2012), Table 26, Eq. (26): T / K = sum of n pi^I (10 - sigma)^J, pi = p / 1 MPa,
+ * sigma = s / 0.7853 kJ/(kg K).
+ */
 export const region2bTemperatureOfEntropy: readonly Term[] = [
   { I: -6, J: 0, n: 0.31687665083497e6 },
   { I: -6, J: 11, n: 0.20864175881858e2 },
@@ -295,7 +317,10 @@ export const region2bTemperatureOfEntropy: readonly Term[] = [
   { I: 5, J: 2, n: 0.16409393674725e-8 },
 ]
 
-/** IAPWS R7-97(2012), Table 27, Eq. (27): T / K = sum of n pi^I (2 - sigma)^J, pi = p / 1 MPa, sigma = s / 2.9251 kJ/(kg K). */
+/**
+ * IAPWS R7-97(2012), Table 27, Eq. (27): T / K = sum of n pi^I (2 - sigma)^J, pi = p / 1 MPa, sigma
+ * = s / 2.9251 kJ/(kg K).
+ */
 export const region2cTemperatureOfEntropy: readonly Term[] = [
   { I: -2, J: 0, n: 0.90968501005365e3 },
   { I: -2, J: 1, n: 0.2404566708842e4 },
@@ -329,7 +354,10 @@ export const region2cTemperatureOfEntropy: readonly Term[] = [
   { I: 7, J: 5, n: -0.16429828281347e-9 },
 ]
 
-/** IAPWS SR2-01(2014), Table 6, Eq. (3): p / 4 MPa = (sum of n (eta - 0.5)^I (sigma - 1.2)^J)^4, eta = h / 4200 kJ/kg, sigma = s / 12 kJ/(kg K). */
+/**
+ * IAPWS SR2-01(2014), Table 6, Eq. (3): p / 4 MPa = (sum of n (eta - 0.5)^I (sigma - 1.2)^J)^4, eta
+ * = h / 4200 kJ/kg, sigma = s / 12 kJ/(kg K).
+ */
 export const region2aPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 0, J: 1, n: -0.182575361923032e-1 },
   { I: 0, J: 3, n: -0.125229548799536 },
@@ -362,7 +390,10 @@ export const region2aPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 7, J: 1, n: 0.400645798472063e-1 },
 ]
 
-/** IAPWS SR2-01(2014), Table 7, Eq. (4): p / 100 MPa = (sum of n (eta - 0.6)^I (sigma - 1.01)^J)^4, eta = h / 4100 kJ/kg, sigma = s / 7.9 kJ/(kg K). */
+/**
+ * IAPWS SR2-01(2014), Table 7, Eq. (4): p / 100 MPa = (sum of n (eta - 0.6)^I (sigma - 1.01)^J)^4,
+ * eta = h / 4100 kJ/kg, sigma = s / 7.9 kJ/(kg K).
+ */
 export const region2bPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 0, J: 0, n: 0.801496989929495e-1 },
   { I: 0, J: 1, n: -0.543862807146111 },
@@ -399,7 +430,10 @@ export const region2bPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 14, J: 16, n: -0.123651009018773e15 },
 ]
 
-/** IAPWS SR2-01(2014), Table 8, Eq. (5): p / 100 MPa = (sum of n (eta - 0.7)^I (sigma - 1.1)^J)^4, eta = h / 3500 kJ/kg, sigma = s / 5.9 kJ/(kg K). */
+/**
+ * IAPWS SR2-01(2014), Table 8, Eq. (5): p / 100 MPa = (sum of n (eta - 0.7)^I (sigma - 1.1)^J)^4,
+ * eta = h / 3500 kJ/kg, sigma = s / 5.9 kJ/(kg K).
+ */
 export const region2cPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 0, J: 0, n: 0.112225607199012 },
   { I: 0, J: 1, n: -0.339005953606712e1 },

@@ -1,10 +1,13 @@
 /**
- * Region 3 of IAPWS R7-97(2012): 623.15 K <= T <= TB23(p), p <= 100 MPa, with its backward equations in
- * (p, h), (p, s) (IAPWS SR3-03(2014)) and (h, s) (IAPWS SR4-04(2014)).
+ * Region 3 of IAPWS R7-97(2012): 623.15 K <= T <= TB23(p), p <= 100 MPa, with its backward
+ * equations in (p, h), (p, s) (IAPWS SR3-03(2014)) and (h, s) (IAPWS SR4-04(2014)).
  */
 import type { Term } from './term.ts'
 
-/** IAPWS R7-97(2012), Table 30, Eq. (28): phi = region3LogDelta ln delta + sum of n delta^I tau^J, delta = rho / 322 kg/m3, tau = 647.096 K / T. */
+/**
+ * IAPWS R7-97(2012), Table 30, Eq. (28): phi = region3LogDelta ln delta + sum of n delta^I tau^J,
+ * delta = rho / 322 kg/m3, tau = 647.096 K / T.
+ */
 export const region3LogDelta = 0.10658070028513e1
 
 /** IAPWS R7-97(2012), Table 30, Eq. (28), without its logarithmic term. */
@@ -50,7 +53,10 @@ export const region3: readonly Term[] = [
   { I: 11, J: 26, n: -0.44923899061815e-4 },
 ]
 
-/** IAPWS SR3-03(2014), Table 3, Eq. (2): T / 760 K = sum of n (pi + 0.24)^I (eta - 0.615)^J, pi = p / 100 MPa, eta = h / 2300 kJ/kg. */
+/**
+ * IAPWS SR3-03(2014), Table 3, Eq. (2): T / 760 K = sum of n (pi + 0.24)^I (eta - 0.615)^J, pi = p
+ * / 100 MPa, eta = h / 2300 kJ/kg.
+ */
 export const region3aTemperatureOfEnthalpy: readonly Term[] = [
   { I: -12, J: 0, n: -0.133645667811215e-6 },
   { I: -12, J: 1, n: 0.455912656802978e-5 },
@@ -85,7 +91,10 @@ export const region3aTemperatureOfEnthalpy: readonly Term[] = [
   { I: 12, J: 5, n: -0.133027883575669e-1 },
 ]
 
-/** IAPWS SR3-03(2014), Table 4, Eq. (3): T / 860 K = sum of n (pi + 0.298)^I (eta - 0.72)^J, pi = p / 100 MPa, eta = h / 2800 kJ/kg. */
+/**
+ * IAPWS SR3-03(2014), Table 4, Eq. (3): T / 860 K = sum of n (pi + 0.298)^I (eta - 0.72)^J, pi = p
+ * / 100 MPa, eta = h / 2800 kJ/kg.
+ */
 export const region3bTemperatureOfEnthalpy: readonly Term[] = [
   { I: -12, J: 0, n: 0.32325457364492e-4 },
   { I: -12, J: 1, n: -0.127575556587181e-3 },
@@ -122,7 +131,10 @@ export const region3bTemperatureOfEnthalpy: readonly Term[] = [
   { I: 8, J: 1, n: 0.676682064330275e-2 },
 ]
 
-/** IAPWS SR3-03(2014), Table 6, Eq. (4): v / 0.0028 m3/kg = sum of n (pi + 0.128)^I (eta - 0.727)^J, pi = p / 100 MPa, eta = h / 2100 kJ/kg. */
+/**
+ * IAPWS SR3-03(2014), Table 6, Eq. (4): v / 0.0028 m3/kg = sum of n (pi + 0.128)^I (eta - 0.727)^J,
+ * pi = p / 100 MPa, eta = h / 2100 kJ/kg.
+ */
 export const region3aVolumeOfEnthalpy: readonly Term[] = [
   { I: -12, J: 6, n: 0.529944062966028e-2 },
   { I: -12, J: 8, n: -0.170099690234461 },
@@ -158,7 +170,10 @@ export const region3aVolumeOfEnthalpy: readonly Term[] = [
   { I: 8, J: 2, n: -0.408757344495612e-1 },
 ]
 
-/** IAPWS SR3-03(2014), Table 7, Eq. (5): v / 0.0088 m3/kg = sum of n (pi + 0.0661)^I (eta - 0.72)^J, pi = p / 100 MPa, eta = h / 2800 kJ/kg. */
+/**
+ * IAPWS SR3-03(2014), Table 7, Eq. (5): v / 0.0088 m3/kg = sum of n (pi + 0.0661)^I (eta - 0.72)^J,
+ * pi = p / 100 MPa, eta = h / 2800 kJ/kg.
+ */
 export const region3bVolumeOfEnthalpy: readonly Term[] = [
   { I: -12, J: 0, n: -0.225196934336318e-8 },
   { I: -12, J: 1, n: 0.140674363313486e-7 },
@@ -192,7 +207,10 @@ export const region3bVolumeOfEnthalpy: readonly Term[] = [
   { I: 2, J: 6, n: 0.16069710109252e1 },
 ]
 
-/** IAPWS SR3-03(2014), Table 10, Eq. (6): T / 760 K = sum of n (pi + 0.24)^I (sigma - 0.703)^J, pi = p / 100 MPa, sigma = s / 4.4 kJ/(kg K). */
+/**
+ * IAPWS SR3-03(2014), Table 10, Eq. (6): T / 760 K = sum of n (pi + 0.24)^I (sigma - 0.703)^J, pi =
+ * p / 100 MPa, sigma = s / 4.4 kJ/(kg K).
+ */
 export const region3aTemperatureOfEntropy: readonly Term[] = [
   { I: -12, J: 28, n: 0.150042008263875e10 },
   { I: -12, J: 32, n: -0.159397258480424e12 },
@@ -229,7 +247,10 @@ export const region3aTemperatureOfEntropy: readonly Term[] = [
   { I: 10, J: 2, n: 0.123220024851555e-2 },
 ]
 
-/** IAPWS SR3-03(2014), Table 11, Eq. (7): T / 860 K = sum of n (pi + 0.76)^I (sigma - 0.818)^J, pi = p / 100 MPa, sigma = s / 5.3 kJ/(kg K). */
+/**
+ * IAPWS SR3-03(2014), Table 11, Eq. (7): T / 860 K = sum of n (pi + 0.76)^I (sigma - 0.818)^J, pi =
+ * p / 100 MPa, sigma = s / 5.3 kJ/(kg K).
+ */
 export const region3bTemperatureOfEntropy: readonly Term[] = [
   { I: -12, J: 1, n: 0.52711170160166 },
   { I: -12, J: 3, n: -0.401317830052742e2 },
@@ -261,7 +282,10 @@ export const region3bTemperatureOfEntropy: readonly Term[] = [
   { I: 14, J: 2, n: -0.215095749182309e-4 },
 ]
 
-/** IAPWS SR3-03(2014), Table 13, Eq. (8): v / 0.0028 m3/kg = sum of n (pi + 0.187)^I (sigma - 0.755)^J, pi = p / 100 MPa, sigma = s / 4.4 kJ/(kg K). */
+/**
+ * IAPWS SR3-03(2014), Table 13, Eq. (8): v / 0.0028 m3/kg = sum of n (pi + 0.187)^I (sigma -
+ * 0.755)^J, pi = p / 100 MPa, sigma = s / 4.4 kJ/(kg K).
+ */
 export const region3aVolumeOfEntropy: readonly Term[] = [
   { I: -12, J: 10, n: 0.795544074093975e2 },
   { I: -12, J: 12, n: -0.23826124298459e4 },
@@ -293,7 +317,10 @@ export const region3aVolumeOfEntropy: readonly Term[] = [
   { I: 6, J: 0, n: -0.145749861944416e-3 },
 ]
 
-/** IAPWS SR3-03(2014), Table 14, Eq. (9): v / 0.0088 m3/kg = sum of n (pi + 0.298)^I (sigma - 0.816)^J, pi = p / 100 MPa, sigma = s / 5.3 kJ/(kg K). */
+/**
+ * IAPWS SR3-03(2014), Table 14, Eq. (9): v / 0.0088 m3/kg = sum of n (pi + 0.298)^I (sigma -
+ * 0.816)^J, pi = p / 100 MPa, sigma = s / 5.3 kJ/(kg K).
+ */
 export const region3bVolumeOfEntropy: readonly Term[] = [
   { I: -12, J: 0, n: 0.591599780322238e-4 },
   { I: -12, J: 1, n: -0.185465997137856e-2 },
@@ -328,7 +355,10 @@ export const region3bVolumeOfEntropy: readonly Term[] = [
   { I: 2, J: 2, n: -0.32747778718823e1 },
 ]
 
-/** IAPWS SR4-04(2014), Table 3, Eq. (1): p / 99 MPa = sum of n (eta - 1.01)^I (sigma - 0.75)^J, eta = h / 2300 kJ/kg, sigma = s / 4.4 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 3, Eq. (1): p / 99 MPa = sum of n (eta - 1.01)^I (sigma - 0.75)^J, eta
+ * = h / 2300 kJ/kg, sigma = s / 4.4 kJ/(kg K).
+ */
 export const region3aPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 0, J: 0, n: 0.770889828326934e1 },
   { I: 0, J: 1, n: -0.260835009128688e2 },
@@ -365,7 +395,10 @@ export const region3aPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: 32, J: 28, n: 0.377121605943324e41 },
 ]
 
-/** IAPWS SR4-04(2014), Table 4, Eq. (2): 16.6 MPa / p = sum of n (eta - 0.681)^I (sigma - 0.792)^J, eta = h / 2800 kJ/kg, sigma = s / 5.3 kJ/(kg K). */
+/**
+ * IAPWS SR4-04(2014), Table 4, Eq. (2): 16.6 MPa / p = sum of n (eta - 0.681)^I (sigma - 0.792)^J,
+ * eta = h / 2800 kJ/kg, sigma = s / 5.3 kJ/(kg K).
+ */
 export const region3bPressureOfEnthalpyEntropy: readonly Term[] = [
   { I: -12, J: 2, n: 0.125244360717979e-12 },
   { I: -12, J: 10, n: -0.126599322553713e-1 },

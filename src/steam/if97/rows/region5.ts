@@ -1,7 +1,10 @@
 /** Region 5 of IAPWS R7-97(2012): steam, 1073.15 K <= T <= 2273.15 K, p <= 50 MPa. */
 import type { Term } from './term.ts'
 
-/** IAPWS R7-97(2012), Table 37, Eq. (33): gamma0 = ln pi + sum of n tau^J, pi = p / 1 MPa, tau = 1000 K / T (I is not used). */
+/**
+ * IAPWS R7-97(2012), Table 37, Eq. (33): gamma0 = ln pi + sum of n tau^J, pi = p / 1 MPa, tau =
+ * 1000 K / T (I is not used).
+ */
 export const region5Ideal: readonly Term[] = [
   { I: 0, J: 0, n: -0.13179983674201e2 },
   { I: 0, J: 1, n: 0.68540841634434e1 },

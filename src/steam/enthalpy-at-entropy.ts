@@ -1,6 +1,6 @@
 /**
- * Enthalpy from pressure and entropy or volume: the isobar is walked from cold to hot, region by region,
- * each ending at a border where both sides are known; entropy and volume rise along it.
+ * Enthalpy from pressure and entropy: the isobar is walked from cold to hot, region by region, each
+ * ending at a border where both sides are known; entropy rises along it.
  */
 import {
   borderPressure13,
@@ -15,27 +15,11 @@ import {
   lowestTemperature,
 } from './constants.ts'
 import { refusePressure, write } from './enthalpy.ts'
-import {
-  border,
-  enthalpyAlong,
-  entropyAlong,
-  highSide,
-  lowSide,
-  sidesOfBorder13,
-  sidesOfBorder23,
-  sidesOfBorder25,
-  volumeAlong,
-} from './gap.ts'
+import { gapForm, wetForm } from './enthalpy-between.ts'
+import { highSide, sidesOfBorder13, sidesOfBorder23, sidesOfBorder25 } from './gap.ts'
 import { borderTemperature23 } from './if97/borders.ts'
 import { POINT_SIZE, Point, region1Point, region2Point, region5Point } from './if97/point.ts'
-import {
-  FIELD_SIZE,
-  Field,
-  region3AtEntropy,
-  region3Temperature,
-  Sought,
-  sought,
-} from './if97/region3.ts'
+import { FIELD_SIZE, Field, region3AtEntropy, Sought, sought } from './if97/region3.ts'
 import { region1TemperatureFromEntropy } from './if97/unrolled-region1.ts'
 import {
   region2aTemperatureFromEntropy,
@@ -47,20 +31,10 @@ import { Result, Saturation } from './records.ts'
 import { cachedSaturation, saturationCache } from './saturation.ts'
 
 // Slots and limits as constants of this module: an imported binding is looked up at each use.
-const {
-  sL: satSL,
-  sV: satSV,
-  hL: satHL,
-  hV: satHV,
-  hLp: satHLp,
-  hVp: satHVp,
-  vL: satVL,
-  vV: satVV,
-  T: satT,
-} = Saturation
-const { h: ptH, s: ptS, cp: ptCp, v: ptV, vT: ptVT, vp: ptVp, hp: ptHp } = Point
+const { sL: satSL, sV: satSV } = Saturation
+const { h: ptH, s: ptS, cp: ptCp, v: ptV, vT: ptVT } = Point
 const { value: outValue, first: outFirst, second: outSecond } = Result
-const { T: ofT, h: ofH, rho: ofRho, pT: ofPT, hT: ofHT, pRho: ofPRho, hRho: ofHRho } = Field
+const { T: ofT, h: ofH, rho: ofRho } = Field
 const pressure13 = borderPressure13
 const critical = criticalPressure
 const leastSaturation = lowestSaturationPressure
@@ -85,9 +59,9 @@ const VAPOUR = 1
 const SUPERCRITICAL = 2
 
 /**
- * h (J/kg) of pressure (Pa) and entropy (J/(kg K)), in any region. dh/dp at constant s is v and dh/ds at
- * constant p is T in a single phase; within the wet region, and in a gap between two regions, the
- * partials are those of the mixture of both sides.
+ * h (J/kg) of pressure (Pa) and entropy (J/(kg K)), in any region. dh/dp at constant s is v and
+ * dh/ds at constant p is T in a single phase; within the wet region, and in a gap between two
+ * regions, the partials are those of the mixture of both sides.
  */
 export function enthalpyAtPressureEntropy(
   out: Float64Array,
@@ -101,7 +75,9 @@ export function enthalpyAtPressureEntropy(
   return entropyForm(out, at)
 }
 
-/** p (Pa) and s (J/(kg K)) or v (m3/kg) of the call under way; T (K) of the last step and the step. */
+/**
+ * p (Pa) and s (J/(kg K)) or v (m3/kg) of the call under way; T (K) of the last step and the step.
+ */
 const asked = new Float64Array(4)
 const g = new Float64Array(9)
 
@@ -119,48 +95,7 @@ function entropyForm(out: Float64Array, at: number): number {
   if (s > (cache[slot + satSV] as number)) {
     return p > pressure13 ? denseEntropy(out, at, VAPOUR) : steamEntropy(out, at)
   }
-  return wetForm(out, at, slot, satSL)
-}
-
-/** h between saturated liquid and steam by s or v, whose slot of the liquid's side is given. */
-function wetForm(out: Float64Array, at: number, slot: number, of: number): number {
-  const value = asked[1] as number
-  const first = cache[slot + of] as number
-  const firstP = cache[slot + of + DERIVATIVES] as number
-  const width = (cache[slot + of + 1] as number) - first
-  const widthP = (cache[slot + of + DERIVATIVES + 1] as number) - firstP
-  const hL = cache[slot + satHL] as number
-  const dh = (cache[slot + satHV] as number) - hL
-  const hLp = cache[slot + satHLp] as number
-  const dhp = (cache[slot + satHVp] as number) - hLp
-  const x = (value - first) / width
-  const xp = -(firstP + x * widthP) / width
-  return write(out, at, hL + x * dh, hLp + x * dhp + xp * dh, dh / width)
-}
-
-/** From a saturated property's slot to that of its derivative. */
-const DERIVATIVES = satHLp - satHL
-
-/** h between both sides of a border by s or v, whose slot of a point is given. */
-function gapForm(out: Float64Array, at: number, of: number): number {
-  const value = asked[1] as number
-  const T = border[0] as number
-  const slope = border[1] as number
-  const first = lowSide[of] as number
-  const width = (highSide[of] as number) - first
-  const firstP = alongBorder(lowSide, T, slope, of)
-  const widthP = alongBorder(highSide, T, slope, of) - firstP
-  const h = lowSide[ptH] as number
-  const dh = (highSide[ptH] as number) - h
-  const hp = enthalpyAlong(lowSide, slope)
-  const dhp = enthalpyAlong(highSide, slope) - hp
-  const part = (value - first) / width
-  const partP = -(firstP + part * widthP) / width
-  return write(out, at, h + part * dh, hp + part * dhp + partP * dh, dh / width)
-}
-
-function alongBorder(q: Float64Array, T: number, slope: number, of: number): number {
-  return of === ptS ? entropyAlong(q, T, slope) : volumeAlong(q, slope)
+  return wetForm(out, at, asked, slot, satSL)
 }
 
 function denseEntropy(out: Float64Array, at: number, side: number): number {
@@ -184,11 +119,11 @@ function denseEntropy(out: Float64Array, at: number, side: number): number {
   const T = field[ofT] as number
   if (T < borderTemperature13) {
     sidesOfBorder13(p)
-    return gapForm(out, at, ptS)
+    return gapForm(out, at, asked, ptS)
   }
   if (side !== LIQUID && T > borderTemperature23(p)) {
     sidesOfBorder23(p)
-    return gapForm(out, at, ptS)
+    return gapForm(out, at, asked, ptS)
   }
   return write(out, at, field[ofH] as number, 1 / (field[ofRho] as number), T)
 }
@@ -196,7 +131,9 @@ function denseEntropy(out: Float64Array, at: number, side: number): number {
 /** Entropy at the critical point, J/(kg K). */
 const criticalEntropy = 4412.02148223476
 
-/** Step (as part of T) after which h, s and v at the next T follow from Taylor's terms to round-off. */
+/**
+ * Step (as part of T) after which h, s and v at the next T follow from Taylor's terms to round-off.
+ */
 const settled = 1e-7
 
 function liquidEntropy(out: Float64Array, at: number): number {
@@ -295,7 +232,7 @@ function hotEntropy(out: Float64Array, at: number): number {
     return write(out, at, point[ptH] as number, point[ptV] as number, highestTemperature25)
   }
   sidesOfBorder25(p)
-  if (s < (highSide[ptS] as number)) return gapForm(out, at, ptS)
+  if (s < (highSide[ptS] as number)) return gapForm(out, at, asked, ptS)
   let T = 1500
   for (let i = 0; i < MOST_STEPS; i++) {
     region5Point(point, p, T)
@@ -311,116 +248,4 @@ function hotEntropy(out: Float64Array, at: number): number {
   }
   region5Point(point, p, highestTemperature)
   return refuse(Outcome.entropyHigh, s, point[ptS] as number)
-}
-
-/**
- * h (J/kg) of pressure (Pa) and specific volume (m3/kg), in any region. Cold water has two temperatures
- * for one volume (the density maximum near 277 K): the warmer one is meant.
- */
-export function enthalpyAtPressureVolume(
-  out: Float64Array,
-  at: number,
-  p: number,
-  v: number,
-): number {
-  if (!(p >= lowestPressure && p <= highestPressure)) return refusePressure(p)
-  asked[0] = p
-  asked[1] = v
-  if (!Number.isFinite(v)) return refuse(v > 0 ? Outcome.volumeHigh : Outcome.volumeLow, v, 0)
-  let wetSlot = -1
-  if (p >= leastSaturation && p < critical) {
-    wetSlot = cachedSaturation(p)
-    const vL = cache[wetSlot + satVL] as number
-    const vV = cache[wetSlot + satVV] as number
-    if (v >= vL && v <= vV) return wetForm(out, at, wetSlot, satVL)
-    const T = cache[wetSlot + satT] as number
-    if (p <= pressure13) {
-      return v < vL
-        ? volumeWithin(out, at, p, v, 1, lowestTemperature, T)
-        : steamVolume(out, at, p, v, T)
-    }
-  }
-  if (p < leastSaturation) return steamVolume(out, at, p, v, lowestTemperature)
-  return denseVolume(out, at, p, v)
-}
-
-/** Above 16.529 MPa and outside the two-phase zone. */
-function denseVolume(out: Float64Array, at: number, p: number, v: number): number {
-  region1Point(point, p, borderTemperature13)
-  if (v <= (point[ptV] as number)) {
-    return volumeWithin(out, at, p, v, 1, lowestTemperature, borderTemperature13)
-  }
-  const T23 = borderTemperature23(p)
-  region2Point(point, p, T23)
-  if (v >= (point[ptV] as number)) return steamVolume(out, at, p, v, T23)
-  const rho = 1 / v
-  const T = region3Temperature(field, p, rho, borderTemperature13, T23)
-  if (T < borderTemperature13) {
-    sidesOfBorder13(p)
-    return gapForm(out, at, ptV)
-  }
-  if (T > T23) {
-    sidesOfBorder23(p)
-    return gapForm(out, at, ptV)
-  }
-  const pT = field[ofPT] as number
-  // dT/dp at constant v is 1/pT; dT/dv at constant p follows from dp = 0.
-  const hp = (field[ofHT] as number) / pT
-  const rhoToT = -(field[ofPRho] as number) / pT
-  const hv = -((field[ofHRho] as number) + (field[ofHT] as number) * rhoToT) * rho * rho
-  return write(out, at, field[ofH] as number, hp, hv)
-}
-
-function steamVolume(out: Float64Array, at: number, p: number, v: number, from: number): number {
-  region2Point(point, p, highestTemperature25)
-  const most = point[ptV] as number
-  if (v <= most * (1 + 1e-12)) return volumeWithin(out, at, p, v, 2, from, highestTemperature25)
-  if (p > highestPressure5) return refuse(Outcome.volumeHigh, v, most)
-  sidesOfBorder25(p)
-  if (v < (highSide[ptV] as number)) return gapForm(out, at, ptV)
-  return volumeWithin(out, at, p, v, 5, highestTemperature25, highestTemperature)
-}
-
-/** T between two temperatures of one region of pressure and temperature, by Newton within a bracket. */
-function volumeWithin(
-  out: Float64Array,
-  at: number,
-  p: number,
-  v: number,
-  region: number,
-  from: number,
-  to: number,
-): number {
-  let low = from
-  let high = to
-  let T = 0.5 * (low + high)
-  for (let i = 0; i < 200; i++) {
-    regionPoint(region, p, T)
-    const slope = point[ptVT] as number
-    const off = (point[ptV] as number) - v
-    // Water below its density maximum lies on the other branch.
-    if (slope <= 0 || off < 0) low = T
-    else high = T
-    let next = T - off / slope
-    if (!(slope > 0 && next >= low && next <= high)) next = 0.5 * (low + high)
-    const step = Math.abs(next - T)
-    T = next
-    if (step < 1e-14 * T) break
-  }
-  regionPoint(region, p, T)
-  const off = (point[ptV] as number) - v
-  if (Math.abs(off) > 1e-10 * v) {
-    return refuse(off > 0 ? Outcome.volumeLow : Outcome.volumeHigh, v, point[ptV] as number)
-  }
-  const cp = point[ptCp] as number
-  const vT = point[ptVT] as number
-  const vp = point[ptVp] as number
-  const hp = (point[ptHp] as number) - (cp * vp) / vT
-  return write(out, at, point[ptH] as number, hp, cp / vT)
-}
-
-function regionPoint(region: number, p: number, T: number): void {
-  if (region === 1) region1Point(point, p, T)
-  else if (region === 2) region2Point(point, p, T)
-  else region5Point(point, p, T)
 }
