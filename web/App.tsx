@@ -13,8 +13,8 @@ import { Strip } from './strip/Strip.tsx'
 import './styles/layout.css'
 import { Totals } from './totals/Totals.tsx'
 
-// The chart brings a large library along: the canvas need not wait for it.
-const Chart = lazy(() => import('./chart/TemperatureEntropyChart.tsx'))
+// The charts bring a large library along: the canvas need not wait for them.
+const Chart = lazy(() => import('./chart/ChartPanel.tsx'))
 
 /** Below this width the chart folds under the canvas. */
 const narrow = 900

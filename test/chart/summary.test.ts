@@ -66,6 +66,7 @@ describe('the states of a balance', () => {
 
   it('are summed up with the names of the few', () => {
     const text = summary(
+      'Temperature-entropy diagram',
       states,
       [
         { id: 'main', name: 'Main steam' },
@@ -76,7 +77,9 @@ describe('the states of a balance', () => {
     expect(text).toContain('2 states, 33.6 °C to 540.0 °C.')
     expect(text).toContain('Main steam 130.0 bar, 540.0 °C.')
     expect(text).toContain('Exhaust 0.0520 bar, dryness 0.9347.')
-    expect(summary(new Map(), [], 'metric')).toContain('No states are solved.')
+    expect(summary('Temperature-entropy diagram', new Map(), [], 'metric')).toContain(
+      'No states are solved.',
+    )
   })
 })
 

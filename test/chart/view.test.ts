@@ -9,7 +9,7 @@ import {
   zoomed,
 } from '../../web/chart/view.ts'
 
-const whole: View = { s: [0, 9200], T: [273.15, 873.15] }
+const whole: View = { s: [0, 9200], y: [273.15, 873.15] }
 
 describe('the fitted view', () => {
   it('holds the dome foot, 0 °C and the hottest state with room above it', () => {
@@ -17,8 +17,8 @@ describe('the fitted view', () => {
     // s'' at 273.15 K is 9.156 kJ/(kg K): IAPWS R7-97(2012), by its equations.
     expect(view.s[0]).toBe(0)
     expect(view.s[1]).toBeGreaterThanOrEqual(9156)
-    expect(view.T[0]).toBe(273.15)
-    expect(view.T[1]).toBeGreaterThan(838 + 20)
+    expect(view.y[0]).toBe(273.15)
+    expect(view.y[1]).toBeGreaterThan(838 + 20)
   })
 
   it('does not shift with a small edit', () => {
@@ -35,8 +35,8 @@ describe('zooming', () => {
   it('leaves the point under the pointer where it is', () => {
     const view = zoomed(whole, 0.5, 6500, 600)
     expect((6500 - view.s[0]) / (view.s[1] - view.s[0])).toBeCloseTo(6500 / 9200, 10)
-    expect((600 - view.T[0]) / (view.T[1] - view.T[0])).toBeCloseTo((600 - 273.15) / 600, 10)
-    expect(view.T[1] - view.T[0]).toBeCloseTo(300, 10)
+    expect((600 - view.y[0]) / (view.y[1] - view.y[0])).toBeCloseTo((600 - 273.15) / 600, 10)
+    expect(view.y[1] - view.y[0]).toBeCloseTo(300, 10)
   })
 
   it('and panning never leave a view that cannot be drawn', () => {
@@ -51,9 +51,9 @@ describe('zooming', () => {
         for (const { factor, s, T } of steps) {
           view = panned(zoomed(view, factor, s, T), s - 4600, T - 600)
           expect(view.s[1] - view.s[0]).toBeGreaterThanOrEqual(149)
-          expect(view.T[1] - view.T[0]).toBeGreaterThanOrEqual(9.9)
+          expect(view.y[1] - view.y[0]).toBeGreaterThanOrEqual(9.9)
           expect(view.s[0]).toBeGreaterThanOrEqual(-1501)
-          expect(view.T[1]).toBeLessThanOrEqual(1401)
+          expect(view.y[1]).toBeLessThanOrEqual(1401)
         }
       }),
     )
@@ -62,7 +62,7 @@ describe('zooming', () => {
   it('out and in again comes back', () => {
     const view = zoomed(zoomed(whole, 1.1, 5000, 500), 1 / 1.1, 5000, 500)
     expect(view.s[0]).toBeCloseTo(0, 6)
-    expect(view.T[1]).toBeCloseTo(873.15, 6)
+    expect(view.y[1]).toBeCloseTo(873.15, 6)
   })
 })
 

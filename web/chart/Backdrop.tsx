@@ -1,7 +1,7 @@
 import { memo } from 'react'
 import type { BalanceMessage } from '../../src/messages.ts'
 import { useBalanceStore } from '../store/balance-store.ts'
-import { type Geometry, pathThrough } from './geometry.ts'
+import { firstInside, type Geometry, pathThrough } from './geometry.ts'
 import type { IsobarLabel } from './isobar-labels.ts'
 
 /** What lies below the saturation line. */
@@ -36,7 +36,35 @@ export const Isobars = memo(function Isobars({
   )
 })
 
-/** Their pressures, at their ends. */
+/** Lines of constant dryness, each with its figure at the foot. */
+export const DrynessLines = memo(function DrynessLines({
+  geometry,
+}: {
+  readonly geometry: Geometry
+}) {
+  const lines = useBalanceStore((state) => state.dome?.dryness)
+  if (!lines) return null
+  return (
+    <g className="chart-dryness">
+      {Array.from(lines.x, (x, i) => {
+        const [start, end] = [lines.starts[i] as number, lines.starts[i + 1] as number]
+        const foot = firstInside(lines.points, start, end, geometry)
+        return (
+          <g key={x}>
+            <path d={pathThrough(lines.points, start, end, geometry)} />
+            {foot && (
+              <text x={foot.x + 2} y={foot.y - 4}>
+                {x.toFixed(1)}
+              </text>
+            )}
+          </g>
+        )
+      })}
+    </g>
+  )
+})
+
+/** The isobars' pressures, at their ends. */
 export function IsobarMarks({ labels }: { readonly labels: readonly IsobarLabel[] }) {
   return (
     <g className="chart-marks">

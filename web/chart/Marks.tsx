@@ -1,5 +1,5 @@
 import { memo } from 'react'
-import type { Geometry } from './geometry.ts'
+import { type Geometry, heightOf } from './geometry.ts'
 import type { StreamState } from './stream-states.ts'
 
 /** Where the state of a stream lies on the chart, px. */
@@ -12,12 +12,14 @@ export interface Mark {
 /** The states within the plot. */
 export function marksOf(
   states: ReadonlyMap<string, StreamState>,
-  { plot, x0, kx, y0, ky }: Geometry,
+  geometry: Geometry,
 ): readonly Mark[] {
+  const { plot, x0, kx } = geometry
   const marks: Mark[] = []
-  for (const { id, s, T } of states.values()) {
-    const x = Math.round(10 * (x0 + kx * s)) / 10
-    const y = Math.round(10 * (y0 + ky * T)) / 10
+  for (const state of states.values()) {
+    const { id } = state
+    const x = Math.round(10 * (x0 + kx * state.s)) / 10
+    const y = Math.round(10 * heightOf(geometry, state)) / 10
     const inside =
       x >= plot.x && x <= plot.x + plot.width && y >= plot.y && y <= plot.y + plot.height + 1
     if (inside) marks.push({ id, x, y })

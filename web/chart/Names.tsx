@@ -51,8 +51,10 @@ function coldEndOf(
   unit: string,
   names: NamesMessage,
   { points, starts }: BalanceMessage['curves'],
-  { plot, x0, kx, y0, ky }: Geometry,
+  geometry: Geometry,
 ): { readonly x: number; readonly y: number } | undefined {
+  const { plot, x0, kx, y0, ky } = geometry
+  const column = geometry.upright === 'h' ? 2 : 1
   let longest = 0
   let place: { readonly x: number; readonly y: number } | undefined
   for (const [i, process] of names.processes.entries()) {
@@ -62,15 +64,15 @@ function coldEndOf(
     const end = starts[i + 1] as number
     for (let k = starts[i] as number; k < end; k += 1) {
       const s = points[3 * k] as number
-      const T = points[3 * k + 1] as number
+      const upright = points[3 * k + column] as number
       if (k + 1 < end) {
         length += Math.hypot(
           kx * ((points[3 * k + 3] as number) - s),
-          ky * ((points[3 * k + 4] as number) - T),
+          ky * ((points[3 * k + 3 + column] as number) - upright),
         )
       }
       const x = x0 + kx * s
-      const y = y0 + ky * T
+      const y = y0 + ky * upright
       const inside =
         x >= plot.x && x <= plot.x + plot.width && y >= plot.y && y <= plot.y + plot.height
       if (inside && (!leftmost || x < leftmost.x)) leftmost = { x, y }
@@ -87,9 +89,11 @@ function inkOf(
   curves: BalanceMessage['curves'],
   largestFlow: number,
   marks: readonly Mark[],
-  { x0, kx, y0, ky }: Geometry,
+  geometry: Geometry,
   bounds: Rectangle,
 ): InkGrid {
+  const { x0, kx, y0, ky } = geometry
+  const column = geometry.upright === 'h' ? 2 : 1
   const grid = new InkGrid(bounds)
   const { points, starts, flows } = curves
   for (let i = 0; i + 1 < starts.length; i += 1) {
@@ -98,9 +102,9 @@ function inkOf(
     for (let k = starts[i] as number; k + 1 < end; k += 1) {
       grid.addLine(
         x0 + kx * (points[3 * k] as number),
-        y0 + ky * (points[3 * k + 1] as number),
+        y0 + ky * (points[3 * k + column] as number),
         x0 + kx * (points[3 * k + 3] as number),
-        y0 + ky * (points[3 * k + 4] as number),
+        y0 + ky * (points[3 * k + 3 + column] as number),
         weight,
       )
     }

@@ -3,6 +3,7 @@ import { useBalanceStore } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { useChart } from './chart-store.ts'
+import { heightOf } from './geometry.ts'
 import { textWidth } from './measure-text.ts'
 import type { StreamState } from './stream-states.ts'
 import { useNamedStates, useStates } from './use-named-states.ts'
@@ -65,7 +66,7 @@ function ReadOutBox({ width, height }: { readonly width: number; readonly height
 
   let title: string
   let rows: Row[]
-  let at: { readonly s: number; readonly T: number }
+  let at: { readonly s: number; readonly T: number; readonly h: number }
   if (pointed.kind === 'state') {
     const state = states.get(pointed.stream)
     if (!state) return null
@@ -96,9 +97,8 @@ function ReadOutBox({ width, height }: { readonly width: number; readonly height
     at = pointed
   }
 
-  const { x0, kx, y0, ky } = geometry
-  const x = x0 + kx * at.s
-  const y = y0 + ky * at.T
+  const x = geometry.x0 + geometry.kx * at.s
+  const y = heightOf(geometry, at)
   const box = sizeOf(title, rows)
   const flipped = x + gap + box.width > width && x > width / 2
   const top = Math.max(2, Math.min(y - box.height / 2, height - box.height - 2))

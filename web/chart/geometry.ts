@@ -1,7 +1,12 @@
 import type { Rectangle } from './place-labels.ts'
 
-/** From states to px: x = x0 + kx s, y = y0 + ky T. */
+/** What stands upright on a chart: temperature or enthalpy. */
+export type Upright = 'T' | 'h'
+
+/** From states to px: x = x0 + kx s, y = y0 + ky T (or h). */
 export interface Geometry {
+  /** Temperature unless given. */
+  readonly upright?: Upright
   readonly plot: Rectangle
   readonly x0: number
   readonly kx: number
@@ -12,6 +17,17 @@ export interface Geometry {
 /** Values of one point of a path: s, T, h. */
 const pointSize = 3
 
+/** Where in a point stands what the chart draws upright. */
+const columnOf = ({ upright }: Geometry): 1 | 2 => (upright === 'h' ? 2 : 1)
+
+/** Height of a state, px. */
+export function heightOf(
+  geometry: Geometry,
+  state: { readonly T: number; readonly h: number },
+): number {
+  return geometry.y0 + geometry.ky * (geometry.upright === 'h' ? state.h : state.T)
+}
+
 /** Coordinates are written to a tenth of a pixel; no eye sees more, and the text is a third as long. */
 const round = (px: number): number => Math.round(px * 10) / 10
 
@@ -20,14 +36,16 @@ export function pathThrough(
   points: Float64Array,
   start: number,
   end: number,
-  { x0, kx, y0, ky }: Geometry,
+  geometry: Geometry,
 ): string {
+  const { x0, kx, y0, ky } = geometry
+  const column = columnOf(geometry)
   let d = ''
   let lastX = Number.NaN
   let lastY = Number.NaN
   for (let i = start; i < end; i += 1) {
     const x = round(x0 + kx * (points[pointSize * i] as number))
-    const y = round(y0 + ky * (points[pointSize * i + 1] as number))
+    const y = round(y0 + ky * (points[pointSize * i + column] as number))
     if (x === lastX && y === lastY) continue
     d += `${d === '' ? 'M' : 'L'}${x} ${y}`
     lastX = x
@@ -54,11 +72,13 @@ export interface PathHit {
 export function nearestOnPaths(
   points: Float64Array,
   starts: Uint32Array,
-  { x0, kx, y0, ky }: Geometry,
+  geometry: Geometry,
   x: number,
   y: number,
   reach: number,
 ): PathHit | undefined {
+  const { x0, kx, y0, ky } = geometry
+  const column = columnOf(geometry)
   let hit: PathHit | undefined
   let least = reach
   for (let path = 0; path + 1 < starts.length; path += 1) {
@@ -72,9 +92,9 @@ export function nearestOnPaths(
       const dT = (points[at + 4] as number) - T1
       const dh = (points[at + 5] as number) - h1
       const dx = kx * ds
-      const dy = ky * dT
+      const dy = ky * (column === 1 ? dT : dh)
       const fromX = x - (x0 + kx * s1)
-      const fromY = y - (y0 + ky * T1)
+      const fromY = y - (y0 + ky * (column === 1 ? T1 : h1))
       const square = dx * dx + dy * dy
       const t = square > 0 ? Math.min(1, Math.max(0, (fromX * dx + fromY * dy) / square)) : 0
       const distance = Math.hypot(fromX - t * dx, fromY - t * dy)
@@ -95,21 +115,42 @@ export function lastInside(
   points: Float64Array,
   start: number,
   end: number,
-  { plot, x0, kx, y0, ky }: Geometry,
+  geometry: Geometry,
 ): { readonly x: number; readonly y: number; readonly edge: 'top' | 'right' | 'none' } | undefined {
+  const { plot, x0, kx, y0, ky } = geometry
+  const column = columnOf(geometry)
   const right = plot.x + plot.width
   const bottom = plot.y + plot.height
   for (let i = end - 1; i >= start; i -= 1) {
     const x = x0 + kx * (points[pointSize * i] as number)
-    const y = y0 + ky * (points[pointSize * i + 1] as number)
+    const y = y0 + ky * (points[pointSize * i + column] as number)
     if (x < plot.x || x > right || y < plot.y || y > bottom) continue
     if (i + 1 >= end) return { x, y, edge: 'none' }
     const dx = x0 + kx * (points[pointSize * (i + 1)] as number) - x
-    const dy = y0 + ky * (points[pointSize * (i + 1) + 1] as number) - y
+    const dy = y0 + ky * (points[pointSize * (i + 1) + column] as number) - y
     const toTop = dy < 0 ? (plot.y - y) / dy : Number.POSITIVE_INFINITY
     const toRight = dx > 0 ? (right - x) / dx : Number.POSITIVE_INFINITY
     const t = Math.min(1, toTop, toRight)
     return { x: x + t * dx, y: y + t * dy, edge: toTop < toRight ? 'top' : 'right' }
+  }
+  return undefined
+}
+
+/** The first point of a line within the plot, px; undefined when none is. */
+export function firstInside(
+  points: Float64Array,
+  start: number,
+  end: number,
+  geometry: Geometry,
+): { readonly x: number; readonly y: number } | undefined {
+  const { plot, x0, kx, y0, ky } = geometry
+  const column = columnOf(geometry)
+  for (let i = start; i < end; i += 1) {
+    const x = x0 + kx * (points[pointSize * i] as number)
+    const y = y0 + ky * (points[pointSize * i + column] as number)
+    const inside =
+      x >= plot.x && x <= plot.x + plot.width && y >= plot.y && y <= plot.y + plot.height
+    if (inside) return { x, y }
   }
   return undefined
 }

@@ -1,4 +1,4 @@
-import { fromShown, toShown, type UnitChoice, unitOf } from '../../src/document.ts'
+import { type Dimension, fromShown, toShown, type UnitChoice, unitOf } from '../../src/document.ts'
 import type { BalanceMessage } from '../../src/messages.ts'
 import { type Geometry, lastInside } from './geometry.ts'
 import type { Rectangle } from './place-labels.ts'
@@ -70,14 +70,15 @@ export function isobarLabels(
   return labels
 }
 
-/** Ticks of a temperature or entropy axis: round in the unit shown, placed in SI. */
+/** Ticks of an axis: round in the unit shown, placed in SI. */
 export function axisTicks(
   range: readonly [number, number],
-  dimension: 'temperature' | 'specificEntropy',
+  dimension: Dimension,
   units: UnitChoice,
   round: (low: number, high: number) => readonly number[],
 ): { si: number[]; shown: readonly number[]; unit: string } {
-  const unit = unitOf(dimension, units)
+  // One unit for the whole axis: that of its far end.
+  const unit = unitOf(dimension, units, range[1])
   const shown = round(toShown(range[0], unit), toShown(range[1], unit))
   return { si: shown.map((value) => fromShown(value, unit)), shown, unit: unit.name }
 }

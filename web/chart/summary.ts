@@ -21,11 +21,12 @@ export function stateInWords(state: StreamState, units: UnitChoice): string {
 
 /** What the picture shows, in words. */
 export function summary(
+  diagram: string,
   states: ReadonlyMap<string, StreamState>,
   named: readonly NamedState[],
   units: UnitChoice,
 ): string {
-  const title = 'Temperature-entropy diagram with the saturation dome.'
+  const title = `${diagram} with the saturation dome.`
   if (states.size === 0) return `${title} No states are solved.`
   const temperatures = Array.from(states.values(), (state) => state.T)
   const low = written(formatQuantity(Math.min(...temperatures), 'temperature', units))

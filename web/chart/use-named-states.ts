@@ -36,3 +36,22 @@ export function useNamedStates(): readonly NamedState[] {
     [names, states, roleOf],
   )
 }
+
+const noStates: readonly StreamState[] = []
+
+/** Where the machines' expansions begin and end. */
+export function useExpansionEnds(): readonly StreamState[] {
+  const names = useBalanceStore((state) => state.names)
+  const states = useStates()
+  const { units } = useLayout()
+  return useMemo(() => {
+    if (!names) return noStates
+    const machines = new Set(
+      units.filter(({ kind }) => kindOf(kind)?.shaft === 'driving').map(({ id }) => id),
+    )
+    return names.processes
+      .filter(({ unit }) => machines.has(unit))
+      .flatMap(({ from, to }) => [states.get(from), states.get(to)])
+      .filter((state) => state !== undefined)
+  }, [names, states, units])
+}

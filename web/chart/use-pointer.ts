@@ -2,9 +2,9 @@ import { type PointerEvent, type RefObject, useEffect, useRef, useState } from '
 import { useBalanceStore } from '../store/balance-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import type { ChartStore, Pointed } from './chart-store.ts'
-import { nearestOnPaths } from './geometry.ts'
+import { heightOf, nearestOnPaths } from './geometry.ts'
 import { statesOf } from './stream-states.ts'
-import { panned, type View, zoomed } from './view.ts'
+import { type Limits, panned, type View, zoomed } from './view.ts'
 
 /** How near the pointer must be to a state, and to a process, px. */
 const stateReach = 9
@@ -19,7 +19,7 @@ function under(store: ChartStore, x: number, y: number): Pointed | null {
   const { geometry } = store.getState()
   const { names, balance } = useBalanceStore.getState()
   if (!geometry || !names || !balance) return null
-  const { plot, x0, kx, y0, ky } = geometry
+  const { plot, x0, kx } = geometry
   const margin = stateReach
   const outside =
     x < plot.x - margin ||
@@ -29,11 +29,11 @@ function under(store: ChartStore, x: number, y: number): Pointed | null {
   if (outside) return null
   let nearest: string | undefined
   let least = stateReach
-  for (const { id, s, T } of statesOf(names, balance).values()) {
-    const distance = Math.hypot(x0 + kx * s - x, y0 + ky * T - y)
+  for (const state of statesOf(names, balance).values()) {
+    const distance = Math.hypot(x0 + kx * state.s - x, heightOf(geometry, state) - y)
     if (distance < least) {
       least = distance
-      nearest = id
+      nearest = state.id
     }
   }
   if (nearest !== undefined) return { kind: 'state', stream: nearest }
@@ -59,6 +59,7 @@ export function usePointer(
   store: ChartStore,
   sheet: RefObject<HTMLElement | null>,
   change: Setter,
+  limits: Limits,
 ) {
   const [dragged, setDragged] = useState(false)
   const fingers = useRef(new Map<number, { x: number; y: number }>())
@@ -77,14 +78,16 @@ export function usePointer(
   }
   const move = (dx: number, dy: number) => {
     const { geometry } = store.getState()
-    if (geometry) change((view) => panned(view, -dx / geometry.kx, -dy / geometry.ky))
+    if (geometry) {
+      change((view) => panned(view, -dx / geometry.kx, -dy / geometry.ky, limits))
+    }
   }
   const zoom = (factor: number, x: number, y: number) => {
     const { geometry } = store.getState()
     if (!geometry) return
     const s = (x - geometry.x0) / geometry.kx
-    const T = (y - geometry.y0) / geometry.ky
-    change((view) => zoomed(view, factor, s, T))
+    const upright = (y - geometry.y0) / geometry.ky
+    change((view) => zoomed(view, factor, s, upright, limits))
   }
 
   // Under a pointer that rests, the diagram moves with the numbers and the view.

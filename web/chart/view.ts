@@ -1,7 +1,16 @@
-/** What part of the temperature-entropy plane the chart shows: J/(kg K) and K, lowest and highest. */
+/**
+ * What part of a plane the chart shows, lowest and highest: entropy, J/(kg K), and what is drawn upright,
+ * temperature in K or enthalpy in J/kg.
+ */
 export interface View {
   readonly s: readonly [number, number]
-  readonly T: readonly [number, number]
+  readonly y: readonly [number, number]
+}
+
+/** How far a view may be zoomed in and out. */
+export interface Limits {
+  readonly least: { readonly s: number; readonly y: number }
+  readonly widest: View
 }
 
 /** Entropy of dry steam at 273.15 K, rounded up, J/(kg K): the dome's foot is always in the fitted view. */
@@ -16,10 +25,16 @@ const headroom = 0.08
 /** The fitted top moves in steps of 50 K, so that an edit does not shift the axis by a hair. */
 const topStep = 50
 
-/** How far a view may be zoomed in: 10 K and 0.15 kJ/(kg K). */
-const leastSpan = { s: 150, T: 10 }
-/** How far out: nothing lies beyond. */
-const widest: View = { s: [-1500, 14_000], T: [200, 1400] }
+/** In to 10 K and 0.15 kJ/(kg K), out to where nothing lies beyond. */
+export const temperatureLimits: Limits = {
+  least: { s: 150, y: 10 },
+  widest: { s: [-1500, 14_000], y: [200, 1400] },
+}
+/** The same for enthalpy: in to 20 kJ/kg. */
+export const enthalpyLimits: Limits = {
+  least: { s: 150, y: 20e3 },
+  widest: { s: [-1500, 14_000], y: [-500e3, 5500e3] },
+}
 
 /** The whole diagram: from 0 °C to above the hottest state and past the dome's foot. */
 export function fittedView(hottest: number, largestEntropy: number): View {
@@ -27,7 +42,7 @@ export function fittedView(hottest: number, largestEntropy: number): View {
   const stepped = coldest + Math.ceil((wanted - coldest) / topStep - 1e-9) * topStep
   const top = Math.min(mostTop, Math.max(leastTop, Number.isFinite(stepped) ? stepped : leastTop))
   const right = Math.max(domeFoot, Math.ceil((largestEntropy * 1.02) / 200) * 200 || domeFoot)
-  return { s: [0, right], T: [coldest, top] }
+  return { s: [0, right], y: [coldest, top] }
 }
 
 function clamped(
@@ -41,37 +56,68 @@ function clamped(
   return [low, low + span]
 }
 
-function within(view: View): View {
+function within(view: View, { least, widest }: Limits): View {
   return {
-    s: clamped(view.s, widest.s, leastSpan.s),
-    T: clamped(view.T, widest.T, leastSpan.T),
+    s: clamped(view.s, widest.s, least.s),
+    y: clamped(view.y, widest.y, least.y),
   }
 }
 
-/** Scales the view by `factor` (below 1 zooms in) and leaves the point (s, T) where it is. */
-export function zoomed(view: View, factor: number, s: number, T: number): View {
+/** Scales the view by `factor` (below 1 zooms in) and leaves the point (s, y) where it is. */
+export function zoomed(
+  view: View,
+  factor: number,
+  s: number,
+  y: number,
+  limits: Limits = temperatureLimits,
+): View {
   const about = (
     [low, high]: readonly [number, number],
     fixed: number,
-    limits: readonly [number, number],
+    most: readonly [number, number],
     least: number,
   ): readonly [number, number] => {
     const span = high - low
-    const scale = Math.min((limits[1] - limits[0]) / span, Math.max(least / span, factor))
+    const scale = Math.min((most[1] - most[0]) / span, Math.max(least / span, factor))
     return [fixed - (fixed - low) * scale, fixed + (high - fixed) * scale]
   }
-  return within({
-    s: about(view.s, s, widest.s, leastSpan.s),
-    T: about(view.T, T, widest.T, leastSpan.T),
-  })
+  const { least, widest } = limits
+  return within(
+    { s: about(view.s, s, widest.s, least.s), y: about(view.y, y, widest.y, least.y) },
+    limits,
+  )
 }
 
-/** Moves the view by J/(kg K) and K. */
-export function panned(view: View, ds: number, dT: number): View {
-  return within({
-    s: [view.s[0] + ds, view.s[1] + ds],
-    T: [view.T[0] + dT, view.T[1] + dT],
-  })
+/** Moves the view by J/(kg K) and what is upright. */
+export function panned(
+  view: View,
+  ds: number,
+  dy: number,
+  limits: Limits = temperatureLimits,
+): View {
+  return within(
+    { s: [view.s[0] + ds, view.s[1] + ds], y: [view.y[0] + dy, view.y[1] + dy] },
+    limits,
+  )
+}
+
+/**
+ * The fitted view of the enthalpy-entropy plane: the states of the machines with room about them, in
+ * round steps, so that a small edit does not shift it.
+ */
+export function fittedExpansions(
+  states: readonly { readonly s: number; readonly h: number }[],
+): View {
+  let [left, right, low, high] = [5800, 8600, 1950e3, 3650e3]
+  if (states.length > 0) {
+    const s = states.map((state) => state.s)
+    const h = states.map((state) => state.h)
+    left = Math.floor((Math.min(...s) - 350) / 200) * 200
+    right = Math.ceil((Math.max(...s) + 350) / 200) * 200
+    low = Math.floor((Math.min(...h) - 80e3) / 100e3) * 100e3
+    high = Math.ceil((Math.max(...h) + 150e3) / 100e3) * 100e3
+  }
+  return { s: [left, right], y: [low, high] }
 }
 
 /** Round values between two ends, in steps of 1, 2 or 5 times a power of ten; about `count` of them. */

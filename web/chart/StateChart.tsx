@@ -1,57 +1,29 @@
-import {
-  type KeyboardEvent,
-  type ReactNode,
-  type RefObject,
-  useCallback,
-  useLayoutEffect,
-  useMemo,
-  useRef,
-  useState,
-} from 'react'
+import { type KeyboardEvent, type ReactNode, useCallback, useMemo, useRef, useState } from 'react'
 import { CartesianGrid, ComposedChart, XAxis, YAxis } from 'recharts'
 import { useBalanceStore } from '../store/balance-store.ts'
 import { useLayout } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
+import { useChartSettings } from './chart-settings.ts'
 import { ChartContext, createChartStore } from './chart-store.ts'
 import { DiagramLayer } from './DiagramLayer.tsx'
+import { type Diagram, diagrams } from './diagram.ts'
 import { axisTicks } from './isobar-labels.ts'
 import { ReadOut } from './ReadOut.tsx'
 import { StateList } from './StateList.tsx'
 import { statesOf } from './stream-states.ts'
 import { summary, whyEmpty } from './summary.ts'
-import './temperature-entropy-chart.css'
-import { useNamedStates, useStates } from './use-named-states.ts'
+import './chart.css'
+import { useExpansionEnds, useNamedStates, useStates } from './use-named-states.ts'
 import { usePointer } from './use-pointer.ts'
-import { fittedView, roundTicks, tickDigits, type View } from './view.ts'
+import { useSize } from './use-size.ts'
+import { fittedExpansions, fittedView, roundTicks, tickDigits, type View } from './view.ts'
 
 /** Room for the axes' numbers and the isobars' marks, px. */
 const margin = { top: 34, right: 38, bottom: 20, left: 6 }
-const yAxisWidth = 40
+const yAxisWidth = { ts: 40, hs: 48 }
 const xAxisHeight = 22
 /** Least room between ticks, px: on the entropy axis for one digit, and for several. */
 const tickRoom = { digit: 30, digits: 46, T: 60 }
-
-/** Size of an element, px, kept up to date. */
-function useSize(element: RefObject<HTMLElement | null>): { width: number; height: number } {
-  const [size, setSize] = useState({ width: 0, height: 0 })
-  useLayoutEffect(() => {
-    if (!element.current) return
-    const measured = (width: number, height: number) =>
-      setSize((before) =>
-        before.width === width && before.height === height ? before : { width, height },
-      )
-    const { width, height } = element.current.getBoundingClientRect()
-    measured(Math.floor(width), Math.floor(height))
-    const observer = new ResizeObserver(([entry]) => {
-      if (entry) {
-        measured(Math.floor(entry.contentRect.width), Math.floor(entry.contentRect.height))
-      }
-    })
-    observer.observe(element.current)
-    return () => observer.disconnect()
-  }, [element])
-  return size
-}
 
 type Balance = ReturnType<typeof useBalanceStore.getState>
 
@@ -59,7 +31,7 @@ type Balance = ReturnType<typeof useBalanceStore.getState>
 const fittedTop = ({ names, balance }: Balance): number => {
   let hottest = 0
   for (const { T } of statesOf(names, balance).values()) hottest = Math.max(hottest, T)
-  return fittedView(hottest, 0).T[1]
+  return fittedView(hottest, 0).y[1]
 }
 const fittedRight = ({ names, balance }: Balance): number => {
   let largest = 0
@@ -68,12 +40,17 @@ const fittedRight = ({ names, balance }: Balance): number => {
 }
 
 /** The view that the user has zoomed to, or the whole diagram. */
-function useView() {
+function useView({ name }: Diagram) {
   const top = useBalanceStore(fittedTop)
   const right = useBalanceStore(fittedRight)
+  const ends = useExpansionEnds()
+  const expansions = JSON.stringify(fittedExpansions(ends))
   const fitted = useMemo<View>(
-    () => ({ s: [0, right], T: [fittedView(0, 0).T[0], top] }),
-    [top, right],
+    () =>
+      name === 'hs'
+        ? (JSON.parse(expansions) as View)
+        : { s: [0, right], y: [fittedView(0, 0).y[0], top] },
+    [name, top, right, expansions],
   )
   const [chosen, setChosen] = useState<View | null>(null)
   const change = useCallback(
@@ -89,15 +66,16 @@ function Picture({
   view,
   width,
   height,
-  isobarsShown,
+  diagram,
 }: {
   readonly view: View
   readonly width: number
   readonly height: number
-  readonly isobarsShown: boolean
+  readonly diagram: Diagram
 }) {
   const units = useUnitChoice()
-  const plotWidth = width - margin.left - margin.right - yAxisWidth
+  const axisWidth = yAxisWidth[diagram.name]
+  const plotWidth = width - margin.left - margin.right - axisWidth
   const plotHeight = height - margin.top - margin.bottom - xAxisHeight
   const axes = useMemo(() => {
     const entropy = axisTicks(view.s, 'specificEntropy', units, (low, high) => {
@@ -106,7 +84,7 @@ function Picture({
         ? dense
         : roundTicks(low, high, Math.max(2, plotWidth / tickRoom.digits))
     })
-    const temperature = axisTicks(view.T, 'temperature', units, (low, high) =>
+    const upright = axisTicks(view.y, diagram.dimension, units, (low, high) =>
       roundTicks(low, high, Math.max(2, plotHeight / tickRoom.T)),
     )
     const written = ({ si, shown }: typeof entropy) => {
@@ -118,11 +96,11 @@ function Picture({
     }
     return {
       entropy,
-      temperature,
+      upright,
       entropyText: written(entropy),
-      temperatureText: written(temperature),
+      uprightText: written(upright),
     }
-  }, [view, units, plotWidth, plotHeight])
+  }, [view, units, plotWidth, plotHeight, diagram])
 
   return (
     <ComposedChart
@@ -146,24 +124,24 @@ function Picture({
       />
       <YAxis
         type="number"
-        dataKey="T"
-        domain={[...view.T]}
+        dataKey="y"
+        domain={[...view.y]}
         allowDataOverflow
-        ticks={axes.temperature.si}
+        ticks={axes.upright.si}
         interval={0}
-        tickFormatter={axes.temperatureText}
+        tickFormatter={axes.uprightText}
         tickSize={4}
-        width={yAxisWidth}
+        width={axisWidth}
       />
-      <text x={margin.left + yAxisWidth - 8} y={margin.top - 14} textAnchor="end">
-        {axes.temperature.unit}
+      <text x={margin.left + axisWidth - 8} y={margin.top - 14} textAnchor="end">
+        {axes.upright.unit}
       </text>
       <text
         x={width - margin.right}
         y={height - 6}
         textAnchor="end"
       >{`s, ${axes.entropy.unit}`}</text>
-      <DiagramLayer view={view} isobarsShown={isobarsShown} width={width} />
+      <DiagramLayer view={view} diagram={diagram} width={width} height={height} />
     </ComposedChart>
   )
 }
@@ -178,24 +156,29 @@ function Sentence() {
 }
 
 /** What the picture shows, for those who do not see it. */
-function useSummary(): string {
+function useSummary({ title }: Diagram): string {
   const states = useStates()
   const named = useNamedStates()
   const units = useUnitChoice()
-  return useMemo(() => summary(states, named, units), [states, named, units])
+  return useMemo(() => summary(title, states, named, units), [title, states, named, units])
 }
 
 /**
- * Temperature against entropy: the saturation dome, the plant's isobars and every process of the balance
- * shown as a path of true states. Fills its box.
+ * States of the plant in a plane: the saturation dome, the plant's isobars and every process of the
+ * balance shown as a path of true states. Fills its box.
  */
-export default function TemperatureEntropyChart() {
+export default function StateChart() {
+  const chart = useChartSettings((settings) => settings.chart)
+  // Views, pointers and names of one plane mean nothing in the other.
+  return <Sheet key={chart} diagram={chart === 'hs' ? diagrams.hs : diagrams.ts} />
+}
+
+function Sheet({ diagram }: { readonly diagram: Diagram }) {
   const [store] = useState(createChartStore)
   const sheet = useRef<HTMLDivElement>(null)
   const { width, height } = useSize(sheet)
-  const { view, zoomed: isZoomed, change, fit } = useView()
-  const { dragged, handlers, zoom, move } = usePointer(store, sheet, change)
-  const [isobarsShown, setIsobarsShown] = useState(true)
+  const { view, zoomed: isZoomed, change, fit } = useView(diagram)
+  const { dragged, handlers, zoom, move } = usePointer(store, sheet, change, diagram.limits)
 
   const keyDown = (event: KeyboardEvent<HTMLElement>) => {
     if (event.ctrlKey || event.metaKey || event.altKey) return
@@ -235,50 +218,70 @@ export default function TemperatureEntropyChart() {
 
   return (
     <ChartContext value={store}>
-      <section className="chart" aria-label="Chart">
-        <div className="chart-head">
-          <h2>T–s</h2>
-          {isZoomed && (
-            <button type="button" onClick={fit} title="Show the whole diagram (double click, or 0)">
-              Fit
-            </button>
+      {/* biome-ignore lint/a11y/noStaticElementInteractions: the list within offers all of it to the keyboard */}
+      <div
+        ref={sheet}
+        className="chart-sheet"
+        data-dragged={dragged || undefined}
+        onDoubleClick={fit}
+        {...handlers}
+      >
+        <PictureFrame diagram={diagram}>
+          {width > 120 && height > 120 && (
+            <Picture view={view} width={width} height={height} diagram={diagram} />
           )}
+        </PictureFrame>
+        <Sentence />
+        <StateList onKeyDown={keyDown} />
+        <ReadOut width={width} height={height} />
+        {isZoomed && (
           <button
             type="button"
-            aria-pressed={isobarsShown}
-            onClick={() => setIsobarsShown(!isobarsShown)}
-            title="Lines of constant pressure"
+            className="chart-fit"
+            onClick={fit}
+            title="Show the whole diagram (double click, or 0)"
           >
-            Isobars
+            Fit
           </button>
-        </div>
-        {/* biome-ignore lint/a11y/noStaticElementInteractions: the list within offers all of it to the keyboard */}
-        <div
-          ref={sheet}
-          className="chart-sheet"
-          data-dragged={dragged || undefined}
-          onDoubleClick={fit}
-          {...handlers}
-        >
-          <PictureFrame>
-            {width > 120 && height > 120 && (
-              <Picture view={view} width={width} height={height} isobarsShown={isobarsShown} />
-            )}
-          </PictureFrame>
-          <Sentence />
-          <StateList onKeyDown={keyDown} />
-          <ReadOut width={width} height={height} />
-        </div>
-      </section>
+        )}
+      </div>
     </ChartContext>
   )
 }
 
-function PictureFrame({ children }: { readonly children: ReactNode }) {
-  const words = useSummary()
+function PictureFrame({
+  diagram,
+  children,
+}: {
+  readonly diagram: Diagram
+  readonly children: ReactNode
+}) {
+  const words = useSummary(diagram)
   return (
     <div className="chart-picture" role="img" aria-label={words}>
       {children}
     </div>
+  )
+}
+
+/** The same picture at a size of its own, for the report. */
+export function StatePicture({
+  name,
+  width,
+  height,
+}: {
+  readonly name: 'ts' | 'hs'
+  readonly width: number
+  readonly height: number
+}) {
+  const [store] = useState(createChartStore)
+  const diagram = diagrams[name]
+  const { view } = useView(diagram)
+  return (
+    <ChartContext value={store}>
+      <PictureFrame diagram={diagram}>
+        <Picture view={view} width={width} height={height} diagram={diagram} />
+      </PictureFrame>
+    </ChartContext>
   )
 }
