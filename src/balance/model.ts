@@ -93,6 +93,14 @@ export class Model {
     return iterations
   }
 
+  /** Solves from the values of `startFrom` and from nowhere else; returns whether that led to an answer. */
+  solveFromThere(): boolean {
+    this.guess((index) => !Number.isNaN(this.system.given[index]!), 0)
+    this.program.solve()
+    this.isWarm = this.firstFailure() < 0
+    return this.isWarm
+  }
+
   /**
    * Solves again from another of the starts, in case a block has a further answer. Returns whether
    * there was one; the values are then those.

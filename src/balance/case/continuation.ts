@@ -15,16 +15,18 @@ export function continueTo(layout: Layout, options: AssemblyOptions, design: Bal
   const fromDesign = (path: string): number | null => design.results.value(path)
   const model = new Model(layout, options)
   model.startFrom(fromDesign)
-  const direct = solve(model)
-  if (model.firstFailure() < 0 || model.structure.missing > 0 || model.structure.excess > 0) {
-    return direct
-  }
+  // Where something is short or too much, solving says what; there is nothing to walk to.
+  if (model.structure.missing > 0 || model.structure.excess > 0) return solve(model)
+  // Near the design no other start is worth the search: steps towards the case are.
+  if (model.solveFromThere()) return solve(model)
   const path = walk(layout, options, fromDesign)
-  if (path === undefined) return direct
-  const last = new Model(layout, options)
-  last.startFrom(path)
-  const balance = solve(last)
-  return last.firstFailure() < 0 ? balance : direct
+  if (path !== undefined) {
+    const last = new Model(layout, options)
+    last.startFrom(path)
+    if (last.solveFromThere()) return solve(last)
+  }
+  model.startFrom(fromDesign)
+  return solve(model)
 }
 
 /** Values just before the case itself, or undefined where the way breaks off. */
@@ -50,9 +52,8 @@ function walk(
     }
     const model = new Model(withGivens(layout, table), options)
     model.startFrom(values)
-    const { results } = solve(model)
-    if (model.firstFailure() < 0) {
-      values = (path) => results.value(path)
+    if (model.solveFromThere()) {
+      values = (path) => model.value(path)
       done = next
       step = Math.min(step * 2, 1)
     } else {
