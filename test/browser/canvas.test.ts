@@ -1,65 +1,16 @@
-import type { Page } from 'playwright-core'
 import { expect, test } from 'vitest'
+import {
+  connect,
+  connected,
+  drag,
+  middleOf,
+  place,
+  startEmpty,
+  streams,
+  unitBox,
+  units,
+} from './hands.ts'
 import { accessibilityFaults, withWindow } from './support.ts'
-
-/** Opens the window on an empty plant. */
-async function startEmpty(page: Page): Promise<void> {
-  await page.locator('.canvas').waitFor()
-  await page.keyboard.press('Control+k')
-  await page.keyboard.type('New plant')
-  await page.keyboard.press('Enter')
-  await page.locator('.empty-canvas').waitFor()
-}
-
-const units = (page: Page) => page.locator('.react-flow__node')
-const streams = (page: Page) => page.locator('.react-flow__edge')
-
-async function middleOf(page: Page, selector: string): Promise<readonly [number, number]> {
-  const box = await page.locator(selector).first().boundingBox()
-  if (!box) throw new Error(`${selector} is not shown.`)
-  return [box.x + box.width / 2, box.y + box.height / 2]
-}
-
-async function drag(
-  page: Page,
-  from: readonly [number, number],
-  to: readonly [number, number],
-): Promise<void> {
-  await page.mouse.move(...from)
-  await page.mouse.down()
-  await page.mouse.move((from[0] + to[0]) / 2, (from[1] + to[1]) / 2, { steps: 3 })
-  await page.mouse.move(...to, { steps: 3 })
-  await page.mouse.up()
-}
-
-/** Drags a kind from the rail so that it stands with its middle at a point of the canvas. */
-async function place(page: Page, kind: string, x: number, y: number): Promise<string> {
-  const before = await units(page).count()
-  const canvas = await page.locator('.canvas').boundingBox()
-  if (!canvas) throw new Error('There is no canvas.')
-  await drag(page, await middleOf(page, `[data-kind="${kind}"]`), [canvas.x + x, canvas.y + y])
-  await expect.poll(() => units(page).count()).toBe(before + 1)
-  return (await units(page).last().getAttribute('data-id')) ?? ''
-}
-
-/** Where a port is, its unit pointed at so that its ports show. */
-async function portAt(page: Page, port: string): Promise<readonly [number, number]> {
-  const [id] = port.split('.')
-  await page.mouse.move(...(await middleOf(page, `.react-flow__node[data-id="${id}"]`)))
-  const square = `[data-port="${port}"] .port-square`
-  await page.locator(square).waitFor()
-  return middleOf(page, square)
-}
-
-async function connect(page: Page, from: string, to: string): Promise<void> {
-  const end = await portAt(page, to)
-  const start = await portAt(page, from)
-  await drag(page, start, end)
-}
-
-async function connected(page: Page, count: number): Promise<void> {
-  await expect.poll(() => streams(page).count()).toBe(count)
-}
 
 test('units are dragged from the rail, connected port to port, moved, undone and deleted', async () => {
   await withWindow(async ({ page, problems }) => {
@@ -74,7 +25,7 @@ test('units are dragged from the rail, connected port to port, moved, undone and
     await connect(page, `${pump}.discharge`, `${boiler}.feedwater`)
     await connected(page, 4)
 
-    const node = `.react-flow__node[data-id="${condenser}"]`
+    const node = unitBox(condenser)
     const before = await middleOf(page, node)
     await drag(page, before, [before[0] + 66, before[1] + 29])
     const after = await middleOf(page, node)

@@ -80,6 +80,8 @@ async function visit(profile: string, options: VisitOptions): Promise<Visit> {
     await context.close()
     await rm(profile, { recursive: true, force: true, maxRetries: 5, retryDelay: 200 })
   }
+  // Before the test itself is given up, so that the failure says what was waited for.
+  context.setDefaultTimeout(20_000)
   try {
     const problems: string[] = []
     const watch = (page: Page): void => {
