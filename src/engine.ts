@@ -7,9 +7,17 @@ import { type DerivedNames, derivedNames, derivedOf } from './balance/derived.ts
 import { heatProfilesOf } from './balance/heat-profile.ts'
 import { Model } from './balance/model.ts'
 import { domePoints } from './balance/paths.ts'
+import { Questions } from './balance/questions.ts'
 import { Results } from './balance/results.ts'
 import { type Balance, solve } from './balance/solve.ts'
-import type { Answer, BalanceMessage, NamesMessage, Request } from './messages.ts'
+import type {
+  Answer,
+  BalanceMessage,
+  NamesMessage,
+  QuestionRequest,
+  Request,
+  SolveRequest,
+} from './messages.ts'
 import type { Layout } from './plant/document.ts'
 
 /** Answers the window's requests; keeps the last model, so that an edit of a value solves warm. */
@@ -24,9 +32,10 @@ export function createEngine(clock: () => number = Date.now): Engine {
   let domeSent = false
   let namesSent = 0
   let names: DerivedNames = { paths: [], account: [] }
+  const questions = new Questions()
 
   /** A case is solved afresh: its givens follow from the design's solution. */
-  function caseOf(request: Request): { balance: Balance; number: number } | string {
+  function caseOf(request: SolveRequest): { balance: Balance; number: number } | string {
     const solved = solveCase(request.plant, request.layout, request.case)
     if (solved.outcome === 'unusable') return solved.message
     const { balance, remarks } = solved
@@ -50,7 +59,9 @@ export function createEngine(clock: () => number = Date.now): Engine {
 
   return {
     answer(request) {
+      if (request.type !== 'solve') return [answerTo(questions, request)]
       const start = clock()
+      questions.takeOver(undefined)
       const answers: Answer[] = []
       const layout = request.plant.layouts.find((one) => one.id === request.layout)
       if (layout === undefined) {
@@ -81,6 +92,7 @@ export function createEngine(clock: () => number = Date.now): Engine {
           balance = solve(found.model, found.results)
           number = found.number
         }
+        questions.takeOver(balance)
         if (namesSent !== number) {
           namesSent = number
           names = derivedNames(balance)
@@ -101,6 +113,17 @@ export function createEngine(clock: () => number = Date.now): Engine {
       }
       return answers
     },
+  }
+}
+
+/** A question that cannot be answered must not leave the window waiting, nor cost it the balance. */
+function answerTo(questions: Questions, request: QuestionRequest): Answer {
+  const { sequence } = request
+  try {
+    return { type: 'answer', sequence, answer: questions.answer(request) }
+  } catch {
+    questions.takeOver(undefined)
+    return { type: 'answer', sequence, answer: questions.answer(request) }
   }
 }
 
@@ -189,7 +212,7 @@ function namesOf(
 }
 
 function balanceMessage(
-  request: Request,
+  request: SolveRequest,
   balance: Balance,
   structure: number,
   names: DerivedNames,

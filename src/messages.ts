@@ -3,20 +3,39 @@ import type { Finding, ProcessName, Status } from './balance/answer.ts'
 import type { Curves, DrynessLines, Isobars } from './balance/chart-data.ts'
 import type { Derived, DerivedNames } from './balance/derived.ts'
 import type { HeatProfile } from './balance/heat-profile.ts'
+import type { Question, QuestionAnswer } from './balance/question.ts'
 import type { Plant } from './plant/document.ts'
 
-export type { Finding, Origin, ProcessName, Remedy, Status, Token } from './balance/answer.ts'
+export type {
+  Figure,
+  Finding,
+  Origin,
+  OwnEquation,
+  Piece,
+  ProcessName,
+  Remedy,
+  Status,
+  Token,
+  Worked,
+  WorkedStep,
+} from './balance/answer.ts'
 export type { AccountItem, AccountName } from './balance/derived.ts'
 export type { HeatProfile, ProfileMark, ZoneName } from './balance/heat-profile.ts'
+export type { Question, QuestionAnswer } from './balance/question.ts'
+export type { Worth } from './balance/worth.ts'
 
 /** Window to worker. */
-export type Request = {
+export type Request = SolveRequest | QuestionRequest
+
+export interface SolveRequest {
   readonly type: 'solve'
   readonly sequence: number
   readonly plant: Plant
   readonly layout: string
   readonly case: string | null
 }
+
+export type QuestionRequest = Question & { readonly sequence: number }
 
 /** Sent before the first balance of a structure: what the arrays of a balance hold, in order. */
 export interface NamesMessage {
@@ -79,5 +98,11 @@ export interface UnusableMessage {
   readonly message: string
 }
 
+export interface QuestionMessage {
+  readonly type: 'answer'
+  readonly sequence: number
+  readonly answer: QuestionAnswer
+}
+
 /** Worker to window. */
-export type Answer = NamesMessage | BalanceMessage | DomeMessage | UnusableMessage
+export type Answer = NamesMessage | BalanceMessage | DomeMessage | UnusableMessage | QuestionMessage

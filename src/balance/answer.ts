@@ -85,6 +85,16 @@ export interface Worked {
   readonly result: Figure
 }
 
+/** An equation of a unit, shaft or of the plant, and what it fixed. */
+export interface OwnEquation {
+  /** 'energyBalance' */
+  readonly key: string
+  /** The quantity that it fixed, or null while it fixes none. */
+  readonly path: string | null
+  readonly symbols: readonly Piece[]
+  readonly worked?: Worked
+}
+
 /** One process of a unit on a chart. */
 export interface ProcessName {
   readonly unit: string

@@ -19,10 +19,11 @@ import {
   temperature,
   volume,
 } from '../steam/operations.ts'
-import type { Origin, Token } from './answer.ts'
+import type { Origin, OwnEquation, Token } from './answer.ts'
 import type { Model } from './model.ts'
 import type { Results } from './results.ts'
 import { auditNames } from './second-law.ts'
+import { symbols } from './statement-text.ts'
 import { type Leaf, sidesFor, treeOf } from './statement-tree.ts'
 import { assemble, type SystemEquation } from './system.ts'
 import { workedStatement } from './worked-statement.ts'
@@ -72,6 +73,38 @@ export function whereFrom(
     inputs: [...inputs],
     ...(worked ? { worked } : {}),
   }
+}
+
+/** The equations of a unit, a shaft or the plant, each as it was used. */
+export function equationsOf(
+  model: Model,
+  owner: string,
+  results: Results,
+  units: UnitChoice,
+): OwnEquation[] {
+  const { system, structure } = model
+  const fixes = new Map<number, string>()
+  for (const { equations, variables } of structure.blocks) {
+    equations.forEach((e, k) => {
+      fixes.set(e, system.variables[variables[k]!]!.path)
+    })
+  }
+  return system.equations.flatMap(({ owner: its, key, equation }, e): OwnEquation[] => {
+    if (its !== owner) return []
+    const path = fixes.get(e)
+    const worked = path === undefined ? undefined : whereFrom(model, path, results, units).worked
+    if (path !== undefined && worked) return [{ key, path, symbols: worked.symbols, worked }]
+    const finder = new Finder(model, results)
+    const side = (expression: Expression) =>
+      symbols(treeOf(expression, (index) => finder.leafOf(index), 'number'))
+    return [
+      {
+        key,
+        path: path ?? null,
+        symbols: [...side(equation.left), ' = ', ...side(equation.right)],
+      },
+    ]
+  })
 }
 
 function workedOf(
@@ -140,7 +173,7 @@ class Finder {
     }
   }
 
-  private leafOf(index: number): Leaf {
+  leafOf(index: number): Leaf {
     const { system, values } = this.model
     const further = this.further[index - system.variables.length]
     if (further) return further

@@ -11,7 +11,7 @@ export interface Worth {
   readonly step: number
   /** Change of the target by one step at fixed performance. */
   readonly fixed: number
-  /** The same with the hardware frozen; null where that has no meaning or no solution. */
+  /** The same with the hardware frozen; null where that has no meaning or no solution, or was not asked for. */
   readonly frozen: number | null
 }
 
@@ -37,14 +37,17 @@ export class Worths {
     this.isFrozenFresh = false
   }
 
-  /** Every given number's worth for a target; empty when the target is not determined. */
-  of(target: string, balance: Balance): Worth[] {
+  /**
+   * Every given number's worth for a target; empty when the target is not determined. The hardware
+   * is frozen on demand: that takes a model of its own.
+   */
+  of(target: string, balance: Balance, isFrozenWanted = true): Worth[] {
     const { system, program } = this.model
     const index = system.indexOf.get(target)
     if (index === undefined || program.lost[index]) return []
     const fixed = this.design.of(index).slice()
-    if (!this.isFrozenFresh) this.freeze(balance)
-    const frozenTarget = this.frozen?.model.system.indexOf.get(target)
+    if (isFrozenWanted && !this.isFrozenFresh) this.freeze(balance)
+    const frozenTarget = !isFrozenWanted ? undefined : this.frozen?.model.system.indexOf.get(target)
     const frozen =
       this.frozen && frozenTarget !== undefined && !this.frozen.model.program.lost[frozenTarget]
         ? this.frozen.sensitivity.of(frozenTarget).slice()
@@ -89,8 +92,13 @@ export class Worths {
     this.isFrozenFresh = true
     this.frozen = undefined
     if (balance.status !== 'solved') return
-    const { layout } = this.model.system
+    const { layout, indexOf, given } = this.model.system
     const table = givensOf(layout)
+    // The layout is as it was assembled; values may have changed since.
+    for (const [path, value] of table) {
+      const index = indexOf.get(path)
+      if (typeof value === 'number' && index !== undefined) table.set(path, given[index]!)
+    }
     const { replaced } = freeze(balance, balance, table, new Map())
     // What the flow laws now say about pressure, the load control gives way to: it slides.
     const sliding = freedByLoadControl('sliding', balance, table)

@@ -183,3 +183,33 @@ test('a plant that cannot be read is said once, and not while a newer one waits'
   worker().say({ type: 'unusable', sequence: 2, message: 'No such kind.' })
   expect(said).toEqual(['No such kind.'])
 })
+
+const question = { type: 'worth', target: 'plant.netPower', frozen: false } as const
+const answered = { ...question, worths: [] }
+
+test('questions wait until the balance has been sent, the newest of each key alone', () => {
+  const { client, worker } = setUp()
+  const got: string[] = []
+  client.solve(job, 'first')
+  client.ask('worth', question, () => got.push('older'))
+  client.ask('worth', question, () => got.push('newer'))
+  expect(worker().asked).toHaveLength(1)
+  worker().solve()
+  expect(worker().asked.map(({ type }) => type)).toEqual(['solve', 'worth'])
+  worker().say({ type: 'answer', sequence: worker().asked[1]?.sequence ?? 0, answer: answered })
+  expect(got).toEqual(['newer'])
+})
+
+test('an answer that a newer balance overtakes is dropped, and so is one of a dead worker', () => {
+  const { client, worker } = setUp()
+  const got: string[] = []
+  client.solve(job, 'first')
+  worker().solve()
+  client.ask('worth', question, () => got.push('overtaken'))
+  const { sequence } = worker().asked[1] ?? { sequence: 0 }
+  client.solve(job, 'second')
+  worker().say({ type: 'answer', sequence, answer: answered })
+  worker().die()
+  worker().say({ type: 'answer', sequence, answer: answered })
+  expect(got).toEqual([])
+})

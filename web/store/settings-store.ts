@@ -8,6 +8,8 @@ interface Settings {
   readonly unitSet: UnitSetName
   /** Single units chosen against the set: dimension to unit. */
   readonly unitOverrides: Readonly<Partial<Record<Dimension, string>>>
+  /** The quantity that the worth of given numbers is told of. */
+  readonly worthTarget: string
   readonly theme: Theme
   /** Share of the window's width that the chart takes. */
   readonly chartShare: number
@@ -27,6 +29,7 @@ interface SettingsState extends Settings {
 const usual: Settings = {
   unitSet: 'metric',
   unitOverrides: {},
+  worthTarget: 'plant.unitHeatRate',
   theme: 'system',
   chartShare: 0.28,
   drawerHeight: null,
@@ -62,6 +65,7 @@ function kept(): Settings {
             Object.entries(unitOverrides).filter(([, unit]) => typeof unit === 'string'),
           ) as Settings['unitOverrides'])
         : {},
+    worthTarget: typeof stored.worthTarget === 'string' ? stored.worthTarget : usual.worthTarget,
     theme: among(stored.theme, ['system', 'light', 'dark'], usual.theme),
     chartShare: isNumber(stored.chartShare)
       ? Math.min(0.6, Math.max(0.15, stored.chartShare))

@@ -1,6 +1,7 @@
 import { createSolverClient, type WorkerPort } from '../worker/client.ts'
 import { type Asked, useBalanceStore } from './balance-store.ts'
 import { usePlantStore } from './plant-store.ts'
+import { startAsking } from './questions.ts'
 import { sameBalance } from './same-balance.ts'
 
 function startWorker(): WorkerPort {
@@ -45,4 +46,5 @@ export function startSolving(): void {
     }
   })
   ask()
+  startAsking(client.ask)
 }

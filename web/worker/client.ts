@@ -3,7 +3,10 @@ import type {
   BalanceMessage,
   DomeMessage,
   NamesMessage,
+  Question,
+  QuestionAnswer,
   Request,
+  SolveRequest,
 } from '../../src/messages.ts'
 
 /** The part of a Worker that the client needs. */
@@ -16,7 +19,7 @@ export interface WorkerPort {
 }
 
 /** What is to be solved. */
-export type Job = Omit<Request, 'type' | 'sequence'>
+export type Job = Omit<SolveRequest, 'type' | 'sequence'>
 
 export interface Reports<Mark> {
   /** A balance, newer than any shown before, with the mark of the job that asked for it. */
@@ -42,16 +45,27 @@ export interface Patience {
 const usualPatience: Patience = { answer: 5_000, start: 20_000, superseded: 1_000 }
 
 interface Running<Mark> {
-  readonly request: Request
+  readonly request: SolveRequest
   readonly mark: Mark
   readonly since: number
   /** Workers that died over it. */
   readonly deaths: number
 }
 
+interface Asking {
+  readonly question: Question
+  readonly receive: (answer: QuestionAnswer) => void
+}
+
 export interface SolverClient<Mark> {
   /** Asks for a balance. One job runs at a time; of those that wait only the newest is kept. */
   solve(job: Job, mark: Mark): void
+  /**
+   * Asks something of the balance shown. It is sent when no balance is under way; of questions with
+   * the same key that wait only the newest is kept. A question that is lost with its worker, or that
+   * a newer balance overtakes, is not answered: whoever asks asks again after each balance.
+   */
+  ask(key: string, question: Question, receive: (answer: QuestionAnswer) => void): void
   stop(): void
 }
 
@@ -70,7 +84,10 @@ export function createSolverClient<Mark>(
   let sequence = 0
   let shown = 0
   let running: Running<Mark> | null = null
-  let waiting: { request: Request; mark: Mark } | null = null
+  let waiting: { request: SolveRequest; mark: Mark } | null = null
+  /** Questions not sent yet, by key, and those sent, by sequence. */
+  const asked = new Map<string, Asking>()
+  const sent = new Map<number, Asking['receive']>()
   let timer: ReturnType<typeof setTimeout> | undefined
   /** The names of the newest structure: a worker sends them once, before its first balance. */
   let names: NamesMessage | null = null
@@ -96,7 +113,18 @@ export function createSolverClient<Mark>(
     clearTimeout(timer)
     const port = worker
     worker = null
+    sent.clear()
     port?.terminate()
+  }
+
+  const sendQuestions = () => {
+    if (running || !worker || !proven) return
+    for (const { question, receive } of asked.values()) {
+      sequence += 1
+      sent.set(sequence, receive)
+      worker.postMessage({ ...question, sequence })
+    }
+    asked.clear()
   }
 
   /** Sets the watchdog for what is left of the running job's time. */
@@ -107,7 +135,7 @@ export function createSolverClient<Mark>(
     timer = setTimeout(overdue, Math.max(0, running.since + allowed - Date.now()))
   }
 
-  const send = (request: Request, mark: Mark, deaths: number) => {
+  const send = (request: SolveRequest, mark: Mark, deaths: number) => {
     worker ??= start()
     running = { request, mark, since: Date.now(), deaths }
     worker.postMessage(request)
@@ -121,7 +149,10 @@ export function createSolverClient<Mark>(
       const { request, mark } = waiting
       waiting = null
       send(request, mark, 0)
-    } else reports.busy(false)
+    } else {
+      reports.busy(false)
+      sendQuestions()
+    }
   }
 
   const receive = (answer: Answer) => {
@@ -141,6 +172,13 @@ export function createSolverClient<Mark>(
           reports.balance(its, answer, job.mark)
         }
         if (job?.request.sequence === answer.sequence) next()
+        break
+      }
+      case 'answer': {
+        const reply = sent.get(answer.sequence)
+        sent.delete(answer.sequence)
+        // What is under way will change the answer, and is followed by the same question.
+        if (!running) reply?.(answer.answer)
         break
       }
       case 'unusable':
@@ -181,14 +219,19 @@ export function createSolverClient<Mark>(
   return {
     solve(job, mark) {
       sequence += 1
-      const request: Request = { type: 'solve', sequence, ...job }
+      const request: SolveRequest = { type: 'solve', sequence, ...job }
       reports.busy(true)
       if (running) {
         waiting = { request, mark }
         watch()
       } else send(request, mark, 0)
     },
+    ask(key, question, receive) {
+      asked.set(key, { question, receive })
+      sendQuestions()
+    },
     stop() {
+      asked.clear()
       running = null
       waiting = null
       end()
