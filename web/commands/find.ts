@@ -118,7 +118,8 @@ export function find(
     return {
       found: { type: 'command', key: command.id, name, command },
       texts: [name.toLowerCase(), command.group.toLowerCase()],
-      weight: 1,
+      // 'Undo: condenser, pressure ...' is not what is meant by 'condenser pressure'.
+      weight: typeof command.name === 'function' ? 0.6 : 1,
     }
   })
   if (words.length === 0) return runnable.slice(0, most).map((entry) => entry.found)
