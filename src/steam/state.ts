@@ -190,10 +190,13 @@ export function stateAtRequest(record: Float64Array, at: number): number {
  */
 function restoreSaturation(record: Float64Array, at: number): void {
   if (record[at + atRegion] === 0 || record[at + atSubcritical] === 0) return
-  takeSaturation(record, at, record[at + atP] as number)
+  asked[askP] = record[at + atP] as number
+  takeSaturation(record, at)
 }
 
-function takeSaturation(record: Float64Array, at: number, p: number): void {
+/** The saturation record of the pressure asked for. */
+function takeSaturation(record: Float64Array, at: number): void {
+  const p = asked[askP] as number
   const saturation = at + atSaturation
   if (record[saturation] === p) return
   const slot = cachedSaturation(p)
@@ -211,7 +214,7 @@ function solve(record: Float64Array, at: number): number {
   if (!(p >= least && p <= most && Number.isFinite(h))) return refuseAsked()
   if (p >= critical) return dense(record, at, SUPERCRITICAL)
   if (p < leastSaturation) return steam(record, at, 0)
-  takeSaturation(record, at, p)
+  takeSaturation(record, at)
   const saturation = at + atSaturation
   const hL = record[saturation + satHL] as number
   if (h < hL - bandAround(hL)) {

@@ -28,7 +28,7 @@ const states: readonly (readonly [number, number])[] = [
  * (ms). Called once before the first plant is solved; it changes no result. Answers with the passes
  * made.
  */
-export function warmUp(milliseconds = 150): number {
+export function warmUp(milliseconds = 250): number {
   const record = new Float64Array(STATE_SIZE * states.length)
   const result = new Float64Array(RESULT_SIZE)
   const end = Date.now() + milliseconds

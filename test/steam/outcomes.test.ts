@@ -10,6 +10,8 @@ import {
   enthalpyAtPressureVolume,
   lowestSaturationPressure,
   Outcome,
+  type RangeProblem,
+  type RangeQuantity,
   RESULT_SIZE,
   rangeProblem,
   SATURATION_SIZE,
@@ -33,14 +35,14 @@ type Call = () => number
 function expectRefusal(
   call: Call,
   code: number,
-  quantity: string,
+  quantity: RangeQuantity,
   value: number,
   limit: number | null,
 ): void {
   out.fill(untouched)
   expect(call()).toBe(code)
   expect([...out]).toEqual([untouched, untouched, untouched])
-  const problem = rangeProblem()
+  const problem: RangeProblem = rangeProblem()
   expect(problem.quantity).toBe(quantity)
   expect(problem.value).toEqual(value)
   if (limit !== null) expect(problem.limit / limit).toBeCloseTo(1, 6)

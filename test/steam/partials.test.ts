@@ -9,6 +9,7 @@ import {
   enthalpyAtPressureTemperature,
   enthalpyAtPressureVolume,
   RESULT_SIZE,
+  Result,
   SATURATION_SIZE,
   Saturation,
   STATE_SIZE,
@@ -166,7 +167,8 @@ describe('enthalpies', () => {
       return out[0] as number
     }
     value(p, second)
-    const [, first, other] = [...out] as [number, number, number]
+    const first = out[Result.first] as number
+    const other = out[Result.second] as number
     expectDerivative((q) => value(q, second), p, 1e-4 * p, first, `${told}, dp`)
     expectDerivative((q) => value(p, q), second, stepSecond, other, `${told}, second`)
   }

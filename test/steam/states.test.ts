@@ -1,8 +1,11 @@
 /** States from any two quantities: values, phases, more than one answer, and what a refusal says. */
 import { describe, expect, it } from 'vitest'
 import {
+  type Phase,
   phaseOf,
   STATE_SIZE,
+  type SteamRange,
+  type SteamSeveral,
   type SteamState,
   state,
   stateAtPressureEnthalpy,
@@ -12,7 +15,7 @@ import {
 } from '../../src/steam/index.ts'
 
 function single(pair: Parameters<typeof state>[0]): SteamState {
-  const found = state(pair)
+  const found: SteamState | SteamRange | SteamSeveral = state(pair)
   if (found.outcome !== 'state') throw new Error(found.message)
   return found
 }
@@ -75,12 +78,14 @@ describe('a state from any pair', () => {
 })
 
 describe('phases', () => {
+  const wet: Phase = 'wet'
+
   it('are wet from saturated liquid to dry saturated steam, both included', () => {
     for (const p of [1e3, 1e5, 10e6, 20e6]) {
       const liquid = single({ p, x: 0 })
       const steam = single({ p, x: 1 })
       for (const h of [liquid.h, steam.h, 0.5 * (liquid.h + steam.h), liquid.h * (1 - 5e-10)]) {
-        expect(phaseOf(p, h)).toBe('wet')
+        expect(phaseOf(p, h)).toBe(wet)
       }
       expect(phaseOf(p, liquid.h * (1 - 3e-9))).toBe('liquid')
       expect(phaseOf(p, steam.h * (1 + 3e-9))).toBe('vapour')
