@@ -1,4 +1,5 @@
 import type { Catalogue, Kind } from './catalogue.ts'
+import { basesAt } from './check-basis.ts'
 import { casesAt, checkCasePaths } from './check-cases.ts'
 import { checkCurve, givensAt } from './check-given.ts'
 import { checkStreamEnds } from './check-streams.ts'
@@ -30,6 +31,7 @@ const layoutKeys = [
   'plant',
   'cases',
   'stated',
+  'basis',
 ]
 const unitKeys = ['id', 'kind', 'label', 'at', 'options', 'given', 'mirrored']
 const streamKeys = ['id', 'label', 'from', 'to', 'given', 'bends']
@@ -65,6 +67,7 @@ export function checkLayout(
     plant: { given: givensAt(totals.given, `${place}.plant.given`) },
     cases: casesAt(file.cases, `${place}.cases`, note),
     stated: statedAt(file.stated, `${place}.stated`),
+    ...(file.basis !== undefined && { basis: basesAt(file.basis, `${place}.basis`) }),
   }
   const items = [
     ...units.map((unit, i) => [unit.id, `${place}.units[${i}]`] as const),
@@ -265,6 +268,9 @@ function checkQuantities(layout: Layout, place: string, catalogue: Catalogue): v
   owners('shafts')
   checkGivens('plant', layout.plant.given, `${place}.plant.given`, known)
   checkCasePaths(layout, place, known)
+  for (const path of Object.keys(layout.basis ?? {})) {
+    if (!known.has(path)) refuse(within(`${place}.basis`, path), known.why(path))
+  }
 }
 
 function checkGivens(id: string, given: Unit['given'], place: string, known: KnownPaths): void {

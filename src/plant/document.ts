@@ -2,8 +2,9 @@
  * The plant file as it stands in memory: coherent SI, pressures absolute. Documents are never changed
  * in place. Beside physics the file keeps what the drawing needs: `at` and `mirrored` of a unit,
  * `bends` of a stream, `label` of a stream or shaft. In a file `given`, `shafts`, `pumps`, `plant`,
- * `cases` and `stated` may be absent and then hold nothing; every other key without a question mark
- * is required, names, labels and places excepted, which are repaired.
+ * `cases` and `stated` may be absent and then hold nothing; `basis` says by path
+ * what given numbers rest on (source, note, uncertainty); it changes no balance. Every other key
+ * without a question mark is required, names, labels and places excepted, which are repaired.
  */
 
 /** A given that depends on another quantity: points with rising r, or a power law through one point. */
@@ -17,6 +18,21 @@ export type Curve =
 export type Given = number | Curve
 export type Givens = Readonly<Record<string, Given>>
 export type Options = Readonly<Record<string, boolean | readonly number[]>>
+
+/** Where a given number comes from. */
+export type Source = 'assumed' | 'maker' | 'measured'
+
+/** What a given number rests on. At least one of the keys is there. */
+export interface Basis {
+  readonly source?: Source
+  /** 'Data sheet 12, revision B' */
+  readonly note?: string
+  /**
+   * Half the width of the interval in which the true value lies with about 95 %, in the SI unit of the
+   * quantity: the expanded uncertainty with coverage factor 2 of JCGM 100:2008.
+   */
+  readonly uncertainty?: number
+}
 
 export interface Unit {
   readonly id: string
@@ -75,6 +91,8 @@ export interface Layout {
   readonly plant: { readonly given: Givens }
   readonly cases: readonly Case[]
   readonly stated: readonly unknown[]
+  /** By path of a given quantity: `h5.terminalDifference`. */
+  readonly basis?: Readonly<Record<string, Basis>>
 }
 
 export interface Plant {

@@ -34,7 +34,7 @@ export function writePlant(plant: Plant, catalogue: Catalogue = standardCatalogu
 }
 
 function layoutInOrder(layout: Layout, catalogue: Catalogue): unknown {
-  const { id, name, ambient, units, streams, shafts, plant, cases, stated } = layout
+  const { id, name, ambient, units, streams, shafts, plant, cases, stated, basis } = layout
   return {
     id,
     name,
@@ -52,6 +52,9 @@ function layoutInOrder(layout: Layout, catalogue: Catalogue): unknown {
     plant: { given: givensInOrder(plant.given, quantitiesOfPlant(catalogue)) },
     cases: cases.map((one) => caseInOrder(one)),
     stated,
+    basis:
+      basis &&
+      inOrder(basis, [], ({ source, note, uncertainty }) => ({ source, note, uncertainty })),
   }
 }
 

@@ -18,7 +18,7 @@ function sameItems(a: readonly object[], b: readonly object[]): boolean {
   )
 }
 
-const lists: ReadonlySet<string> = new Set(['units', 'streams', 'shafts', 'name'])
+const lists: ReadonlySet<string> = new Set(['units', 'streams', 'shafts', 'name', 'basis'])
 
 function sameLayouts(a: Layout, b: Layout): boolean {
   return (

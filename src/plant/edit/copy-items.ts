@@ -57,9 +57,29 @@ export function pasteItems(
     const fresh = new Set(ids.values())
     const settle = <T extends { readonly id: string; readonly given: Givens }>(owner: T): T =>
       fresh.has(owner.id) ? { ...owner, given: renamed(owner.given, ids) } : owner
-    return { ...grown, units: grown.units.map(settle), streams: grown.streams.map(settle) }
+    const basis = { ...grown.basis, ...copiedBases(source, ids) }
+    return {
+      ...grown,
+      units: grown.units.map(settle),
+      streams: grown.streams.map(settle),
+      ...(Object.keys(basis).length > 0 && { basis }),
+    }
   })
   return { plant: after, ids: [...ids.values()] }
+}
+
+/** What the copies' given numbers rest on. */
+function copiedBases(
+  source: Layout,
+  ids: ReadonlyMap<string, string>,
+): NonNullable<Layout['basis']> {
+  return Object.fromEntries(
+    Object.entries(source.basis ?? {}).flatMap(([path, basis]) => {
+      const [id, name] = splitPath(path) ?? [path, '']
+      const copy = ids.get(id)
+      return copy === undefined ? [] : [[`${copy}.${name}`, basis]]
+    }),
+  )
 }
 
 function copyOfStream(

@@ -44,8 +44,10 @@ export function restructure(
   }
   const plantGiven = names.settled('plant', renumbered.plant.given)
   const unitIds = new Set(renumbered.units.map(({ id }) => id))
+  const basis = renumbered.basis && settledBases(renumbered.basis, names)
   return {
     ...renumbered,
+    ...(basis && { basis }),
     units: changeEach(renumbered.units, settle),
     streams: changeEach(renumbered.streams, settle),
     shafts: changeEach(renumbered.shafts, settle),
@@ -163,6 +165,20 @@ function settledCase(one: Case, names: Names, units: ReadonlySet<string>): Case 
     ...(free && { free }),
     ...(outOfService && { outOfService }),
   }
+}
+
+function settledBases(
+  bases: NonNullable<Layout['basis']>,
+  names: Names,
+): NonNullable<Layout['basis']> {
+  const next = Object.fromEntries(
+    Object.entries(bases).flatMap(([path, basis]) => {
+      const newPath = names.path(path)
+      return newPath === undefined ? [] : [[newPath, basis]]
+    }),
+  )
+  const isSame = Object.keys(bases).every((path) => Object.hasOwn(next, path))
+  return isSame && Object.keys(next).length === Object.keys(bases).length ? bases : next
 }
 
 function settledCaseGivens(given: Givens, names: Names): Givens {

@@ -7,6 +7,7 @@ import { Unusable } from '../place.ts'
 import { describeQuantity } from '../quantities.ts'
 import { changeEach, changeLayout } from './change-layout.ts'
 import { EditRefused } from './edit-refused.ts'
+import { withBasis } from './set-basis.ts'
 
 /** Why a value cannot be given for a path, as a sentence; nothing where it can. */
 export function whyNotGiven(
@@ -54,13 +55,15 @@ export function setGiven(
     const units = changeEach(layout.units, set)
     const streams = changeEach(layout.streams, set)
     const shafts = changeEach(layout.shafts, set)
+    // A number that is solved rests on the others.
+    const settled = given === undefined ? withBasis(layout, path, undefined) : layout
     return units === layout.units &&
       streams === layout.streams &&
       shafts === layout.shafts &&
       plantGiven === layout.plant.given
       ? layout
       : {
-          ...layout,
+          ...settled,
           units,
           streams,
           shafts,
