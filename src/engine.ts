@@ -1,6 +1,7 @@
 /** Door for the worker and the command line: everything that solves. */
 
 import type { ProcessName } from './balance/answer.ts'
+import { givensOf } from './balance/case/freeze.ts'
 import { solveCase } from './balance/case/solve-case.ts'
 import { curvesOf, drynessLines, isobarsOf } from './balance/chart-data.ts'
 import { type DerivedNames, derivedNames, derivedOf } from './balance/derived.ts'
@@ -19,6 +20,7 @@ import type {
   SolveRequest,
 } from './messages.ts'
 import type { Layout } from './plant/document.ts'
+import { mainSteam, solveAtEqual } from './review/equal-basis.ts'
 
 /** Answers the window's requests; keeps the last model, so that an edit of a value solves warm. */
 export interface Engine {
@@ -36,7 +38,8 @@ export function createEngine(clock: () => number = Date.now): Engine {
 
   /** A case is solved afresh: its givens follow from the design's solution. */
   function caseOf(request: SolveRequest): { balance: Balance; number: number } | string {
-    const solved = solveCase(request.plant, request.layout, request.case)
+    const { plant, layout, case: id, equal } = request
+    const solved = equal ? solveAtEqual(plant, layout, id, equal) : solveCase(plant, layout, id)
     if (solved.outcome === 'unusable') return solved.message
     const { balance, remarks } = solved
     counter++
@@ -80,7 +83,7 @@ export function createEngine(clock: () => number = Date.now): Engine {
       try {
         let balance: Balance
         let number: number
-        if (isCase(layout, request.case)) {
+        if (request.equal || isCase(layout, request.case)) {
           const solved = caseOf(request)
           if (typeof solved === 'string') {
             return [...answers, { type: 'unusable', sequence: request.sequence, message: solved }]
@@ -96,7 +99,7 @@ export function createEngine(clock: () => number = Date.now): Engine {
         if (namesSent !== number) {
           namesSent = number
           names = derivedNames(balance)
-          answers.push(namesOf(balance, number, names))
+          answers.push(namesOf(request, balance, number, names))
         }
         answers.push({
           ...balanceMessage(request, balance, number, names),
@@ -187,10 +190,12 @@ function update(model: Model, layout: Layout): boolean {
 }
 
 function namesOf(
-  { model, results }: Balance,
+  request: SolveRequest,
+  balance: Balance,
   structure: number,
   derived: DerivedNames,
 ): NamesMessage {
+  const { model, results } = balance
   const processes: ProcessName[] = []
   for (const { unit, kind, shape, streams } of model.system.units) {
     for (const { from, to } of kind.paths(shape)) {
@@ -207,6 +212,10 @@ function namesOf(
     paths: results.paths,
     streams: model.system.layout.streams.map((stream) => stream.id),
     processes,
+    layout: request.layout,
+    case: request.case,
+    given: [...givensOf(model.system.layout).keys()],
+    mainSteam: mainSteam(balance) ?? null,
     derived,
   }
 }

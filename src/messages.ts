@@ -5,6 +5,7 @@ import type { Derived, DerivedNames } from './balance/derived.ts'
 import type { HeatProfile } from './balance/heat-profile.ts'
 import type { Question, QuestionAnswer } from './balance/question.ts'
 import type { Plant } from './plant/document.ts'
+import type { EqualBasis } from './review/equal.ts'
 
 export type {
   Figure,
@@ -23,6 +24,7 @@ export type { AccountItem, AccountName } from './balance/derived.ts'
 export type { HeatProfile, ProfileMark, ZoneName } from './balance/heat-profile.ts'
 export type { Question, QuestionAnswer } from './balance/question.ts'
 export type { Worth } from './balance/worth.ts'
+export type { EqualBasis } from './review/equal.ts'
 
 /** Window to worker. */
 export type Request = SolveRequest | QuestionRequest
@@ -33,6 +35,8 @@ export interface SolveRequest {
   readonly plant: Plant
   readonly layout: string
   readonly case: string | null
+  /** Solved at a total of another balance, for a comparison: what sets the load gives way. */
+  readonly equal?: EqualBasis
 }
 
 export type QuestionRequest = Question & { readonly sequence: number }
@@ -47,6 +51,12 @@ export interface NamesMessage {
   readonly processes: readonly ProcessName[]
   /** What is worked out from the balance for tables and charts, and cannot be given. */
   readonly derived: DerivedNames
+  readonly layout: string
+  readonly case: string | null
+  /** Paths that are given in what was solved: in a frozen case those that the freeze gives too. */
+  readonly given: readonly string[]
+  /** Path of the flow of main steam; null where not exactly one boiler makes it. */
+  readonly mainSteam: string | null
 }
 
 export interface BalanceMessage {

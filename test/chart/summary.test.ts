@@ -13,6 +13,10 @@ const names: NamesMessage = {
   ],
   streams: ['main', 'open', 'last'],
   processes: [],
+  layout: 'base',
+  case: null,
+  given: [],
+  mainSteam: null,
   derived: { paths: [], account: [] },
 }
 const none = Number.NaN

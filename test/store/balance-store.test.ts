@@ -8,6 +8,10 @@ const names: NamesMessage = {
   paths: ['main.m', 'main.T', 'well.m', 'well.T', 'plant.netPower'],
   streams: ['main', 'well'],
   processes: [],
+  layout: 'base',
+  case: null,
+  given: [],
+  mainSteam: null,
   derived: { paths: [], account: [] },
 }
 

@@ -95,7 +95,8 @@ export function setInCase(
     if (why !== undefined) throw new EditRefused(why)
     const given = withGiven(one.given ?? {}, path, value)
     const others = (one.free ?? []).filter((freed) => freed !== path)
-    const frees = to === 'free' && givenOf(layout, path) !== undefined
+    // A frozen case gives hardware that the layout does not.
+    const frees = to === 'free' && (one.frozen === true || givenOf(layout, path) !== undefined)
     const free = frees ? [...others, path] : others
     return {
       ...one,
