@@ -1,4 +1,59 @@
+import { useEffect, useState } from 'react'
+import { formatQuantity } from '../../src/document.ts'
+import { readValue, useBalanceStore } from '../store/balance-store.ts'
+import { readUnitChoice } from '../store/settings-store.ts'
 import { useConnectingStore } from './connecting-store.ts'
+
+/** How long a balance must stand before it is told, ms: typing and dragging give many. */
+const settling = 700
+
+const words: Readonly<Record<string, string>> = {
+  underspecified: 'Not solved: numbers are missing. See the ledger.',
+  overspecified: 'Not solved: a number too many is given. See the ledger.',
+  infeasible: 'Not solved: the plant cannot run like this. See the findings.',
+  notConverged: 'Not solved: no balance was found. See the findings.',
+}
+
+function told(): string {
+  const { balance } = useBalanceStore.getState()
+  if (!balance) return ''
+  if (balance.status !== 'solved') return words[balance.status] ?? 'Not solved.'
+  const units = readUnitChoice()
+  const parts = (
+    [
+      ['Net power', 'plant.netPower', 'power'],
+      ['unit heat rate', 'plant.unitHeatRate', 'heatRate'],
+    ] as const
+  ).flatMap(([name, path, dimension]) => {
+    const value = readValue(path)
+    if (value === null) return []
+    const { text, unit } = formatQuantity(value, dimension, units)
+    return [`${name} ${text} ${unit}`]
+  })
+  return ['Solved.', parts.join(', ')].join(' ').trim()
+}
+
+/** Says what a balance came to, once it has settled. */
+export function ResultAnnouncer() {
+  const [text, setText] = useState('')
+  useEffect(() => {
+    let timer: ReturnType<typeof setTimeout> | undefined
+    const end = useBalanceStore.subscribe((now, then) => {
+      if (now.balance === then.balance && now.stale === then.stale) return
+      clearTimeout(timer)
+      if (!now.stale) timer = setTimeout(() => setText(told()), settling)
+    })
+    return () => {
+      end()
+      clearTimeout(timer)
+    }
+  }, [])
+  return (
+    <div className="visually-hidden" role="log" aria-live="polite" aria-label="Results">
+      {text}
+    </div>
+  )
+}
 
 /** Says aloud what happened on the canvas. */
 export function Announcer() {

@@ -1,4 +1,4 @@
-import { useCallback, useEffect, useMemo, useRef } from 'react'
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react'
 import {
   type Edge,
   type EdgeChange,
@@ -15,14 +15,17 @@ import {
 } from 'reactflow'
 import 'reactflow/dist/base.css'
 import './canvas.css'
+import './print.css'
 import { moveUnits } from '../../src/document.ts'
 import { editLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
-import { Announcer } from './Announcer.tsx'
+import { Announcer, ResultAnnouncer } from './Announcer.tsx'
 import { CanvasControls } from './CanvasControls.tsx'
 import { ConnectionPreview } from './ConnectionPreview.tsx'
 import { followPlant, tagsBeyond, useCanvasStore } from './canvas-store.ts'
 import { EmptyCanvas } from './EmptyCanvas.tsx'
+import { FirstSteps } from './FirstSteps.tsx'
+import { useFirstSteps } from './first-steps-store.ts'
 import { around, type Box, type Point } from './geometry.ts'
 import { KindMenu } from './KindMenu.tsx'
 import { onCanvasKey } from './keyboard.ts'
@@ -30,6 +33,7 @@ import { Legend } from './Legend.tsx'
 import { motion } from './motion.ts'
 import { pin } from './pin-store.ts'
 import { insertWhereDropped, rememberStreams } from './placing.ts'
+import { preparePrinting } from './printing.ts'
 import { RenameField } from './RenameField.tsx'
 import { startRenaming } from './rename-store.ts'
 import { ShaftLines } from './ShaftLines.tsx'
@@ -69,8 +73,12 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
   const empty = useCanvasStore((state) => state.sheet.units.size === 0)
   const opened = usePlantStore((state) => state.opened)
   const layoutId = usePlantStore((state) => state.layoutId)
+  const title = usePlantStore((state) => state.plant.title)
+  // A finger on bare paper moves the sheet, a mouse draws a box of selection.
+  const [touch, setTouch] = useState(() => window.matchMedia('(pointer: coarse)').matches)
 
   useEffect(() => followPlant(), [])
+  useEffect(() => (box.current ? preparePrinting(box.current) : undefined), [])
 
   const showWhole = useCallback(
     (duration = 0) => {
@@ -120,8 +128,10 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
       className="canvas"
       tabIndex={-1}
       onKeyDown={onCanvasKey}
+      data-title={title}
       onPointerDownCapture={(event) => {
         adding = event.shiftKey
+        setTouch(event.pointerType === 'touch')
       }}
       onPointerDown={(event) => {
         // Keys after a click on bare paper are meant for the canvas.
@@ -156,9 +166,9 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
         edgesFocusable
         disableKeyboardA11y
         deleteKeyCode={deleteKeys}
-        selectionOnDrag
+        selectionOnDrag={!touch}
         selectionMode={SelectionMode.Partial}
-        panOnDrag={panButtons}
+        panOnDrag={touch || panButtons}
         panActivationKeyCode="Space"
         multiSelectionKeyCode="Shift"
         selectNodesOnDrag={false}
@@ -182,12 +192,14 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
           {...(onOpenFile ? { onOpenFile } : {})}
         />
       )}
+      {!empty && <FirstSteps />}
       <footer className="canvas-foot">
         <Legend />
         <CanvasControls onFit={() => showWhole(motion())} />
       </footer>
       <KindMenu />
       <Announcer />
+      <ResultAnnouncer />
     </div>
   )
 }
@@ -199,7 +211,8 @@ const descriptions = {
 const proOptions = { hideAttribution: true }
 
 /** Room under the drawing for the legend, and round it, px. */
-const foot = 52
+const plainFoot = 52
+const footWithHint = 92
 const margin = tagsBeyond
 
 /** The view that shows the whole sheet, texts included; never magnified. */
@@ -209,6 +222,7 @@ function fitted(canvas: DOMRect) {
   if (sheet.extent) boxes.push(sheet.extent)
   const extent = around(boxes)
   if (!extent || canvas.width === 0) return { x: 0, y: 0, zoom: 1 }
+  const foot = useFirstSteps.getState().step === null ? plainFoot : footWithHint
   const zoom = Math.max(
     0.2,
     Math.min(

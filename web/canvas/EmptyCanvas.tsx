@@ -1,3 +1,4 @@
+import { openExample, readExamples } from '../files/plant-file.ts'
 import type { Form } from './symbols/symbol.ts'
 import { UnitSymbol } from './UnitSymbol.tsx'
 
@@ -13,6 +14,13 @@ const sketch = [
   ['condenser', 232, 36, ''],
   ['pump', 176, 124, ' scale(-1 1) translate(-32 0)'],
 ] as const
+
+/** A plant with one heater, to be drawn further. */
+async function openSketch(): Promise<void> {
+  const examples = await readExamples().catch(() => [])
+  const sketch = examples.find(({ file }) => file === 'one-heater.json')
+  if (sketch) await openExample(sketch)
+}
 
 /** The empty canvas: three steps to a plant, or one that is there. */
 export function EmptyCanvas({ onOpenExample, onOpenFile }: Props) {
@@ -47,6 +55,9 @@ export function EmptyCanvas({ onOpenExample, onOpenFile }: Props) {
               Open an example plant
             </button>
           )}
+          <button type="button" className="link" onClick={() => void openSketch()}>
+            Start from a one-heater sketch
+          </button>
           {onOpenFile && (
             <button type="button" className="link" onClick={onOpenFile}>
               Open a file

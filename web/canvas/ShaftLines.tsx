@@ -1,12 +1,14 @@
 import { useSelected, useSelectionStore } from '../store/selection-store.ts'
 import { useCanvasStore } from './canvas-store.ts'
 import { generatorRadius, type PlacedShaft } from './sheet.ts'
+import { ShaftName, shaftNameId } from './spoken-names.tsx'
 
 /** Shafts as chain lines, each with its generator. */
 export function ShaftLines() {
   const shafts = useCanvasStore((state) => state.sheet.shafts)
   return (
-    <svg className="shafts" aria-hidden="true">
+    // biome-ignore lint/a11y/noSvgWithoutTitle: each shaft has a name of its own
+    <svg className="shafts">
       {[...shafts.values()].map((shaft) => (
         <Shaft key={shaft.id} shaft={shaft} />
       ))}
@@ -20,16 +22,26 @@ function Shaft({ shaft }: { readonly shaft: PlacedShaft }) {
   const line = shaft.lines.map(([a, b]) => `M${a.join(' ')}L${b.join(' ')}`).join('')
   const { select, hover } = useSelectionStore.getState()
   return (
-    // Shafts are reached by keys through the tables and the command box.
-    // biome-ignore lint/a11y/noStaticElementInteractions: see above
-    // biome-ignore lint/a11y/useKeyWithClickEvents: see above
+    // biome-ignore lint/a11y/useSemanticElements: a button has no place in a drawing
     <g
       className="shaft nopan"
+      role="button"
+      tabIndex={0}
+      aria-labelledby={shaftNameId(shaft.id)}
+      aria-pressed={selected}
+      aria-roledescription="shaft"
+      onKeyDown={(event) => {
+        if (event.key !== 'Enter' && event.key !== ' ') return
+        event.preventDefault()
+        event.stopPropagation()
+        select([shaft.id], event.shiftKey || event.key === ' ' ? 'toggle' : 'replace')
+      }}
       data-shaft={shaft.id}
       onPointerEnter={() => hover(shaft.id)}
       onPointerLeave={() => hover(null)}
       onClick={(event) => select([shaft.id], event.shiftKey ? 'toggle' : 'replace')}
     >
+      <ShaftName id={shaft.id} />
       {(selected || hovered) && <path className="shaft-halo" d={line} />}
       <path className="shaft-grip" d={line} />
       <path className="shaft-line" d={line} />

@@ -12,8 +12,12 @@ import { readValue, useBalanceStore, usePhase } from '../store/balance-store.ts'
 import { readLayout, useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { figuresFrom, useCanvasStore } from './canvas-store.ts'
-import type { PlacedLabel, PlacedTag } from './labelling.ts'
+import type { Point } from './geometry.ts'
+import { middleOf, type PlacedLabel, type PlacedTag } from './labelling.ts'
+import { startRenaming, useRenameStore } from './rename-store.ts'
+import { putTag } from './tag-places.ts'
 import { type TagQuantity, useTagStore } from './tag-store.ts'
+import { toSheet } from './view.ts'
 
 /** Labels of units with their chief figures, and the tags of streams. */
 export function Texts() {
@@ -49,10 +53,19 @@ const UnitLabel = memo(function UnitLabel({ label }: { readonly label: PlacedLab
   const path = chief && `${label.id}.${chief}`
   // A kind may name a quantity that this unit has not got.
   const described = path ? describeQuantity(layout, path) : undefined
+  const renaming = useRenameStore((state) => state.id === label.id)
   return (
+    // biome-ignore lint/a11y/noStaticElementInteractions: a larger target for the pointer; the unit itself is reached by keys
+    // biome-ignore lint/a11y/useKeyWithClickEvents: as above
     <div
-      className="unit-label"
+      hidden={renaming}
+      onClick={(event) => {
+        useSelectionStore.getState().select([label.id], event.shiftKey ? 'toggle' : 'replace')
+      }}
+      onDoubleClick={() => startRenaming(label.id)}
+      className="unit-label nopan"
       data-arrangement={label.arrangement}
+      data-inside={label.inside === true}
       data-above={top !== undefined && label.y + label.height <= top}
       style={place(label)}
     >
@@ -109,6 +122,11 @@ const Tag = memo(function Tag({ tag }: { readonly tag: PlacedTag }) {
         onClick={(event) => {
           useSelectionStore.getState().select([tag.id], event.shiftKey ? 'toggle' : 'replace')
         }}
+        onPointerDown={(event) => {
+          if (event.button === 0) dragTag(tag, [event.clientX, event.clientY])
+        }}
+        onDoubleClick={() => putTag(tag.id, null)}
+        title="Drag to move it, double click to set it free"
       >
         {lines.map((line) => (
           <div key={line.join()} className="stream-tag-line">
@@ -121,6 +139,29 @@ const Tag = memo(function Tag({ tag }: { readonly tag: PlacedTag }) {
     </>
   )
 })
+
+/** A tag goes with the pointer; a press that does not move is a click. */
+function dragTag(tag: PlacedTag, start: Point): void {
+  let moved = false
+  const from = toSheet(start)
+  const move = (event: PointerEvent) => {
+    const { clientX, clientY } = event
+    moved ||= Math.abs(clientX - start[0]) + Math.abs(clientY - start[1]) > 4
+    const route = useCanvasStore.getState().sheet.streams.get(tag.id)?.route
+    if (!moved || !route) return
+    const [x, y] = toSheet([clientX, clientY])
+    const [mx, my] = middleOf(route)
+    putTag(tag.id, [tag.x + x - from[0] - mx, tag.y + y - from[1] - my])
+  }
+  const end = () => {
+    window.removeEventListener('pointermove', move)
+    window.removeEventListener('pointerup', end)
+    window.removeEventListener('pointercancel', end)
+  }
+  window.addEventListener('pointermove', move)
+  window.addEventListener('pointerup', end)
+  window.addEventListener('pointercancel', end)
+}
 
 const hasNumber = (layout: Layout, id: string, name: string): boolean =>
   readValue(`${id}.${name}`) !== null || givenOf(layout, `${id}.${name}`) !== undefined

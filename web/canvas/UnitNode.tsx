@@ -5,6 +5,7 @@ import { useCanvasStore } from './canvas-store.ts'
 import { useConnectingStore } from './connecting-store.ts'
 import { grown } from './geometry.ts'
 import { Ports } from './Ports.tsx'
+import { usePinStore } from './pin-store.ts'
 import { UnitName } from './spoken-names.tsx'
 import { UnitSymbol } from './UnitSymbol.tsx'
 
@@ -16,6 +17,7 @@ export const UnitNode = memo(function UnitNode({ id }: NodeProps) {
   const connecting = useConnectingStore(
     (state) => state.connecting !== null || state.choosing?.unit === id,
   )
+  const pinned = usePinStore((state) => state.pinned.has(id))
   if (!unit) return null
   const { size, body, at } = unit
   const frame = grown(
@@ -40,6 +42,12 @@ export const UnitNode = memo(function UnitNode({ id }: NodeProps) {
           mirrored={unit.mirrored}
           upended={unit.upended}
         />
+        {pinned && (selected || hovered) && (
+          <path
+            className="unit-pin"
+            d={`M${frame.x - 3} ${frame.y - 3}m-2.5 -4.5h5l-1 4h2v1.5h-3v4h-1v-4h-3v-1.5h2z`}
+          />
+        )}
         {(selected || hovered || connecting) && <Ports unit={unit} />}
       </svg>
       <UnitName unit={unit} />

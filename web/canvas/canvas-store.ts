@@ -10,9 +10,11 @@ import {
   type PlacedTag,
   placeLabels,
   placeTags,
+  tagAt,
 } from './labelling.ts'
 import { drawSheet, emptySheet, generatorBox, type Sheet } from './sheet.ts'
 import type { PlacedUnit } from './standing.ts'
+import { useTagPlaces } from './tag-places.ts'
 import { type TagChoice, useTagStore } from './tag-store.ts'
 
 interface CanvasState {
@@ -87,13 +89,16 @@ export function followPlant(): () => void {
   }
   follow()
   const endPlant = usePlantStore.subscribe(follow)
-  const endTags = useTagStore.subscribe(() => {
+  const setTexts = () => {
     const { sheet, textScale, zoom } = useCanvasStore.getState()
     useCanvasStore.setState(texts(readLayout(), sheet, textScale, zoom))
-  })
+  }
+  const endTags = useTagStore.subscribe(setTexts)
+  const endPlaces = useTagPlaces.subscribe(setTexts)
   return () => {
     endPlant()
     endTags()
+    endPlaces()
     shownLayout = null
   }
 }
@@ -182,10 +187,25 @@ function texts(
   const labels = placeLabels(requests, occupied, stays.labels)
   const whole = around([...labels.values(), ...(sheet.extent ? [sheet.extent] : [])])
   const bounds = whole && grown(whole, tagsBeyond)
-  const tags =
-    zoom < tagsFrom
-      ? new Map<string, PlacedTag>()
-      : placeTags(tagRequests(layout, sheet, scale), occupied, labels.values(), stays.tags, bounds)
+  const tags = new Map<string, PlacedTag>()
+  if (zoom >= tagsFrom) {
+    const wanted = tagRequests(layout, sheet, scale)
+    const { places } = useTagPlaces.getState()
+    for (const request of wanted) {
+      const at = places[request.id]
+      const tag = at && tagAt(request, at)
+      if (tag) tags.set(request.id, tag)
+    }
+    const others = wanted.filter(({ id }) => !tags.has(id))
+    const set = placeTags(
+      others,
+      occupied,
+      [...labels.values(), ...tags.values()],
+      stays.tags,
+      bounds,
+    )
+    for (const [id, tag] of set) tags.set(id, tag)
+  }
   return earlier
     ? { labels: kept(earlier.labels, labels), tags: kept(earlier.tags, tags) }
     : { labels, tags }

@@ -34,6 +34,8 @@ export type Arrangement = 'stacked' | 'beside' | 'wrapped'
 
 export interface PlacedLabel extends Box {
   readonly id: string
+  /** Within its symbol. */
+  readonly inside?: true
   readonly arrangement: Arrangement
   readonly align: 'left' | 'centre' | 'right'
 }
@@ -200,7 +202,11 @@ export function placeLabels(
       }
     }
     if (!best) continue
-    const label: PlacedLabel = { id: request.id, ...best }
+    const label: PlacedLabel = {
+      id: request.id,
+      ...best,
+      ...(within && overlap(best, request.body) && { inside: true }),
+    }
     placed.set(request.id, label)
     texts.add(padded(label))
   }
@@ -372,4 +378,57 @@ function besides(
       leader: [at, end],
     },
   ]
+}
+
+/** The point halfway along a route: what a moved tag keeps its distance to. */
+export function middleOf(route: Route): Point {
+  const lengths = route.slice(1).map(([x, y], i) => {
+    const [x0, y0] = route[i] as Point
+    return Math.abs(x - x0) + Math.abs(y - y0)
+  })
+  let left = lengths.reduce((sum, length) => sum + length, 0) / 2
+  for (const [i, length] of lengths.entries()) {
+    const [x0, y0] = route[i] as Point
+    const [x1, y1] = route[i + 1] as Point
+    if (left <= length && length > 0) {
+      return [x0 + ((x1 - x0) * left) / length, y0 + ((y1 - y0) * left) / length]
+    }
+    left -= length
+  }
+  return route[0] ?? [0, 0]
+}
+
+/** A tag where the user has put it, its leader from the nearest point of the stream. */
+export function tagAt(request: TagRequest, at: Point): PlacedTag | null {
+  const [shape] = request.shapes
+  if (!shape) return null
+  const [mx, my] = middleOf(request.route)
+  const box = { x: mx + at[0], y: my + at[1], ...shape.size }
+  let start: Point | null = null
+  let stop: Point = [0, 0]
+  let least = Number.POSITIVE_INFINITY
+  const clamp = (value: number, a: number, b: number) =>
+    Math.min(Math.max(value, Math.min(a, b)), Math.max(a, b))
+  for (let i = 1; i < request.route.length; i++) {
+    const [x1, y1] = request.route[i - 1] as Point
+    const [x2, y2] = request.route[i] as Point
+    // Nearest to the middle of the text, then the text's nearest edge to that.
+    const near: Point = [
+      clamp(box.x + box.width / 2, x1, x2),
+      clamp(box.y + box.height / 2, y1, y2),
+    ]
+    const edge: Point = [
+      clamp(near[0], box.x - 2, box.x + box.width + 2),
+      clamp(near[1], box.y, box.y + box.height),
+    ]
+    const distance = (near[0] - edge[0]) ** 2 + (near[1] - edge[1]) ** 2
+    if (distance < least) {
+      least = distance
+      start = near
+      stop = edge
+    }
+  }
+  const leader = start && least > 16 ? [start, stop] : []
+  const align = stop[0] > box.x + box.width / 2 ? 'right' : 'left'
+  return { id: request.id, ...box, lines: shape.lines, align, leader }
 }

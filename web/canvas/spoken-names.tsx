@@ -7,6 +7,8 @@ import { readLayout, usePlantStore } from '../store/plant-store.ts'
 export const unitNameId = (id: string): string => `unit-name-${id}`
 export const streamNameId = (id: string): string => `stream-name-${id}`
 
+export const shaftNameId = (id: string): string => `shaft-name-${id}`
+
 export function kindLabel(kind: string): string {
   return kindOf(kind)?.label ?? kind
 }
@@ -46,6 +48,20 @@ export function StreamName({ id }: { readonly id: string }) {
       <SpokenQuantity path={`${id}.p`} dimension="pressure" />
       <SpokenQuantity path={`${id}.T`} dimension="temperature" />
       <SpokenQuantity path={`${id}.m`} dimension="massFlow" />
+    </text>
+  )
+}
+
+/** 'Shaft, generator 152.0 MW'. */
+export function ShaftName({ id }: { readonly id: string }) {
+  const name = usePlantStore(() => labelOf(readLayout(), id))
+  const hasGenerator = usePlantStore(
+    () => readLayout().shafts.find((shaft) => shaft.id === id)?.generator !== false,
+  )
+  return (
+    <text id={shaftNameId(id)} display="none">
+      {name}
+      {hasGenerator && <SpokenQuantity path={`${id}.generatorPower`} dimension="power" />}
     </text>
   )
 }

@@ -150,7 +150,7 @@ function placeLines(
       rules.behind(
         before,
         `${step.id}.${port}`,
-        from + (last ? usualPitch : i === 0 ? Math.max(least, 32) : least),
+        from + (last ? usualPitch : i === 0 ? usualPitch : least),
       )
       rules.behind(`${step.id}.${port}`, before, -from - 104)
       before = `${step.id}.${port}`
