@@ -59,7 +59,8 @@ function ClosedField({ path, label, description, showUnit = true, focused, onOpe
       onClick={() => onOpen()}
       onKeyDown={(event) => {
         if (event.ctrlKey || event.metaKey || event.altKey) return
-        if (/^[0-9.,+\-−]$/.test(event.key)) onOpen(event.key)
+        // Letters too: with the focus on a number they are no shortcuts of the canvas.
+        if (/^[\p{L}\p{N}.,+\-−]$/u.test(event.key)) onOpen(event.key)
         else if (event.key === 'Delete' || event.key === 'Backspace') free(path)
         else return
         event.preventDefault()
