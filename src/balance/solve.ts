@@ -20,14 +20,17 @@ export interface Balance {
 /** Iterations times unknowns spent on looking for another answer. */
 const mostSeeking = 40_000
 
-/** Solves a model (again) and says how it ended. */
-export function solve(model: Model, results: Results = new Results(model)): Balance {
+/**
+ * Solves a model (again) and says how it ended. With `seek`, other starts are tried where the first
+ * finds no answer or an impossible one.
+ */
+export function solve(model: Model, results: Results = new Results(model), seek = true): Balance {
   const iterations = model.solve()
-  if (model.firstFailure() >= 0) seekSolvable(model)
+  if (seek && model.firstFailure() >= 0) seekSolvable(model)
   results.refresh()
   const diagnosis = diagnose(model)
   let checks = checkAnswer(model, results)
-  if (diagnosis.status === 'solved' && isImpossible(checks) && model.program.hasChoice) {
+  if (seek && diagnosis.status === 'solved' && isImpossible(checks) && model.program.hasChoice) {
     checks = seekPossible(model, results) ?? checks
   }
   const status =

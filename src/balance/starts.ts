@@ -97,7 +97,8 @@ export class Starts {
     const { system, values } = this
     system.variables.forEach(({ description }, index) => {
       if (this.known(index) || description.dimension !== 'pressure') return
-      const p = values[index]! * 10 ** (pressureScatter * (1 + this.choice / 3) * this.scatter(index))
+      const p =
+        values[index]! * 10 ** (pressureScatter * (1 + this.choice / 3) * this.scatter(index))
       values[index] = Math.min(90e6, Math.max(700, p))
     })
   }

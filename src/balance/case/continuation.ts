@@ -1,4 +1,5 @@
 import type { Given, Layout } from '../../plant/document.ts'
+import type { Dimension } from '../../quantity/dimension.ts'
 import { Model } from '../model.ts'
 import { type Balance, solve } from '../solve.ts'
 import type { AssemblyOptions } from '../system.ts'
@@ -14,20 +15,74 @@ const shortest = 1 / 512
 export function continueTo(layout: Layout, options: AssemblyOptions, design: Balance): Balance {
   const fromDesign = (path: string): number | null => design.results.value(path)
   const model = new Model(layout, options)
-  model.startFrom(fromDesign)
+  model.startFrom(scaledToLoad(layout, design))
   // Where something is short or too much, solving says what; there is nothing to walk to.
   if (model.structure.missing > 0 || model.structure.excess > 0) return solve(model)
   // Near the design no other start is worth the search: steps towards the case are.
-  if (model.solveFromThere()) return solve(model)
+  let direct = answerFromThere(model)
+  if (direct?.status === 'solved') return direct
   const path = walk(layout, options, fromDesign)
   if (path !== undefined) {
     const last = new Model(layout, options)
     last.startFrom(path)
-    if (last.solveFromThere()) return solve(last)
+    const walked = answerFromThere(last)
+    if (walked?.status === 'solved') return walked
+    direct ??= walked
   }
+  if (direct !== undefined) return direct
   model.startFrom(fromDesign)
   return solve(model)
 }
+
+/** The answer that the start leads to, possible or not; undefined where it leads to none. */
+function answerFromThere(model: Model): Balance | undefined {
+  return model.solveFromThere() ? solve(model, undefined, false) : undefined
+}
+
+/** A condenser's pressure and the like do not follow the load. Pa. */
+const leastFollowing = 50e3
+/** Quantities that grow with the load. */
+const following: ReadonlySet<Dimension> = new Set(['massFlow', 'power', 'heatFlow', 'volumeFlow'])
+
+/** The design's values brought to the case's load: flows, powers and the pressures they cause. */
+function scaledToLoad(layout: Layout, design: Balance): (path: string) => number | null {
+  const load = loadOf(layout, design)
+  const { indexOf, variables } = design.model.system
+  return (path) => {
+    const value = design.results.value(path)
+    const index = indexOf.get(path)
+    if (value === null || index === undefined || load === 1) return value
+    const { dimension } = variables[index]!.description
+    if (following.has(dimension)) return value * load
+    return dimension === 'pressure' && value > leastFollowing
+      ? Math.max(leastFollowing, value * load)
+      : value
+  }
+}
+
+/** The case's largest given flow or power over the design's. */
+function loadOf(layout: Layout, design: Balance): number {
+  const { indexOf, variables } = design.model.system
+  let largest = 0
+  let load = 1
+  for (const [path, given] of givensOf(layout)) {
+    const index = indexOf.get(path)
+    const before = design.results.value(path)
+    if (typeof given !== 'number' || index === undefined || before === null || before <= 0) continue
+    const { description, isState } = variables[index]!
+    const { dimension } = description
+    const isFlow = dimension === 'massFlow' && isState
+    const isPower =
+      dimension === 'power' && path.startsWith('plant.') && path !== 'plant.otherAuxiliary'
+    const size = isFlow ? before : isPower ? before / powerPerFlow : 0
+    if (size <= largest || given <= 0) continue
+    largest = size
+    load = given / before
+  }
+  return load
+}
+/** Makes powers and flows comparable, J/kg. */
+const powerPerFlow = 1e6
 
 /** Values just before the case itself, or undefined where the way breaks off. */
 function walk(
