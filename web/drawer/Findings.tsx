@@ -11,6 +11,11 @@ const order = ['error', 'caution', 'remark'] as const
 
 const none: readonly Finding[] = []
 
+/** How many given numbers a finding rests on: the fewer, the nearer it is to what is wrong. */
+function givensBehind({ remedies }: Finding): number {
+  return remedies?.length || Number.MAX_SAFE_INTEGER
+}
+
 export function useFindings(): readonly Finding[] {
   return useBalanceStore((state) => state.balance?.findings ?? none)
 }
@@ -46,7 +51,10 @@ function FindingLine({ finding }: { finding: Finding }) {
   )
 }
 
-/** What the tool has to say about the plant: errors first, then cautions, then remarks. */
+/**
+ * What the tool has to say about the plant: errors first, then cautions, then remarks; of each those
+ * first that few given numbers stand behind, what merely follows from them after.
+ */
 export function Findings() {
   const findings = useFindings()
   const trouble = useBalanceStore((state) => state.trouble)
@@ -67,6 +75,7 @@ export function Findings() {
       {order.flatMap((severity) =>
         findings
           .filter((finding) => finding.severity === severity)
+          .sort((a, b) => givensBehind(a) - givensBehind(b))
           .map((finding, i) => (
             <FindingLine
               // biome-ignore lint/suspicious/noArrayIndexKey: two findings may be alike but for their text.
