@@ -15,8 +15,13 @@ const railIsFolded = () => document.querySelector('.rail-folded') !== null
 const drawerTabs: readonly (readonly [DrawerTab, string])[] = [
   ['states', 'State points'],
   ['units', 'Balances of units'],
+  ['heaters', 'Heaters and condensers'],
+  ['groups', 'Stage groups'],
+  ['pumps', 'Pumps'],
+  ['totals', 'Plant totals'],
   ['ledger', 'Ledger'],
   ['findings', 'Findings'],
+  ['report', 'Report and drawings'],
 ]
 
 const themes: readonly (readonly [Theme, string])[] = [

@@ -1,16 +1,33 @@
 import { useId } from 'react'
 import { Mark } from '../number/Mark.tsx'
+import { ReportTab } from '../report/ReportTab.tsx'
 import { useBalanceStore } from '../store/balance-store.ts'
-import { type DrawerTab, useSettingsStore } from '../store/settings-store.ts'
+import { type DrawerTab, drawerTabs, useSettingsStore } from '../store/settings-store.ts'
 import { Icon } from '../strip/Icon.tsx'
 import { Findings, useFindings } from './Findings.tsx'
 import { Ledger } from './Ledger.tsx'
-import { StatePoints } from './StatePoints.tsx'
-import { UnitBalances } from './UnitBalances.tsx'
+import {
+  GroupTable,
+  HeaterTable,
+  PumpTable,
+  StateTable,
+  TotalsTable,
+  UnitTable,
+} from './tables/ResultTables.tsx'
 import './drawer.css'
 
-const tabs: readonly DrawerTab[] = ['states', 'units', 'ledger', 'findings']
-const bodies = { states: StatePoints, units: UnitBalances, ledger: Ledger, findings: Findings }
+const tabs: readonly DrawerTab[] = drawerTabs
+const bodies = {
+  states: StateTable,
+  units: UnitTable,
+  heaters: HeaterTable,
+  groups: GroupTable,
+  pumps: PumpTable,
+  totals: TotalsTable,
+  ledger: Ledger,
+  findings: Findings,
+  report: ReportTab,
+}
 
 function LedgerTab() {
   const ledger = useBalanceStore((state) => state.balance?.ledger)
@@ -57,8 +74,13 @@ function FindingsTab() {
 const names = {
   states: () => <>State points</>,
   units: () => <>Units</>,
+  heaters: () => <>Heaters</>,
+  groups: () => <>Stages</>,
+  pumps: () => <>Pumps</>,
+  totals: () => <>Totals</>,
   ledger: LedgerTab,
   findings: FindingsTab,
+  report: () => <>Report</>,
 }
 
 const statusWords = {

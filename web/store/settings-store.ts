@@ -2,7 +2,18 @@ import { create } from 'zustand'
 import type { Dimension, UnitChoice, UnitSetName } from '../../src/document.ts'
 
 export type Theme = 'system' | 'light' | 'dark'
-export type DrawerTab = 'states' | 'units' | 'ledger' | 'findings'
+export const drawerTabs = [
+  'states',
+  'units',
+  'heaters',
+  'groups',
+  'pumps',
+  'totals',
+  'ledger',
+  'findings',
+  'report',
+] as const
+export type DrawerTab = (typeof drawerTabs)[number]
 
 interface Settings {
   readonly unitSet: UnitSetName
@@ -73,7 +84,7 @@ function kept(): Settings {
     drawerHeight: isNumber(stored.drawerHeight)
       ? Math.min(1200, Math.max(80, stored.drawerHeight))
       : usual.drawerHeight,
-    drawerTab: among(stored.drawerTab, ['states', 'units', 'ledger', 'findings'], usual.drawerTab),
+    drawerTab: among(stored.drawerTab, drawerTabs, usual.drawerTab),
     drawerFolded: isBoolean(stored.drawerFolded) ? stored.drawerFolded : usual.drawerFolded,
     chartFolded: isBoolean(stored.chartFolded) ? stored.chartFolded : usual.chartFolded,
     railFolded: isBoolean(stored.railFolded) ? stored.railFolded : null,
