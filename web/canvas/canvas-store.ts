@@ -2,6 +2,7 @@ import { create } from 'zustand'
 import { kindOf, type Layout } from '../../src/document.ts'
 import { textWidth } from '../chart/measure-text.ts'
 import { readLayout, usePlantStore } from '../store/plant-store.ts'
+import { useSelectionStore } from '../store/selection-store.ts'
 import { around, grown, type Point, type Size } from './geometry.ts'
 import {
   type Arrangement,
@@ -86,6 +87,10 @@ export function followPlant(): () => void {
       moved: null,
       ...texts(layout, next, textScale, zoom),
     })
+    // What was removed under the pointer never hears that the pointer has left it.
+    const { hovered, hover } = useSelectionStore.getState()
+    const stands = ({ units, streams }: Sheet, id: string) => units.has(id) || streams.has(id)
+    if (hovered !== null && stands(sheet, hovered) && !stands(next, hovered)) hover(null)
   }
   follow()
   const endPlant = usePlantStore.subscribe(follow)
