@@ -9,24 +9,49 @@ import {
   times,
 } from '../equations/expression/index.ts'
 import type { Curve } from '../plant/document.ts'
+import { monotoneSlopes } from '../plant/monotone-slopes.ts'
 
 /** A given curve as an expression of what it is given against. */
 export function curveOf(curve: Curve, against: Expression): Expression {
   if ('power' in curve) {
     const { at, value, exponent } = curve.power
-    return times(constant(value), power(divide(against, constant(at)), constant(exponent)))
+    return times(constant(value), apply(powerLaw(exponent), divide(against, constant(at))))
   }
   return apply(interpolation(curve.points), against)
 }
 
-/**
- * Monotone piecewise cubic through the points (F. N. Fritsch and R. E. Carlson, SIAM J. Numer.
- * Anal. 17, 1980, 238-246; slopes by F. N. Fritsch and J. Butland, SIAM J. Sci. Stat. Comput. 5,
- * 1984, 300-304): weighted harmonic mean of the secants, 0 where they change sign; three-point end
- * slopes; beyond the ends straight on with the end slope.
- */
+/** Below this part of its known point a power law is carried straight on, so that iterations may pass. */
+const leastPart = 1e-4
+
+/** r^exponent of a ratio r that is positive in any answer; 0 at r = 0 for a positive exponent. */
+function powerLaw(exponent: number): Operation {
+  const least = leastPart ** exponent
+  const leastSlope = exponent * leastPart ** (exponent - 1)
+  return {
+    name: 'powerLaw',
+    evaluate(tape, row) {
+      const k = tape.first[row]!
+      const r = tape.values[tape.operands[k]!]!
+      const slot = tape.slotOf(row)
+      if (r >= leastPart) {
+        const value = r ** exponent
+        tape.values[slot] = value
+        tape.partials[k] = (exponent * value) / r
+        return Outcome.fine
+      }
+      if (exponent <= 0) return Outcome.outsideDomain
+      tape.values[slot] = r === 0 ? 0 : least + leastSlope * (r - leastPart)
+      tape.partials[k] = leastSlope
+      return Outcome.fine
+    },
+    invert: (target) => power(target, constant(1 / exponent)),
+    print: ([r]) => ({ text: `(${r!.text})^${exponent}`, strength: 3 }),
+  }
+}
+
+/** Monotone piecewise cubic through the points; beyond the ends straight on with the end slope. */
 function interpolation(points: readonly (readonly [number, number])[]): Operation {
-  const slopes = slopesOf(points)
+  const slopes = monotoneSlopes(points)
   const last = points.length - 1
   return {
     name: 'curve',
@@ -55,40 +80,4 @@ function interpolation(points: readonly (readonly [number, number])[]): Operatio
     },
     print: ([r]) => ({ text: `curve(${r!.text})`, strength: 4 }),
   }
-}
-
-function slopesOf(points: readonly (readonly [number, number])[]): Float64Array {
-  const n = points.length
-  const widths = new Float64Array(n - 1)
-  const secants = new Float64Array(n - 1)
-  for (let i = 0; i < n - 1; i++) {
-    widths[i] = points[i + 1]![0] - points[i]![0]
-    secants[i] = (points[i + 1]![1] - points[i]![1]) / widths[i]!
-  }
-  const slopes = new Float64Array(n)
-  if (n === 2) return slopes.fill(secants[0]!)
-  for (let i = 1; i < n - 1; i++) {
-    const before = secants[i - 1]!
-    const after = secants[i]!
-    if (before * after <= 0) continue
-    const w1 = 2 * widths[i]! + widths[i - 1]!
-    const w2 = widths[i]! + 2 * widths[i - 1]!
-    slopes[i] = (w1 + w2) / (w1 / before + w2 / after)
-  }
-  slopes[0] = endSlope(widths[0]!, widths[1]!, secants[0]!, secants[1]!)
-  slopes[n - 1] = endSlope(widths[n - 2]!, widths[n - 3]!, secants[n - 2]!, secants[n - 3]!)
-  return slopes
-}
-
-/**
- * Three-point slope at an end: 0 when against the first secant, at most three times it where the
- * secants change sign.
- */
-function endSlope(width: number, nextWidth: number, secant: number, nextSecant: number): number {
-  const slope = ((2 * width + nextWidth) * secant - width * nextSecant) / (width + nextWidth)
-  if (Math.sign(slope) !== Math.sign(secant)) return 0
-  if (Math.sign(secant) !== Math.sign(nextSecant) && Math.abs(slope) > 3 * Math.abs(secant)) {
-    return 3 * secant
-  }
-  return slope
 }

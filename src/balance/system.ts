@@ -5,11 +5,9 @@ import {
   equal,
   minus,
   plus,
-  type Variable,
   variable,
 } from '../equations/expression/index.ts'
 import type { Given, Layout, Shaft, Stream, Unit } from '../plant/document.ts'
-import type { Dimension } from '../quantity/dimension.ts'
 import {
   dryness,
   entropy,
@@ -440,15 +438,3 @@ class Assembly {
 /** The other quantities of a stream as functions of its pressure and enthalpy. */
 const streamRelations = { T: temperature, s: entropy, x: dryness, superheat, subcooling } as const
 type StreamRelation = keyof typeof streamRelations
-
-/** Whether an expression is a plain variable that measures this. */
-export function isVariableOf(
-  expression: Expression,
-  system: Pick<System, 'variables'>,
-  dimension: Dimension,
-): expression is Variable {
-  return (
-    expression.kind === 'variable' &&
-    system.variables[expression.index]!.description.dimension === dimension
-  )
-}

@@ -55,5 +55,5 @@ export function kindNamed(name: string): UnitKind | undefined {
 }
 
 export { plantQuantities } from './plant-totals.ts'
-export { quantitiesOfShaft, shaftQuantities } from './shaft.ts'
+export { quantitiesOfShaft } from './shaft.ts'
 export { streamQuantities } from './stream-quantities.ts'

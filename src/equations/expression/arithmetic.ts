@@ -193,10 +193,7 @@ const exponentialOperation: Operation = {
   print: ([a]) => ({ text: `exp(${a!.text})`, strength: 4 }),
 }
 
-/** Below this a power is carried straight on, so that an iteration may pass through it. */
-const leastBase = 1e-4
-
-/** a^b for a > 0; 0 for a = 0. */
+/** a^b for a > 0. */
 const powerOperation: Operation = {
   name: 'power',
   evaluate(tape, row) {
@@ -204,13 +201,7 @@ const powerOperation: Operation = {
     const k = tape.first[row]!
     const a = values[operands[k]!]!
     const b = values[operands[k + 1]!]!
-    if (a < leastBase) {
-      const slope = b * leastBase ** (b - 1)
-      values[tape.slotOf(row)] = a === 0 && b > 0 ? 0 : leastBase ** b + slope * (a - leastBase)
-      partials[k] = slope
-      partials[k + 1] = 0
-      return Outcome.fine
-    }
+    if (!(a > 0)) return Outcome.outsideDomain
     const value = a ** b
     if (!Number.isFinite(value)) return Outcome.outsideDomain
     values[tape.slotOf(row)] = value
