@@ -83,6 +83,9 @@ export default defineConfig({
           environment: 'node',
           include: ['test/**/*.test.{ts,tsx}'],
           exclude: ['test/browser/**'],
+          setupFiles: ['test/fixed-seed.ts'],
+          // A slow machine is no fault; what hangs still ends.
+          testTimeout: 120_000,
         },
       },
       {
