@@ -6,6 +6,7 @@ import { Dialogs } from './commands/Dialogs.tsx'
 import { Divider } from './Divider.tsx'
 import { Drawer } from './drawer/Drawer.tsx'
 import { Guard } from './Guard.tsx'
+import { CaseRow } from './layouts/CaseRow.tsx'
 import Rail from './rail/Rail.tsx'
 import { useSettingsStore } from './store/settings-store.ts'
 import { Notices } from './strip/Notices.tsx'
@@ -50,6 +51,7 @@ function Sheet() {
   const shown = folded ? drawerHead : Math.min(height ?? usual, most)
   return (
     <div className="sheet" ref={place}>
+      <CaseRow />
       <div className="canvas-place">
         <Guard name="The canvas">
           <Canvas

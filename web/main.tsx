@@ -4,8 +4,10 @@ import { App } from './App.tsx'
 import { useCommandStore } from './commands/command-store.ts'
 import { listenForShortcuts } from './commands/shortcuts.ts'
 import { windowCommands } from './commands/window-commands.ts'
+import { listenForWhereFrom } from './drawer/where-from-store.ts'
 import { startKeeping } from './files/keeping.ts'
 import { listenForDrops, readExample } from './files/plant-file.ts'
+import { startReferences } from './store/reference-store.ts'
 import { startSolving } from './store/solving.ts'
 import { watchNetwork } from './strip/network-store.ts'
 import { keepOffline } from './strip/offline.ts'
@@ -17,6 +19,7 @@ followTheme()
 useCommandStore.getState().register(windowCommands)
 listenForShortcuts()
 listenForDrops()
+listenForWhereFrom()
 watchNetwork()
 
 const place = document.getElementById('window')
@@ -24,6 +27,7 @@ if (!place) throw new Error('index.html has no element with the id "window".')
 
 await startKeeping(readExample)
 startSolving()
+startReferences()
 createRoot(place).render(
   <StrictMode>
     <App />

@@ -34,7 +34,8 @@ class FakeWorker implements WorkerPort {
 
 function names(structure: number): NamesMessage {
   const derived = { paths: [], account: [] }
-  return { type: 'names', structure, paths: [], streams: [], processes: [], derived }
+  const of = { layout: 'base', case: null, given: [], mainSteam: null }
+  return { type: 'names', structure, paths: [], streams: [], processes: [], ...of, derived }
 }
 
 function balance(sequence: number, structure = 1): BalanceMessage {

@@ -21,6 +21,7 @@ const drawerTabs: readonly (readonly [DrawerTab, string])[] = [
   ['totals', 'Plant totals'],
   ['ledger', 'Ledger'],
   ['findings', 'Findings'],
+  ['compare', 'Compare layouts and cases'],
   ['report', 'Report and drawings'],
 ]
 

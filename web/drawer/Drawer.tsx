@@ -1,4 +1,5 @@
 import { useId } from 'react'
+import { Comparison } from '../layouts/Comparison.tsx'
 import { Mark } from '../number/Mark.tsx'
 import { ReportTab } from '../report/ReportTab.tsx'
 import { useBalanceStore } from '../store/balance-store.ts'
@@ -26,6 +27,7 @@ const bodies = {
   totals: TotalsTable,
   ledger: Ledger,
   findings: Findings,
+  compare: Comparison,
   report: ReportTab,
 }
 
@@ -80,6 +82,7 @@ const names = {
   totals: () => <>Totals</>,
   ledger: LedgerTab,
   findings: FindingsTab,
+  compare: () => <>Compare</>,
   report: () => <>Report</>,
 }
 

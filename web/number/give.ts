@@ -3,10 +3,9 @@ import {
   formatQuantity,
   type Given,
   labelOf,
-  setGiven,
   withinSentence,
 } from '../../src/document.ts'
-import { type EditOptions, editLayout, readGiven, readLayout } from '../store/plant-store.ts'
+import { type EditOptions, editGiven, readGiven, readLayout } from '../store/plant-store.ts'
 import { readUnitChoice } from '../store/settings-store.ts'
 
 /** A quantity by name: 'Heater 5, terminal difference'; the path itself where nothing bears it. */
@@ -49,13 +48,11 @@ export function give(
     before === undefined
       ? `${quantityName(path)} given as ${to}`
       : `${quantityName(path)} ${givenText(path, before)} to ${to}`
-  editLayout(name, (plant, layoutId) => setGiven(plant, layoutId, path, given), options)
+  editGiven(name, path, given, options)
 }
 
 /** Frees a quantity: from now on it is solved. */
 export function free(path: string): void {
   if (readGiven(path) === undefined) return
-  editLayout(`${quantityName(path)} freed`, (plant, layoutId) =>
-    setGiven(plant, layoutId, path, undefined),
-  )
+  editGiven(`${quantityName(path)} freed`, path, undefined)
 }

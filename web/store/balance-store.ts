@@ -145,6 +145,11 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
   },
 }))
 
+/** A quantity in a balance and its names, SI, or null where it has no value there. */
+export function valueInSnapshot({ names, balance }: Snapshot, path: string): number | null {
+  return valueIn(indexOf(names), balance, path)
+}
+
 /** A solved quantity, SI, or null while nothing fixes it. Redraws only when this number changed. */
 export function useValue(path: string): number | null {
   return useBalanceStore((state) => valueIn(state.index, state.balance, path))

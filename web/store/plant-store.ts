@@ -10,7 +10,11 @@ import {
   invertDifference,
   type Layout,
   type Plant,
+  setGiven,
+  setInCase,
 } from '../../src/document.ts'
+import type { NamesMessage } from '../../src/messages.ts'
+import { type BalanceState, useBalanceStore } from './balance-store.ts'
 
 /** One undo step: a named difference between two states of the plant. */
 export interface Step {
@@ -222,23 +226,112 @@ export function editLayout(
   edit(name, (plant) => change(plant, layoutId), options)
 }
 
-/** What is given for a path in the layout and case shown; undefined where it is solved or open. */
-function effectiveGiven(state: PlantState, path: string): Given | undefined {
-  const layout = currentLayout(state)
-  if (state.caseId !== null) {
-    const one = layout.cases.find(({ id }) => id === state.caseId)
-    if (one?.given && Object.hasOwn(one.given, path)) return one.given[path]
-    if (one?.free?.includes(path)) return undefined
-  }
-  return givenOf(layout, path)
+/** The case shown, unless it is the design: null, or the first one where it changes nothing. */
+function shownCase(state: Pick<PlantState, 'plant' | 'layoutId' | 'caseId'>): Case | undefined {
+  if (state.caseId === null) return undefined
+  const { cases } = currentLayout(state)
+  const one = cases.find(({ id }) => id === state.caseId)
+  return one && one === cases[0] && changesNothing(one) ? undefined : one
 }
 
-/** Redraws only when this given changed. */
+/** The case shown whose givens differ from the layout's; undefined while the design is shown. */
+export function useShownCase(): Case | undefined {
+  return usePlantStore(shownCase)
+}
+
+export function readShownCase(): Case | undefined {
+  return shownCase(usePlantStore.getState())
+}
+
+/** What the plant's file says of a path in the layout and case shown. */
+type Said =
+  | { readonly given: Given | undefined }
+  /** The freeze may have taken it, or given it: only the balance of the case knows. */
+  | { readonly frozen: true; readonly layoutGiven: Given | undefined }
+
+function saidOf(state: PlantState, path: string): Said {
+  const layout = currentLayout(state)
+  const one = shownCase(state)
+  if (one?.given && Object.hasOwn(one.given, path)) return { given: one.given[path] }
+  if (one?.free?.includes(path)) return { given: undefined }
+  const layoutGiven = givenOf(layout, path)
+  return one && !changesOnlyGivens(one) ? { frozen: true, layoutGiven } : { given: layoutGiven }
+}
+
+function changesOnlyGivens({ frozen, loadControl, outOfService = [] }: Case): boolean {
+  return !frozen && !loadControl && outOfService.length === 0
+}
+
+/** What a balance of this layout and case says: given or not, and the value; null where it is of another. */
+function inBalance(
+  { names, balance, index }: BalanceState,
+  { layoutId, caseId }: PlantState,
+  path: string,
+): { readonly given: boolean; readonly value: number | undefined } | null {
+  if (!names || names.layout !== layoutId || names.case !== caseId) return null
+  const value = balance?.values[index.paths.get(path) ?? -1]
+  return {
+    given: givenPaths(names).has(path),
+    value: value !== undefined && Number.isFinite(value) ? value : undefined,
+  }
+}
+
+const givenSets = new WeakMap<object, ReadonlySet<string>>()
+
+function givenPaths(names: NamesMessage): ReadonlySet<string> {
+  let set = givenSets.get(names)
+  if (!set) {
+    set = new Set(names.given)
+    givenSets.set(names, set)
+  }
+  return set
+}
+
+function effectiveGiven(state: PlantState, shown: BalanceState, path: string): Given | undefined {
+  const said = saidOf(state, path)
+  if (!('frozen' in said)) return said.given
+  const found = inBalance(shown, state, path)
+  if (!found) return said.layoutGiven
+  if (!found.given) return undefined
+  // A given of the layout that the freeze left alone, or the hardware's value.
+  return said.layoutGiven ?? found.value
+}
+
+/**
+ * What is given for a path in the layout and case shown, frozen hardware included; undefined where it
+ * is solved or open. Redraws only when this given changed.
+ */
 export function useGiven(path: string): Given | undefined {
-  return usePlantStore((state) => effectiveGiven(state, path))
+  const plant = usePlantStore((state) => effectiveGiven(state, useBalanceStore.getState(), path))
+  const solved = useBalanceStore((shown) => effectiveGiven(usePlantStore.getState(), shown, path))
+  // Both look at both stores; whichever changed last has drawn this anew.
+  return plant === solved
+    ? plant
+    : effectiveGiven(usePlantStore.getState(), useBalanceStore.getState(), path)
 }
 
 /** As `useGiven`, for use outside React. */
 export function readGiven(path: string): Given | undefined {
-  return effectiveGiven(usePlantStore.getState(), path)
+  return effectiveGiven(usePlantStore.getState(), useBalanceStore.getState(), path)
+}
+
+/**
+ * Gives a quantity, or frees it with undefined, where it belongs: in the case shown, or in the layout
+ * while the design is shown. Throws `EditRefused`.
+ */
+export function editGiven(
+  name: string,
+  path: string,
+  given: Given | undefined,
+  options?: EditOptions,
+): void {
+  const one = readShownCase()
+  editLayout(
+    one ? `${one.name}: ${name}` : name,
+    (plant, layoutId) =>
+      one
+        ? setInCase(plant, layoutId, one.id, path, given ?? 'free')
+        : setGiven(plant, layoutId, path, given),
+    options,
+  )
 }

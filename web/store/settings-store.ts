@@ -11,6 +11,7 @@ export const drawerTabs = [
   'totals',
   'ledger',
   'findings',
+  'compare',
   'report',
 ] as const
 export type DrawerTab = (typeof drawerTabs)[number]

@@ -1,15 +1,9 @@
-import { createSolverClient, type WorkerPort } from '../worker/client.ts'
+import { createSolverClient } from '../worker/client.ts'
 import { type Asked, useBalanceStore } from './balance-store.ts'
 import { usePlantStore } from './plant-store.ts'
 import { startAsking } from './questions.ts'
 import { sameBalance } from './same-balance.ts'
-
-function startWorker(): WorkerPort {
-  return new Worker(new URL('../worker/worker.ts', import.meta.url), {
-    type: 'module',
-    name: 'balance',
-  })
-}
+import { startWorker } from './start-worker.ts'
 
 /** From now on every edit that can change the balance is solved, and the balance is shown. */
 export function startSolving(): void {

@@ -5,7 +5,9 @@ import { useCommandStore } from '../commands/command-store.ts'
 import { Menu } from '../commands/Menu.tsx'
 import { keysText } from '../commands/shortcuts.ts'
 import { useKeepingStore } from '../files/keeping-store.ts'
-import { useLayout, usePlantStore } from '../store/plant-store.ts'
+import { FirstCase } from '../layouts/CaseRow.tsx'
+import { LayoutTabs } from '../layouts/LayoutTabs.tsx'
+import { usePlantStore } from '../store/plant-store.ts'
 import { useSettingsStore } from '../store/settings-store.ts'
 import { Icon } from './Icon.tsx'
 import { useNetworkStore } from './network-store.ts'
@@ -40,48 +42,6 @@ function Title() {
         }}
       />
     </h1>
-  )
-}
-
-function Layouts() {
-  const layouts = usePlantStore((state) => state.plant.layouts)
-  const layoutId = usePlantStore((state) => state.layoutId)
-  const show = usePlantStore((state) => state.showLayout)
-  return (
-    <div className="layouts" role="tablist" aria-label="Layouts">
-      {layouts.map(({ id, name }) => (
-        <button
-          key={id}
-          type="button"
-          role="tab"
-          aria-selected={id === layoutId}
-          onClick={() => show(id)}
-        >
-          {name}
-        </button>
-      ))}
-    </div>
-  )
-}
-
-function Cases() {
-  const { cases } = useLayout()
-  const caseId = usePlantStore((state) => state.caseId)
-  const show = usePlantStore((state) => state.showCase)
-  if (cases.length === 0) return null
-  return (
-    <label className="choice">
-      <span className="muted">Case</span>
-      <select value={caseId ?? ''} onChange={(event) => show(event.target.value || null)}>
-        {cases.map(({ id, name }) => (
-          <option key={id} value={id}>
-            {name}
-          </option>
-        ))}
-        <option value="">None: as given</option>
-      </select>
-      <Icon name="down" size={12} />
-    </label>
   )
 }
 
@@ -192,9 +152,8 @@ export function Strip() {
     <header className="strip">
       <Menu />
       <Title />
-      <Layouts />
-      <span className="strip-line" />
-      <Cases />
+      <LayoutTabs />
+      <FirstCase />
       <span className="strip-line" />
       <UndoRedo />
       <CommandBox />
