@@ -99,6 +99,8 @@ export default defineConfig({
           fileParallelism: false,
           testTimeout: 60_000,
           hookTimeout: 60_000,
+          // A condition comes true when the machine has time for it.
+          expect: { poll: { timeout: 15_000 } },
         },
       },
     ],
