@@ -1,4 +1,10 @@
-import { iteratedResidual, Outcome, type Tape, TapeBuilder } from '../equations/expression/index.ts'
+import {
+  iteratedResidual,
+  Outcome,
+  type Tape,
+  TapeBuilder,
+  type Variable,
+} from '../equations/expression/index.ts'
 import { Factors, GradientProgram, SparseLU } from '../equations/newton/index.ts'
 import type { Model } from './model.ts'
 import { boundsOf } from './ranges.ts'
@@ -38,6 +44,11 @@ export class Sensitivity {
   private readonly sweeps: readonly BlockSweep[]
   private readonly scale: Float64Array
   private readonly adjoint: Float64Array
+  /** By variable that a curve gives: the row of the curve's equation. */
+  private readonly curveRows = new Map<
+    number,
+    { readonly sweep: BlockSweep; readonly at: number }
+  >()
 
   constructor(model: Model) {
     this.model = model
@@ -52,6 +63,14 @@ export class Sensitivity {
     this.sweeps = structure.blocks.map(({ variables }, k) => {
       const gradient = new GradientProgram(builder, seeds[k]!, () => true, work)
       return layOut(variables, builder.rowsBehind(seeds[k]!), gradient)
+    })
+    equations.forEach(({ origin, equation }, e) => {
+      if (origin !== 'curve' || equation.left.kind !== 'variable') return
+      structure.blocks.forEach((block, k) => {
+        const at = block.equations.indexOf(e)
+        const { index } = equation.left as Variable
+        if (at >= 0) this.curveRows.set(index, { sweep: this.sweeps[k]!, at })
+      })
     })
     this.scale = boundsOf(system.variables).scale
     this.adjoint = new Float64Array(system.variables.length)
@@ -103,6 +122,17 @@ export class Sensitivity {
     return adjoint
   }
 
+  /**
+   * Derivative of the quantity asked for last to the logarithm of a given curve as a whole: what it
+   * does when all of the curve's values grow alike. `curved`: index of the variable that it gives.
+   */
+  byScaleOfCurve(curved: number): number {
+    const row = this.curveRows.get(curved)
+    if (row === undefined || !row.sweep.usable) return 0
+    // The residual is value less curve: its partial to the logarithm of the curve is minus the value.
+    return row.sweep.multipliers[row.at]! * this.tape.values[curved]!
+  }
+
   private sweepBlock(sweep: BlockSweep): void {
     const { adjoint } = this
     const { variables, size, rowScale, right, multipliers, foreign, foreignRow, entries } = sweep
@@ -113,7 +143,10 @@ export class Sensitivity {
       right[j] = adjoint[index]! * size[j]!
       adjoint[index] = 0
     }
-    if (!touched) return
+    if (!touched) {
+      multipliers.fill(0)
+      return
+    }
     sweep.factors.solveTransposed(right, multipliers)
     for (let i = 0; i < multipliers.length; i++) multipliers[i]! *= rowScale[i]!
     for (let e = 0; e < foreign.length; e++) {

@@ -211,7 +211,7 @@ export function treeOf(
       case 'product':
         return product(first, second)
       case 'quotient':
-        return { type: 'quotient', over: first, under: second }
+        return quotient(first, second)
       case 'square':
       case 'signedSquare':
         return { type: 'square', operand: first }
@@ -278,6 +278,19 @@ function product(first: StatementNode, second: StatementNode): StatementNode {
     node.type === 'product' ? node.factors : [node],
   )
   return { type: 'product', factors }
+}
+
+/** A flow that multiplies and divides alike (the mixture of one stream) is left out. */
+function quotient(over: StatementNode, under: StatementNode): StatementNode {
+  const plain: StatementNode = { type: 'quotient', over, under }
+  if (over.type !== 'product' || under.type !== 'leaf' || under.value === 0) return plain
+  const at = over.factors.findIndex(
+    (factor) => factor.type === 'leaf' && factor.path === under.path,
+  )
+  if (at < 0 || under.path === undefined) return plain
+  const [first, ...others] = over.factors.filter((_, k) => k !== at)
+  if (!first) return plain
+  return others.length === 0 ? first : { type: 'product', factors: [first, ...others] }
 }
 
 const isOne = (node: StatementNode): boolean => node.type === 'number' && node.value === 1

@@ -58,7 +58,7 @@ export class Worths {
       if (Number.isNaN(value)) return
       const step = description.step ?? ordinaryStep * Math.abs(value)
       if (step === 0) return
-      const derivative = frozen && this.frozenDerivative(path, frozen)
+      const derivative = frozen && this.frozenDerivative(path, frozenTarget!, frozen)
       found.push({
         path,
         step,
@@ -71,20 +71,24 @@ export class Worths {
 
   /**
    * With the hardware frozen a given works directly where it still is one. An approach that a
-   * conductance has replaced changes with that conductance alone, as when the surface fouls.
+   * conductance has replaced changes with that conductance alone, as when the surface fouls; a
+   * conductance that follows the flow, as a whole.
    */
-  private frozenDerivative(path: string, frozen: Float64Array): number | undefined {
-    const { system } = this.frozen!.model
+  private frozenDerivative(path: string, target: number, frozen: Float64Array): number | undefined {
+    const { sensitivity, model } = this.frozen!
+    const { system } = model
     const index = system.indexOf.get(path)
     if (index !== undefined && !Number.isNaN(system.given[index]!)) return frozen[index]!
     const hardware = this.replaced.get(path)
-    if (hardware === undefined) return undefined
-    const sized = system.indexOf.get(hardware)
-    if (sized === undefined || index === undefined || Number.isNaN(system.given[sized]!)) {
-      return undefined
+    const sized = hardware === undefined ? undefined : system.indexOf.get(hardware)
+    if (sized === undefined || index === undefined) return undefined
+    const byHardware = (of: number): number => {
+      const derivatives = sensitivity.of(of)
+      return system.curved[sized] ? sensitivity.byScaleOfCurve(sized) : derivatives[sized]!
     }
-    const slope = this.frozen!.sensitivity.of(index)[sized]!
-    return slope === 0 ? undefined : frozen[sized]! / slope
+    if (Number.isNaN(system.given[sized]!) && !system.curved[sized]) return undefined
+    const slope = byHardware(index)
+    return slope === 0 ? undefined : byHardware(target) / slope
   }
 
   /** The same plant with its own hardware frozen, at the design's load. */

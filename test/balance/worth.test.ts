@@ -127,3 +127,37 @@ test('the hardware is frozen as it is now, not as it was when the plant was open
 test('a target that the plant does not have has no worths', () => {
   expect(ask(new Model(layout), 'plant.nothing')).toEqual([])
 })
+
+test('an approach whose conductance follows the flow is worth what fouling costs per kelvin', () => {
+  const file = readPlant(readFileSync('public/examples/tarn-vale-2.json', 'utf8'))
+  if (file.outcome !== 'plant') throw new Error(file.message)
+  const base = file.plant.layouts[0] as Layout
+  const model = new Model(base)
+  const { results } = solve(model)
+  const { step, frozen } = ask(new Model(base), 'plant.unitHeatRate', true).find(
+    ({ path }) => path === 'h5.terminalDifference',
+  ) as Worth
+  const water = base.streams.find(({ to }) => to === 'h5.water')?.id ?? ''
+  const law = (scale: number) => {
+    const power = {
+      at: results.value(`${water}.m`) as number,
+      value: (results.value('h5.conductance') as number) * scale,
+      exponent: results.value('h5.conductanceExponent') as number,
+    }
+    const one = {
+      id: 'fouled',
+      name: 'Fouled',
+      frozen: true,
+      loadControl: 'sliding',
+      given: { 'h5.conductance': { against: `${water}.m`, power } },
+    } as const
+    const changed = { ...file.plant, layouts: [{ ...base, cases: [one] }] }
+    const solved = solveCase(changed, base.id, 'fouled')
+    if (solved.outcome === 'unusable') throw new Error(solved.message)
+    const read = (path: string) => solved.balance.results.value(path) as number
+    return { rate: read('plant.unitHeatRate'), approach: read('h5.terminalDifference') }
+  }
+  const [clean, fouled] = [law(1.002), law(0.998)]
+  const wanted = ((fouled.rate - clean.rate) / (fouled.approach - clean.approach)) * step
+  expect((frozen as number) / wanted).toBeCloseTo(1, 2)
+})

@@ -1,8 +1,9 @@
 import { useMemo, useRef, useState } from 'react'
-import { setLabel, setOption } from '../../src/document.ts'
+import { setLabel, setOption, withinSentence } from '../../src/document.ts'
 import { editLayout, useLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { Icon } from '../strip/Icon.tsx'
+import { CardFoot } from './CardFoot.tsx'
 import { CardRows } from './CardRows.tsx'
 import { type CardContent, type CardOption, cardContent, type Neighbour } from './card-content.ts'
 import { usePlace } from './use-place.ts'
@@ -42,8 +43,12 @@ function Title({ content }: { content: CardContent }) {
 
 function Options({ id, options }: { id: string; options: readonly CardOption[] }) {
   if (options.length === 0) return null
+  const chosen = options.filter(({ on }) => on).map(({ description }) => description.label)
   return (
-    <div className="card-part">
+    <details className="card-part card-neighbours card-options">
+      <summary title="Options: what it has and what it does">
+        {chosen.length === 0 ? 'Options: none' : `With ${listText(chosen)}`}
+      </summary>
       {options.map(({ name, description, on }) => (
         <label key={name} className="card-option" title={description.help}>
           <input
@@ -58,8 +63,13 @@ function Options({ id, options }: { id: string; options: readonly CardOption[] }
           {description.label}
         </label>
       ))}
-    </div>
+    </details>
   )
+}
+
+/** 'drain cooler, plugged tubes' */
+function listText(labels: readonly string[]): string {
+  return labels.map(withinSentence).join(', ')
 }
 
 function Neighbours({ neighbours }: { neighbours: readonly Neighbour[] }) {
@@ -96,6 +106,8 @@ function Neighbours({ neighbours }: { neighbours: readonly Neighbour[] }) {
 function OpenCard({ content }: { content: CardContent }) {
   const card = useRef<HTMLElement>(null)
   const { place, startMove } = usePlace(card, content.id)
+  const [pointed, setPointed] = useState<string | null>(null)
+  const foot = pointed ?? content.chief
   const select = useSelectionStore((state) => state.select)
   return (
     <section
@@ -127,10 +139,11 @@ function OpenCard({ content }: { content: CardContent }) {
         </button>
       </header>
       <div className="card-body">
-        <CardRows content={content} />
+        <CardRows content={content} onPoint={setPointed} />
         <Options id={content.id} options={content.options} />
         <Neighbours neighbours={content.neighbours} />
       </div>
+      {foot !== undefined && <CardFoot path={foot} />}
     </section>
   )
 }

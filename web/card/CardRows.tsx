@@ -1,11 +1,15 @@
-import { useRef, useState } from 'react'
-import type { QuantityEntry } from '../../src/document.ts'
+import { memo, useCallback, useRef, useState } from 'react'
+import { basisOf, type QuantityEntry } from '../../src/document.ts'
 import { focusNumber, useFocusWantedAmong } from '../number/focus.ts'
 import { free, give } from '../number/give.ts'
 import { QuantityField } from '../number/QuantityField.tsx'
 import { readValue, useBalanceStore } from '../store/balance-store.ts'
-import { readGiven, usePlantStore } from '../store/plant-store.ts'
+import { readGiven, readLayout, usePlantStore } from '../store/plant-store.ts'
+import { useQuestionStore } from '../store/questions.ts'
 import type { CardContent } from './card-content.ts'
+import { RowDetail } from './RowDetail.tsx'
+import { useWorthWanted } from './use-worth.ts'
+import { WorthCells, WorthTarget, WorthUnits } from './WorthCells.tsx'
 
 /** Turns a number round: a given is freed; a solved one is given as it is, an open one at its usual value. */
 function turnRound({ path, description }: QuantityEntry): void {
@@ -18,41 +22,104 @@ function turnRound({ path, description }: QuantityEntry): void {
   focusNumber(path, true)
 }
 
-function Row({ entry, given }: { entry: QuantityEntry; given: boolean }) {
+interface RowProps {
+  readonly entry: QuantityEntry
+  readonly given: boolean
+  readonly open: boolean
+  onToggle(path: string): void
+}
+
+const Row = memo(function Row({ entry, given, open, onToggle }: RowProps) {
   const { path, label, description } = entry
   return (
-    <tr className="card-row" data-given={given}>
-      <td className="card-turn">
-        <button
-          type="button"
-          role="switch"
-          aria-checked={given}
-          aria-label={`${label} given`}
-          title={
-            given ? 'Given. Click to free it: then it is solved.' : 'Click to give it a value.'
-          }
-          data-turn={path}
-          onClick={() => turnRound(entry)}
-        />
-      </td>
-      <th scope="row" title={description.help}>
-        {label}
-        {description.symbol && <span className="card-symbol">{description.symbol}</span>}
+    <>
+      <tr className="card-row" data-given={given} data-row={path}>
+        <td className="card-turn">
+          <button
+            type="button"
+            role="switch"
+            aria-checked={given}
+            aria-label={`${label} given`}
+            title={
+              given ? 'Given. Click to free it: then it is solved.' : 'Click to give it a value.'
+            }
+            data-turn={path}
+            onClick={() => turnRound(entry)}
+          />
+        </td>
+        <th scope="row">
+          <button
+            type="button"
+            className="card-label"
+            title={description.help}
+            aria-expanded={open}
+            onClick={() => onToggle(path)}
+          >
+            {label}
+            {description.symbol && <span className="card-symbol">{description.symbol}</span>}
+          </button>
+        </th>
+        <td className="card-value">
+          <QuantityField path={path} label={label} description={description} />
+        </td>
+        {given ? <WorthCells path={path} description={description} /> : <td colSpan={2} />}
+      </tr>
+      {open && (
+        <tr className="card-detail">
+          <td />
+          <td colSpan={4}>
+            <RowDetail entry={entry} />
+          </td>
+        </tr>
+      )}
+    </>
+  )
+})
+
+function SolvedSide() {
+  return (
+    <tr>
+      <th colSpan={5} scope="colgroup" className="card-side card-solved">
+        Solved
       </th>
-      <td className="card-value">
-        <QuantityField path={path} label={label} description={description} />
-      </td>
     </tr>
   )
 }
 
-function Side({ name }: { name: string }) {
+function GivenSide({ entries }: { entries: readonly QuantityEntry[] }) {
+  useWorthWanted()
+  const isKnown = useQuestionStore(({ worths }) => worths.size > 0)
   return (
-    <tr>
-      <th colSpan={3} scope="colgroup" className="card-side">
-        {name}
-      </th>
-    </tr>
+    <>
+      <tr className="card-worth-head">
+        <th colSpan={5} scope="colgroup">
+          {isKnown && (
+            <>
+              <WorthTarget />, <WorthUnits entries={entries} />
+            </>
+          )}
+        </th>
+      </tr>
+      <tr>
+        <th colSpan={3} scope="colgroup" className="card-side">
+          Given
+        </th>
+        <th
+          scope="col"
+          className="card-worth card-side"
+          title="Everything else given stays as it is."
+        >
+          {isKnown && 'fixed'}
+        </th>
+        <th
+          scope="col"
+          className="card-worth card-side card-worth-frozen"
+          title="The machines and surfaces stay what they are, and follow their laws."
+        >
+          {isKnown && 'frozen'}
+        </th>
+      </tr>
+    </>
   )
 }
 
@@ -68,6 +135,11 @@ function useIdle(entries: readonly QuantityEntry[]): string {
   )
 }
 
+/** A given number has something to tell where it is said what it rests on. */
+function isBased(path: string): boolean {
+  return typeof readGiven(path) !== 'number' || basisOf(readLayout(), path) !== undefined
+}
+
 /** Moves the focus by rows, within its column. */
 function moveFocus(table: HTMLElement, step: number): boolean {
   const here = document.activeElement
@@ -80,7 +152,14 @@ function moveFocus(table: HTMLElement, step: number): boolean {
 }
 
 /** The numbers of a card: what is given first, what is solved after. */
-export function CardRows({ content }: { content: CardContent }) {
+export function CardRows({
+  content,
+  onPoint,
+}: {
+  content: CardContent
+  /** The user has turned to a number. */
+  onPoint(path: string): void
+}) {
   const table = useRef<HTMLTableElement>(null)
   // A string, so that the rows are sorted anew only when some quantity changed sides.
   const sides = usePlantStore(() =>
@@ -89,6 +168,13 @@ export function CardRows({ content }: { content: CardContent }) {
   const given = content.entries.filter((_, i) => sides[i] === '1')
   const idle = useIdle(content.entries)
   const [all, setAll] = useState(false)
+  const [detail, setDetail] = useState<string | null>(null)
+  const toggle = useCallback((path: string) => setDetail((old) => (old === path ? null : path)), [])
+  const point = (target: EventTarget) => {
+    const path = (target as Element).closest<HTMLElement>('[data-row]')?.dataset.row
+    const isTold = path !== undefined && (readGiven(path) === undefined || isBased(path))
+    if (isTold) onPoint(path)
+  }
   const idlePaths = content.entries.filter((_, i) => idle[i] === '1').map(({ path }) => path)
   const lookedFor = useFocusWantedAmong(idlePaths)
   if (lookedFor && !all) setAll(true)
@@ -98,10 +184,24 @@ export function CardRows({ content }: { content: CardContent }) {
   if (content.entries.length === 0) {
     return <p className="card-part muted">No numbers of its own: its streams have them.</p>
   }
+  const row = (entry: QuantityEntry, isGiven: boolean) => (
+    <Row
+      key={entry.path}
+      entry={entry}
+      given={isGiven}
+      open={detail === entry.path}
+      onToggle={toggle}
+    />
+  )
   return (
     <table
       ref={table}
       className="card-rows"
+      onFocus={(event) => point(event.target)}
+      onPointerMove={(event) => {
+        // A card that opens under a pointer at rest is not pointed at.
+        if (event.movementX !== 0 || event.movementY !== 0) point(event.target)
+      }}
       onKeyDown={(event) => {
         const step = { ArrowDown: 1, ArrowUp: -1 }[event.key]
         if (step && table.current && moveFocus(table.current, step)) {
@@ -113,14 +213,14 @@ export function CardRows({ content }: { content: CardContent }) {
       {/* All rows in one body: one that changes sides moves, and keeps its open field and the focus. */}
       <tbody>
         {[
-          ...(given.length > 0 ? [<Side key="given" name="Given" />] : []),
-          ...given.map((entry) => <Row key={entry.path} entry={entry} given />),
-          ...(solved.length > 0 ? [<Side key="solved" name="Solved" />] : []),
-          ...solved.map((entry) => <Row key={entry.path} entry={entry} given={false} />),
+          ...(given.length > 0 ? [<GivenSide key="given" entries={given} />] : []),
+          ...given.map((entry) => row(entry, true)),
+          ...(solved.length > 0 ? [<SolvedSide key="solved" />] : []),
+          ...solved.map((entry) => row(entry, false)),
         ]}
         {hidden > 0 && (
           <tr key="more">
-            <td colSpan={3} className="card-more">
+            <td colSpan={5} className="card-more">
               <button type="button" onClick={() => setAll(true)}>
                 and {hidden} open
               </button>

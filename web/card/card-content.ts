@@ -33,6 +33,8 @@ export interface CardContent {
   /** What it is: 'turbine, id hp'. */
   readonly about: string
   readonly help: string
+  /** The quantity whose origin stands at the card's foot until another is pointed at. */
+  readonly chief: string | undefined
   readonly entries: readonly QuantityEntry[]
   readonly options: readonly CardOption[]
   readonly neighbours: readonly Neighbour[]
@@ -54,6 +56,7 @@ export function cardContent(layout: Layout, id: string): CardContent | undefined
     entries: quantitiesOfId(layout, id),
     renamable: true,
     help: '',
+    chief: undefined as string | undefined,
     options: [],
     neighbours: [],
   }
@@ -64,6 +67,7 @@ export function cardContent(layout: Layout, id: string): CardContent | undefined
         ...common,
         about: withinSentence(kind?.label ?? owner.unit.kind),
         help: kind?.help ?? '',
+        chief: kind?.chief === undefined ? common.entries[0]?.path : `${id}.${kind.chief}`,
         options: optionsOf(owner.unit),
         neighbours: portsOf(layout, owner.unit)
           .filter(({ stream, description }) => stream !== undefined || !description.optional)
@@ -85,6 +89,7 @@ export function cardContent(layout: Layout, id: string): CardContent | undefined
       return {
         ...common,
         about: `stream ${id}`,
+        chief: `${id}.h`,
         neighbours: ends.map(([place, end]) => {
           const [unit = end, port = ''] = end.split('.')
           return { place, id: unit, name: `${labelOf(layout, unit)}, ${port}` }
@@ -95,6 +100,7 @@ export function cardContent(layout: Layout, id: string): CardContent | undefined
       const { turbines, pumps } = owner.shaft
       return {
         ...common,
+        chief: owner.shaft.generator === false ? undefined : `${id}.generatorPower`,
         about: owner.shaft.generator === false ? 'shaft without generator' : 'shaft with generator',
         neighbours: [
           ...turbines.map((unit) => ({ place: 'Turbine', id: unit, name: labelOf(layout, unit) })),
@@ -103,6 +109,6 @@ export function cardContent(layout: Layout, id: string): CardContent | undefined
       }
     }
     case 'plant':
-      return { ...common, renamable: false, about: 'the whole plant' }
+      return { ...common, renamable: false, about: 'the whole plant', chief: 'plant.netPower' }
   }
 }

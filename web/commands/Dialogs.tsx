@@ -1,44 +1,18 @@
-import { type ReactNode, useEffect, useId, useRef, useState } from 'react'
+import { type ReactNode, useEffect, useState } from 'react'
 import { openKept } from '../files/keeping.ts'
 import { type KeptPlant, keptPlants } from '../files/kept-plants.ts'
 import { type Example, openExample, readExamples } from '../files/plant-file.ts'
-import { Icon } from '../strip/Icon.tsx'
 import { commandName, useCommandStore } from './command-store.ts'
+import { Dialog as Shell } from './Dialog.tsx'
 import { useDialogStore } from './dialog-store.ts'
 import { keysText } from './shortcuts.ts'
-import './dialogs.css'
 
 function Dialog({ title, children }: { title: string; children: ReactNode }) {
-  const place = useRef<HTMLDialogElement>(null)
   const close = useDialogStore((state) => state.close)
-  const titleId = useId()
-  useEffect(() => {
-    place.current?.showModal()
-  }, [])
   return (
-    // biome-ignore lint/a11y/useKeyWithClickEvents: Escape closes a dialog by itself.
-    <dialog
-      ref={place}
-      className="dialog"
-      aria-labelledby={titleId}
-      onClose={close}
-      onClick={(event) => {
-        if (event.target === place.current) place.current?.close()
-      }}
-    >
-      <header>
-        <h2 id={titleId}>{title}</h2>
-        <button
-          type="button"
-          className="icon-button"
-          aria-label="Close"
-          onClick={() => place.current?.close()}
-        >
-          <Icon name="close" size={12} />
-        </button>
-      </header>
-      <div className="dialog-body">{children}</div>
-    </dialog>
+    <Shell title={title} onClose={close}>
+      {children}
+    </Shell>
   )
 }
 
@@ -82,6 +56,14 @@ function Keys() {
         <div>
           <dt>On a number: type to give it, free it</dt>
           <dd>0 to 9, Delete</dd>
+        </div>
+        <div>
+          <dt>On a number: where it comes from</dt>
+          <dd>W, or a click with {keysText('Alt')}</dd>
+        </div>
+        <div>
+          <dt>On a given number: change it live</dt>
+          <dd>Drag sideways; Shift finer</dd>
         </div>
         <div>
           <dt>In a number: give it as it stands, leave it</dt>

@@ -4,7 +4,7 @@ import { usePlantStore } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { free, give } from './give.ts'
 import { Mark } from './Mark.tsx'
-import { fieldText, fieldUnit, readTyped, stepOf, usualText } from './typed-number.ts'
+import { fieldText, fieldUnit, readTyped, stepOf, typedNote, usualText } from './typed-number.ts'
 import { useNumber } from './use-number.ts'
 
 interface Editing {
@@ -135,7 +135,10 @@ export function NumberInput(props: Props) {
   }
 
   const { error } = editing
-  const note = error ?? usualText(description, units)
+  const note =
+    error ??
+    typedNote(editing.text, editing.first, path, description, units, editing.unit) ??
+    usualText(description, units)
   return (
     <span className="quantity-edit">
       <input

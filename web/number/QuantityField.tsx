@@ -1,11 +1,13 @@
 import { memo, useEffect, useMemo, useRef, useState } from 'react'
 import type { QuantityDescription } from '../../src/document.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
+import { openCurve } from './curve-store.ts'
 import { focusGranted, useFocusWanted } from './focus.ts'
 import { free } from './give.ts'
 import { NumberInput } from './NumberInput.tsx'
 import { QuantityText, useNumberText } from './Quantity.tsx'
 import { usualText } from './typed-number.ts'
+import { useValueDrag } from './use-value-drag.ts'
 
 interface Props {
   readonly path: string
@@ -36,6 +38,8 @@ function ClosedField({ path, label, description, showUnit = true, focused, onOpe
   const wanted = useFocusWanted(path)
   const button = useRef<HTMLButtonElement>(null)
   const { state, given } = number
+  const drag = useValueDrag(path, description)
+  const isCurve = given !== undefined && typeof given !== 'number'
 
   useEffect(() => {
     if (focused) button.current?.focus()
@@ -56,8 +60,22 @@ function ClosedField({ path, label, description, showUnit = true, focused, onOpe
       className="quantity-field"
       data-path={path}
       title={usual}
-      onClick={() => onOpen()}
+      data-draggable={typeof given === 'number'}
+      onPointerDown={drag.onPointerDown}
+      onPointerMove={drag.onPointerMove}
+      onPointerUp={drag.onPointerUp}
+      onPointerCancel={drag.onPointerCancel}
+      onClick={() => {
+        if (drag.endsDrag()) return
+        if (isCurve) openCurve(path)
+        else onOpen()
+      }}
       onKeyDown={(event) => {
+        if (event.key === 'Escape' && drag.cancel(event.currentTarget)) {
+          event.preventDefault()
+          event.stopPropagation()
+          return
+        }
         if (event.ctrlKey || event.metaKey || event.altKey) return
         // Letters too: with the focus on a number they are no shortcuts of the canvas.
         if (/^[\p{L}\p{N}.,+\-−]$/u.test(event.key)) onOpen(event.key)
@@ -67,7 +85,7 @@ function ClosedField({ path, label, description, showUnit = true, focused, onOpe
         event.stopPropagation()
       }}
     >
-      {given !== undefined && typeof given !== 'number' && <span className="curve">curve</span>}
+      {isCurve && <span className="curve">curve</span>}
       <span className="visually-hidden">{label}: </span>
       <QuantityText number={number} showUnit={showUnit} silent />
       <span className="visually-hidden">, {words[state]}</span>

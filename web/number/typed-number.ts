@@ -68,6 +68,47 @@ export function stepOf(description: QuantityDescription, value: number): number 
   return description.step ?? (value === 0 ? 1 : Math.abs(value) / 100)
 }
 
+/**
+ * What a typed text comes to, where that is not plain: gauge pressure and vacuum, another unit, a sum.
+ * Nothing while the text is untouched, plain or cannot be read yet.
+ */
+export function typedNote(
+  text: string,
+  first: string,
+  path: string,
+  description: QuantityDescription,
+  units: UnitChoice,
+  unit: string,
+): string | undefined {
+  if (text === first || /^\s*[-+−]?[\d.\s]*$/.test(text)) return undefined
+  const read = readTyped(text, path, description, units, unit)
+  if (read.outcome !== 'value') return undefined
+  if (read.note !== undefined) return read.note
+  const shown = formatQuantity(read.value, description.dimension, units, { digits: 'given', unit })
+  return `That is ${`${shown.text} ${shown.unit}`.trim()}.`
+}
+
+/**
+ * A value reached by steps, as it would be typed: without the digits that only the conversion left.
+ * Null where it cannot be given.
+ */
+export function roundedStep(
+  value: number,
+  path: string,
+  description: QuantityDescription,
+  units: UnitChoice,
+  unit: string,
+): number | null {
+  const read = readTyped(
+    fieldText(value, description, units, true, unit),
+    path,
+    description,
+    units,
+    unit,
+  )
+  return read.outcome === 'value' ? read.value : null
+}
+
 /** 'Usual -3 to 5 K: practice for ...', or nothing where no range is declared. */
 export function usualText(description: QuantityDescription, units: UnitChoice): string | undefined {
   const { range, usual, basis, dimension } = description
