@@ -7,6 +7,8 @@ import { Divider } from './Divider.tsx'
 import { Drawer } from './drawer/Drawer.tsx'
 import { Guard } from './Guard.tsx'
 import { CaseRow } from './layouts/CaseRow.tsx'
+import { CurveDialog } from './number/CurveDialog.tsx'
+import { UnitsDialog } from './number/UnitsDialog.tsx'
 import Rail from './rail/Rail.tsx'
 import { useSettingsStore } from './store/settings-store.ts'
 import { Notices } from './strip/Notices.tsx'
@@ -136,6 +138,8 @@ export function App() {
         )}
       </main>
       <Dialogs />
+      <CurveDialog />
+      <UnitsDialog />
     </div>
   )
 }

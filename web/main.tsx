@@ -5,6 +5,7 @@ import { useCommandStore } from './commands/command-store.ts'
 import { listenForShortcuts } from './commands/shortcuts.ts'
 import { windowCommands } from './commands/window-commands.ts'
 import { listenForWhereFrom } from './drawer/where-from-store.ts'
+import { listenForWhereFrom } from './drawer/where-from-store.ts'
 import { startKeeping } from './files/keeping.ts'
 import { listenForDrops, readExample } from './files/plant-file.ts'
 import { startReferences } from './store/reference-store.ts'
@@ -19,6 +20,7 @@ followTheme()
 useCommandStore.getState().register(windowCommands)
 listenForShortcuts()
 listenForDrops()
+listenForWhereFrom()
 listenForWhereFrom()
 watchNetwork()
 

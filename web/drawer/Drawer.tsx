@@ -15,6 +15,8 @@ import {
   TotalsTable,
   UnitTable,
 } from './tables/ResultTables.tsx'
+import { WhereFrom } from './WhereFrom.tsx'
+import { useWhereFromStore } from './where-from-store.ts'
 import './drawer.css'
 
 const tabs: readonly DrawerTab[] = drawerTabs
@@ -128,6 +130,8 @@ export function Drawer() {
   const tab = useSettingsStore((state) => state.drawerTab)
   const folded = useSettingsStore((state) => state.drawerFolded)
   const change = useSettingsStore((state) => state.change)
+  const isAsked = useWhereFromStore(({ trail }) => trail.length > 0)
+  const closeWhereFrom = useWhereFromStore((state) => state.close)
   const base = useId()
   const Body = bodies[tab]
   return (
@@ -141,6 +145,7 @@ export function Drawer() {
             const step = { ArrowRight: 1, ArrowLeft: -1 }[event.key]
             if (!step) return
             const next = tabs[(tabs.indexOf(tab) + step + tabs.length) % tabs.length] as DrawerTab
+            closeWhereFrom()
             change({ drawerTab: next })
             document.getElementById(`${base}-${next}`)?.focus()
             event.preventDefault()
@@ -154,10 +159,13 @@ export function Drawer() {
                 id={`${base}-${one}`}
                 type="button"
                 role="tab"
-                aria-selected={one === tab && !folded}
+                aria-selected={one === tab && !folded && !isAsked}
                 aria-controls={`${base}-body`}
                 tabIndex={one === tab ? 0 : -1}
-                onClick={() => change({ drawerTab: one, drawerFolded: false })}
+                onClick={() => {
+                  closeWhereFrom()
+                  change({ drawerTab: one, drawerFolded: false })
+                }}
               >
                 <Name />
               </button>
@@ -182,7 +190,7 @@ export function Drawer() {
           role="tabpanel"
           aria-labelledby={`${base}-${tab}`}
         >
-          <Body />
+          {isAsked ? <WhereFrom /> : <Body />}
         </div>
       )}
     </section>
