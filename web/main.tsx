@@ -5,9 +5,9 @@ import { useCommandStore } from './commands/command-store.ts'
 import { listenForShortcuts } from './commands/shortcuts.ts'
 import { windowCommands } from './commands/window-commands.ts'
 import { listenForWhereFrom } from './drawer/where-from-store.ts'
-import { listenForWhereFrom } from './drawer/where-from-store.ts'
 import { startKeeping } from './files/keeping.ts'
 import { listenForDrops, readExample } from './files/plant-file.ts'
+import { layoutCommands } from './layouts/layout-commands.ts'
 import { startReferences } from './store/reference-store.ts'
 import { startSolving } from './store/solving.ts'
 import { watchNetwork } from './strip/network-store.ts'
@@ -17,10 +17,9 @@ import './styles/base.css'
 import { followTheme } from './styles/theme.ts'
 
 followTheme()
-useCommandStore.getState().register(windowCommands)
+useCommandStore.getState().register([...windowCommands, ...layoutCommands])
 listenForShortcuts()
 listenForDrops()
-listenForWhereFrom()
 listenForWhereFrom()
 watchNetwork()
 
