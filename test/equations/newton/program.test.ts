@@ -9,6 +9,7 @@ import {
   equal,
   exponential,
   forEachVariableOf,
+  logarithm,
   minus,
   type Operation,
   Outcome,
@@ -207,6 +208,22 @@ describe('one equation with its variable in several places', () => {
     expect(program.tape.values[1]).toBeCloseTo(9.9, 9)
   })
 
+  it('prefers an answer that makes sense, and takes another where there is none', () => {
+    const equation = equal(times(b, b), plus(times(b, constant(0.5)), constant(5)))
+    const roots = [0.25 - Math.sqrt(5.0625), 0.25 + Math.sqrt(5.0625)] as const
+    const between = (low: number, high: number): Bounds => {
+      const bounds = wide(2)
+      bounds.sensibleLower.fill(low)
+      bounds.sensibleUpper.fill(high)
+      return bounds
+    }
+    expect(scalar(equation, -3, between(0, 1e6)).tape.values[1]).toBeCloseTo(roots[1], 12)
+    expect(scalar(equation, 3, between(-1e6, 0)).tape.values[1]).toBeCloseTo(roots[0], 12)
+    const outside = scalar(equation, 3, between(5, 10))
+    expect(outside.outcomes[0]).toBe(StepOutcome.solved)
+    expect(roots.some((root) => Math.abs(outside.tape.values[1]! - root) < 1e-9)).toBe(true)
+  })
+
   it('takes a linear one without iterating', () => {
     const program = programOf([equal(plus(b, times(constant(3), b)), a)], 2, 1)
     program.set(0, 8)
@@ -316,6 +333,23 @@ describe('equations solved together', () => {
     expect(program.outcomes[0]).toBe(StepOutcome.solved)
     expect(program.tape.values[1]).toBeCloseTo(0, 12)
     expect(program.tape.values[2]).toBeCloseTo(0, 12)
+  })
+
+  it('are solved although the first guess has no value', () => {
+    // ln b + c^2 = 4 and b = 3 + exp(c) with b guessed where the logarithm has no value.
+    const equations = [
+      equal(plus(logarithm(b), square(c)), constant(4)),
+      equal(b, plus(constant(3), exponential(c))),
+    ]
+    const program = programOf(equations, 3, 1, wide(3, -50, 50))
+    program.solve(() => {
+      program.tape.values[1] = -5
+      program.tape.values[2] = 0
+    })
+    expect(program.outcomes[program.blocks.length - 1]).toBe(StepOutcome.solved)
+    const [B, C] = [program.tape.values[1]!, program.tape.values[2]!]
+    expect(Math.log(B) + C * C).toBeCloseTo(4, 12)
+    expect(B - 3 - Math.exp(C)).toBeCloseTo(0, 11)
   })
 
   it('agreeing equations that leave an unknown open are singular, others contradict', () => {
