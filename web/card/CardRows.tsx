@@ -60,7 +60,7 @@ const Row = memo(function Row({ entry, given, open, onToggle }: RowProps) {
           </button>
         </th>
         <td className="card-value">
-          <QuantityField path={path} label={label} description={description} />
+          <QuantityField path={path} label={label} description={description} sought />
         </td>
         {given ? <WorthCells path={path} description={description} /> : <td colSpan={2} />}
       </tr>

@@ -14,6 +14,8 @@ interface Props {
   readonly label: string
   readonly description: QuantityDescription
   readonly showUnit?: boolean
+  /** Takes the focus when its number is looked for: where a number stands twice, one of them does. */
+  readonly sought?: true
 }
 
 const words = {
@@ -31,11 +33,19 @@ interface ClosedProps extends Props {
   onOpen(typed?: string): void
 }
 
-function ClosedField({ path, label, description, showUnit = true, focused, onOpen }: ClosedProps) {
+function ClosedField({
+  path,
+  label,
+  description,
+  showUnit = true,
+  sought,
+  focused,
+  onOpen,
+}: ClosedProps) {
   const number = useNumberText(path, description.dimension)
   const units = useUnitChoice()
   const usual = useMemo(() => usualText(description, units), [description, units])
-  const wanted = useFocusWanted(path)
+  const wanted = useFocusWanted(sought ? path : null)
   const button = useRef<HTMLButtonElement>(null)
   const { state, given } = number
   const drag = useValueDrag(path, description)

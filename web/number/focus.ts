@@ -21,7 +21,7 @@ export function useFocusWantedAmong(paths: readonly string[]): boolean {
   return useFocusStore((state) => state.path !== null && paths.includes(state.path))
 }
 
-/** Whether the focus is wanted here: null no, else whether the field is to open. */
-export function useFocusWanted(path: string): boolean | null {
-  return useFocusStore((state) => (state.path === path ? state.edit : null))
+/** Whether the focus is wanted here: null no, else whether the field is to open. A null path never is. */
+export function useFocusWanted(path: string | null): boolean | null {
+  return useFocusStore((state) => (path !== null && state.path === path ? state.edit : null))
 }
