@@ -236,7 +236,8 @@ function profileOf(placed: PlacedUnit, passage: HeatPassage, results: Results): 
     superheat: Float64Array.from(superheat),
     zones,
     marks,
-    closest: closestOf(hotPairs, coldPairs),
+    // What mixes has no surface that an approach could be asked of.
+    closest: passage.hot.to === coldPort(passage) ? null : closestOf(hotPairs, coldPairs),
   }
 }
 

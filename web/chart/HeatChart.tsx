@@ -122,7 +122,7 @@ export function HeatPicture({
     ...(ghost ? [ghost.hot, ghost.cold] : []),
   ])
   const beside = Math.max(3, 0.09 * (high - low))
-  const range: readonly [number, number] = [low - beside, high + beside]
+  const range: readonly [number, number] = [low - beside, high + 1.9 * beside]
   const scale: Scale = {
     x: (heat) => plot.x + (plot.width * heat) / most,
     y: (T) => bottom - (plot.height * (T - range[0])) / (range[1] - range[0]),
@@ -195,6 +195,9 @@ export function HeatPicture({
             <stop key={share} offset={share} stopColor={rampAt(share)} />
           ))}
         </linearGradient>
+        <clipPath id={`${id}-plot`}>
+          <rect x={plot.x - 2} y={plot.y} width={plot.width + 4} height={plot.height} />
+        </clipPath>
       </defs>
       {zones.map(({ name, title, text, at, x, width: wide }, i) => (
         <g key={name}>
@@ -243,7 +246,7 @@ export function HeatPicture({
           <path d={line(ghost.cold, scale)} />
         </g>
       )}
-      <g className="heat-lines" stroke={ramp}>
+      <g className="heat-lines" stroke={ramp} clipPath={`url(#${id}-plot)`}>
         {profile.superheat.length > 0 && (
           <path className="heat-superheat" d={line(profile.superheat, scale)} />
         )}

@@ -51,7 +51,7 @@ export interface DrawingOptions {
 const line = 15
 const baseline = 11.5
 const legendHeight = 44
-const titleBlock = { width: 260, line: 15 }
+const titleBlock = { least: 220, line: 15 }
 
 /** A plant as a drawing, streams and texts where the canvas has them at 100 %. */
 export function PlantDrawing({
@@ -69,9 +69,16 @@ export function PlantDrawing({
     ...tags.values(),
   ])
   const inner = grown(whole ?? { x: 0, y: 0, width: 320, height: 160 }, 20)
+  const blockWidth = frame
+    ? Math.max(
+        titleBlock.least,
+        textWidth(frame.title, 14, 600) + 24,
+        ...frame.lines.map((words) => textWidth(words, 11) + 24),
+      )
+    : 0
   const blockHeight = frame ? titleBlock.line * (frame.lines.length + 1) + 14 : 0
   const foot = Math.max(legend ? legendHeight : 0, blockHeight)
-  const wide = Math.max(inner.width, (legend ? 560 : 0) + (frame ? titleBlock.width : 0))
+  const wide = Math.max(inner.width, (legend ? 560 : 0) + blockWidth)
   const box: Box = { x: inner.x, y: inner.y, width: wide, height: inner.height + foot }
   const view = frame ? grown(box, 12) : box
   const bottom = box.y + box.height
@@ -128,14 +135,14 @@ export function PlantDrawing({
         <g className="drawing-frame">
           <rect x={box.x} y={box.y} width={box.width} height={box.height} />
           <rect
-            x={box.x + box.width - titleBlock.width}
+            x={box.x + box.width - blockWidth}
             y={bottom - blockHeight}
-            width={titleBlock.width}
+            width={blockWidth}
             height={blockHeight}
           />
           <text
             className="drawing-title"
-            x={box.x + box.width - titleBlock.width + 10}
+            x={box.x + box.width - blockWidth + 10}
             y={bottom - blockHeight + 18}
           >
             {frame.title}
@@ -144,7 +151,7 @@ export function PlantDrawing({
             <text
               key={text}
               className="drawing-note"
-              x={box.x + box.width - titleBlock.width + 10}
+              x={box.x + box.width - blockWidth + 10}
               y={bottom - blockHeight + 18 + titleBlock.line * (i + 1)}
             >
               {text}

@@ -20,7 +20,7 @@ export function plantSvg({ frame, legend }: DrawingChoice): string {
   const options: DrawingOptions = { legend, ...(frame ? { frame: { title, lines } } : {}) }
   const place = document.createElement('div')
   place.className = 'light-sheet'
-  place.setAttribute('style', 'position:fixed;left:-20000px;top:0')
+  Object.assign(place.style, { position: 'fixed', left: '-20000px', top: '0' })
   document.body.append(place)
   const root = createRoot(place)
   try {

@@ -24,8 +24,6 @@ const textProperties = [
   'font-weight',
   'text-anchor',
   'text-decoration-line',
-  'text-decoration-style',
-  'text-decoration-color',
 ] as const
 
 /** What a property is when nothing says otherwise; not worth writing. */
@@ -79,7 +77,7 @@ function split(text: string): { readonly colour: string; readonly opacity: numbe
 function onLightSheet<T>(classes: string, use: (sheet: HTMLElement) => T): T {
   const outer = document.createElement('div')
   outer.className = `light-sheet ${classes}`
-  outer.setAttribute('style', 'position:fixed;left:-20000px;top:0;')
+  Object.assign(outer.style, { position: 'fixed', left: '-20000px', top: '0' })
   outer.setAttribute('aria-hidden', 'true')
   document.body.append(outer)
   try {
@@ -92,7 +90,7 @@ function onLightSheet<T>(classes: string, use: (sheet: HTMLElement) => T): T {
 export interface StandaloneOptions {
   /** Classes of what holds the drawing in the window, whose style sheets reach into it. */
   readonly within?: string
-  /** CSS colour of the ground; none: clear. */
+  /** Colour of the ground, #rrggbb; paper unless given, 'none' for none. */
   readonly ground?: string
   readonly title?: string
 }
@@ -105,7 +103,7 @@ export function standaloneSvg(source: SVGSVGElement, options: StandaloneOptions 
   return onLightSheet(within, (sheet) => {
     const copy = source.cloneNode(true) as SVGSVGElement
     sheet.append(copy)
-    const paper = ground ?? getComputedStyle(sheet).backgroundColor
+    const paper = ground ?? getComputedStyle(sheet).getPropertyValue('--paper').trim()
     const elements = [copy, ...copy.querySelectorAll<SVGElement>('*')]
     // All styles are read before any is written: writing would change what later ones inherit.
     const styles = elements.map(styleOf)
@@ -115,7 +113,7 @@ export function standaloneSvg(source: SVGSVGElement, options: StandaloneOptions 
       }
       for (const [name, value] of styles[i] ?? []) element.setAttribute(name, value)
     })
-    for (const element of elements) if (isHidden(element, styles)) element.remove()
+    for (const element of elements) if (element.hasAttribute(hidden)) element.remove()
     copy.setAttribute('xmlns', svgNamespace)
     copy.setAttribute('width', String(width))
     copy.setAttribute('height', String(height))
@@ -144,13 +142,12 @@ export function standaloneSvg(source: SVGSVGElement, options: StandaloneOptions 
   })
 }
 
-function isHidden(element: SVGElement, _: unknown): boolean {
-  return element.getAttribute('data-remove') === 'true'
-}
+/** Mark of elements that style sheets hide. */
+const hidden = 'data-hidden'
 
 function styleOf(element: SVGElement): readonly (readonly [string, string])[] {
   const style = getComputedStyle(element)
-  if (style.display === 'none' && element.tagName !== 'defs') return [['data-remove', 'true']]
+  if (style.display === 'none' && element.tagName !== 'defs') return [[hidden, '']]
   const isText = element.tagName === 'text' || element.tagName === 'tspan'
   const isStop = element.tagName === 'stop'
   const written: [string, string][] = []
@@ -175,9 +172,10 @@ function styleOf(element: SVGElement): readonly (readonly [string, string])[] {
         }
         if (name === 'stroke' && value === 'none') continue
       }
-    } else if (name.startsWith('text-decoration-')) {
-      if (style.getPropertyValue('text-decoration-line') === 'none') continue
-      if (name === 'text-decoration-color') value = plainColour(value).colour
+    } else if (name === 'text-decoration-line') {
+      // Dots are more than most readers of such files know.
+      written.push(['text-decoration', value])
+      continue
     } else if (name.endsWith('width') || name === 'font-size') value = value.replace(/px$/, '')
     else if (name === 'stroke-dasharray') value = value.replaceAll('px', '')
     if (name.startsWith('stroke-') && style.getPropertyValue('stroke') === 'none') continue

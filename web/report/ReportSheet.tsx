@@ -6,7 +6,7 @@ import { StatePicture } from '../chart/StateChart.tsx'
 import { tableBuilders } from '../drawer/tables/tables.ts'
 import { downloadText, fileStem } from '../export/download.ts'
 import { readDrawingSource } from '../export/drawing-source.ts'
-import { PlantDrawing } from '../export/PlantDrawing.tsx'
+import { type DrawingSource, PlantDrawing } from '../export/PlantDrawing.tsx'
 import { subject, titleLines } from '../export/title-lines.ts'
 import { useBalanceStore } from '../store/balance-store.ts'
 import { useLayout, usePlantStore } from '../store/plant-store.ts'
@@ -70,8 +70,10 @@ export default function ReportSheet() {
   const width = room[paper]
   const shows = (name: SectionName) => !left.includes(name)
   const source = useMemo(() => ({ layout, names, balance }), [layout, names, balance])
+  const [drawing, setDrawing] = useState<DrawingSource | null>(null)
+  // Reading the drawing sets the canvas to 100 % and back: not while anything is being rendered.
   // biome-ignore lint/correctness/useExhaustiveDependencies: the drawing is read from the stores
-  const drawing = useMemo(readDrawingSource, [layout, balance, units])
+  useEffect(() => setDrawing(readDrawingSource()), [layout, balance, units])
   const givens = useMemo(() => givenLines(layout, caseId, units), [layout, caseId, units])
 
   useEffect(() => {
@@ -184,10 +186,12 @@ export default function ReportSheet() {
           <section className="report-wide">
             <h2>{heading(sectionWords.diagram)}</h2>
             <div className="report-drawing">
-              <PlantDrawing
-                source={drawing}
-                options={{ legend, ...(frame ? { frame: { title, lines } } : {}) }}
-              />
+              {drawing && (
+                <PlantDrawing
+                  source={drawing}
+                  options={{ legend, ...(frame ? { frame: { title, lines } } : {}) }}
+                />
+              )}
             </div>
           </section>
         )}

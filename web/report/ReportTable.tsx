@@ -15,8 +15,18 @@ interface ShownColumn {
   readonly width: number
 }
 
-/** The columns in as many parts as the paper's width asks for, each led by the first column. */
+/** The columns in as few parts as the paper's width allows, none much narrower than the others. */
 function partsOf(columns: readonly ShownColumn[], room: number): readonly ShownColumn[][] {
+  const fewest = filled(columns, room)
+  for (let less = 0.5; less < 1; less += 0.05) {
+    const parts = filled(columns, less * room)
+    if (parts.length === fewest.length) return parts
+  }
+  return fewest
+}
+
+/** Parts filled one after the other, each led by the first column. */
+function filled(columns: readonly ShownColumn[], room: number): readonly ShownColumn[][] {
   const [first, ...rest] = columns
   if (!first) return []
   const parts: ShownColumn[][] = []

@@ -15,9 +15,9 @@ export function reportFile(page: HTMLElement, title: string): string {
   copy.querySelectorAll('svg').forEach((svg, i) => {
     const source = drawn[i]
     if (!source) return
-    const within = source.closest('.chart-picture') ? 'chart-picture' : ''
+    const within = source.closest('.chart-picture') ? 'chart-picture white-paper' : 'white-paper'
     const holder = document.createElement('template')
-    holder.innerHTML = standaloneSvg(source, { within })
+    holder.innerHTML = standaloneSvg(source, { within, ground: 'none' })
     svg.replaceWith(holder.content)
   })
   for (const element of copy.querySelectorAll('[role="listbox"], .visually-hidden'))

@@ -79,6 +79,9 @@ export function TableTools({ table }: { readonly table: Table }) {
         // biome-ignore lint/a11y/noStaticElementInteractions: Escape bubbles up here from the boxes.
         <div
           className="table-columns"
+          style={{
+            maxHeight: Math.max(120, (place.current?.parentElement?.clientHeight ?? 0) - 40),
+          }}
           onKeyDown={(event) => {
             if (event.key !== 'Escape') return
             event.stopPropagation()

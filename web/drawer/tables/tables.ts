@@ -175,13 +175,17 @@ export function unitTable(source: TableSource): Table {
 function declaredColumns(
   source: TableSource,
   units: readonly Unit[],
-  taken: ReadonlySet<string>,
   isShown: (description: QuantityDescription) => boolean,
 ): TableColumn[] {
   const columns = new Map<string, TableColumn>()
-  for (const unit of units) {
+  // Where kinds word a quantity differently, the words of those with most units hold.
+  const kindsByCount = [...units].sort(
+    (a, b) =>
+      countOf(units, b.kind) - countOf(units, a.kind) || units.indexOf(a) - units.indexOf(b),
+  )
+  for (const unit of kindsByCount) {
     for (const { name, description, number: numbered } of quantitiesOf(source.layout, unit)) {
-      if (numbered !== undefined || taken.has(name) || columns.has(name)) continue
+      if (numbered !== undefined || columns.has(name)) continue
       columns.set(
         name,
         number(name, description, {
@@ -193,6 +197,9 @@ function declaredColumns(
   }
   return [...columns.values()]
 }
+
+const countOf = (units: readonly Unit[], kind: string): number =>
+  units.filter((unit) => unit.kind === kind).length
 
 /** The streams at a port of a kind's table, all numbers of a repeated one. */
 function streamsAt(source: TableSource, unit: Unit, port: string): string[] {
@@ -266,7 +273,6 @@ export function heaterTable(source: TableSource): Table {
   const declared = declaredColumns(
     source,
     units,
-    new Set(),
     ({ dimension, usual, given }) => heatDimensions.has(dimension) && !(usual === 0 && given),
   )
   const columns = [...own.slice(0, 2), ...declared, ...own.slice(2)]
@@ -380,9 +386,7 @@ export function pumpTable(source: TableSource): Table {
     number('inletT', temperature('Suction temperature', 'Where it enters.')),
     number('outletT', temperature('Discharge temperature', 'Where it leaves.')),
   ]
-  const declared = declaredColumns(source, units, new Set(), ({ dimension }) =>
-    shortDimensions.has(dimension),
-  )
+  const declared = declaredColumns(source, units, ({ dimension }) => shortDimensions.has(dimension))
   const columns = [...own, ...declared]
   const ends = new Map(unitStreams(source.layout).map((its) => [its.unit.id, its]))
   const rows = units.map((unit) => {
