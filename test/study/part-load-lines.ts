@@ -84,7 +84,7 @@ export function withCase(
                 id: 'partload',
                 name: 'Part load',
                 frozen: true,
-                ...hardwareOf(one),
+                ...frozenAs(one),
                 loadControl: control,
                 given: { [path]: full * share },
               },
@@ -95,10 +95,10 @@ export function withCase(
   }
 }
 
-/** A proposal runs on the hardware that its own cases take. */
-function hardwareOf({ cases }: Layout): Pick<Case, 'hardwareFrom'> {
-  const hardwareFrom = cases.find((one) => one.hardwareFrom)?.hardwareFrom
-  return hardwareFrom ? { hardwareFrom } : {}
+/** What the layout's own frozen cases say beside the load: whose hardware, and what they free. */
+function frozenAs({ cases }: Layout): Pick<Case, 'hardwareFrom' | 'free'> {
+  const { hardwareFrom, free } = cases.find(({ frozen }) => frozen) ?? {}
+  return { ...(hardwareFrom && { hardwareFrom }), ...(free && { free }) }
 }
 
 function numberOf(value: number | string | null | undefined): number | null {

@@ -4,6 +4,7 @@ import { Icon } from '../strip/Icon.tsx'
 import { showComparison } from './comparison.ts'
 import { addEmptyLayout, deleteLayout, proposeFrom, renameLayout, shiftLayout } from './edits.ts'
 import { PopMenu } from './PopMenu.tsx'
+import { SameMachine } from './SameMachine.tsx'
 import { Tabs } from './Tabs.tsx'
 import './layouts.css'
 
@@ -51,6 +52,7 @@ export function LayoutTabs() {
           { name: 'Empty layout', run: addEmptyLayout },
         ]}
       />
+      <SameMachine />
     </Tabs>
   )
 }
