@@ -1,11 +1,12 @@
 import { useMemo, useRef, useState } from 'react'
-import { setLabel, setOption, withinSentence } from '../../src/document.ts'
+import { ownerOf, setLabel, setOption, withinSentence } from '../../src/document.ts'
 import { editLayout, useLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { Icon } from '../strip/Icon.tsx'
 import { CardFoot } from './CardFoot.tsx'
 import { CardRows } from './CardRows.tsx'
 import { type CardContent, type CardOption, cardContent, type Neighbour } from './card-content.ts'
+import { ManyCard } from './ManyCard.tsx'
 import { usePlace } from './use-place.ts'
 import './card.css'
 
@@ -148,7 +149,7 @@ function OpenCard({ content }: { content: CardContent }) {
   )
 }
 
-/** The card of the one thing selected, laid over the canvas where it covers least. */
+/** The card of what is selected, laid over the canvas where it covers least. */
 export function Card() {
   const layout = useLayout()
   const opened = usePlantStore((state) => state.opened)
@@ -159,5 +160,10 @@ export function Card() {
     () => (selected === null ? undefined : cardContent(layout, selected)),
     [layout, selected],
   )
+  const many = useSelectionStore((state) => state.selected)
+  if (many.length > 1) {
+    const ids = many.filter((id) => ownerOf(layout, id) !== undefined)
+    if (ids.length > 1) return <ManyCard key={`${opened}/${ids.join()}`} ids={many} />
+  }
   return content ? <OpenCard key={`${opened}/${content.id}`} content={content} /> : null
 }

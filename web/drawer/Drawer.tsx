@@ -6,6 +6,7 @@ import { useBalanceStore } from '../store/balance-store.ts'
 import { type DrawerTab, drawerTabs, useSettingsStore } from '../store/settings-store.ts'
 import { Icon } from '../strip/Icon.tsx'
 import { Findings, useFindings } from './Findings.tsx'
+import { Givens } from './Givens.tsx'
 import { Ledger } from './Ledger.tsx'
 import {
   GroupTable,
@@ -27,6 +28,7 @@ const bodies = {
   groups: GroupTable,
   pumps: PumpTable,
   totals: TotalsTable,
+  givens: Givens,
   ledger: Ledger,
   findings: Findings,
   compare: Comparison,
@@ -82,6 +84,7 @@ const names = {
   groups: () => <>Stages</>,
   pumps: () => <>Pumps</>,
   totals: () => <>Totals</>,
+  givens: () => <>Givens</>,
   ledger: LedgerTab,
   findings: FindingsTab,
   compare: () => <>Compare</>,

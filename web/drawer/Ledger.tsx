@@ -1,7 +1,23 @@
+import type { Finding } from '../../src/messages.ts'
 import { Mark } from '../number/Mark.tsx'
 import { useBalanceStore } from '../store/balance-store.ts'
+import { useSelectionStore } from '../store/selection-store.ts'
+import { Equations } from './Equations.tsx'
 import { ledgerLines } from './ledger.ts'
 import { Remedies } from './Remedies.tsx'
+
+/** Selects everything that a set of numbers lies on, so that the canvas and the chart show it. */
+function Where({ finding }: { finding: Finding }) {
+  const select = useSelectionStore((state) => state.select)
+  const { where } = finding
+  if (where.length === 0) return null
+  return (
+    <button type="button" className="ledger-where" onClick={() => select(where)}>
+      Show on the canvas where it lies:{' '}
+      {where.length === 1 ? 'one place' : `${where.length} places`}
+    </button>
+  )
+}
 
 /** Unknowns against equations, and what to give or to free where they do not match. */
 export function Ledger() {
@@ -31,6 +47,7 @@ export function Ledger() {
             <span className="muted">{line.text}</span>
           </div>
           {line.finding && <Remedies finding={line.finding} />}
+          {line.finding && <Where finding={line.finding} />}
         </div>
       ))}
       {balance.status === 'solved' && (
@@ -44,6 +61,7 @@ export function Ledger() {
             ` ${balance.undetermined.length} quantities that nothing else needs are left open.`}
         </p>
       )}
+      <Equations />
     </div>
   )
 }

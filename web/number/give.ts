@@ -51,6 +51,18 @@ export function give(
   editGiven(name, path, given, options)
 }
 
+let rows = 0
+
+/** Gives several quantities the same value, or frees them with undefined: one undo step. */
+export function giveMany(name: string, paths: readonly string[], given: Given | undefined): void {
+  rows += 1
+  const merge = `many/${rows}`
+  for (const path of paths) {
+    if (given !== undefined || readGiven(path) !== undefined)
+      editGiven(name, path, given, { merge })
+  }
+}
+
 /** Frees a quantity: from now on it is solved. */
 export function free(path: string): void {
   if (readGiven(path) === undefined) return

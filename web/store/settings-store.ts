@@ -9,6 +9,7 @@ export const drawerTabs = [
   'groups',
   'pumps',
   'totals',
+  'givens',
   'ledger',
   'findings',
   'compare',

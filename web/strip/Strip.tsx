@@ -1,5 +1,5 @@
 import { useState } from 'react'
-import { setTitle, unitSets } from '../../src/document.ts'
+import { setTitle, unitOf, unitSets } from '../../src/document.ts'
 import { CommandBox } from '../commands/CommandBox.tsx'
 import { useCommandStore } from '../commands/command-store.ts'
 import { Menu } from '../commands/Menu.tsx'
@@ -7,8 +7,9 @@ import { keysText } from '../commands/shortcuts.ts'
 import { useKeepingStore } from '../files/keeping-store.ts'
 import { FirstCase } from '../layouts/CaseRow.tsx'
 import { LayoutTabs } from '../layouts/LayoutTabs.tsx'
+import { openUnits } from '../number/units-store.ts'
 import { usePlantStore } from '../store/plant-store.ts'
-import { useSettingsStore } from '../store/settings-store.ts'
+import { useSettingsStore, useUnitChoice } from '../store/settings-store.ts'
 import { Icon } from './Icon.tsx'
 import { useNetworkStore } from './network-store.ts'
 import './strip.css'
@@ -78,11 +79,14 @@ function UndoRedo() {
 
 function Units() {
   const unitSet = useSettingsStore((state) => state.unitSet)
+  const units = useUnitChoice()
   const change = useSettingsStore((state) => state.change)
   return (
     <label className="choice">
       <span className="visually-hidden">Units</span>
-      <span aria-hidden="true">{unitSets.find(({ name }) => name === unitSet)?.sample}</span>
+      <span aria-hidden="true">
+        {unitOf('pressure', units).name}, {unitOf('temperature', units).name}
+      </span>
       <select
         className="choice-behind"
         title="Units of measure"
@@ -90,6 +94,7 @@ function Units() {
         onChange={(event) => {
           const chosen = unitSets.find(({ name }) => name === event.target.value)
           if (chosen) change({ unitSet: chosen.name })
+          else openUnits()
         }}
       >
         {unitSets.map(({ name, label, sample }) => (
@@ -97,6 +102,7 @@ function Units() {
             {label}: {sample}
           </option>
         ))}
+        <option value="single">Single units …</option>
       </select>
       <Icon name="down" size={12} />
     </label>
