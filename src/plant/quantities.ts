@@ -78,12 +78,23 @@ export type Owner =
   | { readonly type: 'shaft'; readonly shaft: Shaft }
   | { readonly type: 'plant' }
 
+const ownersOf = new WeakMap<Layout, ReadonlyMap<string, Owner>>()
+
+/** Whatever bears the id; looked up once for a layout, for there are thousands of paths to look up. */
 export function ownerOf(layout: Layout, id: string): Owner | undefined {
-  if (id === 'plant') return { type: 'plant' }
-  for (const unit of layout.units) if (unit.id === id) return { type: 'unit', unit }
-  for (const stream of layout.streams) if (stream.id === id) return { type: 'stream', stream }
-  for (const shaft of layout.shafts) if (shaft.id === id) return { type: 'shaft', shaft }
-  return undefined
+  let owners = ownersOf.get(layout)
+  if (!owners) {
+    const found = new Map<string, Owner>([['plant', { type: 'plant' }]])
+    const add = (key: string, owner: Owner) => {
+      if (!found.has(key)) found.set(key, owner)
+    }
+    for (const unit of layout.units) add(unit.id, { type: 'unit', unit })
+    for (const stream of layout.streams) add(stream.id, { type: 'stream', stream })
+    for (const shaft of layout.shafts) add(shaft.id, { type: 'shaft', shaft })
+    owners = found
+    ownersOf.set(layout, owners)
+  }
+  return owners.get(id)
 }
 
 /** The quantities of whatever bears the id; none where nothing does. */

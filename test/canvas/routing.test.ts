@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { crossings } from '../../web/canvas/crossings.ts'
+import { crossings, levelStraights } from '../../web/canvas/crossings.ts'
 import type { Box, Point, Side } from '../../web/canvas/geometry.ts'
 import {
   cornersNeeded,
@@ -139,8 +139,8 @@ describe('crossings', () => {
       [0, 40],
       [100, 40],
     ]
-    expect(crossings(upright, [upright, level])).toEqual([[50, 40]])
-    expect(crossings(level, [upright, level])).toEqual([])
+    expect(crossings(upright, levelStraights([upright, level]))).toEqual([[50, 40]])
+    expect(crossings(level, levelStraights([upright, level]))).toEqual([])
   })
 
   it('are none where streams only meet', () => {
@@ -152,7 +152,7 @@ describe('crossings', () => {
       [50, 40],
       [100, 40],
     ]
-    expect(crossings(upright, [meets])).toEqual([])
+    expect(crossings(upright, levelStraights([meets]))).toEqual([])
   })
 })
 

@@ -50,7 +50,7 @@ export const UnitNode = memo(function UnitNode({ id }: NodeProps) {
         )}
         {(selected || hovered || connecting) && <Ports unit={unit} />}
       </svg>
-      <UnitName unit={unit} />
+      <UnitName id={id} kind={unit.kind} label={unit.label} />
       <Handle className="unseen" type="source" position={Position.Right} isConnectable={false} />
       <Handle className="unseen" type="target" position={Position.Left} isConnectable={false} />
     </>

@@ -3,6 +3,7 @@ import { kindOf, type Layout } from '../../src/document.ts'
 import { textWidth } from '../chart/measure-text.ts'
 import { readLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
+import { drawnAlike } from './drawn-alike.ts'
 import { around, grown, type Point, type Size } from './geometry.ts'
 import {
   type Arrangement,
@@ -53,7 +54,10 @@ export const useCanvasStore = create<CanvasState>()((set, get) => ({
     const { sheet, textScale, labels, tags, zoom } = get()
     const layout = readLayout()
     const next = drawSheet(layout, moved, sheet)
-    set({ moved, sheet: next, ...texts(layout, next, textScale, zoom, { labels, tags, sheet }) })
+    const along = moved
+      ? textsAlong({ labels, tags, sheet }, next)
+      : texts(layout, next, textScale, zoom, { labels, tags, sheet })
+    set({ moved, sheet: next, ...along })
   },
   setZoom(zoom) {
     const wanted = Math.max(1, smallestText / textSize / zoom)
@@ -78,6 +82,10 @@ export function followPlant(): () => void {
     if (layout === shownLayout && opened === shownOpened) return
     // Another plant or layout is routed from scratch; an edit keeps the routes that it does not touch.
     const fresh = opened !== shownOpened || layout.id !== shownLayout?.id
+    if (!fresh && shownLayout && drawnAlike(layout, shownLayout)) {
+      shownLayout = layout
+      return
+    }
     shownLayout = layout
     shownOpened = opened
     const { sheet, textScale, zoom } = useCanvasStore.getState()
@@ -214,6 +222,31 @@ function texts(
   return earlier
     ? { labels: kept(earlier.labels, labels), tags: kept(earlier.tags, tags) }
     : { labels, tags }
+}
+
+/** While units are moved: their labels go along, tags of streams that change their course wait aside. */
+function textsAlong(
+  earlier: Pick<CanvasState, 'labels' | 'tags' | 'sheet'>,
+  sheet: Sheet,
+): Pick<CanvasState, 'labels' | 'tags'> {
+  const labels = new Map<string, PlacedLabel>()
+  for (const [id, label] of earlier.labels) {
+    const before = earlier.sheet.units.get(id)
+    const now = sheet.units.get(id)
+    const generator = sheet.shafts.get(id)?.generator
+    const generatorBefore = earlier.sheet.shafts.get(id)?.generator
+    const [x, y] = now?.at ?? generator ?? [0, 0]
+    const [x0, y0] = before?.at ?? generatorBefore ?? [x, y]
+    labels.set(
+      id,
+      x === x0 && y === y0 ? label : { ...label, x: label.x + x - x0, y: label.y + y - y0 },
+    )
+  }
+  const tags = new Map<string, PlacedTag>()
+  for (const [id, tag] of earlier.tags) {
+    if (sheet.streams.get(id)?.route === earlier.sheet.streams.get(id)?.route) tags.set(id, tag)
+  }
+  return { labels, tags }
 }
 
 function insideOf(unit: PlacedUnit, text: Size): Point | null {

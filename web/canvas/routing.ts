@@ -17,6 +17,8 @@ export interface Surroundings {
   readonly obstacles: readonly Box[]
   /** Routes that are drawn already. */
   readonly routes: readonly Route[]
+  /** Under the pointer a good route at once is worth more than the best. */
+  readonly quick?: boolean
 }
 
 /** Streams keep this far from units they do not belong to, px. */
@@ -185,10 +187,40 @@ interface Task {
   readonly to: Terminal
   readonly obstacles: readonly Box[]
   readonly straights: Straights
+  /** Prices of straights met before: level and upright ones by their place, then by their ends. */
+  readonly known: readonly [Prices, Prices]
+}
+
+type Prices = Map<number, Map<number, Map<number, number>>>
+
+/** What a straight is charged for units in its way and for other streams. */
+function straightPrice(a: Point, b: Point, task: Task): number {
+  const isLevel = a[1] === b[1]
+  const at = isLevel ? a[1] : a[0]
+  const from = isLevel ? a[0] : a[1]
+  const to = isLevel ? b[0] : b[1]
+  const least = Math.min(from, to)
+  const most = Math.max(from, to)
+  // Many routes share most of their straights.
+  const prices = task.known[isLevel ? 0 : 1]
+  const there = prices.get(at) ?? new Map<number, Map<number, number>>()
+  if (there.size === 0) prices.set(at, there)
+  const starting = there.get(least) ?? new Map<number, number>()
+  if (starting.size === 0) there.set(least, starting)
+  let sum = starting.get(most)
+  if (sum === undefined) {
+    sum = conflictPrice(a, b, task.straights)
+    for (const box of task.obstacles) {
+      if (enters(a, b, box, clearance - 1)) sum += price.through
+    }
+    starting.set(most, sum)
+  }
+  return sum
 }
 
 /** The price of a route, or any figure from `most` up where it comes to that. */
-function priceOf(route: Route, { from, to, obstacles, straights }: Task, most: number): number {
+function priceOf(route: Route, task: Task, most: number): number {
+  const { from, to } = task
   const last = route.length - 1
   let sum = length(route) + price.bend * (last - 1)
   if (last > 1) {
@@ -199,9 +231,7 @@ function priceOf(route: Route, { from, to, obstacles, straights }: Task, most: n
   for (let i = 1; i <= last && sum < most; i++) {
     const a = route[i - 1] as Point
     const b = route[i] as Point
-    for (const box of obstacles) {
-      if (enters(a, b, box, clearance - 1)) sum += price.through
-    }
+    sum += straightPrice(a, b, task)
     // Its own units a stream may touch at its ends, but neither cross nor hug.
     if (enters(a, b, from.body, i === 1 ? -1 : clearance - 1)) {
       sum += i === 1 || enters(a, b, from.body, -1) ? price.through : price.hugging
@@ -209,9 +239,6 @@ function priceOf(route: Route, { from, to, obstacles, straights }: Task, most: n
     if (enters(a, b, to.body, i === last ? -1 : clearance - 1)) {
       sum += i === last || enters(a, b, to.body, -1) ? price.through : price.hugging
     }
-  }
-  for (let i = 1; i <= last && sum < most; i++) {
-    sum += conflictPrice(route[i - 1] as Point, route[i] as Point, straights)
   }
   return sum
 }
@@ -268,7 +295,13 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
       box.y < region.bottom &&
       box.y + box.height > region.top,
   )
-  const task: Task = { from, to, obstacles, straights: straightsOf(around.routes, region) }
+  const task: Task = {
+    from,
+    to,
+    obstacles,
+    straights: straightsOf(around.routes, region),
+    known: [new Map(), new Map()],
+  }
 
   const xEdges: number[] = []
   const yEdges: number[] = []
@@ -279,8 +312,10 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
       yEdges.push(onGrid(y) - away * grid, onGrid(y + height) + away * grid)
     }
   }
-  const xs = tracks(a[0], b[0], xEdges)
-  const ys = tracks(a[1], b[1], yEdges)
+  const few = around.quick ? 16 : Number.POSITIVE_INFINITY
+  const xs = tracks(a[0], b[0], xEdges).slice(0, few)
+  const ys = tracks(a[1], b[1], yEdges).slice(0, few)
+  const nearest = around.quick ? 3 : 10
 
   // Between ends that face each other from nearby the corners may come close to the units.
   const facing = (b[0] - a[0]) * out[0] + (b[1] - a[1]) * out[1]
@@ -310,8 +345,8 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
       if (!worth(2 * beyond, 2)) break
       consider(a, [x, a[1]], [x, b[1]], b)
     }
-    for (const x1 of near(xs, a[0], out[0], tight)) {
-      for (const x2 of near(xs, b[0], back[0], tight)) {
+    for (const x1 of near(xs, a[0], out[0], tight, nearest)) {
+      for (const x2 of near(xs, b[0], back[0], tight, nearest)) {
         const more = detour(a[0], x1, x2, b[0])
         for (const { at: y, beyond } of ys) {
           if (!worth(more + 2 * beyond, 4)) break
@@ -325,8 +360,8 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
       if (!worth(2 * beyond, 2)) break
       consider(a, [a[0], y], [b[0], y], b)
     }
-    for (const y1 of near(ys, a[1], out[1], tight)) {
-      for (const y2 of near(ys, b[1], back[1], tight)) {
+    for (const y1 of near(ys, a[1], out[1], tight, nearest)) {
+      for (const y2 of near(ys, b[1], back[1], tight, nearest)) {
         const more = detour(a[1], y1, y2, b[1])
         for (const { at: x, beyond } of xs) {
           if (!worth(more + 2 * beyond, 4)) break
@@ -352,12 +387,18 @@ export function findRoute(from: Terminal, to: Terminal, around: Surroundings): R
 const room = 240
 
 /** Tracks on the outer side of an end, the nearest few. */
-function near(all: readonly Track[], end: number, way: number, least: number): number[] {
+function near(
+  all: readonly Track[],
+  end: number,
+  way: number,
+  least: number,
+  most: number,
+): number[] {
   return all
     .map(({ at }) => at)
     .filter((at) => (at - end) * way >= least)
     .sort((p, q) => Math.abs(p - end) - Math.abs(q - end))
-    .slice(0, 10)
+    .slice(0, most)
 }
 
 /** What the way over two places between is longer than the direct one, along one axis. */

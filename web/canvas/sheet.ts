@@ -1,5 +1,5 @@
 import type { Layout, Stream } from '../../src/document.ts'
-import { crossings } from './crossings.ts'
+import { crossings, levelStraights } from './crossings.ts'
 import { type End, type Ends, endsOf } from './ends.ts'
 import { around, type Box, onGrid, overlap, type Point } from './geometry.ts'
 import { alike, keep } from './keep.ts'
@@ -22,6 +22,8 @@ export interface PlacedStream {
   readonly bends: Stream['bends']
   /** Crossings that this stream bridges. */
   readonly bridges: readonly Point[]
+  /** Found in haste while a unit was moved: it is found anew when the unit stands. */
+  readonly quick?: true
 }
 
 /** A shaft's line and its generator. */
@@ -66,7 +68,7 @@ export function drawSheet(
     shafts.set(shaft.id, keep(previous.shafts.get(shaft.id), placeShaft(shaft, units)))
   }
 
-  const streams = placeStreams(layout, ends, units, shafts, previous)
+  const streams = placeStreams(layout, ends, units, shafts, previous, moved !== null)
   const boxes = [...units.values()].map((unit) => unit.body)
   for (const { route } of streams.values()) {
     for (const [x, y] of route) boxes.push({ x, y, width: 0, height: 0 })
@@ -88,6 +90,7 @@ function placeStreams(
   units: ReadonlyMap<string, PlacedUnit>,
   shafts: ReadonlyMap<string, PlacedShaft>,
   previous: Sheet,
+  moving: boolean,
 ): Map<string, PlacedStream> {
   const bodies = [...units.values()].map(({ id, body }) => ({ id, body }))
   for (const shaft of shafts.values()) {
@@ -120,6 +123,7 @@ function placeStreams(
     } else if (
       earlier &&
       earlier.bends === undefined &&
+      (moving || !earlier.quick) &&
       alike(earlier.from, one.from) &&
       alike(earlier.to, one.to) &&
       !passesThrough(
@@ -132,18 +136,26 @@ function placeStreams(
   }
   // Those with least choice first: straight ones, then by length.
   open.sort((a, b) => strain(a.from, a.to) - strain(b.from, b.to))
+  const quick = new Set<string>()
+  for (const one of wanted) {
+    const kept = routes.get(one.stream.id)
+    const earlier = previous.streams.get(one.stream.id)
+    if (kept && earlier?.quick && kept === earlier.route) quick.add(one.stream.id)
+  }
   for (const one of open) {
+    if (moving) quick.add(one.stream.id)
     routes.set(
       one.stream.id,
       findRoute(one.from, one.to, {
         obstacles: bodies.filter(({ id }) => !one.ends.includes(id)).map(({ body }) => body),
         routes: [...routes.values()],
+        quick: moving,
       }),
     )
   }
 
   const placed = new Map<string, PlacedStream>()
-  const all = [...routes.values()]
+  const level = levelStraights(routes.values())
   for (const { stream, from, to } of wanted) {
     const route = routes.get(stream.id) as Route
     const earlier = previous.streams.get(stream.id)
@@ -155,7 +167,8 @@ function placeStreams(
         to,
         route,
         bends: stream.bends,
-        bridges: crossings(route, all),
+        bridges: crossings(route, level),
+        ...(quick.has(stream.id) && { quick: true }),
       }),
     )
   }

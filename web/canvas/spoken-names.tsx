@@ -1,12 +1,40 @@
-import { type Dimension, kindOf, labelOf, type Unit } from '../../src/document.ts'
-import { useNumberText } from '../number/Quantity.tsx'
-import { readLayout, usePlantStore } from '../store/plant-store.ts'
+import { memo } from 'react'
+import { create } from 'zustand'
+import {
+  type Dimension,
+  describeQuantity,
+  formatQuantity,
+  kindOf,
+  labelOf,
+  type Unit,
+} from '../../src/document.ts'
+import { readValue, useBalanceStore } from '../store/balance-store.ts'
+import { readGiven, readLayout, usePlantStore } from '../store/plant-store.ts'
+import { readUnitChoice, useSettingsStore } from '../store/settings-store.ts'
 
-/** Names of units and streams for assistive technology, kept out of sight. */
+/**
+ * Names of units and streams for assistive technology, kept out of sight. They follow once the numbers
+ * have come to rest, so that what is seen need not wait for them.
+ */
+
+/** How long plant and balance must stand still, ms. */
+const rest = 300
+
+const useRest = create<{ readonly count: number }>()(() => ({ count: 0 }))
+
+let timer: ReturnType<typeof setTimeout> | undefined
+
+function stir(): void {
+  clearTimeout(timer)
+  timer = setTimeout(() => useRest.setState(({ count }) => ({ count: count + 1 })), rest)
+}
+
+useBalanceStore.subscribe(stir)
+usePlantStore.subscribe(stir)
+useSettingsStore.subscribe(stir)
 
 export const unitNameId = (id: string): string => `unit-name-${id}`
 export const streamNameId = (id: string): string => `stream-name-${id}`
-
 export const shaftNameId = (id: string): string => `shaft-name-${id}`
 
 export function kindLabel(kind: string): string {
@@ -17,51 +45,52 @@ export const withSmallStart = (text: string): string =>
   // 'HP turbine' keeps its capitals.
   /^[A-Z][a-z]/.test(text) ? text[0]?.toLowerCase() + text.slice(1) : text
 
+/** ', 284.6 MW', or ', open'. */
+function spoken(path: string, dimension?: Dimension): string {
+  const given = readGiven(path)
+  const value = typeof given === 'number' ? given : readValue(path)
+  if (value === null) return ', open'
+  const kind = dimension ?? describeQuantity(readLayout(), path)?.dimension ?? 'number'
+  const digits = typeof given === 'number' ? 'given' : 'shown'
+  const { text, unit } = formatQuantity(value, kind, readUnitChoice(), { digits })
+  return `, ${text} ${unit}`
+}
+
 /** 'Boiler, boiler, 284.6 MW'. */
-export function UnitName({ unit }: { readonly unit: Pick<Unit, 'id' | 'kind' | 'label'> }) {
-  const chief = kindOf(unit.kind)?.chief
+export const UnitName = memo(function UnitName(props: Pick<Unit, 'id' | 'kind' | 'label'>) {
+  const { id, kind, label } = props
+  useRest()
+  const chief = kindOf(kind)?.chief
   return (
-    <span id={unitNameId(unit.id)} className="visually-hidden">
-      {unit.label || unit.id}, {withSmallStart(kindLabel(unit.kind))}
-      {chief && <SpokenQuantity path={`${unit.id}.${chief}`} />}
+    <span id={unitNameId(id)} className="visually-hidden">
+      {label || id}, {withSmallStart(kindLabel(kind))}
+      {chief && spoken(`${id}.${chief}`)}
     </span>
   )
-}
-
-function SpokenQuantity({
-  path,
-  dimension,
-}: {
-  readonly path: string
-  readonly dimension?: Dimension
-}) {
-  const { text, unit, state } = useNumberText(path, dimension)
-  return state === 'open' ? ', open' : `, ${text} ${unit}`
-}
+})
 
 /** 'Stream Boiler to HP, 130.0 bar, 540.0 °C, 120.0 kg/s'. */
-export function StreamName({ id }: { readonly id: string }) {
-  const name = usePlantStore(() => labelOf(readLayout(), id))
+export const StreamName = memo(function StreamName({ id }: { readonly id: string }) {
+  useRest()
   return (
     <text id={streamNameId(id)} display="none">
-      Stream {name}
-      <SpokenQuantity path={`${id}.p`} dimension="pressure" />
-      <SpokenQuantity path={`${id}.T`} dimension="temperature" />
-      <SpokenQuantity path={`${id}.m`} dimension="massFlow" />
+      Stream {labelOf(readLayout(), id)}
+      {spoken(`${id}.p`, 'pressure')}
+      {spoken(`${id}.T`, 'temperature')}
+      {spoken(`${id}.m`, 'massFlow')}
     </text>
   )
-}
+})
 
-/** 'Shaft, generator 152.0 MW'. */
-export function ShaftName({ id }: { readonly id: string }) {
-  const name = usePlantStore(() => labelOf(readLayout(), id))
-  const hasGenerator = usePlantStore(
-    () => readLayout().shafts.find((shaft) => shaft.id === id)?.generator !== false,
-  )
+/** 'Shaft, 152.0 MW'. */
+export const ShaftName = memo(function ShaftName({ id }: { readonly id: string }) {
+  useRest()
+  const layout = readLayout()
+  const hasGenerator = layout.shafts.find((shaft) => shaft.id === id)?.generator !== false
   return (
     <text id={shaftNameId(id)} display="none">
-      {name}
-      {hasGenerator && <SpokenQuantity path={`${id}.generatorPower`} dimension="power" />}
+      {labelOf(layout, id)}
+      {hasGenerator && spoken(`${id}.generatorPower`, 'power')}
     </text>
   )
-}
+})
