@@ -159,6 +159,18 @@ export async function connectByKeys(
   await connected(page, before + 1)
 }
 
+/** Finds a number by its name: the focus is then on it, in the card. */
+export async function goTo(page: Page, name: string, path: string): Promise<void> {
+  await command(page, name)
+  await expect
+    .poll(() =>
+      page.evaluate(() =>
+        document.activeElement?.closest('.card [data-path]')?.getAttribute('data-path'),
+      ),
+    )
+    .toBe(path)
+}
+
 /** Finds a number by its name, types another and presses Enter: by keys alone. */
 export async function giveByKeys(
   page: Page,
@@ -166,9 +178,7 @@ export async function giveByKeys(
   path: string,
   text: string,
 ): Promise<void> {
-  await command(page, name)
-  const focused = () => page.evaluate(() => document.activeElement?.getAttribute('data-path'))
-  await expect.poll(focused).toBe(path)
+  await goTo(page, name, path)
   await page.keyboard.type(text)
   await page.keyboard.press('Enter')
   await givenState(page, path).waitFor()
