@@ -90,7 +90,7 @@ function Figure({ value, dimension }: { value: number | null; dimension: Dimensi
   return (
     <>
       {text}
-      {unit && <span className="unit"> {unit}</span>}
+      {unit && <span className="compare-unit"> {unit}</span>}
     </>
   )
 }
