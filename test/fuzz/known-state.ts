@@ -11,7 +11,7 @@ import type { Layout } from '../../src/plant/document.ts'
 import type { Dimension } from '../../src/quantity/dimension.ts'
 import { SATURATION_SIZE, Saturation, saturationAtPressure } from '../../src/steam/index.ts'
 import { dryness, entropy, subcooling, superheat, temperature } from '../../src/steam/operations.ts'
-import { DenseQR } from './dense.ts'
+import { LinearSystem, type Row } from './linear-system.ts'
 
 /*
  * A system at a state that is known to satisfy it: residuals, the whole Jacobian, its rank. The rows
@@ -26,11 +26,8 @@ export function sizeOf(value: number, dimension: Dimension): number {
   return Math.abs(value)
 }
 
-/** One row of partials. */
-interface Row {
-  readonly columns: number[]
-  readonly partials: number[]
-}
+/** Pivots of the scaled Jacobian below this part of the largest count as zero. */
+const rankTolerance = 1e-10
 
 /** Partials of one slot of an evaluated tape to the variables, by a reverse sweep over all rows. */
 class Sweep {
@@ -219,23 +216,27 @@ export class KnownState {
     return rows
   }
 
-  /** The Jacobian to the unknowns, factorised, with the rows that go with it. */
-  factorised(size: (variable: number) => number): {
-    readonly qr: DenseQR
+  /** The Jacobian to the unknowns, ready to be solved, with the rows that go with it. */
+  linearised(size: (variable: number) => number): {
+    readonly linear: LinearSystem
     readonly rows: readonly Row[]
     readonly unknowns: readonly number[]
   } {
     const unknowns = this.unknowns()
     const place = new Map(unknowns.map((v, k) => [v, k]))
     const rows = this.rows(size)
-    const matrix = new Float64Array(rows.length * unknowns.length)
-    rows.forEach((row, r) => {
+    const own = rows.map((row) => {
+      const columns: number[] = []
+      const partials: number[] = []
       row.columns.forEach((v, k) => {
         const column = place.get(v)
-        if (column !== undefined) matrix[column * rows.length + r] = row.partials[k]!
+        if (column === undefined) return
+        columns.push(column)
+        partials.push(row.partials[k]!)
       })
+      return { columns, partials }
     })
-    return { qr: new DenseQR(rows.length, unknowns.length, matrix), rows, unknowns }
+    return { linear: new LinearSystem(own, unknowns.length, rankTolerance), rows, unknowns }
   }
 
   /** Quantities of streams that the system does not hold as variables. */

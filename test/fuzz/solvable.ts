@@ -7,7 +7,7 @@ import { KnownState } from './known-state.ts'
 import { Random } from './random.ts'
 import { randomPlant } from './random-plant.ts'
 import { isPower, type Swap, swapGivens } from './swap-givens.ts'
-import { rankTolerance, Tableau } from './tableau.ts'
+import { Tableau } from './tableau.ts'
 
 /** A plant that has an answer by construction. */
 export interface Solvable {
@@ -74,8 +74,8 @@ export function applySwaps(base: Layout, swaps: readonly Swap[]): Layout {
 /** Whether the layout's equations have full rank at a state known of the same plant. */
 export function hasFullRank(layout: Layout, known: KnownState): boolean {
   const state = known.transferredTo(layout)
-  const { qr, unknowns } = state.factorised((v) => state.sizeOf(v))
-  return qr.rank(rankTolerance) === unknowns.length
+  const { linear, unknowns } = state.linearised((v) => state.sizeOf(v))
+  return linear.rank === unknowns.length
 }
 
 function largestBlockOf(layout: Layout): number {

@@ -9,9 +9,6 @@ export interface Known {
   readonly dimension: Dimension
 }
 
-/** Pivots of the scaled Jacobian below this part of the largest count as zero. */
-export const rankTolerance = 1e-10
-
 /**
  * How every quantity that follows at the known state depends on every given one, to first order:
  * d(row)/d(column), both in parts of their sizes. Giving a quantity in place of another exchanges a
@@ -38,8 +35,8 @@ export class Tableau {
       dimension: system.variables[v]!.description.dimension,
     })
     const size = (v: number): number => state.sizeOf(v)
-    const { qr, rows, unknowns } = state.factorised(size)
-    if (qr.rank(rankTolerance) < unknowns.length) return undefined
+    const { linear, rows, unknowns } = state.linearised(size)
+    if (linear.rank < unknowns.length) return undefined
     const columns: Known[] = []
     const answers: Float64Array[] = []
     const rightSides = new Map<number, Float64Array>()
@@ -56,7 +53,7 @@ export class Tableau {
     })
     for (const [v, side] of rightSides) {
       columns.push(known(v))
-      answers.push(qr.solve(side))
+      answers.push(linear.solve(side))
     }
     const place = new Map(unknowns.map((v, k) => [v, k]))
     const related = state.related()
