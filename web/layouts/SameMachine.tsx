@@ -1,4 +1,5 @@
 import { useEffect, useId, useRef, useState } from 'react'
+import { createPortal } from 'react-dom'
 import {
   copyLayout,
   EditRefused,
@@ -169,7 +170,8 @@ function Form({ turbine, close }: { readonly turbine: string; close(): void }) {
 /** Asks where a new bleed lies and where its heater goes, and puts both in. */
 export function SameMachine() {
   const turbine = useSameMachineStore((state) => state.turbine)
-  return turbine ? <Question key={turbine} turbine={turbine} /> : null
+  // Out of the strip, in which no dialog may have its heading.
+  return turbine ? createPortal(<Question key={turbine} turbine={turbine} />, document.body) : null
 }
 
 function Question({ turbine }: { readonly turbine: string }) {
