@@ -76,7 +76,9 @@ test('what makes no number is refused where it was typed, with the reason', asyn
       const before = await field(page, path).textContent()
       await page.keyboard.type(text)
       await page.keyboard.press('Enter')
-      await expect.poll(() => page.getByRole('alert').textContent(), text).toMatch(reason)
+      await expect
+        .poll(() => page.getByRole('alert').textContent(), { message: text })
+        .toMatch(reason)
       expect(await input(page, path).inputValue()).toBe(text)
       await page.keyboard.press('Escape')
       await expect.poll(() => field(page, path).textContent()).toBe(before)
@@ -115,9 +117,9 @@ test('numbers that no plant can have are answered in sentences, and undo brings 
       ['Boiler, pressure loss', 'boiler.pressureLossFraction', '150 %', /cannot be above 100/],
     ] as const) {
       await giveByKeys(page, name, path, text)
-      await expect.poll(() => state(page).textContent(), text).toBe('Not possible')
+      await expect.poll(() => state(page).textContent(), { message: text }).toBe('Not possible')
       await expect
-        .poll(async () => (await findings(page).allTextContents()).join('\n'), text)
+        .poll(async () => (await findings(page).allTextContents()).join('\n'), { message: text })
         .toMatch(said)
       await showsNoLeak(page)
       await page.keyboard.press('Control+z')
