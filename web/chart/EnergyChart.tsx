@@ -185,7 +185,15 @@ export default function EnergyChart() {
   const status = useBalanceStore((state) => state.balance?.status ?? null)
   const trouble = useBalanceStore((state) => state.trouble)
   return (
-    <div ref={sheet} className="chart-sheet chart-scroll">
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: the keyboard scrolls what takes the focus
+    // biome-ignore lint/a11y/useSemanticElements: the panel about it is the section
+    <div
+      ref={sheet}
+      className="chart-sheet chart-scroll"
+      role="region"
+      aria-label="Where the energy goes"
+      tabIndex={0}
+    >
       {account && width > 120 ? (
         <div
           className="chart-picture chart-picture-tall"

@@ -130,7 +130,7 @@ export function PlantDrawing({
       {[...tags.values()].map((tag) => (
         <Tag key={tag.id} tag={tag} source={source} />
       ))}
-      {legend && <Legend source={source} x={box.x + 4} y={bottom - legendHeight + 8} />}
+      {legend && <Legend source={source} x={box.x + 12} y={bottom - legendHeight + 10} />}
       {frame && (
         <g className="drawing-frame">
           <rect x={box.x} y={box.y} width={box.width} height={box.height} />

@@ -14,7 +14,7 @@ export function plainNumber(value: number): string {
 }
 
 /** What a spreadsheet would take for a formula, a command or a link to another program. */
-const runs = /^[=+\-@\t\r\n|%]/
+const runs = /^[=+\-@\t\r\n|]/
 
 /** A text that no spreadsheet runs: with an apostrophe before what would begin a formula. */
 export function defused(text: string): string {
