@@ -5,6 +5,7 @@ import { useSelectionStore } from '../store/selection-store.ts'
 import { Icon } from '../strip/Icon.tsx'
 import { CardFoot } from './CardFoot.tsx'
 import { CardRows } from './CardRows.tsx'
+import { CardTrouble } from './CardTrouble.tsx'
 import { type CardContent, type CardOption, cardContent, type Neighbour } from './card-content.ts'
 import { ManyCard } from './ManyCard.tsx'
 import { usePlace } from './use-place.ts'
@@ -144,6 +145,7 @@ function OpenCard({ content }: { content: CardContent }) {
         <Options id={content.id} options={content.options} />
         <Neighbours neighbours={content.neighbours} />
       </div>
+      <CardTrouble />
       {foot !== undefined && <CardFoot path={foot} />}
     </section>
   )

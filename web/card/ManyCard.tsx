@@ -7,6 +7,7 @@ import { readGiven, useLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { Icon } from '../strip/Icon.tsx'
+import { CardTrouble } from './CardTrouble.tsx'
 import { type CommonQuantity, commonQuantities } from './common-quantities.ts'
 import { usePlace } from './use-place.ts'
 
@@ -119,6 +120,7 @@ export function ManyCard({ ids }: { ids: readonly string[] }) {
           </table>
         )}
       </div>
+      <CardTrouble />
     </section>
   )
 }

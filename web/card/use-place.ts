@@ -9,6 +9,9 @@ interface Place {
   readonly top: number
 }
 
+/** For so long after it opens a card may still move, as its numbers come in, ms. */
+const settling = 600
+
 /** Where the user has put the card: it stays there for all that is selected next. */
 let moved: Place | null = null
 
@@ -54,7 +57,18 @@ export function usePlace(
     const element = card.current
     const area = element?.parentElement
     if (!element || !area) return
-    const observer = new ResizeObserver(settle)
+    const opened = performance.now()
+    const observer = new ResizeObserver(() => {
+      const { current } = present
+      const isFresh = performance.now() - opened < settling
+      // Under the hand a card stays where it is, whatever it comes to say.
+      if (!current || (isFresh && !element.matches(':hover, :focus-within'))) settle()
+      else {
+        const kept = within(current, element, area)
+        present.current = kept
+        setPlace((old) => (old?.left === kept.left && old.top === kept.top ? old : kept))
+      }
+    })
     observer.observe(area)
     observer.observe(element)
     return () => observer.disconnect()

@@ -5,6 +5,7 @@ import { useSelectionStore } from '../store/selection-store.ts'
 import { Equations } from './Equations.tsx'
 import { ledgerLines } from './ledger.ts'
 import { Remedies } from './Remedies.tsx'
+import { TakeBack } from './TakeBack.tsx'
 
 /** Selects everything that a set of numbers lies on, so that the canvas and the chart show it. */
 function Where({ finding }: { finding: Finding }) {
@@ -25,6 +26,7 @@ export function Ledger() {
   const trouble = useBalanceStore((state) => state.trouble)
   if (!balance) return <p className="drawer-empty">{trouble ?? 'No balance yet.'}</p>
   const { blocks, iterations } = balance.ledger
+  const isStuck = balance.status === 'infeasible' || balance.status === 'notConverged'
   return (
     <div className="drawer-scroll ledger">
       {trouble && (
@@ -48,6 +50,7 @@ export function Ledger() {
           </div>
           {line.finding && <Remedies finding={line.finding} />}
           {line.finding && <Where finding={line.finding} />}
+          {isStuck && <TakeBack />}
         </div>
       ))}
       {balance.status === 'solved' && (

@@ -1,15 +1,15 @@
 import { useState } from 'react'
-import type { Given } from '../../src/document.ts'
+import { type Given, type Layout, splitPath } from '../../src/document.ts'
 import type { Finding, Remedy } from '../../src/messages.ts'
 import { focusNumber } from '../number/focus.ts'
 import { free, give, givenText, lastGiven, quantityName } from '../number/give.ts'
 import { readValueBefore } from '../store/balance-store.ts'
-import { readGiven, useLayout } from '../store/plant-store.ts'
+import { readGiven, readLayout, useLayout } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 
 /** How many remedies stand there before 'and n more'. */
-const nearest = 4
+const nearest = 6
 
 /** What a remedy would give: what the quantity was when the plant was last solved, else what suggests itself. */
 function valueToGive({ path, value }: Remedy): Given | undefined {
@@ -43,9 +43,34 @@ function isNewest({ action, path }: Remedy): boolean {
   return action === 'free' && path === lastGiven()
 }
 
+/** How far a quantity is from what was given last: at the same thing, at what meets it, elsewhere. */
+function farness(path: string, near: ReadonlySet<string>, own: string): number {
+  const id = splitPath(path)?.[0] ?? ''
+  return id === own ? 0 : near.has(id) ? 1 : 2
+}
+
+/** What was given last, then what is near it, then the others as they come. */
 function inOrder(remedies: readonly Remedy[]): readonly Remedy[] {
   const newest = remedies.find(isNewest)
-  return newest ? [newest, ...remedies.filter((one) => one !== newest)] : remedies
+  if (!newest) return remedies
+  const own = splitPath(newest.path)?.[0] ?? ''
+  const near = neighboursOf(readLayout(), own)
+  const others = remedies.filter((one) => one !== newest)
+  return [
+    newest,
+    ...[0, 1, 2].flatMap((far) => others.filter(({ path }) => farness(path, near, own) === far)),
+  ]
+}
+
+/** The streams at a unit, or the units at a stream's ends. */
+function neighboursOf(layout: Layout, id: string): ReadonlySet<string> {
+  const near = new Set<string>()
+  for (const { id: stream, from, to } of layout.streams) {
+    const ends = [from, to].map((end) => splitPath(end)?.[0] ?? end)
+    if (ends.includes(id)) near.add(stream)
+    if (stream === id) for (const end of ends) near.add(end)
+  }
+  return near
 }
 
 /** Quantities of which one must be given or freed, each a click; the nearest first. */
