@@ -1,4 +1,4 @@
-import { type Expression, forEachVariable } from '../equations/expression/index.ts'
+import { variablesOf } from '../equations/expression/index.ts'
 import type { System } from './system.ts'
 
 /** Sets that grow together. */
@@ -56,21 +56,20 @@ export function massBalancesOf(system: System): MassBalance[] {
   const { layout, equations, variables } = system
   const placeOf = new Map(layout.streams.map((stream, k) => [stream.id, k]))
   const balances: MassBalance[] = []
+  /** By variable: the equation that met it last. */
+  const usedBy = new Int32Array(variables.length).fill(-1)
   equations.forEach(({ equation, owner }, e) => {
     if (equation.role !== 'mass') return
-    const used = new Set<number>()
-    const take = (expression: Expression): void =>
-      forEachVariable(expression, ({ index }) => used.add(index))
-    take(equation.left)
-    take(equation.right)
+    const used = variablesOf(equation)
+    for (const index of used) usedBy[index] = e
     const streams: number[] = []
     // The ports are asked, not the variables: a flow given as 0 or 1 is folded away.
     for (const id of system.unitOf.get(owner)!.streams.values()) {
       const place = placeOf.get(id)!
       const flow = system.streamBase[place]!
-      if (used.has(flow) || isFolded(system, flow)) streams.push(place)
+      if (usedBy[flow] === e || isFolded(system, flow)) streams.push(place)
     }
-    const isOpen = [...used].some((index) => variables[index]!.isPhantom)
+    const isOpen = used.some((index) => variables[index]!.isPhantom)
     balances.push({ equation: e, owner, streams, isOpen })
   })
   return balances

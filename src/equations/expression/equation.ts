@@ -1,5 +1,5 @@
 import { minus } from './arithmetic.ts'
-import { forEachVariable, variable } from './expression.ts'
+import { variable } from './expression.ts'
 import type { Expression, Printed } from './operation.ts'
 
 /**
@@ -35,12 +35,47 @@ export function residual(equation: Equation): Expression {
   return minus(equation.left, equation.right)
 }
 
+const variableLists = new WeakMap<Equation, readonly number[]>()
+
+/** The variables of an equation, each once; found at the first call and kept. */
+export function variablesOf(equation: Equation): readonly number[] {
+  let list = variableLists.get(equation)
+  if (list === undefined) {
+    const found: number[] = []
+    marks.round++
+    collect(equation.left, found)
+    collect(equation.right, found)
+    list = found
+    variableLists.set(equation, list)
+  }
+  return list
+}
+
+/** By variable: the round in which it was met last. */
+const marks = { round: 0, metIn: new Uint32Array(256) }
+
+function collect(expression: Expression, found: number[]): void {
+  if (expression.kind === 'application') {
+    const { operands } = expression
+    for (let k = 0; k < operands.length; k++) collect(operands[k]!, found)
+    return
+  }
+  if (expression.kind === 'constant') return
+  const { index } = expression
+  if (index >= marks.metIn.length) {
+    const grown = new Uint32Array(2 * index)
+    grown.set(marks.metIn)
+    marks.metIn = grown
+  }
+  if (marks.metIn[index] === marks.round) return
+  marks.metIn[index] = marks.round
+  found.push(index)
+}
+
 /** Calls `visit` once for each variable of the equation. */
 export function forEachVariableOf(equation: Equation, visit: (index: number) => void): void {
-  const seen = new Set<Expression>()
-  const take = (variable: { readonly index: number }): void => visit(variable.index)
-  forEachVariable(equation.left, take, seen)
-  forEachVariable(equation.right, take, seen)
+  const list = variablesOf(equation)
+  for (let k = 0; k < list.length; k++) visit(list[k]!)
 }
 
 /** How often a variable occurs, counted along every path; stops counting at 2. */

@@ -98,6 +98,9 @@ export class TapeBuilder {
   /** By slot: the degree in the variables that the caller calls active. */
   private readonly degrees: number[]
   private readonly rowOfSlot: number[]
+  /** By row: the walk that met it last. */
+  private rowMarks = new Int32Array(0)
+  private mark = 0
 
   constructor(variableCount: number) {
     this.variableCount = variableCount
@@ -173,16 +176,27 @@ export class TapeBuilder {
    * the rows that give variables their values.
    */
   rowsBehind(slots: readonly number[], assigned?: ReadonlyMap<number, number>): Int32Array {
-    const rows = new Set<number>()
+    if (this.rowMarks.length < this.slots.length) {
+      this.rowMarks = new Int32Array(2 * this.slots.length)
+      this.mark = 0
+    }
+    const { rowMarks, rowOfSlot, first, operands, sources } = this
+    const mark = ++this.mark
+    const rows: number[] = []
     const stack = [...slots]
     while (stack.length > 0) {
       const slot = stack.pop()!
-      const row = assigned?.get(slot) ?? this.rowOfSlot[slot]!
-      if (row < 0 || rows.has(row)) continue
-      rows.add(row)
-      for (let k = this.first[row]!; k < this.first[row + 1]!; k++) stack.push(this.operands[k]!)
+      const row = assigned?.get(slot) ?? rowOfSlot[slot]!
+      if (row < 0 || rowMarks[row] === mark) continue
+      rowMarks[row] = mark
+      rows.push(row)
+      for (let k = first[row]!; k < first[row + 1]!; k++) stack.push(operands[k]!)
       // Working memory is filled before it is read.
-      if (this.sources[row]! >= 0) rows.add(this.sources[row]!)
+      const source = sources[row]!
+      if (source >= 0 && rowMarks[source] !== mark) {
+        rowMarks[source] = mark
+        rows.push(source)
+      }
     }
     return Int32Array.from(rows).sort()
   }

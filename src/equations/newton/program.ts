@@ -1,4 +1,4 @@
-import { type Equation, forEachVariableOf, type Tape, TapeBuilder } from '../expression/index.ts'
+import { type Equation, type Tape, TapeBuilder, variablesOf } from '../expression/index.ts'
 import { type Block, draftStep } from './draft.ts'
 import { type Bounds, type Step, StepOutcome } from './step.ts'
 
@@ -38,7 +38,7 @@ export class Program {
     this.outcomes = new Uint8Array(blocks.length)
     this.lost = new Uint8Array(variableCount)
     this.changed = new Uint8Array(variableCount)
-    this.inputs = blocks.map((block) => inputsOf(equations, block))
+    this.inputs = inputsOfBlocks(equations, blocks, variableCount)
   }
 
   /** Says that a variable the program does not solve for (a given) has a new value. */
@@ -127,14 +127,24 @@ export class Program {
 /** Fills in first guesses for what is not known; the choice picks one of several. */
 export type Guess = (known: (index: number) => boolean, choice: number) => void
 
-/** Variables that the block's equations need and that it does not solve for. */
-function inputsOf(equations: readonly Equation[], block: Block): Int32Array {
-  const own = new Set(block.variables)
-  const inputs = new Set<number>()
-  for (const e of block.equations) {
-    forEachVariableOf(equations[e]!, (index) => {
-      if (!own.has(index)) inputs.add(index)
-    })
-  }
-  return Int32Array.from(inputs)
+/** By block: variables that its equations need and that it does not solve for. */
+function inputsOfBlocks(
+  equations: readonly Equation[],
+  blocks: readonly Block[],
+  variableCount: number,
+): Int32Array[] {
+  // By variable: the block that met it last, as its own or as an input.
+  const metBy = new Int32Array(variableCount).fill(-1)
+  return blocks.map((block, k) => {
+    for (const index of block.variables) metBy[index] = k
+    const inputs: number[] = []
+    for (const e of block.equations) {
+      for (const index of variablesOf(equations[e]!)) {
+        if (metBy[index] === k) continue
+        metBy[index] = k
+        inputs.push(index)
+      }
+    }
+    return Int32Array.from(inputs)
+  })
 }
