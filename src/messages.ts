@@ -16,11 +16,9 @@ export type {
   ProcessName,
   Remedy,
   Status,
-  Token,
   Worked,
-  WorkedStep,
 } from './balance/answer.ts'
-export type { AccountItem, AccountName } from './balance/derived.ts'
+export type { AccountItem } from './balance/derived.ts'
 export type { HeatProfile, ProfileMark, ZoneName } from './balance/heat-profile.ts'
 export type { Question, QuestionAnswer } from './balance/question.ts'
 export type { Worth } from './balance/worth.ts'

@@ -4,6 +4,7 @@ import { join } from 'node:path'
 import type { Page } from 'playwright-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { readPlant } from '../../src/document.ts'
+import { field, giveByKeys, goTo, solved } from './hands.ts'
 import { type Visit, withWindow } from './support.ts'
 
 let folder = ''
@@ -56,6 +57,26 @@ test('an edit is there after a reload that follows at once, and the next day', a
     } finally {
       await next.close()
     }
+  })
+})
+
+test('a reload in the midst of edits brings back all that was given, and solves it', async () => {
+  await withWindow(async ({ page, problems }) => {
+    await solved(page)
+    await giveByKeys(page, 'Condenser, pressure', 'condenser.pressure', '6 kPa')
+    await giveByKeys(page, 'Boiler to HP, pressure', 'main.p', '120 bar')
+    // Another number is being typed as the page goes.
+    await goTo(page, 'Boiler to HP, temperature', 'main.T')
+    await page.keyboard.type('55')
+    await page.reload()
+    await solved(page)
+    await goTo(page, 'Condenser, pressure', 'condenser.pressure')
+    expect(await field(page, 'condenser.pressure').textContent()).toContain('0.0600')
+    await goTo(page, 'Boiler to HP, pressure', 'main.p')
+    expect(await field(page, 'main.p').textContent()).toContain('120')
+    await goTo(page, 'Boiler to HP, temperature', 'main.T')
+    expect(await field(page, 'main.T').textContent()).toContain('538')
+    expect(problems).toEqual([])
   })
 })
 

@@ -2,6 +2,7 @@ import { readdir, readFile } from 'node:fs/promises'
 import { join, relative } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { expect, test } from 'vitest'
+import { giveByKeys, solved } from './hands.ts'
 import { startPreview } from './preview.ts'
 import { accessibilityFaults, keptOffline, openWindow, withWindow } from './support.ts'
 
@@ -25,6 +26,11 @@ test('after one visit the window opens with the server gone', async () => {
     const next = await first.reopen()
     try {
       await expect.poll(() => next.page.locator('#window > *').count()).toBeGreaterThan(0)
+      // The solver and the chart come from what was kept as well.
+      await solved(next.page)
+      await giveByKeys(next.page, 'Condenser, pressure', 'condenser.pressure', '6 kPa')
+      await solved(next.page)
+      await next.page.locator('.chart-states circle').first().waitFor()
       expect(next.problems).toEqual([])
     } finally {
       await next.close()

@@ -26,7 +26,7 @@ beforeAll(async () => {
     context: { acceptDownloads: true, permissions: ['clipboard-read', 'clipboard-write'] },
   })
   page = visit.page
-  await page.locator('.drawer-tabs').waitFor()
+  await page.locator('.unit-label-name').first().waitFor()
   const [chooser] = await Promise.all([
     page.waitForEvent('filechooser'),
     page.keyboard.press('Control+o'),

@@ -90,6 +90,9 @@ export function useCanvasCommands(showWhole: (duration?: number) => void): void 
   }, [register, flow, showWhole])
 }
 
+/** What a plant starts with: the first kind of the rail. */
+const [startingKind] = kinds
+
 /** 'Place a pump' for every kind, for the command box; a boiler on the empty sheet has a key of its own. */
 const placing = kinds.map(
   ({ name, label }): Command => ({
@@ -97,7 +100,7 @@ const placing = kinds.map(
     name: `Place ${/^[aeiou]/i.test(label) ? 'an' : 'a'} ${withSmallStart(label)}`,
     group: 'Edit',
     hidden: true,
-    enabled: () => name !== 'boiler' || readLayout().units.length > 0,
+    enabled: () => name !== startingKind?.name || readLayout().units.length > 0,
     run: () => placeFreely(name),
   }),
 )
@@ -213,7 +216,9 @@ const editing: readonly Command[] = [
     keys: 'B',
     hidden: true,
     enabled: () => readLayout().units.length === 0,
-    run: () => placeFreely('boiler'),
+    run: () => {
+      if (startingKind) placeFreely(startingKind.name)
+    },
   },
   {
     id: 'canvas.print',

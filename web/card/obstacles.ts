@@ -22,16 +22,30 @@ function boxOf(element: Element, area: DOMRect): Box {
   }
 }
 
+/** Points along a line, in its own coordinates: found once for each course it takes. */
+const courses = new WeakMap<SVGPathElement, { readonly key: string; readonly points: DOMPoint[] }>()
+
+function pointsAlong(path: SVGPathElement, scale: number): readonly DOMPoint[] {
+  const key = `${scale} ${path.getAttribute('d')}`
+  const known = courses.get(path)
+  if (known?.key === key) return known.points
+  const length = path.getTotalLength()
+  const steps = Math.max(1, Math.ceil((length * scale) / pitch))
+  const points = Array.from({ length: steps + 1 }, (_, i) =>
+    path.getPointAtLength((length * i) / steps),
+  )
+  courses.set(path, { key, points })
+  return points
+}
+
 function alongPath(path: SVGPathElement, area: DOMRect, into: Obstacle[], weight: number): void {
   const toScreen = path.getScreenCTM()
   if (!toScreen) return
-  const length = path.getTotalLength()
-  const steps = Math.max(1, Math.ceil((length * toScreen.a) / pitch))
-  for (let i = 0; i <= steps; i++) {
-    const { x, y } = path.getPointAtLength((length * i) / steps).matrixTransform(toScreen)
+  const { a, b, c, d, e, f } = toScreen
+  for (const { x, y } of pointsAlong(path, a)) {
     into.push({
-      left: x - area.left - around,
-      top: y - area.top - around,
+      left: a * x + c * y + e - area.left - around,
+      top: b * x + d * y + f - area.top - around,
       width: 2 * around,
       height: 2 * around,
       weight,

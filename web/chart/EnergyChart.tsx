@@ -185,13 +185,11 @@ export default function EnergyChart() {
   const status = useBalanceStore((state) => state.balance?.status ?? null)
   const trouble = useBalanceStore((state) => state.trouble)
   return (
-    // biome-ignore lint/a11y/noNoninteractiveTabindex: the keyboard scrolls what takes the focus
-    // biome-ignore lint/a11y/useSemanticElements: the panel about it is the section
-    <div
+    <section
       ref={sheet}
       className="chart-sheet chart-scroll"
-      role="region"
       aria-label="Where the energy goes"
+      // biome-ignore lint/a11y/noNoninteractiveTabindex: the keyboard scrolls what takes the focus
       tabIndex={0}
     >
       {account && width > 120 ? (
@@ -214,7 +212,7 @@ export default function EnergyChart() {
             : whyEmpty(placed.length, status, trouble)}
         </p>
       )}
-    </div>
+    </section>
   )
 }
 

@@ -9,6 +9,7 @@ import {
 import { focusNumber } from '../number/focus.ts'
 import { givenText, quantityName } from '../number/give.ts'
 import { useLayout, usePlantStore, useShownCase } from '../store/plant-store.ts'
+import { useDesignValue } from '../store/reference-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
 import { useSettingsStore } from '../store/settings-store.ts'
 import { Icon } from '../strip/Icon.tsx'
@@ -87,7 +88,8 @@ function GivenChip({ one, path, given }: { one: Case; path: string; given: Given
   const layout = useLayout()
   // The text is in the units in force.
   useSettingsStore((state) => state.unitSet)
-  const design = givenOf(layout, path)
+  const solvedAtDesign = useDesignValue(path)
+  const design = givenOf(layout, path) ?? solvedAtDesign ?? undefined
   const name = describeQuantity(layout, path) ? quantityName(path) : path
   return (
     <Chip

@@ -125,11 +125,16 @@ function Row({ row: { path, label, dimension, first, second } }: { row: ValueRow
         {difference !== null && difference > 0 && '+'}
         <Figure value={difference} dimension={differenceDimension[dimension] ?? dimension} />
       </td>
-      <td>
-        {part === null ? '–' : `${part > 0 ? '+' : ''}${part.toFixed(2).replace('-', '−')} %`}
-      </td>
+      <td>{part === null ? '–' : percent(part)}</td>
     </tr>
   )
+}
+
+/** '+0.16 %'; what rounds to nothing has no sign. */
+function percent(part: number): string {
+  const text = Math.abs(part).toFixed(2)
+  const sign = Number(text) === 0 ? '' : part > 0 ? '+' : '−'
+  return `${sign}${text} %`
 }
 
 function words(given: Given | undefined, path: string): string {

@@ -44,11 +44,6 @@ export function useDesignValue(path: string): number | null {
   return useReferenceStore(({ design }) => (design ? valueInSnapshot(design, path) : null))
 }
 
-/** The value of a quantity in what the balance shown is compared with, SI. */
-export function useOtherValue(path: string): number | null {
-  return useReferenceStore(({ other }) => (other ? valueInSnapshot(other, path) : null))
-}
-
 type Slot = 'design' | 'other'
 
 /**

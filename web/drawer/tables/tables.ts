@@ -481,5 +481,3 @@ export const tableBuilders = {
   pumps: pumpTable,
   account: accountTable,
 } as const
-
-export type TableName = keyof typeof tableBuilders
