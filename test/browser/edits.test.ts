@@ -142,6 +142,8 @@ test('whatever is done to numbers, names and options is one step, undone and don
     })
     await clickUnit(page, turbine)
     const option = page.getByRole('checkbox', { name: 'Admission' })
+    // Options are folded away until they are asked for.
+    for (const fold of await page.locator('.card summary').all()) await fold.click()
     await option.check()
     await undoButton(page).click()
     await expect.poll(() => option.isChecked()).toBe(false)

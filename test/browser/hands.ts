@@ -62,7 +62,15 @@ export async function portAt(page: Page, port: string): Promise<Spot> {
   return middleOf(page, square)
 }
 
+/** Puts an open card away, which may lie over what is to be clicked next. */
+async function closeCard(page: Page): Promise<void> {
+  if ((await page.locator('.card').count()) === 0) return
+  await page.keyboard.press('Escape')
+  await page.locator('.card').waitFor({ state: 'detached' })
+}
+
 export async function connect(page: Page, from: string, to: string): Promise<void> {
+  await closeCard(page)
   const end = await portAt(page, to)
   const start = await portAt(page, from)
   await drag(page, start, end)
@@ -82,6 +90,7 @@ export async function join(page: Page, from: string, to: string): Promise<string
 
 /** Clicks the middle of a unit's symbol. */
 export async function clickUnit(page: Page, id: string): Promise<void> {
+  await closeCard(page)
   await page.mouse.click(...(await middleOf(page, unitBox(id))))
   await page.locator('.card').waitFor()
 }
@@ -97,6 +106,7 @@ export async function onStream(page: Page, id: string): Promise<Spot> {
 }
 
 export async function clickStream(page: Page, id: string): Promise<void> {
+  await closeCard(page)
   await page.mouse.click(...(await onStream(page, id)))
   await page.locator('.card').waitFor()
 }
