@@ -26,6 +26,8 @@ let id = ''
 /** This window may write under `id`. */
 let ours = false
 let unwritten: Plant | null = null
+/** On its way to the database, and lost if the page goes before it arrives. */
+let beingWritten: Plant | null = null
 let timer: ReturnType<typeof setTimeout> | undefined
 /** Writes follow one another in order. */
 let writing: Promise<void> = Promise.resolve()
@@ -47,9 +49,10 @@ async function write(): Promise<void> {
   const plant = unwritten
   if (!plant || !ours) return
   unwritten = null
+  beingWritten = plant
   try {
     await keepPlant(stamp(plant), writePlant(plant))
-    withdrawLastWord()
+    if (!unwritten) withdrawLastWord()
     if (ours && !unwritten) setKeeping('kept')
   } catch (error) {
     unwritten ??= plant
@@ -59,6 +62,8 @@ async function write(): Promise<void> {
       severity: 'caution',
       text: `This browser does not keep the plant (${error instanceof Error ? error.message : 'storage refused'}). Save it to a file before you close the window.`,
     })
+  } finally {
+    beingWritten = null
   }
 }
 
@@ -214,8 +219,9 @@ export async function startKeeping(example: () => Promise<Plant | null>): Promis
     if (now.plant !== then.plant && !showing) changed(now.plant)
   })
   const leave = () => {
-    if (!unwritten || !ours) return
-    leaveLastWord(stamp(unwritten), writePlant(unwritten))
+    const plant = unwritten ?? beingWritten
+    if (!plant || !ours) return
+    leaveLastWord(stamp(plant), writePlant(plant))
     void flush()
   }
   document.addEventListener('visibilitychange', () => {
