@@ -1,4 +1,5 @@
 import { keysText } from '../commands/shortcuts.ts'
+import { useSelectionStore } from '../store/selection-store.ts'
 import { lastStep, showStep, useFirstSteps } from './first-steps-store.ts'
 
 const steps: readonly (() => string)[] = [
@@ -13,8 +14,10 @@ const steps: readonly (() => string)[] = [
 /** Three hints for whoever sees the window for the first time, one at a time, over the legend. */
 export function FirstSteps() {
   const step = useFirstSteps((state) => state.step)
+  // An open card needs the room, and has the word.
+  const quiet = useSelectionStore((state) => state.selected.length > 0)
   const text = step === null ? undefined : steps[step]?.()
-  if (step === null || text === undefined) return null
+  if (quiet || step === null || text === undefined) return null
   return (
     <aside className="first-steps" aria-label="First steps">
       <span className="first-steps-count">

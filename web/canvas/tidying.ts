@@ -3,6 +3,10 @@ import { editLayout, readLayout } from '../store/plant-store.ts'
 import { say } from './connecting-store.ts'
 import { layoutOf } from './joins.ts'
 import { usePinStore } from './pin-store.ts'
+import { canvasBox } from './view.ts'
+
+/** Room that legend and hints take, px. */
+const foot = 96
 
 /** Lays the sheet out anew, but for what is pinned: one step of undo. */
 export async function tidySheet(): Promise<void> {
@@ -10,7 +14,9 @@ export async function tidySheet(): Promise<void> {
   const { tidy } = await import('./tidy/tidy.ts')
   const layout = readLayout()
   const { pinned } = usePinStore.getState()
-  const places = tidy(layout, pinned)
+  const box = canvasBox()
+  const shape = box && box.width > 0 ? Math.max(0.2, box.height - foot) / box.width : undefined
+  const places = tidy(layout, pinned, shape)
   editLayout('Tidy', (plant, layoutId) => {
     const turned = layoutOf(plant, layoutId)
       .units.filter(({ id, mirrored = false }) => {

@@ -66,6 +66,7 @@ export function BasisEditor({ path, description }: Pick<QuantityEntry, 'path' | 
       <label>
         <span className="muted">Basis</span>
         <select
+          aria-label="Basis"
           value={basis.source ?? ''}
           onChange={(event) =>
             change({

@@ -19,6 +19,10 @@ export type TidyPlaces = ReadonlyMap<string, TidyPlace>
 const gap = 32
 /** Between machines on a shaft. */
 const machineGap = 48
+/** Of the canvas in a window of 1440 by 900. */
+const usualShape = 0.52
+/** What the machines above and the drains below take of the height. */
+const aboveAndBelow = 232
 /** The usual distance of a machine's ports, where nothing below asks for another. */
 const usualPitch = 40
 
@@ -55,12 +59,17 @@ class Part {
  * A drawing of the whole layout: the steam path along the top with its machines on one line, feedwater
  * running back along the bottom, bleeds falling between them, drains below. Units in `pinned` stay where
  * they are, and the rest is set about them. What no rule of the trade reaches is laid out in layers.
+ * `shape`: height over width of where it is shown, which the drawing follows within reason.
  */
-export function tidy(layout: Layout, pinned: ReadonlySet<string> = new Set()): TidyPlaces {
+export function tidy(
+  layout: Layout,
+  pinned: ReadonlySet<string> = new Set(),
+  shape = usualShape,
+): TidyPlaces {
   const reading = readLines(layout)
   const parts = partsOf(layout, reading)
   const places = new Map<string, Point>()
-  if (reading) placeLines(reading, parts, places)
+  if (reading) placeLines(reading, parts, places, shape)
   const rest = layout.units.map(({ id }) => id).filter((id) => !places.has(id))
   if (reading) placeBeside(layout, rest, parts, places)
   else placeInLayers(layout, rest, parts, places)
@@ -119,6 +128,7 @@ function placeLines(
   { steam, water, chains }: Reading,
   parts: ReadonlyMap<string, Part>,
   places: Map<string, Point>,
+  shape: number,
 ): void {
   const rules = new Differences()
   const part = (id: string) => parts.get(id) as Part
@@ -251,11 +261,13 @@ function placeLines(
   const deepest = half(machines.at(-1) as Step)
   const tailDepth = tail.reduce((sum, { id }) => sum + part(id).body.height + 40, 0)
   const falls = chains.some(({ units }) => units.length > 0)
+  const width = Math.max(
+    ...steam.map(({ id }) => x(id) + part(id).body.width),
+    x(end(machines.at(-1) as Step)),
+  )
+  const fall = Math.min(280, Math.max(falls ? 184 : 152, shape * width - aboveAndBelow))
   const bottom = onGrid(
-    Math.max(
-      middle + (falls ? 248 : 184),
-      axis + deepest + tailDepth + (tail.length > 0 ? 88 : 40),
-    ),
+    Math.max(middle + fall, axis + deepest + tailDepth + (tail.length > 0 ? 88 : 40)),
   )
   const set = (id: string, left: number, middleY: number) => {
     places.set(id, [left, middleY - part(id).middle[1]])
