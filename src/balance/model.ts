@@ -112,8 +112,8 @@ export class Model {
     return this.isWarm
   }
 
-  private readonly guess: Guess = (known, choice) => {
-    new Starts(this.system, this.values, known, choice).fill()
+  private readonly guess: Guess = (known, choice, wanted) => {
+    new Starts(this.system, this.values, known, choice).fill(wanted)
     if (this.seed === undefined || choice > 0) return
     this.system.variables.forEach(({ path }, index) => {
       if (known(index)) return

@@ -9,6 +9,8 @@ export interface Connection {
   readonly port: string
   readonly description: PortDescription
   readonly stream: string
+  /** First variable of the stream: m; p and h follow. */
+  readonly base: number
 }
 
 /** A unit with its kind, its shape and the streams at its ports. */

@@ -11,9 +11,9 @@ import {
   saturationAtPressure,
   stateAtPressureEnthalpy,
 } from '../steam/index.ts'
-import type { PortDescription, Start } from '../units/kind.ts'
+import type { Start } from '../units/kind.ts'
 import { ExpressionValues } from './expression-values.ts'
-import type { PlacedUnit } from './placed-unit.ts'
+import type { Connection, PlacedUnit } from './placed-unit.ts'
 import { ordinaryValue } from './ranges.ts'
 import { balanceFlows } from './start-flows.ts'
 import type { System } from './system.ts'
@@ -37,13 +37,6 @@ const steamEnthalpies = [2.3e6, 3.5e6] as const
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
 
-interface PortAt {
-  readonly port: string
-  readonly description: PortDescription
-  /** First variable of the stream there: m, then p and h. */
-  readonly base: number
-}
-
 /**
  * First values for unknowns that an iteration must start from: pressures spread from where they are
  * known along the units that keep them, enthalpies follow from what kinds declare of their outlets,
@@ -54,7 +47,6 @@ export class Starts {
   private readonly values: Float64Array
   private readonly known: (index: number) => boolean
   private readonly choice: number
-  private readonly place = new Map<string, number>()
   private readonly saturation = new Float64Array(SATURATION_SIZE)
   private readonly state = new Float64Array(STATE_SIZE)
   private readonly result = new Float64Array(RESULT_SIZE + 8)
@@ -68,13 +60,16 @@ export class Starts {
     this.system = system
     this.values = values
     this.known = known
-    system.layout.streams.forEach((stream, k) => {
-      this.place.set(stream.id, system.streamBase[k]!)
-    })
   }
 
-  fill(): void {
+  /** Fills in what the wanted variables are guessed from; without a list everything. */
+  fill(wanted?: readonly number[]): void {
     const { system, values } = this
+    const isWanted = (test: (index: number) => boolean): boolean => wanted?.some(test) ?? true
+    const wantsQuantities = isWanted((index) => !system.variables[index]!.isState)
+    const wantsFlows =
+      wantsQuantities ||
+      isWanted((index) => system.variables[index]!.description.dimension === 'massFlow')
     for (let v = 0; v < system.variables.length; v++) {
       if (!this.known(v)) values[v] = ordinaryValue(system.variables[v]!)
     }
@@ -82,8 +77,8 @@ export class Starts {
     if (this.choice > 0) this.scatterPressures()
     this.fillEnthalpies()
     if (this.choice > 0) this.scatterEnthalpies()
-    this.fillFlows()
-    this.fillQuantities()
+    if (wantsFlows) this.fillFlows()
+    if (wantsQuantities) this.fillQuantities()
   }
 
   /** Between -1 and 1, the same for the same variable and choice. */
@@ -105,7 +100,7 @@ export class Starts {
 
   private scatterEnthalpies(): void {
     for (const placed of this.system.units) {
-      for (const { base, description } of this.portsOf(placed)) {
+      for (const { base, description } of placed.connections) {
         if (description.direction !== 'out' || this.known(base + 2)) continue
         const u = this.scatter(base + 2)
         const isWater =
@@ -121,16 +116,7 @@ export class Starts {
 
   /** First variable of the stream at a port, or undefined. */
   private streamAt(placed: PlacedUnit, port: string): number | undefined {
-    const id = placed.streams.get(port)
-    return id === undefined ? undefined : this.place.get(id)
-  }
-
-  private portsOf(placed: PlacedUnit): PortAt[] {
-    return placed.connections.map(({ port, description, stream }) => ({
-      port,
-      description,
-      base: this.place.get(stream)!,
-    }))
+    return placed.connections.find(({ name }) => name === port)?.base
   }
 
   private fillPressures(): void {
@@ -144,7 +130,7 @@ export class Starts {
     const spread = (crossing: boolean): boolean => {
       let changed = false
       for (const placed of system.units) {
-        const ports = this.portsOf(placed)
+        const ports = placed.connections
         const isBarrier = placed.kind.raisesPressure === true || placed.kind.shaft === 'driving'
         if (isBarrier !== crossing) continue
         const own = system.indexOf.get(`${placed.unit.id}.pressure`)
@@ -195,7 +181,7 @@ export class Starts {
   }
 
   /** Ports that share a pressure, nearly: what passes through apart from the shell. */
-  private pressureGroups(placed: PlacedUnit, ports: readonly PortAt[]): PortAt[][] {
+  private pressureGroups(placed: PlacedUnit, ports: readonly Connection[]): Connection[][] {
     const passes = placed.kind.passes ?? []
     const through = passes.map((pair) => ports.filter(({ port }) => pair.includes(port)))
     const shell = ports.filter(({ port }) => !passes.some((pair) => pair.includes(port)))
@@ -209,8 +195,8 @@ export class Starts {
     put: (index: number, p: number) => void,
   ): boolean {
     const { values } = this
-    const inlets = this.portsOf(placed).filter((port) => port.description.direction === 'in')
-    const outlets = this.portsOf(placed).filter((port) => port.description.direction === 'out')
+    const inlets = placed.connections.filter((port) => port.description.direction === 'in')
+    const outlets = placed.connections.filter((port) => port.description.direction === 'out')
     const inlet = inlets[0]
     if (inlet === undefined || outlets.length === 0) return false
     const inletKnown = isDone(inlet.base + 1)
@@ -249,7 +235,7 @@ export class Starts {
     const done = new Uint8Array(system.variables.length)
     for (let pass = 0; pass < 3; pass++) {
       for (const placed of system.units) {
-        for (const { port, base, description } of this.portsOf(placed)) {
+        for (const { port, base, description } of placed.connections) {
           if (description.direction !== 'out' || this.known(base + 2)) continue
           values[base + 2] = this.enthalpyAt(placed, base, placed.kind.starts[port], done)
           done[base + 2] = 1
@@ -296,7 +282,7 @@ export class Starts {
   }
 
   private expanded(placed: PlacedUnit, p: number): number {
-    const inlet = this.portsOf(placed).find((port) => port.description.direction === 'in')
+    const inlet = placed.connections.find((port) => port.description.direction === 'in')
     if (inlet === undefined) return 2.8e6
     const p1 = this.values[inlet.base + 1]!
     const h1 = this.known(inlet.base + 2) ? this.values[inlet.base + 2]! : superheatedEnthalpy
@@ -311,7 +297,7 @@ export class Starts {
     const { system, values } = this
     const largest = this.mainFlow()
     for (const placed of system.units) {
-      for (const { description, base } of this.portsOf(placed)) {
+      for (const { description, base } of placed.connections) {
         if (this.known(base)) continue
         const isBleed = description.repeated === true && placed.kind.shaft === 'driving'
         values[base] = isBleed ? bleedShare * largest : largest

@@ -133,16 +133,18 @@ class Assembly {
     for (const placed of this.placed) this.addUnitEquations(placed, drivenBy, unitOf)
     for (const shaft of layout.shafts) this.addShaftEquations(shaft, unitOf)
     this.addPlantEquations()
-    for (const { index, given } of this.curves) this.addCurve(index, given)
+    const curved = new Uint8Array(this.variables.length)
+    for (const { index, given } of this.curves) {
+      this.addCurve(index, given)
+      curved[index] = 1
+    }
     return {
       layout,
       variables: this.variables,
       indexOf: this.indexOf,
       equations: this.equations,
       given: Float64Array.from(this.given),
-      curved: Uint8Array.from(this.variables, (_, k) =>
-        this.curves.some((curve) => curve.index === k) ? 1 : 0,
-      ),
+      curved,
       units: this.placed,
       unitOf,
       meaningless: this.meaningless,
@@ -271,7 +273,9 @@ class Assembly {
       for (let k = 1; k <= count; k++) {
         const name = description.repeated ? numbered(k) : port
         const stream = streams.get(name)
-        if (stream !== undefined) connections.push({ name, port, description, stream })
+        if (stream === undefined) continue
+        const base = this.indexOf.get(`${stream}.m`)!
+        connections.push({ name, port, description, stream, base })
       }
     }
     const shape: Shape = { options: unit.options ?? {}, streams: counts }

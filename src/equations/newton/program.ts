@@ -17,6 +17,10 @@ export class Program {
   /** By variable: it changed since the step that needs it last ran. */
   private readonly changed: Uint8Array
   private readonly inputs: readonly Int32Array[]
+  /** By variable: the step that solves for it, or -1. */
+  private readonly stepOf: Int32Array
+  /** Variables of the steps that iterate. */
+  private readonly guessed: readonly number[]
   private readonly iterated: readonly (readonly number[])[]
   private fresh = true
   /** Iterations times unknowns, over all solutions so far. */
@@ -39,6 +43,16 @@ export class Program {
     this.lost = new Uint8Array(variableCount)
     this.changed = new Uint8Array(variableCount)
     this.inputs = inputsOfBlocks(equations, blocks, variableCount)
+    this.stepOf = new Int32Array(variableCount).fill(-1)
+    const guessed: number[] = []
+    blocks.forEach(({ variables }, k) => {
+      const iterates = this.steps[k]!.needsGuess
+      for (const index of variables) {
+        this.stepOf[index] = k
+        if (iterates) guessed.push(index)
+      }
+    })
+    this.guessed = guessed
   }
 
   /** Says that a variable the program does not solve for (a given) has a new value. */
@@ -66,7 +80,7 @@ export class Program {
       if (!this.fresh && !this.isTouched(k) && this.outcomes[k] === StepOutcome.solved) continue
       if (!guessed && this.steps[k]!.needsGuess) {
         guessed = true
-        guess!(this.knownBefore(k), 0)
+        guess!(this.knownBefore(k), 0, this.guessed)
       }
       const used = this.run(k, choice, guess)
       this.work += used * this.steps[k]!.size
@@ -78,11 +92,8 @@ export class Program {
   }
 
   private knownBefore(step: number): (index: number) => boolean {
-    const unknown = new Set<number>()
-    for (let k = step; k < this.blocks.length; k++) {
-      for (const index of this.blocks[k]!.variables) unknown.add(index)
-    }
-    return (index) => !unknown.has(index) && this.lost[index] === 0
+    const { stepOf, lost } = this
+    return (index) => stepOf[index]! < step && lost[index] === 0
   }
 
   /** Some block may have more than one answer. */
@@ -110,7 +121,7 @@ export class Program {
     const step = this.steps[k]!
     const { variables } = this.blocks[k]!
     const inputs = this.inputs[k]!
-    const restart = guess && ((which: number) => guess(this.knownBefore(k), which))
+    const restart = guess && ((which: number) => guess(this.knownBefore(k), which, variables))
     let missing = false
     for (let i = 0; i < inputs.length; i++) if (this.lost[inputs[i]!]) missing = true
     const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape, choice, restart)
@@ -124,8 +135,15 @@ export class Program {
   }
 }
 
-/** Fills in first guesses for what is not known; the choice picks one of several. */
-export type Guess = (known: (index: number) => boolean, choice: number) => void
+/**
+ * Fills in first guesses for what is not known; the choice picks one of several. Only the variables
+ * wanted, where they are named, are looked at.
+ */
+export type Guess = (
+  known: (index: number) => boolean,
+  choice: number,
+  wanted?: readonly number[],
+) => void
 
 /** By block: variables that its equations need and that it does not solve for. */
 function inputsOfBlocks(
