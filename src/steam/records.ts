@@ -5,8 +5,8 @@
 
 /**
  * Slots of a saturation record: p (Pa), T (K), then h (J/kg), s (J/(kg K)), v (m3/kg) of saturated
- * liquid (L) and dry saturated steam (V), then the derivatives of the same to p; `log` is
- * ln(p / 1 MPa). p is 0 while the record is empty.
+ * liquid (L) and dry saturated steam (V), then the derivatives of the same to p. p is 0 while the
+ * record is empty.
  */
 export const Saturation = {
   p: 0,
@@ -24,16 +24,15 @@ export const Saturation = {
   sVp: 12,
   vLp: 13,
   vVp: 14,
-  log: 15,
 } as const
-export const SATURATION_SIZE = 16
+export const SATURATION_SIZE = 15
 
 /**
  * Slots of a state record: p (Pa), h (J/kg), T (K), s (J/(kg K)), v (m3/kg) and dryness fraction x
  * (not clamped), each with its partials to p at constant h and to h at constant p. `region` is 1,
  * 2, 3, 4 (wet, both saturated states included) or 5, and 0 while the record is empty.
  * `subcritical` is 1 where the dryness fraction is defined, from 611.213 Pa to below the critical
- * pressure; elsewhere it is 0 and x and its partials are 0. From `saturation` on the record holds
+ * pressure; elsewhere it is 0 and x and its partials are 0. `log` is ln(p / 1 MPa) in region 2. From `saturation` on the record holds
  * the saturation record of p, valid while `subcritical` is 1.
  */
 export const State = {
@@ -53,7 +52,8 @@ export const State = {
   xh: 13,
   region: 14,
   subcritical: 15,
-  saturation: 16,
+  log: 16,
+  saturation: 17,
 } as const
 export const STATE_SIZE = State.saturation + SATURATION_SIZE
 

@@ -7,8 +7,8 @@ import {
   lowestSaturationPressure,
   lowestTemperature,
 } from './constants.ts'
-import { POINT_SIZE, Point, region1Point, region2Point } from './if97/point.ts'
 import { FIELD_SIZE, Field, region3Field, region3SaturatedDensity } from './if97/region3.ts'
+import { saturatedStates } from './if97/saturation-curves.ts'
 import {
   saturationLine,
   saturationPressureOf,
@@ -29,9 +29,7 @@ const {
   sLp: satSLp,
   vLp: satVLp,
   sV: satSV,
-  log: satLog,
 } = Saturation
-const { hp: ptHp, log: ptLog } = Point
 const pressure13 = borderPressure13
 
 const saturationSize = SATURATION_SIZE
@@ -39,8 +37,6 @@ const saturationSize = SATURATION_SIZE
 /** The last pressure below the critical one at which saturated states are told apart, Pa. */
 const lastPressure = criticalPressure * (1 - 1e-12)
 
-const liquid = new Float64Array(POINT_SIZE)
-const vapour = new Float64Array(POINT_SIZE)
 const field = new Float64Array(FIELD_SIZE)
 
 /**
@@ -77,29 +73,17 @@ export function cachedSaturation(p: number): number {
 }
 
 function renewSaturation(slot: number): void {
+  if ((cache[slot] as number) <= pressure13) {
+    saturatedStates(cache, slot)
+    return
+  }
   saturationLine(cache, slot, slot + satT, slot + satTp)
-  completeSaturation(cache, slot)
+  denseSide(cache, slot, 0)
+  denseSide(cache, slot, 1)
 }
 
 /** Where `cachedSaturation` leaves its records. */
 export const saturationCache: Float64Array = cache
-
-/** Completes a saturation record that has p, T and dT/dp. */
-function completeSaturation(record: Float64Array, at: number): void {
-  const p = record[at] as number
-  const T = record[at + satT] as number
-  if (p > pressure13) {
-    denseSide(record, at, 0)
-    denseSide(record, at, 1)
-    record[at + satLog] = Math.log(p * 1e-6)
-    return
-  }
-  region1Point(liquid, p, T)
-  region2Point(vapour, p, T)
-  record[at + satLog] = vapour[ptLog] as number
-  side(record, at, 0, liquid)
-  side(record, at, 1, vapour)
-}
 
 /**
  * One side of the record in region 3: T from the saturation line, the density from the basic
@@ -143,22 +127,6 @@ function denseSide(record: Float64Array, at: number, shift: number): void {
   record[base + satVLp] = -v * v * rhoP
 }
 
-/** One side of the record: properties of a point and their derivatives along the line. */
-function side(record: Float64Array, at: number, shift: number, point: Float64Array): void {
-  const T = record[at + satT] as number
-  const slope = record[at + satTp] as number
-  const v = point[2] as number
-  const cp = point[3] as number
-  const vT = point[4] as number
-  const base = at + shift
-  record[base + satHL] = point[0] as number
-  record[base + satSL] = point[1] as number
-  record[base + satVL] = v
-  record[base + satHLp] = (point[ptHp] as number) + cp * slope
-  record[base + satSLp] = (cp / T) * slope - vT
-  record[base + satVLp] = (point[5] as number) + vT * slope
-}
-
 /**
  * Fills a saturation record from a pressure (Pa). Returns at once when the record already holds it.
  * Refused outside 611.213 Pa <= p < 22.064 MPa.
@@ -179,13 +147,11 @@ export function saturationAtPressure(record: Float64Array, at: number, p: number
 export function saturationAtTemperature(record: Float64Array, at: number, T: number): number {
   const code = checkSaturationTemperature(T)
   if (code !== Outcome.fine) return code
-  const p = saturationPressureOf(T)
+  const p = Math.max(lowestSaturationPressure, saturationPressureOf(T))
   if (p >= criticalPressure) return refuse(Outcome.temperatureHigh, T, criticalTemperature)
-  record[at] = p
+  const code = saturationAtPressure(record, at, p)
   record[at + satT] = T
-  record[at + satTp] = saturationSlope(p, T)
-  completeSaturation(record, at)
-  return Outcome.fine
+  return code
 }
 
 function checkSaturationTemperature(T: number): number {

@@ -75,6 +75,7 @@ const {
   x: atX,
   xp: atXp,
   xh: atXh,
+  log: atLog,
 } = State
 const {
   hL: satHL,
@@ -91,7 +92,6 @@ const {
   Tp: satTp,
   sVp: satSVp,
   vVp: satVVp,
-  log: satLog,
 } = Saturation
 const {
   h: ptH,
@@ -279,13 +279,16 @@ function steam(record: Float64Array, at: number, subcritical: number): number {
     return refuse(Outcome.enthalpyLow, asked[askH] as number, point[ptH] as number)
   }
   const log =
-    subcritical === 1 ? (record[at + atSaturation + satLog] as number) : Math.log(p * 1e-6)
+    record[at + atP] === p && record[at + atRegion] === 2
+      ? (record[at + atLog] as number)
+      : Math.log(p * 1e-6)
   point[ptP] = p
   point[ptTau] = asked[askTau] as number
   point[ptLog] = log
   point[ptGoal] = asked[askH] as number
   region2Settled(point)
   fill(record, at, 2, subcritical)
+  record[at + atLog] = log
   return Outcome.fine
 }
 

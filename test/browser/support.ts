@@ -85,6 +85,8 @@ async function visit(profile: string, options: VisitOptions): Promise<Visit> {
   try {
     const problems: string[] = []
     const watch = (page: Page): void => {
+      // Choosers are caught as long as somebody listens: from the first on, or an early one is missed.
+      page.on('filechooser', () => {})
       page.on('pageerror', (error) => problems.push(`uncaught: ${error.message}`))
       page.on('console', (message) => {
         if (message.type() === 'error' || message.type() === 'warning') {

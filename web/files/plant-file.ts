@@ -64,10 +64,15 @@ export function chooseFile(): void {
   const input = document.createElement('input')
   input.type = 'file'
   input.accept = '.json,application/json'
+  input.hidden = true
   input.addEventListener('change', () => {
     const file = input.files?.[0]
+    input.remove()
     if (file) void openFile(file)
   })
+  input.addEventListener('cancel', () => input.remove())
+  // In the document, or the browser may collect it while the user still looks for the file.
+  document.body.append(input)
   input.click()
 }
 
