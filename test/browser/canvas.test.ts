@@ -107,3 +107,36 @@ test('units and streams have names and roles, and axe finds no fault in canvas a
     expect(await accessibilityFaults(page, '.rail')).toEqual([])
   })
 })
+
+test('a connection dropped on an outlet in use puts a branch in, and a unit dropped on a stream is inserted', async () => {
+  await withWindow(async ({ page }) => {
+    await startEmpty(page)
+    const boiler = await place(page, 'boiler', 120, 240)
+    const turbine = await place(page, 'turbine', 420, 120)
+    const heater = await place(page, 'mixingHeater', 300, 380)
+    await connect(page, `${boiler}.steam`, `${turbine}.inlet`)
+    await connected(page, 1)
+    await connect(page, `${heater}.steam1`, `${boiler}.steam`)
+    // Boiler to branch, branch to turbine, branch to heater.
+    await connected(page, 3)
+    expect(await units(page).count()).toBe(4)
+
+    const other = await place(page, 'condenser', 560, 330)
+    await connect(page, `${turbine}.exhaust`, `${other}.steam1`)
+    await connected(page, 4)
+    const line = await page
+      .locator(`.react-flow__edge`)
+      .last()
+      .locator('.react-flow__edge-interaction')
+      .boundingBox()
+    const canvas = await page.locator('.canvas').boundingBox()
+    if (!line || !canvas) throw new Error('The stream is not shown.')
+    await place(
+      page,
+      'valve',
+      line.x + line.width / 2 - canvas.x,
+      line.y + line.height / 2 - canvas.y,
+    )
+    await connected(page, 5)
+  })
+})

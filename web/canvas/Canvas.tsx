@@ -152,8 +152,10 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
         onNodeDragStop={dropMoved}
         onSelectionDragStop={dropMoved}
         onNodeMouseEnter={hoverOn}
+        onNodeMouseMove={hoverOn}
         onNodeMouseLeave={hoverOff}
         onEdgeMouseEnter={hoverOn}
+        onEdgeMouseMove={hoverOn}
         onEdgeMouseLeave={hoverOff}
         onNodeDoubleClick={renameItem}
         onEdgeDoubleClick={renameItem}

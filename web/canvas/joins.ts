@@ -75,14 +75,28 @@ function openStream(
   return { plant: inserted.plant, port: `${added.id}.${kind.repeated}2` }
 }
 
-/** A point of a route a little way from one of its ends, where a branch or junction finds room. */
+/** Room that a branch or junction wants on either side along its line, px. */
+const room = 32
+
+/**
+ * Where on a route a branch or junction finds room: on the first stretch from the given end that is long
+ * enough, else in the middle of the longest.
+ */
 export function nearEnd(route: Route, end: 'from' | 'to'): Point {
   const points = end === 'from' ? route : [...route].reverse()
-  const [a, b] = points
-  if (!a || !b) return [0, 0]
-  const length = Math.abs(b[0] - a[0]) + Math.abs(b[1] - a[1])
-  const away = Math.min(32, length / 2)
-  return [a[0] + Math.sign(b[0] - a[0]) * away, a[1] + Math.sign(b[1] - a[1]) * away]
+  let best: Point = points[0] ?? [0, 0]
+  let longest = 0
+  for (let i = 1; i < points.length; i++) {
+    const [ax, ay] = points[i - 1] as Point
+    const [bx, by] = points[i] as Point
+    const length = Math.abs(bx - ax) + Math.abs(by - ay)
+    if (length <= longest) continue
+    longest = length
+    const away = Math.min(room, length / 2)
+    best = [ax + Math.sign(bx - ax) * away, ay + Math.sign(by - ay) * away]
+    if (length >= 2 * room) break
+  }
+  return best
 }
 
 /**
