@@ -169,7 +169,9 @@ export function enthalpyAtPressureSuperheat(
   return write(
     out,
     at,
-    point[Point.h] as number,
+    superheat === 0
+      ? (saturationCache[slot + Saturation.hV] as number)
+      : (point[Point.h] as number),
     enthalpyAlong(point, slope),
     point[Point.cp] as number,
   )
@@ -220,7 +222,9 @@ export function enthalpyAtPressureSubcooling(
   return write(
     out,
     at,
-    point[Point.h] as number,
+    subcooling === 0
+      ? (saturationCache[slot + Saturation.hL] as number)
+      : (point[Point.h] as number),
     enthalpyAlong(point, slope),
     -(point[Point.cp] as number),
   )

@@ -149,9 +149,9 @@ export function saturationAtTemperature(record: Float64Array, at: number, T: num
   if (code !== Outcome.fine) return code
   const p = Math.max(lowestSaturationPressure, saturationPressureOf(T))
   if (p >= criticalPressure) return refuse(Outcome.temperatureHigh, T, criticalTemperature)
-  const code = saturationAtPressure(record, at, p)
+  saturationAtPressure(record, at, p)
   record[at + satT] = T
-  return code
+  return Outcome.fine
 }
 
 function checkSaturationTemperature(T: number): number {

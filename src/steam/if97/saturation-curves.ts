@@ -1,0 +1,144 @@
+/**
+ * Saturated liquid and dry saturated steam up to 16.529 MPa, from the saturation line with the
+ * forward equations of regions 1 and 2 (IAPWS R7-97(2012), Eqs. (7), (15) and (31)). Along the line
+ * each property is a smooth function of beta = (p / 1 MPa)^(1/4), the variable of Eq. (31), so a
+ * short polynomial per step of beta gives it to the round-off of the equations themselves. A
+ * polynomial runs through the equations' values at Chebyshev's nodes and is made when its step is
+ * first met.
+ */
+import { POINT_SIZE, Point, region1Point, region2Point } from './point.ts'
+import { saturationLine, saturationTemperatureOf } from './saturation-line.ts'
+
+const { h: ptH, s: ptS, v: ptV } = Point
+
+/**
+ * Steps for each 1 of beta, which runs from 0.157 to 2.017: short ones where Eq. (31) nears its
+ * singularity at beta = 0, longer ones, whose slopes keep more digits, from `change` on.
+ */
+const FINE = 64
+const COARSE = 32
+const change = 0.5
+/** What makes the steps' numbers go on where the step changes. */
+const FOLLOWING = (FINE - COARSE) * change
+const STEPS = Math.ceil(FOLLOWING + COARSE * 2.1)
+/** Coefficients of one polynomial: degree 8 leaves less than round-off. */
+const TERMS = 9
+/** h', h'', s', s'', v' and p v''. */
+const CURVES = 6
+const STEP_SIZE = TERMS * CURVES
+
+// The coefficients of a step: those of u^0 of all six curves, of u^1, and so on; u from -1 to 1.
+const curves = new Float64Array(STEPS * STEP_SIZE)
+
+/** Coefficients of Chebyshev's polynomials of degree 0 to 8, lowest power first. */
+const chebyshev: readonly (readonly number[])[] = chebyshevPolynomials()
+
+function chebyshevPolynomials(): number[][] {
+  const all = [[1], [0, 1]]
+  for (let degree = 2; degree < TERMS; degree++) {
+    const [before, last] = [all[degree - 2] as number[], all[degree - 1] as number[]]
+    all.push([0, ...last].map((value, i) => (i === 0 ? 0 : 2 * value) - (before[i] ?? 0)))
+  }
+  return all
+}
+
+const liquid = new Float64Array(POINT_SIZE)
+const vapour = new Float64Array(POINT_SIZE)
+
+/**
+ * Fills the saturation record whose p (Pa), 611.213 Pa to 16.529 MPa, is in its first slot. The
+ * slots are those of `Saturation` in records.ts.
+ */
+export function saturatedStates(record: Float64Array, at: number): void {
+  saturationLine(record, at, at + 1, at + 8)
+  const p = record[at] as number
+  const beta = Math.sqrt(Math.sqrt(p * 1e-6))
+  const fine = beta < change
+  const density = fine ? FINE : COARSE
+  const place = fine ? beta * FINE : beta * COARSE + FOLLOWING
+  const step = place | 0
+  let c = step * STEP_SIZE
+  // h'' is never zero
+  if (curves[c + 1] === 0) makeCurves(step)
+  const u = 2 * (place - step) - 1
+  // Horner's rule for the value and the derivative of the six curves side by side
+  c += (TERMS - 1) * CURVES
+  let hL = curves[c] as number
+  let hV = curves[c + 1] as number
+  let sL = curves[c + 2] as number
+  let sV = curves[c + 3] as number
+  let vL = curves[c + 4] as number
+  let pvV = curves[c + 5] as number
+  let hLu = 0
+  let hVu = 0
+  let sLu = 0
+  let sVu = 0
+  let vLu = 0
+  let pvVu = 0
+  for (let i = 1; i < TERMS; i++) {
+    c -= CURVES
+    hLu = hLu * u + hL
+    hVu = hVu * u + hV
+    sLu = sLu * u + sL
+    sVu = sVu * u + sV
+    vLu = vLu * u + vL
+    pvVu = pvVu * u + pvV
+    hL = hL * u + (curves[c] as number)
+    hV = hV * u + (curves[c + 1] as number)
+    sL = sL * u + (curves[c + 2] as number)
+    sV = sV * u + (curves[c + 3] as number)
+    vL = vL * u + (curves[c + 4] as number)
+    pvV = pvV * u + (curves[c + 5] as number)
+  }
+  const perPressure = 1 / p
+  // du/dp
+  const toPressure = 0.5 * density * beta * perPressure
+  const vV = pvV * perPressure
+  record[at + 2] = hL
+  record[at + 3] = hV
+  record[at + 4] = sL
+  record[at + 5] = sV
+  record[at + 6] = vL
+  record[at + 7] = vV
+  record[at + 9] = hLu * toPressure
+  record[at + 10] = hVu * toPressure
+  record[at + 11] = sLu * toPressure
+  record[at + 12] = sVu * toPressure
+  record[at + 13] = vLu * toPressure
+  record[at + 14] = (pvVu * toPressure - vV) * perPressure
+}
+
+/** The polynomials of one step, from the equations at Chebyshev's nodes. */
+function makeCurves(step: number): void {
+  const first = step * STEP_SIZE
+  const values: number[][] = []
+  for (let i = 0; i < TERMS; i++) {
+    const place = step + 0.5 * (1 + Math.cos((Math.PI * (i + 0.5)) / TERMS))
+    const beta = step < FINE * change ? place / FINE : (place - FOLLOWING) / COARSE
+    const p = 1e6 * beta ** 4
+    const T = saturationTemperatureOf(p)
+    region1Point(liquid, p, T)
+    region2Point(vapour, p, T)
+    values.push([
+      liquid[ptH] as number,
+      vapour[ptH] as number,
+      liquid[ptS] as number,
+      vapour[ptS] as number,
+      liquid[ptV] as number,
+      (vapour[ptV] as number) * p,
+    ])
+  }
+  for (const [j, polynomial] of chebyshev.entries()) {
+    for (let curve = 0; curve < CURVES; curve++) {
+      let sum = 0
+      for (const [i, value] of values.entries()) {
+        sum += (value[curve] as number) * Math.cos((Math.PI * j * (i + 0.5)) / TERMS)
+      }
+      const weight = ((j === 0 ? 1 : 2) * sum) / TERMS
+      for (const [power, coefficient] of polynomial.entries()) {
+        const at = first + power * CURVES + curve
+        curves[at] = (curves[at] as number) + weight * coefficient
+      }
+    }
+  }
+}
