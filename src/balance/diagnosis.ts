@@ -10,6 +10,7 @@ import { givensBehind } from './givens-behind.ts'
 import type { Model } from './model.ts'
 import { analyse, type Misfit } from './structure.ts'
 import { assemble } from './system.ts'
+import { sufficient } from './together.ts'
 
 /*
  * Where the words of graph theory and numerics become words of the plant: what is missing, what is
@@ -106,9 +107,6 @@ function turbinesOnTwoShafts(model: Model, wording: Wording): Finding[] {
 /** Remedies offered for a block without an answer. */
 const mostRemedies = 12
 
-const numberWord = (count: number): string =>
-  count === 1 ? 'One number is' : `${count} numbers are`
-
 /** Every quantity that would help, those of open streams included. */
 function helpful(model: Model, part: Misfit): string[] {
   const paths = part.variables.map((v) => model.system.variables[v]!.path)
@@ -126,20 +124,28 @@ function underspecified(model: Model, parts: readonly Misfit[], wording: Wording
   const missing = parts.reduce((sum, part) => sum + part.count, 0)
   const quantities = ranked(
     model,
-    parts.flatMap((part) => helpful(model, part)),
+    [...new Set(parts.flatMap((part) => helpful(model, part)))],
     true,
   )
-  const first = quantities.slice(0, 3).map((path) => wording.quantity(path))
+  const together = missing === 1 ? [] : sufficient(model, parts, quantities)
+  const first = (missing === 1 ? quantities.slice(0, 3) : together.slice(0, 6)).map((path) =>
+    wording.quantity(path),
+  )
+  const more = together.length - first.length
   return error(
     'underspecified',
     ownersOf(quantities),
     quantities,
-    `${numberWord(missing)} missing: nothing fixes, for instance, ${first.join('; ')}.`,
+    missing === 1
+      ? `One number is missing: nothing fixes, for instance, ${first.join('; ')}.`
+      : `${missing} numbers are missing. These would do together: ${first.join('; ')}${more > 0 ? `; and ${more} more` : ''}.`,
     {
       missing,
       advice:
-        missing === 1 ? 'Give one of these quantities.' : `Give ${missing} of these quantities.`,
-      remedies: remedies('give', quantities, (path) => {
+        missing === 1
+          ? 'Give one of these quantities.'
+          : `Give ${missing} of these quantities; the first ${missing} do together.`,
+      remedies: remedies('give', [...new Set([...together, ...quantities])], (path) => {
         const index = model.system.indexOf.get(path)
         return index === undefined ? undefined : model.system.variables[index]!.description.usual
       }),

@@ -13,10 +13,13 @@ function counts({ unknowns, equations }: BalanceMessage['ledger']): string {
   return `${unknowns} unknowns, ${equations} equations.`
 }
 
-/** 'Give one of these:', 'Give 2 numbers, one of them from these:'. */
+/** 'Give one of these:', 'Give 2 of these, the first 2 do:'. */
 function invitation(verb: 'Give' | 'Free', count: number, finding: Finding): string {
   if ((finding.remedies ?? []).length === 0) return finding.advice ?? finding.message
-  return count === 1 ? `${verb} one of these:` : `${verb} ${count} of these:`
+  if (count === 1) return `${verb} one of these:`
+  return verb === 'Give'
+    ? `Give ${count} of these; the first ${count} do together:`
+    : `Free ${count} of these:`
 }
 
 /** The ledger in a line or more: square, or for each set how many numbers are missing or too many. */
