@@ -321,7 +321,11 @@ function noAnswer(
       program.steps[k]!.run(program.tape, 0)
       const { quantity, value, limit } = rangeProblem()
       const dimension = dimensionOfRange[quantity] ?? 'number'
-      return `${name}: ${target} would need steam at a ${quantity} of ${wording.value(value, dimension)}, beyond ${wording.value(limit, dimension)}, where the properties (IAPWS-IF97) end.`
+      const end =
+        limit === 0
+          ? 'only above 0'
+          : `only ${value < limit ? 'from' : 'up to'} ${wording.value(limit, dimension)}`
+      return `${name}: ${target} would need steam at a ${quantity} of ${wording.value(value, dimension)}; the properties (IAPWS-IF97) hold ${end}.`
     }
     case StepOutcome.unbounded:
       return `${name}: ${target} would have to be unbounded; a difference that it is divided by is zero.`
