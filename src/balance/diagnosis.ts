@@ -322,8 +322,8 @@ function noAnswer(
       const { quantity, value, limit } = rangeProblem()
       const dimension = dimensionOfRange[quantity] ?? 'number'
       const end =
-        limit === 0
-          ? 'only above 0'
+        quantity === 'pressure' && value <= 0
+          ? 'only above 0 bar'
           : `only ${value < limit ? 'from' : 'up to'} ${wording.value(limit, dimension)}`
       return `${name}: ${target} would need steam at a ${quantity} of ${wording.value(value, dimension)}; the properties (IAPWS-IF97) hold ${end}.`
     }
