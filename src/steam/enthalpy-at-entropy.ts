@@ -18,7 +18,14 @@ import { refusePressure, write } from './enthalpy.ts'
 import { gapForm, wetForm } from './enthalpy-between.ts'
 import { highSide, sidesOfBorder13, sidesOfBorder23, sidesOfBorder25 } from './gap.ts'
 import { borderTemperature23 } from './if97/borders.ts'
-import { POINT_SIZE, Point, region1Point, region2Point, region5Point } from './if97/point.ts'
+import {
+  POINT_SIZE,
+  Point,
+  region1Point,
+  region2Point,
+  region5Point,
+  SUM_SIZE,
+} from './if97/point.ts'
 import { FIELD_SIZE, Field, region3AtEntropy, Sought, sought } from './if97/region3.ts'
 import { region1TemperatureFromEntropy } from './if97/unrolled-region1.ts'
 import {
@@ -79,7 +86,7 @@ export function enthalpyAtPressureEntropy(
  * p (Pa) and s (J/(kg K)) or v (m3/kg) of the call under way; T (K) of the last step and the step.
  */
 const asked = new Float64Array(4)
-const g = new Float64Array(9)
+const g = new Float64Array(SUM_SIZE)
 
 function entropyForm(out: Float64Array, at: number): number {
   const p = asked[0] as number

@@ -5,8 +5,8 @@
 
 /**
  * Slots of a saturation record: p (Pa), T (K), then h (J/kg), s (J/(kg K)), v (m3/kg) of saturated
- * liquid (L) and dry saturated steam (V), then the derivatives of the same to p. p is 0 while the
- * record is empty.
+ * liquid (L) and dry saturated steam (V), then the derivatives of the same to p, and
+ * 1 / (h'' - h') (kg/J). p is 0 while the record is empty.
  */
 export const Saturation = {
   p: 0,
@@ -24,16 +24,18 @@ export const Saturation = {
   sVp: 12,
   vLp: 13,
   vVp: 14,
+  perHeat: 15,
 } as const
-export const SATURATION_SIZE = 15
+export const SATURATION_SIZE = 16
 
 /**
  * Slots of a state record: p (Pa), h (J/kg), T (K), s (J/(kg K)), v (m3/kg) and dryness fraction x
  * (not clamped), each with its partials to p at constant h and to h at constant p. `region` is 1,
  * 2, 3, 4 (wet, both saturated states included) or 5, and 0 while the record is empty.
  * `subcritical` is 1 where the dryness fraction is defined, from 611.213 Pa to below the critical
- * pressure; elsewhere it is 0 and x and its partials are 0. `log` is ln(p / 1 MPa) in region 2. From `saturation` on the record holds
- * the saturation record of p, valid while `subcritical` is 1.
+ * pressure; elsewhere it is 0 and x and its partials are 0. What foretells the next state follows:
+ * the second derivative of T to h at constant p, and ln(p / 1 MPa), which only region 2 keeps. From
+ * `saturation` on the record holds the saturation record of p, valid while `subcritical` is 1.
  */
 export const State = {
   p: 0,
@@ -52,8 +54,9 @@ export const State = {
   xh: 13,
   region: 14,
   subcritical: 15,
-  log: 16,
-  saturation: 17,
+  Thh: 16,
+  log: 17,
+  saturation: 18,
 } as const
 export const STATE_SIZE = State.saturation + SATURATION_SIZE
 

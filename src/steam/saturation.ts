@@ -23,12 +23,14 @@ const {
   T: satT,
   Tp: satTp,
   hL: satHL,
+  hV: satHV,
   sL: satSL,
   vL: satVL,
   hLp: satHLp,
   sLp: satSLp,
   vLp: satVLp,
   sV: satSV,
+  perHeat: satPerHeat,
 } = Saturation
 const pressure13 = borderPressure13
 
@@ -80,6 +82,7 @@ function renewSaturation(slot: number): void {
   saturationLine(cache, slot, slot + satT, slot + satTp)
   denseSide(cache, slot, 0)
   denseSide(cache, slot, 1)
+  cache[slot + satPerHeat] = 1 / ((cache[slot + satHV] as number) - (cache[slot + satHL] as number))
 }
 
 /** Where `cachedSaturation` leaves its records. */

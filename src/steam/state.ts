@@ -1,8 +1,4 @@
-/**
- * States from pressure and enthalpy, with all first partials: the kernel's hot function. One file,
- * since its parts share arrays that are constants of the module; an imported array is looked up at
- * each use.
- */
+/** States from pressure and enthalpy, with all first partials: the kernel's hot function. */
 import {
   borderPressure13,
   borderTemperature13,
@@ -15,38 +11,11 @@ import {
   lowestSaturationPressure,
   lowestTemperature,
 } from './constants.ts'
-import {
-  border,
-  enthalpyAlong,
-  entropyAlong,
-  highSide,
-  lowSide,
-  sidesOfBorder13,
-  sidesOfBorder23,
-  sidesOfBorder25,
-  volumeAlong,
-} from './gap.ts'
+import { highSide, lowSide, sidesOfBorder13, sidesOfBorder23, sidesOfBorder25 } from './gap.ts'
 import { borderTemperature23 } from './if97/borders.ts'
+import { Point, region1Point, region2Point, region5Point, region5Settled } from './if97/point.ts'
+import { Field, onLiquidSide, region3AtEnthalpy, Sought, sought } from './if97/region3.ts'
 import {
-  POINT_SIZE,
-  Point,
-  region1Point,
-  region1Settled,
-  region2Point,
-  region2Settled,
-  region5Point,
-  region5Settled,
-} from './if97/point.ts'
-import {
-  FIELD_SIZE,
-  Field,
-  onLiquidSide,
-  region3AtEnthalpy,
-  Sought,
-  sought,
-} from './if97/region3.ts'
-import {
-  ASKED_SIZE,
   Asked,
   region1TemperatureAtEnthalpy,
   region2TemperatureAtEnthalpy,
@@ -55,6 +24,16 @@ import {
 import { Outcome, refuse } from './outcome.ts'
 import { SATURATION_SIZE, Saturation, State } from './records.ts'
 import { cachedSaturation, saturationCache } from './saturation.ts'
+import {
+  asked as fillAsked,
+  fillBeside,
+  fillField,
+  field as fillFieldFrom,
+  fillGap,
+  fillPoint,
+  point as fillPointFrom,
+  fillWet,
+} from './state-fill.ts'
 
 // Slots and limits as constants of this module: an imported binding is looked up at each use.
 const {
@@ -65,49 +44,28 @@ const {
   T: atT,
   Tp: atTp,
   Th: atTh,
-  s: atS,
+  Thh: atThh,
   v: atV,
-  sp: atSp,
-  sh: atSh,
   vp: atVp,
   vh: atVh,
   subcritical: atSubcritical,
-  x: atX,
-  xp: atXp,
-  xh: atXh,
   log: atLog,
 } = State
+const { hL: satHL, hV: satHV, T: satT, vL: satVL, vV: satVV } = Saturation
+const { h: ptH, T: ptT, p: ptP, goal: ptGoal } = Point
 const {
-  hL: satHL,
-  hV: satHV,
-  T: satT,
-  hLp: satHLp,
-  hVp: satHVp,
-  vL: satVL,
-  vV: satVV,
-  sL: satSL,
-  sV: satSV,
-  sLp: satSLp,
-  vLp: satVLp,
-  Tp: satTp,
-  sVp: satSVp,
-  vVp: satVVp,
-} = Saturation
-const {
-  h: ptH,
-  v: ptV,
-  T: ptT,
-  cp: ptCp,
-  vT: ptVT,
-  hp: ptHp,
-  s: ptS,
-  vp: ptVp,
-  p: ptP,
-  tau: ptTau,
-  log: ptLog,
-  goal: ptGoal,
-} = Point
-const { p: askP, h: askH, guess: askGuess, limit: askLimit, T: askT, tau: askTau } = Asked
+  p: askP,
+  h: askH,
+  guess: askGuess,
+  limit: askLimit,
+  T: askT,
+  tau: askTau,
+  step: askStep,
+  log: askLog,
+} = Asked
+const asked = fillAsked
+const point = fillPointFrom
+const field = fillFieldFrom
 const pressure13 = borderPressure13
 const critical = criticalPressure
 const leastSaturation = lowestSaturationPressure
@@ -119,17 +77,17 @@ const border13 = borderTemperature13
 const saturationSize = SATURATION_SIZE
 const cache = saturationCache
 
-const point = new Float64Array(POINT_SIZE)
-const asked = new Float64Array(ASKED_SIZE)
 /** p (Pa) and h (J/kg) of the state asked for, see `stateAtRequest`. */
 export const stateRequest: Float64Array = asked
-const field = new Float64Array(FIELD_SIZE)
 
 // Where a state above 16.529 MPa lies to the two-phase zone.
 const LIQUID = 0
 const VAPOUR = 1
 const SUPERCRITICAL = 2
 
+/** How far a state foretells another one of regions 1 and 2 closely, J/kg and as part of p. */
+const nextEnthalpy = 6e3
+const nextPressure = 3e-3
 /** How far a state of region 3 foretells another one, J/kg. */
 const nearEnthalpy = 1e5
 
@@ -224,7 +182,8 @@ function solve(record: Float64Array, at: number): number {
   if (h > hV + bandAround(hV)) {
     return p > pressure13 ? dense(record, at, VAPOUR) : steam(record, at, 1)
   }
-  return wet(record, at)
+  fillWet(record, at)
+  return Outcome.fine
 }
 
 function refuseAsked(): number {
@@ -237,58 +196,62 @@ function refuseAsked(): number {
 
 /** The guess: the temperature that the record's state foretells; 0 when it is of another region. */
 function foretell(record: Float64Array, at: number, region: number): void {
-  asked[askGuess] =
-    record[at + atRegion] === region
-      ? (record[at + atT] as number) +
-        (record[at + atTp] as number) * ((asked[askP] as number) - (record[at + atP] as number)) +
-        (record[at + atTh] as number) * ((asked[askH] as number) - (record[at + atH] as number))
-      : 0
+  if (record[at + atRegion] !== region) {
+    asked[askGuess] = 0
+    return
+  }
+  const dp = (asked[askP] as number) - (record[at + atP] as number)
+  const dh = (asked[askH] as number) - (record[at + atH] as number)
+  const along = (record[at + atTh] as number) + 0.5 * dh * (record[at + atThh] as number)
+  asked[askGuess] = (record[at + atT] as number) + (record[at + atTp] as number) * dp + along * dh
+}
+
+/** The same for regions 1 and 2, whose backward equations are the better guess from further away. */
+function foretellNext(record: Float64Array, at: number, region: number): void {
+  const p = asked[askP] as number
+  const dp = Math.abs(p - (record[at + atP] as number))
+  const dh = Math.abs((asked[askH] as number) - (record[at + atH] as number))
+  if (dp < nextPressure * p && dh < nextEnthalpy) foretell(record, at, region)
+  else asked[askGuess] = 0
 }
 
 function liquid(record: Float64Array, at: number, subcritical: number): number {
   const p = asked[askP] as number
   asked[askLimit] = p > pressure13 ? border13 : (record[at + atSaturation + satT] as number)
-  foretell(record, at, 1)
+  foretellNext(record, at, 1)
   region1TemperatureAtEnthalpy(asked)
-  const T = asked[askT] as number
+  const T = 1386 / ((asked[askTau] as number) + (asked[askStep] as number))
   if (!(T >= coldest - temperatureSlack)) {
     region1Point(point, p, coldest)
     return refuse(Outcome.enthalpyLow, asked[askH] as number, point[ptH] as number)
   }
-  point[ptP] = p
-  point[ptTau] = asked[askTau] as number
-  point[ptGoal] = asked[askH] as number
-  region1Settled(point)
-  fill(record, at, 1, subcritical)
+  asked[askT] = T
+  fillBeside(record, at, 1, subcritical)
   return Outcome.fine
 }
 
 function steam(record: Float64Array, at: number, subcritical: number): number {
   const p = asked[askP] as number
+  asked[askLog] =
+    record[at + atP] === p && record[at + atRegion] === 2
+      ? (record[at + atLog] as number)
+      : Math.log(p * 1e-6)
   if ((asked[askH] as number) > highestEnthalpy2) return hotSteam(record, at, subcritical)
   if (p > pressure13) limitByBorder23()
   else if (subcritical === 1) {
     asked[askLimit] = record[at + atSaturation + satT] as number
   } else asked[askLimit] = coldest
-  foretell(record, at, 2)
+  foretellNext(record, at, 2)
   region2TemperatureAtEnthalpy(asked)
-  const T = asked[askT] as number
+  const T = 540 / ((asked[askTau] as number) + (asked[askStep] as number))
   if (T > border25) return hotSteam(record, at, subcritical)
-  if (T < coldest - temperatureSlack) {
+  if (!(T >= coldest - temperatureSlack)) {
     region2Point(point, p, coldest)
     return refuse(Outcome.enthalpyLow, asked[askH] as number, point[ptH] as number)
   }
-  const log =
-    record[at + atP] === p && record[at + atRegion] === 2
-      ? (record[at + atLog] as number)
-      : Math.log(p * 1e-6)
-  point[ptP] = p
-  point[ptTau] = asked[askTau] as number
-  point[ptLog] = log
-  point[ptGoal] = asked[askH] as number
-  region2Settled(point)
-  fill(record, at, 2, subcritical)
-  record[at + atLog] = log
+  asked[askT] = T
+  record[at + atLog] = asked[askLog] as number
+  fillBeside(record, at, 2, subcritical)
   return Outcome.fine
 }
 
@@ -300,11 +263,13 @@ function hotSteam(record: Float64Array, at: number, subcritical: number): number
     region2Point(point, p, border25)
     const most = point[ptH] as number
     if (h > most * (1 + 1e-12)) return refuse(Outcome.enthalpyHigh, h, most)
-    fill(record, at, 2, subcritical)
+    record[at + atLog] = asked[askLog] as number
+    fillPoint(record, at, 2, subcritical)
     return Outcome.fine
   }
   sidesOfBorder25(p)
   if (h < (highSide[ptH] as number)) {
+    record[at + atLog] = asked[askLog] as number
     fillGap(record, at, 2, subcritical)
     return Outcome.fine
   }
@@ -319,85 +284,8 @@ function hotSteam(record: Float64Array, at: number, subcritical: number): number
   point[ptT] = T
   point[ptGoal] = h
   region5Settled(point)
-  fill(record, at, 5, subcritical)
+  fillPoint(record, at, 5, subcritical)
   return Outcome.fine
-}
-
-/** Writes a single-phase state from the forward equations in `point`. */
-function fill(record: Float64Array, at: number, region: number, subcritical: number): void {
-  const v = point[ptV] as number
-  const T = point[ptT] as number
-  const Th = 1 / (point[ptCp] as number)
-  const vT = point[ptVT] as number
-  const Tp = -(point[ptHp] as number) * Th
-  const sh = 1 / T
-  record[at + atP] = asked[askP] as number
-  record[at + atH] = asked[askH] as number
-  record[at + atT] = T
-  record[at + atS] = point[ptS] as number
-  record[at + atV] = v
-  record[at + atTp] = Tp
-  record[at + atTh] = Th
-  record[at + atSp] = -v * sh
-  record[at + atSh] = sh
-  record[at + atVp] = (point[ptVp] as number) + vT * Tp
-  record[at + atVh] = vT * Th
-  record[at + atRegion] = region
-  dryness(record, at, subcritical)
-}
-
-/** x with its partials from the saturation record, or zeros where it is not defined. */
-function dryness(record: Float64Array, at: number, subcritical: number): void {
-  record[at + atSubcritical] = subcritical
-  if (subcritical === 0) {
-    record[at + atX] = 0
-    record[at + atXp] = 0
-    record[at + atXh] = 0
-    return
-  }
-  const saturation = at + atSaturation
-  const hL = record[saturation + satHL] as number
-  const hLp = record[saturation + satHLp] as number
-  const xh = 1 / ((record[saturation + satHV] as number) - hL)
-  const x = ((asked[askH] as number) - hL) * xh
-  record[at + atX] = x
-  record[at + atXh] = xh
-  record[at + atXp] = -(hLp + x * ((record[saturation + satHVp] as number) - hLp)) * xh
-}
-
-/**
- * Writes a state within a gap between two regions, from both sides of the border as gap.ts has
- * them.
- */
-function fillGap(record: Float64Array, at: number, region: number, subcritical: number): void {
-  const p = asked[askP] as number
-  const h = asked[askH] as number
-  const T = border[0] as number
-  const slope = border[1] as number
-  const low = lowSide[ptH] as number
-  const width = (highSide[ptH] as number) - low
-  const part = (h - low) / width
-  const lowP = enthalpyAlong(lowSide, slope)
-  const partP = -(lowP + part * (enthalpyAlong(highSide, slope) - lowP)) / width
-  const s = lowSide[ptS] as number
-  const ds = (highSide[ptS] as number) - s
-  const v = lowSide[ptV] as number
-  const dv = (highSide[ptV] as number) - v
-  const sp = entropyAlong(lowSide, T, slope)
-  const vp = volumeAlong(lowSide, slope)
-  record[at + atP] = p
-  record[at + atH] = h
-  record[at + atT] = T
-  record[at + atS] = s + part * ds
-  record[at + atV] = v + part * dv
-  record[at + atTp] = slope
-  record[at + atTh] = 0
-  record[at + atSp] = sp + part * (entropyAlong(highSide, T, slope) - sp) + partP * ds
-  record[at + atSh] = ds / width
-  record[at + atVp] = vp + part * (volumeAlong(highSide, slope) - vp) + partP * dv
-  record[at + atVh] = dv / width
-  record[at + atRegion] = region
-  dryness(record, at, subcritical)
 }
 
 /**
@@ -477,56 +365,4 @@ function near(record: Float64Array, at: number): boolean {
     Math.abs(p - (record[at + atP] as number)) < 0.1 * p &&
     Math.abs(h - (record[at + atH] as number)) < nearEnthalpy
   )
-}
-
-/** Writes a state of region 3 from `field`. */
-function fillField(record: Float64Array, at: number, subcritical: number): void {
-  const v = 1 / (field[Field.rho] as number)
-  const T = field[Field.T] as number
-  const pRho = field[Field.pRho] as number
-  const pT = field[Field.pT] as number
-  const hRho = field[Field.hRho] as number
-  const hT = field[Field.hT] as number
-  const share = 1 / (pRho * hT - pT * hRho)
-  const sh = 1 / T
-  record[at + atP] = asked[askP] as number
-  record[at + atH] = asked[askH] as number
-  record[at + atT] = T
-  record[at + atS] = field[Field.s] as number
-  record[at + atV] = v
-  record[at + atTp] = -hRho * share
-  record[at + atTh] = pRho * share
-  record[at + atSp] = -v * sh
-  record[at + atSh] = sh
-  record[at + atVp] = -v * v * hT * share
-  record[at + atVh] = v * v * pT * share
-  record[at + atRegion] = 3
-  dryness(record, at, subcritical)
-}
-
-function wet(record: Float64Array, at: number): number {
-  const saturation = at + atSaturation
-  dryness(record, at, 1)
-  const x = record[at + atX] as number
-  const xp = record[at + atXp] as number
-  const xh = record[at + atXh] as number
-  const s = record[saturation + satSL] as number
-  const ds = (record[saturation + satSV] as number) - s
-  const sp = record[saturation + satSLp] as number
-  const v = record[saturation + satVL] as number
-  const dv = (record[saturation + satVV] as number) - v
-  const vp = record[saturation + satVLp] as number
-  record[at + atP] = asked[askP] as number
-  record[at + atH] = asked[askH] as number
-  record[at + atT] = record[saturation + satT] as number
-  record[at + atS] = s + x * ds
-  record[at + atV] = v + x * dv
-  record[at + atTp] = record[saturation + satTp] as number
-  record[at + atTh] = 0
-  record[at + atSp] = sp + x * ((record[saturation + satSVp] as number) - sp) + xp * ds
-  record[at + atSh] = xh * ds
-  record[at + atVp] = vp + x * ((record[saturation + satVVp] as number) - vp) + xp * dv
-  record[at + atVh] = xh * dv
-  record[at + atRegion] = 4
-  return Outcome.fine
 }

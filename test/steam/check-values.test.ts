@@ -93,7 +93,7 @@ function properties(row: Row): Record<string, number> {
 
 /** A generated backward equation at its two variables. */
 function generated(equation: (g: Float64Array) => void, x: number, y: number): number {
-  const g = new Float64Array(9)
+  const g = new Float64Array(12)
   g[6] = x
   g[7] = y
   equation(g)

@@ -51,7 +51,7 @@ const header = (source: string): string =>
 function region1File(): string {
   let text = header('IAPWS R7-97(2012), Eqs. (7), (11) and (13)')
   let body = new Body()
-  sumWithSecondDerivatives(body, region1, 'x', 'y')
+  sumWithSecondDerivatives(body, region1, 'x', 'y', true)
   body.say('const rx = 1 / x')
   body.say('const ry = 1 / y')
   body.say('g[0] = f')
@@ -60,8 +60,11 @@ function region1File(): string {
   body.say('g[3] = fy * ry')
   body.say('g[4] = -fxy * rx * ry')
   body.say('g[5] = (fyy - fy) * ry * ry')
+  body.say('g[9] = (fyyy - 3 * fyy + 2 * fy) * ry * ry * ry')
+  body.say('g[10] = (fxy - fxyy) * rx * ry * ry')
+  body.say('g[11] = (fxxy - fxy) * rx * rx * ry')
   text += functionText(
-    'gamma of region 1 and its derivatives, from x = 7.1 - pi and y = tau - 1.222: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.',
+    'gamma of region 1 and its derivatives, from x = 7.1 - pi and y = tau - 1.222: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2 and then d3/dtau3, d3/dpidtau2, d3/dpi2dtau.',
     'region1Potential',
     ['x', 'y'],
     settled(body),
@@ -71,9 +74,8 @@ function region1File(): string {
   body.say('const ry = 1 / y')
   body.say('g[0] = fy * ry')
   body.say('g[1] = (fyy - fy) * ry * ry')
-  body.say('g[2] = (fyyy - 3 * fyy + 2 * fy) * ry * ry * ry')
   text += `\n${functionText(
-    'The first three derivatives to tau of gamma of region 1, with x = 7.1 - pi and y = tau - 1.222.',
+    'The first two derivatives to tau of gamma of region 1, with x = 7.1 - pi and y = tau - 1.222.',
     'region1Slopes',
     ['x', 'y'],
     settled(body),
@@ -119,8 +121,8 @@ function termsBelow(pressure: number): Term[] {
 function potential2(name: string, rows: readonly Term[], doc: string): string {
   const body = new Body()
   body.say('const y = tau - 0.5')
-  sumWithSecondDerivatives(body, rows, 'x', 'y')
-  idealPart(body, region2Ideal, 'tau', false)
+  sumWithSecondDerivatives(body, rows, 'x', 'y', true)
+  idealPart(body, region2Ideal, 'tau', ['o', 'oy', 'oyy', 'oyyy'])
   body.say('const rx = 1 / x')
   body.say('const ry = 1 / y')
   body.say('const rt = 1 / tau')
@@ -130,8 +132,13 @@ function potential2(name: string, rows: readonly Term[], doc: string): string {
   body.say('g[3] = oy * rt + fy * ry')
   body.say('g[4] = fxy * rx * ry')
   body.say('g[5] = (oyy - oy) * rt * rt + (fyy - fy) * ry * ry')
+  body.say('const oThird = oyyy - 3 * oyy + 2 * oy')
+  body.say('const fThird = fyyy - 3 * fyy + 2 * fy')
+  body.say('g[9] = oThird * rt * rt * rt + fThird * ry * ry * ry')
+  body.say('g[10] = (fxyy - fxy) * rx * ry * ry')
+  body.say('g[11] = (fxxy - fxy) * rx * rx * ry')
   return functionText(
-    `gamma of region 2 and its derivatives${doc}, from x = pi and logarithm = ln pi: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.`,
+    `gamma of region 2 and its derivatives${doc}, from x = pi and logarithm = ln pi: writes gamma, d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2 and then d3/dtau3, d3/dpidtau2, d3/dpi2dtau.`,
     name,
     ['x', 'tau', 'logarithm'],
     settled(body),
@@ -142,16 +149,13 @@ function slopes2(name: string, rows: readonly Term[], doc: string): string {
   const body = new Body()
   body.say('const y = tau - 0.5')
   sumWithSlopes(body, rows, 'x', 'y')
-  idealPart(body, region2Ideal, 'tau', true)
+  idealPart(body, region2Ideal, 'tau', ['oy', 'oyy'])
   body.say('const ry = 1 / y')
   body.say('const rt = 1 / tau')
   body.say('g[0] = oy * rt + fy * ry')
   body.say('g[1] = (oyy - oy) * rt * rt + (fyy - fy) * ry * ry')
-  body.say('const oThird = oyyy - 3 * oyy + 2 * oy')
-  body.say('const fThird = fyyy - 3 * fyy + 2 * fy')
-  body.say('g[2] = oThird * rt * rt * rt + fThird * ry * ry * ry')
   return functionText(
-    `The first three derivatives to tau of gamma of region 2${doc}, with x = pi.`,
+    `The first two derivatives to tau of gamma of region 2${doc}, with x = pi.`,
     name,
     ['x', 'tau'],
     settled(body),
@@ -245,7 +249,7 @@ function region5File(): string {
   let text = header('IAPWS R7-97(2012), Eqs. (33) and (34)')
   const body = new Body()
   sumWithSecondDerivatives(body, region5Residual, 'x', 'y')
-  idealPart(body, region5Ideal, 'y', false)
+  idealPart(body, region5Ideal, 'y', ['o', 'oy', 'oyy'])
   body.say('const rx = 1 / x')
   body.say('const ry = 1 / y')
   body.say('g[0] = o + f + logarithm')

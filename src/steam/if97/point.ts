@@ -28,9 +28,12 @@ export const Point = {
 } as const
 export const POINT_SIZE = 12
 
+/** Size of the array that a generated sum reads its inputs from and writes its outputs to. */
+export const SUM_SIZE = 12
+
 // Inputs and outputs pass through arrays: a number passed to or from a function that is not inlined
 // would be allocated.
-const g = new Float64Array(9)
+const g = new Float64Array(SUM_SIZE)
 // A constant of this module: an imported binding is looked up at each use.
 const R = gasConstant
 const lowPressure = lowPressure2
@@ -39,8 +42,8 @@ const lowPressure = lowPressure2
 function scalesOf(Tstar: number, pstar: number): Float64Array {
   return Float64Array.of(R * Tstar, R / pstar, 1 / pstar, Tstar)
 }
-const scales1 = scalesOf(1386, 16.53e6)
-const scales2 = scalesOf(540, 1e6)
+export const scales1: Float64Array = scalesOf(1386, 16.53e6)
+export const scales2: Float64Array = scalesOf(540, 1e6)
 const scales5 = scalesOf(1000, 1e6)
 
 /** Fills a point from gamma's derivatives in `g`. */
@@ -114,32 +117,13 @@ export function region5Point(point: Float64Array, p: number, T: number): void {
 }
 
 /**
- * Region 1 at the point's p and tau = 1386 K / T, which is all but settled: T, s and v then follow
- * the last, tiny step that brings h to the point's goal to round-off, to first order; the
- * derivatives stay.
+ * Region 5 at the point's p and T, which is all but settled: T, s and v then follow the last, tiny
+ * step that brings h to the point's goal to round-off, to first order; the derivatives stay.
  */
-export function region1Settled(point: Float64Array): void {
-  point[8] = 1386 / (point[9] as number)
-  region1At(point)
-  settle(point)
-}
-
-/** Region 2 likewise, tau = 540 K / T, with ln(p / 1 MPa) in the point. */
-export function region2Settled(point: Float64Array): void {
-  point[8] = 540 / (point[9] as number)
-  region2At(point)
-  settle(point)
-}
-
-/** Region 5 likewise, with T and tau in the point. */
 export function region5Settled(point: Float64Array): void {
   point[9] = 1000 / (point[8] as number)
   point[10] = Math.log((point[7] as number) * 1e-6)
   region5At(point)
-  settle(point)
-}
-
-function settle(point: Float64Array): void {
   const T = point[8] as number
   const h = point[11] as number
   const off = h - (point[0] as number)

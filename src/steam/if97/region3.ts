@@ -4,7 +4,7 @@
  * (p, h) and (p, s) stay regular through the critical point, where dp/drho vanishes.
  */
 import { criticalDensity, criticalTemperature, gasConstant } from '../constants.ts'
-import { Point } from './point.ts'
+import { Point, SUM_SIZE } from './point.ts'
 import { boundary3ab } from './rows/boundaries.ts'
 import {
   region3aTemperatureFromEnthalpy,
@@ -33,7 +33,7 @@ export const Field = {
 } as const
 export const FIELD_SIZE = 10
 
-const g = new Float64Array(9)
+const g = new Float64Array(SUM_SIZE)
 // Constants of this module: an imported binding is looked up at each use.
 const R = gasConstant
 const rhoC = criticalDensity

@@ -106,6 +106,7 @@ export function saturatedStates(record: Float64Array, at: number): void {
   record[at + 12] = sVu * toPressure
   record[at + 13] = vLu * toPressure
   record[at + 14] = (pvVu * toPressure - vV) * perPressure
+  record[at + 15] = 1 / (hV - hL)
 }
 
 /** The polynomials of one step, from the equations at Chebyshev's nodes. */

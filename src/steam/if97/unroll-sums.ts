@@ -118,14 +118,15 @@ class Sum {
 
 /**
  * sum of n x^I y^J with its logarithmic derivatives, in the names f, fx, fxx, fy, fxy, fyy of the
- * body: the sums of t, I t, I^2 t, J t, I J t, J^2 t over the terms t. Terms of one I are summed
- * first.
+ * body: the sums of t, I t, I^2 t, J t, I J t, J^2 t over the terms t; with `slopes` those of the
+ * second derivatives to y as well, fxxy, fxyy, fyyy. Terms of one I are summed first.
  */
 export function sumWithSecondDerivatives(
   body: Body,
   rows: readonly Term[],
   x: string,
   y: string,
+  slopes = false,
 ): void {
   body.powers(
     x,
@@ -141,6 +142,9 @@ export function sumWithSecondDerivatives(
   const fy = new Sum(body, 'fy')
   const fxy = new Sum(body, 'fxy')
   const fyy = new Sum(body, 'fyy')
+  const fxxy = new Sum(body, 'fxxy')
+  const fxyy = new Sum(body, 'fxyy')
+  const fyyy = new Sum(body, 'fyyy')
   for (const [I, group] of byI(rows)) {
     const id = named(I)
     const [first] = group
@@ -152,11 +156,21 @@ export function sumWithSecondDerivatives(
       fx.add(`u${id}`)
       fxx.add(scaled(I, `u${id}`))
       fy.add(`w${id}`)
-      fxy.add(scaled(first.J, `u${id}`))
-      fyy.add(scaled(first.J, `w${id}`))
+      if (!slopes) {
+        fxy.add(scaled(first.J, `u${id}`))
+        fyy.add(scaled(first.J, `w${id}`))
+        continue
+      }
+      body.say(`const v${id} = ${scaled(first.J, `u${id}`)}`)
+      body.say(`const z${id} = ${scaled(first.J, `w${id}`)}`)
+      fxy.add(`v${id}`)
+      fyy.add(`z${id}`)
+      fxxy.add(scaled(I, `v${id}`))
+      fxyy.add(scaled(first.J, `v${id}`))
+      fyyy.add(scaled(first.J, `z${id}`))
       continue
     }
-    const [zero, one, two] = groupSums(body, group, y, id)
+    const [zero, one, two, three] = groupSums(body, group, y, id, slopes)
     const times = (name: string): string => (I === 0 ? name : `${name} * ${powerName(x, I)}`)
     if (zero !== '') {
       body.say(`const p${id} = ${times(zero)}`)
@@ -170,20 +184,38 @@ export function sumWithSecondDerivatives(
     if (one !== '') {
       body.say(`const q${id} = ${times(one)}`)
       fy.add(`q${id}`)
-      if (I !== 0) fxy.add(scaled(I, `q${id}`))
+      if (I !== 0 && slopes) {
+        body.say(`const v${id} = ${scaled(I, `q${id}`)}`)
+        fxy.add(`v${id}`)
+        fxxy.add(scaled(I, `v${id}`))
+      } else if (I !== 0) fxy.add(scaled(I, `q${id}`))
     }
-    if (two !== '') fyy.add(times(two))
+    if (two !== '' && slopes) {
+      body.say(`const r${id} = ${times(two)}`)
+      fyy.add(`r${id}`)
+      if (I !== 0) fxyy.add(scaled(I, `r${id}`))
+    } else if (two !== '') fyy.add(times(two))
+    if (three !== '') fyyy.add(times(three))
   }
 }
 
-/** The sums over one I of t, J t and J^2 t with t = n y^J; '' where a sum has no term. */
+/**
+ * The sums over one I of t, J t, J^2 t and, with `slopes`, J^3 t, with t = n y^J; '' where a sum has
+ * no term.
+ */
 function groupSums(
   body: Body,
   group: readonly Term[],
   y: string,
   id: string,
-): [string, string, string] {
-  const sums = [new Sum(body, `a${id}`), new Sum(body, `b${id}`), new Sum(body, `c${id}`)] as const
+  slopes: boolean,
+): [string, string, string, string] {
+  const sums = [
+    new Sum(body, `a${id}`),
+    new Sum(body, `b${id}`),
+    new Sum(body, `c${id}`),
+    new Sum(body, `d${id}`),
+  ] as const
   for (const { J, n } of group) {
     if (J === 0) {
       sums[0].add(`${n}`)
@@ -195,13 +227,20 @@ function groupSums(
     if (J === 1) {
       sums[1].add(t)
       sums[2].add(t)
+      if (slopes) sums[3].add(t)
       continue
     }
     body.say(`const j${t} = ${scaled(J, t)}`)
     sums[1].add(`j${t}`)
-    sums[2].add(scaled(J, `j${t}`))
+    if (!slopes) {
+      sums[2].add(scaled(J, `j${t}`))
+      continue
+    }
+    body.say(`const k${t} = ${scaled(J, `j${t}`)}`)
+    sums[2].add(`k${t}`)
+    sums[3].add(scaled(J, `k${t}`))
   }
-  return [sums[0].name, sums[1].name, sums[2].name]
+  return [sums[0].name, sums[1].name, sums[2].name, sums[3].name]
 }
 
 /** A number as part of a name. */
@@ -210,8 +249,8 @@ function named(value: number): string {
 }
 
 /**
- * The sums J t, J^2 t, J^3 t over all terms t = n x^I y^J, in the names fy, fyy, fyyy. Terms of one
- * J are summed first.
+ * The sums J t, J^2 t over all terms t = n x^I y^J, in the names fy, fyy. Terms of one J are summed
+ * first.
  */
 export function sumWithSlopes(body: Body, rows: readonly Term[], x: string, y: string): void {
   const used = rows.filter((row) => row.J !== 0)
@@ -225,21 +264,18 @@ export function sumWithSlopes(body: Body, rows: readonly Term[], x: string, y: s
   )
   const fy = new Sum(body, 'fy')
   const fyy = new Sum(body, 'fyy')
-  const fyyy = new Sum(body, 'fyyy')
   for (const [J, group] of groupedBy(used, ({ J }) => J)) {
     const id = named(J)
     const sum = new Sum(body, `a${id}`)
     for (const { I, n } of group) sum.add(I === 0 ? `${n}` : `${n} * ${powerName(x, I)}`)
     body.say(`const t${id} = ${sum.name} * ${powerName(y, J)}`)
     if (J === 1) {
-      for (const sum of [fy, fyy, fyyy]) sum.add(`t${id}`)
+      for (const sum of [fy, fyy]) sum.add(`t${id}`)
       continue
     }
     body.say(`const u${id} = ${scaled(J, `t${id}`)}`)
-    body.say(`const w${id} = ${scaled(J, `u${id}`)}`)
     fy.add(`u${id}`)
-    fyy.add(`w${id}`)
-    fyyy.add(scaled(J, `w${id}`))
+    fyy.add(scaled(J, `u${id}`))
   }
 }
 
@@ -263,41 +299,45 @@ export function plainSum(body: Body, rows: readonly Term[], x: string, y: string
 
 /**
  * The ideal part of regions 2 and 5 without ln pi: o, oy, oyy, oyyy hold the sums of t, J t, J^2 t,
- * J^3 t over t = n y^J; with `slopes` those of the slopes alone.
+ * J^3 t over t = n y^J, as far as they are among those wanted.
  */
-export function idealPart(body: Body, rows: readonly Term[], y: string, slopes: boolean): void {
+export function idealPart(
+  body: Body,
+  rows: readonly Term[],
+  y: string,
+  wanted: readonly ('o' | 'oy' | 'oyy' | 'oyyy')[],
+): void {
   body.powers(
     y,
     rows.map((row) => row.J),
   )
-  const [o, oy, oyy, oyyy] = ['o', 'oy', 'oyy', 'oyyy'].map((name) => new Sum(body, name)) as [
-    Sum,
-    Sum,
-    Sum,
-    Sum,
-  ]
+  const names = ['o', 'oy', 'oyy', 'oyyy'] as const
+  const sums = names.map((name) => (wanted.includes(name) ? new Sum(body, name) : undefined))
+  const highest = names.findLastIndex((name) => wanted.includes(name))
   for (const { J, n } of rows) {
     if (J === 0) {
-      if (!slopes) o.add(`${n}`)
+      sums[0]?.add(`${n}`)
       continue
     }
-    const t = `o${named(J)}`
-    body.say(`const ${t} = ${n} * ${powerName(y, J)}`)
-    if (!slopes) o.add(t)
-    let power = t
-    for (const [k, sum] of [oy, oyy, oyyy].entries()) {
-      if (k === 2 && !slopes) continue
-      if (J !== 1 && k < (slopes ? 2 : 1)) {
-        body.say(`const ${'jk'[k]}${t} = ${scaled(J, power)}`)
-        power = `${'jk'[k]}${t}`
-        sum.add(power)
-      } else sum.add(scaled(J, power))
+    let power = `o${named(J)}`
+    body.say(`const ${power} = ${n} * ${powerName(y, J)}`)
+    for (const [k, sum] of sums.entries()) {
+      if (k > highest) break
+      if (k > 0 && J !== 1) {
+        const next = scaled(J, power)
+        if (k < highest) {
+          body.say(`const ${'jk'[k - 1]}o${named(J)} = ${next}`)
+          power = `${'jk'[k - 1]}o${named(J)}`
+        } else power = next
+      }
+      sum?.add(power)
     }
   }
 }
 
 /**
- * What every generated function works on: up to six outputs from slot 0, its inputs from slot 6.
+ * What every generated function works on: six outputs from slot 0, its inputs from slot 6 and three
+ * more outputs from slot 9.
  */
 const inputs = ['g[6]', 'g[7]', 'g[8]']
 
