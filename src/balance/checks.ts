@@ -1,3 +1,4 @@
+import { variablesOf } from '../equations/expression/index.ts'
 import type { Given, Layout } from '../plant/document.ts'
 import type { Finding, Remedy } from './answer.ts'
 import { error, Wording } from './findings.ts'
@@ -21,6 +22,8 @@ export function checkAnswer(model: Model, results: Results): Finding[] {
     ...rangeChecks(model, wording),
     ...entropyChecks(model, results, wording),
     ...differenceChecks(model, wording),
+    ...transferChecks(model, wording),
+    ...stateChecks(model, results, wording),
     ...divisorChecks(model, results, wording),
     ...curveChecks(model, results, wording),
     ...idleChecks(model.system.layout, wording),
@@ -30,6 +33,11 @@ export function checkAnswer(model: Model, results: Results): Finding[] {
       ? { ...finding, remedies: remediesFor(model, finding.quantities) }
       : finding,
   )
+}
+
+/** Whether an answer with these findings cannot be. */
+export function isImpossible(checks: readonly Finding[]): boolean {
+  return checks.some((finding) => finding.severity === 'error')
 }
 
 /** Givens on which an impossible number depends, nearest first: one of them is to be changed. */
@@ -220,6 +228,43 @@ function differenceChecks(model: Model, wording: Wording): Finding[] {
     )
   }
   return findings
+}
+
+/** A zone whose conductance is given and that would pass no heat all the same. */
+function transferChecks(model: Model, wording: Wording): Finding[] {
+  return model.unmet().map(({ owner, key }) => {
+    const { equation } = model.system.equations.find(
+      (one) => one.owner === owner && one.key === key,
+    )!
+    const paths = variablesOf(equation).map((index) => model.system.variables[index]!.path)
+    return error(
+      'no-answer',
+      [owner],
+      paths.filter((path) => path.startsWith(`${owner}.`)),
+      `${wording.name(owner)}: a zone would pass no heat although its conductance is given.`,
+      { advice: 'Give another conductance, or the approach instead.' },
+    )
+  })
+}
+
+/** A balance can be closed with a state for which there are no steam properties. */
+function stateChecks(model: Model, results: Results, wording: Wording): Finding[] {
+  const { layout } = model.system
+  const { lost } = model.program
+  return layout.streams.flatMap((stream, k) => {
+    const base = model.system.streamBase[k]!
+    const isKnown = !lost[base] && !lost[base + 1] && !lost[base + 2]
+    if (!isKnown || !Number.isNaN(results.states.get(k, 'T'))) return []
+    const p = wording.value(model.values[base + 1]!, 'pressure')
+    const h = wording.value(model.values[base + 2]!, 'specificEnthalpy')
+    return error(
+      'state-outside-range',
+      [stream.id, stream.from.slice(0, stream.from.indexOf('.'))],
+      [`${stream.id}.h`, `${stream.id}.p`],
+      `${wording.name(stream.id)} would be at ${p} and ${h}, where the properties (IAPWS-IF97) end.`,
+      { advice: 'Change what heats or cools it, or its flow.' },
+    )
+  })
 }
 
 function entropyChecks(model: Model, results: Results, wording: Wording): Finding[] {

@@ -1,10 +1,15 @@
 import { type Guess, Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
-import { type Difference, Differences, type Divisor } from './differences.ts'
+import { DesignStart } from './design-start.ts'
+import { type Difference, Differences, type Divisor, type Unmet } from './differences.ts'
 import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
 import { analyse, type Structure } from './structure.ts'
 import { type AssemblyOptions, assemble, type System } from './system.ts'
+
+/** Steps from a design to the plant: how many, and how short they may get. */
+const mostLeads = 24
+const shortestLead = 1 / 100
 
 /** A layout assembled, analysed and lowered: ready to be solved, again and again as givens change. */
 export class Model {
@@ -13,6 +18,7 @@ export class Model {
   readonly program: Program
   readonly options: AssemblyOptions
   private isWarm = false
+  private designStart: DesignStart | null | undefined
   private unfoldedSystem: System | undefined
   private seed: ((path: string) => number | null) | undefined
   private differencesRead: Differences | undefined
@@ -54,6 +60,12 @@ export class Model {
   differences(): readonly Difference[] {
     this.differencesRead ??= new Differences(this.system)
     return this.differencesRead.read(this.values, this.program.lost)
+  }
+
+  /** Equations that do not hold though the form of them that was iterated does. */
+  unmet(): readonly Unmet[] {
+    this.differencesRead ??= new Differences(this.system)
+    return this.differencesRead.readUnmet(this.values, this.program.lost)
   }
 
   /** What equations divide by, as far as it is known. */
@@ -110,6 +122,70 @@ export class Model {
     this.program.solve(this.guess, choice)
     this.isWarm = this.firstFailure() < 0
     return this.isWarm
+  }
+
+  /**
+   * Leads the plant from a design, one of several choices, to what is given. Returns whether that
+   * reached an answer.
+   */
+  solveFromDesign(choice: number): boolean {
+    const start = this.design?.solve(choice)
+    if (start === undefined) return false
+    const { program, system } = this
+    const { released } = this.design!.design
+    const put = (share: number): void => {
+      for (const v of released) {
+        const from = Number.isNaN(start[v]!) ? system.given[v]! : start[v]!
+        program.set(v, from + share * (system.given[v]! - from))
+      }
+    }
+    let good = start
+    let done = 0
+    let step = 1
+    for (let tries = 0; done < 1 && step > shortestLead && tries < mostLeads; tries++) {
+      const next = Math.min(1, done + step)
+      put(next)
+      if (this.solveFrom(good)) {
+        done = next
+        good = this.values.slice(0, system.variables.length)
+        step *= 2
+      } else step /= 3
+    }
+    put(1)
+    this.isWarm = done >= 1
+    return this.isWarm
+  }
+
+  /**
+   * Moves what a design fixes until the plant is met, and solves from there. Returns whether that
+   * reached an answer.
+   */
+  solveByAiming(choice: number): boolean {
+    const values = this.design?.aim(choice)
+    return values !== undefined && this.solveFrom(values)
+  }
+
+  /** Solves from these values, by variable, and from nowhere else. Returns whether there is an answer. */
+  solveFrom(values: Float64Array): boolean {
+    this.program.forget()
+    for (let v = 0; v < this.system.variables.length; v++) {
+      if (Number.isNaN(this.system.given[v]!)) this.values[v] = values[v]!
+    }
+    this.program.solve()
+    this.isWarm = this.firstFailure() < 0
+    return this.isWarm
+  }
+
+  /** Rows evaluated so far: a measure of time that is always the same. */
+  get work(): number {
+    return this.program.work + (this.designStart?.work ?? 0)
+  }
+
+  private get design(): DesignStart | undefined {
+    if (this.designStart === undefined) {
+      this.designStart = DesignStart.of(this.system, this.structure.open) ?? null
+    }
+    return this.designStart ?? undefined
   }
 
   private readonly guess: Guess = (known, choice, wanted) => {

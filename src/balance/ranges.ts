@@ -36,7 +36,7 @@ const ranges: Readonly<Record<Dimension, readonly [lower: number, upper: number,
   }
 
 /** A reversed flow this small, as a part of the scale, is round-off on the way to no flow. */
-const flowSlack = 1e-3
+const flowSlack = 1e-8
 
 export function boundsOf(variables: readonly SystemVariable[]): Bounds {
   const count = variables.length
@@ -45,19 +45,22 @@ export function boundsOf(variables: readonly SystemVariable[]): Bounds {
   const sensibleLower = new Float64Array(count)
   const sensibleUpper = new Float64Array(count)
   const scale = new Float64Array(count)
+  const carrier = new Int32Array(count).fill(-1)
   variables.forEach(({ description, isState, isPhantom }, k) => {
     const { dimension, possible } = description
     const range = ranges[dimension]
     lower[k] = range[0]
     upper[k] = range[1]
     scale[k] = range[2]
+    // m, p and h of a stream follow each other.
+    if (isState && dimension === 'specificEnthalpy') carrier[k] = k - 2
     const isFlow = dimension === 'massFlow' && (isState || isPhantom)
     sensibleLower[k] = isFlow
       ? -flowSlack * range[2]
       : Math.max(range[0], (possible?.least ?? possible?.above ?? range[0]) - 1e-9)
     sensibleUpper[k] = Math.min(range[1], (possible?.most ?? possible?.below ?? range[1]) + 1e-9)
   })
-  return { lower, upper, sensibleLower, sensibleUpper, scale }
+  return { lower, upper, sensibleLower, sensibleUpper, scale, carrier }
 }
 
 /** A value of ordinary size for a quantity of which nothing is known. */

@@ -1,9 +1,9 @@
-import { mostStarts } from '../equations/newton/index.ts'
 import type { Finding, Status } from './answer.ts'
-import { checkAnswer } from './checks.ts'
+import { checkAnswer, isImpossible } from './checks.ts'
 import { diagnose } from './diagnosis.ts'
 import type { Model } from './model.ts'
 import { type Closure, Results } from './results.ts'
+import { seekAnswer } from './seek.ts'
 
 /** An answer to a layout: solved, or as much as can be and why not more. */
 export interface Balance {
@@ -17,22 +17,18 @@ export interface Balance {
   readonly iterations: number
 }
 
-/** Iterations times unknowns spent on looking for another answer. */
-const mostSeeking = 40_000
-
 /**
  * Solves a model (again) and says how it ended. With `seek`, other starts are tried where the first
  * finds no answer or an impossible one.
  */
 export function solve(model: Model, results: Results = new Results(model), seek = true): Balance {
   const iterations = model.solve()
-  if (seek && model.firstFailure() >= 0) seekSolvable(model)
   results.refresh()
-  const diagnosis = diagnose(model)
-  let checks = checkAnswer(model, results)
-  if (seek && diagnosis.status === 'solved' && isImpossible(checks) && model.program.hasChoice) {
-    checks = seekPossible(model, results) ?? checks
+  let checks: readonly Finding[] = checkAnswer(model, results)
+  if (seek && isSquare(model) && (model.firstFailure() >= 0 || isImpossible(checks))) {
+    checks = seekAnswer(model, results, checks)
   }
+  const diagnosis = diagnose(model)
   const status =
     diagnosis.status === 'solved' && isImpossible(checks) ? 'infeasible' : diagnosis.status
   const undetermined: string[] = []
@@ -56,35 +52,6 @@ export function solve(model: Model, results: Results = new Results(model), seek 
   }
 }
 
-function isImpossible(checks: readonly Finding[]): boolean {
-  return checks.some((finding) => finding.severity === 'error')
-}
-
-/**
- * The equations may have another answer that is possible where the first is not. Leaves the first
- * in place when there is none.
- */
-function seekPossible(model: Model, results: Results): Finding[] | undefined {
-  const first = model.values.slice()
-  const allowed = model.program.work + mostSeeking
-  for (let choice = 1; choice < mostStarts && model.program.work < allowed; choice++) {
-    if (!model.solveOtherwise(choice)) continue
-    results.refresh()
-    const checks = checkAnswer(model, results)
-    if (!isImpossible(checks)) return checks
-  }
-  model.values.set(first)
-  model.solveOtherwise(0)
-  results.refresh()
-  return undefined
-}
-
-/** A block may have no answer because an earlier one took another of its own. */
-function seekSolvable(model: Model): void {
-  if (!model.program.hasChoice) return
-  const allowed = model.program.work + mostSeeking
-  for (let choice = 1; choice < mostStarts && model.program.work < allowed; choice++) {
-    if (model.solveOtherwise(choice)) return
-  }
-  model.solveOtherwise(0)
+function isSquare({ structure }: Model): boolean {
+  return structure.missing === 0 && structure.excess === 0
 }

@@ -9,10 +9,46 @@ const enthalpyScale = 1e6
 /** A flow guessed below this part of a bleed is raised to it: what flows, flows forward. */
 const leastPart = 0.05
 
+/** Power of a plant for each kg/s of its main steam, J/kg. */
+const specificPower = 1.1e6
+/** Conductance of a heater for each kg/s that it heats, J/(kg K). */
+const specificConductance = 1e4
+/** Density of water in pumps, kg/m3, about. */
+const density = 900
+/** Main flow of a plant of which nothing is known, kg/s. */
+const usualFlow = 100
+
 /** One balance: the sum of coefficient times flow is zero. */
 interface Balance {
   readonly streams: number[]
   readonly coefficients: number[]
+}
+
+/**
+ * The size of the largest flow, by what is known: flows, powers and heats, what pumps displace,
+ * conductances. Each can belong to a small part of the plant, so the largest counts.
+ */
+export function mainFlow(
+  system: System,
+  values: Float64Array,
+  known: (index: number) => boolean,
+): number {
+  let largest = 0
+  for (const base of system.streamBase) {
+    if (known(base)) largest = Math.max(largest, Math.abs(values[base]!))
+  }
+  system.variables.forEach(({ description, owner }, index) => {
+    if (!known(index) || description.given) return
+    const size = Math.abs(values[index]!)
+    const kind = system.unitOf.get(owner)?.kind
+    const { dimension } = description
+    let flow = 0
+    if (dimension === 'power' || dimension === 'heatFlow') flow = size / specificPower
+    else if (dimension === 'volumeFlow' && kind?.raisesPressure) flow = size * density
+    else if (dimension === 'conductance' && kind?.passes) flow = size / specificConductance
+    if (Number.isFinite(flow)) largest = Math.max(largest, flow)
+  })
+  return largest > 0 ? largest : usualFlow
 }
 
 /**

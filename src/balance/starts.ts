@@ -13,9 +13,10 @@ import {
 } from '../steam/index.ts'
 import type { Start } from '../units/kind.ts'
 import { ExpressionValues } from './expression-values.ts'
-import type { Connection, PlacedUnit } from './placed-unit.ts'
+import type { PlacedUnit } from './placed-unit.ts'
 import { ordinaryValue } from './ranges.ts'
-import { balanceFlows } from './start-flows.ts'
+import { balanceFlows, mainFlow } from './start-flows.ts'
+import { StartPressures } from './start-pressures.ts'
 import type { System } from './system.ts'
 
 /** Superheated steam of which nothing is known, J/kg. */
@@ -24,8 +25,6 @@ const superheatedEnthalpy = 3.4e6
 const bleedShare = 0.06
 /** How far below saturation heated water starts, K. */
 const nearSaturation = 3
-/** Power of a plant for each kg/s of its main steam, J/kg. */
-const specificPower = 1.1e6
 /** Passes over the equations that give a quantity outright. */
 const outrightPasses = 4
 /** Decades by which other choices scatter pressures and flows. */
@@ -34,6 +33,8 @@ const flowScatter = 0.4
 /** Ranges in which other choices scatter enthalpies, J/kg. */
 const waterEnthalpies = [1e5, 1.2e6] as const
 const steamEnthalpies = [2.3e6, 3.5e6] as const
+/** Specific heat of water, J/(kg K). */
+const waterHeat = 4200
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
 
@@ -73,11 +74,16 @@ export class Starts {
     for (let v = 0; v < system.variables.length; v++) {
       if (!this.known(v)) values[v] = ordinaryValue(system.variables[v]!)
     }
-    this.fillPressures()
+    new StartPressures(system, values, this.known).fill()
     if (this.choice > 0) this.scatterPressures()
     this.fillEnthalpies()
     if (this.choice > 0) this.scatterEnthalpies()
     if (wantsFlows) this.fillFlows()
+    if (wantsFlows && this.choice === 0 && this.hasMixtures()) {
+      // Mixtures take other enthalpies once the flows are known, and flows follow.
+      this.fillEnthalpies()
+      this.fillFlows()
+    }
     if (wantsQuantities) this.fillQuantities()
   }
 
@@ -119,117 +125,6 @@ export class Starts {
     return placed.connections.find(({ name }) => name === port)?.base
   }
 
-  private fillPressures(): void {
-    const { system, values } = this
-    const done = new Uint8Array(system.variables.length)
-    const isDone = (index: number): boolean => done[index] === 1 || this.known(index)
-    const put = (index: number, p: number): void => {
-      values[index] = Math.min(90e6, Math.max(700, p))
-      done[index] = 1
-    }
-    const spread = (crossing: boolean): boolean => {
-      let changed = false
-      for (const placed of system.units) {
-        const ports = placed.connections
-        const isBarrier = placed.kind.raisesPressure === true || placed.kind.shaft === 'driving'
-        if (isBarrier !== crossing) continue
-        const own = system.indexOf.get(`${placed.unit.id}.pressure`)
-        if (crossing) {
-          changed = this.cross(placed, isDone, put) || changed
-          continue
-        }
-        let source = own !== undefined && isDone(own) ? values[own]! : undefined
-        // Ports of a heat exchanging unit are grouped by what passes into what.
-        const groups = this.pressureGroups(placed, ports)
-        for (const group of groups) {
-          const shares = group.filter((port) => port.description.pressure !== 'throttles')
-          const from = shares.find((port) => isDone(port.base + 1))
-          const isShell = shares.some((port) => port.description.pressure === 'equal')
-          const p = isShell && source !== undefined ? source : from && values[from.base + 1]!
-          if (p === undefined) continue
-          if (isShell && own !== undefined && !isDone(own)) {
-            put(own, p)
-            source = p
-            changed = true
-          }
-          for (const port of shares) {
-            if (isDone(port.base + 1)) continue
-            put(port.base + 1, p)
-            changed = true
-          }
-          for (const port of group) {
-            if (port.description.pressure !== 'throttles' || isDone(port.base + 1)) continue
-            // What is throttled on entry arrives somewhat above.
-            put(port.base + 1, 1.2 * p)
-            changed = true
-          }
-        }
-      }
-      return changed
-    }
-    const most = 4 * system.units.length + 4
-    for (let pass = 0; pass < most; pass++) if (!spread(false)) break
-    // A vessel that no known pressure reaches starts at its usual one, before machines are crossed.
-    for (const { unit } of system.units) {
-      const own = system.indexOf.get(`${unit.id}.pressure`)
-      const usual = own === undefined ? undefined : system.variables[own]!.description.usual
-      if (own === undefined || usual === undefined || isDone(own)) continue
-      put(own, usual)
-      for (let pass = 0; pass < most; pass++) if (!spread(false)) break
-    }
-    for (let pass = 0; pass < most; pass++) if (!spread(false) && !spread(true)) break
-  }
-
-  /** Ports that share a pressure, nearly: what passes through apart from the shell. */
-  private pressureGroups(placed: PlacedUnit, ports: readonly Connection[]): Connection[][] {
-    const passes = placed.kind.passes ?? []
-    const through = passes.map((pair) => ports.filter(({ port }) => pair.includes(port)))
-    const shell = ports.filter(({ port }) => !passes.some((pair) => pair.includes(port)))
-    return [...through, shell].filter((group) => group.length > 0)
-  }
-
-  /** Pressures on the far side of a turbine or pump, when one side is known. */
-  private cross(
-    placed: PlacedUnit,
-    isDone: (index: number) => boolean,
-    put: (index: number, p: number) => void,
-  ): boolean {
-    const { values } = this
-    const inlets = placed.connections.filter((port) => port.description.direction === 'in')
-    const outlets = placed.connections.filter((port) => port.description.direction === 'out')
-    const inlet = inlets[0]
-    if (inlet === undefined || outlets.length === 0) return false
-    const inletKnown = isDone(inlet.base + 1)
-    const rises = placed.kind.raisesPressure === true
-    const knownOutlets = outlets.filter((port) => isDone(port.base + 1))
-    if (inletKnown && knownOutlets.length === outlets.length) return false
-    if (!inletKnown && knownOutlets.length === 0) return false
-    const first = inletKnown
-      ? values[inlet.base + 1]!
-      : rises
-        ? 1e5
-        : 4 * Math.max(...knownOutlets.map((port) => values[port.base + 1]!))
-    if (!inletKnown) put(inlet.base + 1, first)
-    // Evenly by logarithm between what is known along the expansion.
-    let previous = first
-    outlets.forEach((port, k) => {
-      if (isDone(port.base + 1)) {
-        previous = values[port.base + 1]!
-        return
-      }
-      const nextKnown = outlets.slice(k + 1).find((other) => isDone(other.base + 1))
-      const steps = nextKnown ? outlets.indexOf(nextKnown) - k + 1 : 1
-      const p = rises
-        ? 10 * first
-        : nextKnown
-          ? previous * (values[nextKnown.base + 1]! / previous) ** (1 / steps)
-          : previous / 3
-      put(port.base + 1, p)
-      previous = p
-    })
-    return true
-  }
-
   private fillEnthalpies(): void {
     const { system, values } = this
     const done = new Uint8Array(system.variables.length)
@@ -253,16 +148,40 @@ export class Starts {
     const p = this.values[base + 1]!
     if (typeof start === 'object') {
       const source = this.streamAt(placed, start.as) ?? this.streamAt(placed, `${start.as}1`)
-      if (source === undefined) return this.saturated(p, Saturation.hL)
-      return this.known(source + 2) || done[source + 2]
-        ? this.values[source + 2]!
-        : this.saturated(p, Saturation.hL)
+      const isKnown = source !== undefined && (this.known(source + 2) || done[source + 2])
+      if (!isKnown) return this.saturated(p, Saturation.hL)
+      const h = this.values[source + 2]!
+      if (start.warmerBy === undefined) return h
+      const warmerBy = this.system.indexOf.get(`${placed.unit.id}.${start.warmerBy}`)
+      const saturated = this.saturated(p, Saturation.hL)
+      if (warmerBy === undefined) return saturated
+      return Math.min(saturated, h + this.values[warmerBy]! * waterHeat)
     }
+    if (start === 'mixed') return this.mixed(placed) ?? this.saturated(p, Saturation.hL)
     if (start === 'dry') return this.saturated(p, Saturation.hV)
     if (start === 'superheated') return superheatedEnthalpy
     if (start === 'expanded') return this.expanded(placed, p)
     if (start === 'heated') return this.heated(placed, p)
     return this.saturated(p, Saturation.hL)
+  }
+
+  /** What comes in, mixed in the proportions of the flows. */
+  private mixed(placed: PlacedUnit): number | undefined {
+    let flow = 0
+    let energy = 0
+    for (const { description, base } of placed.connections) {
+      if (description.direction !== 'in') continue
+      const m = Math.max(0, this.values[base]!)
+      flow += m
+      energy += m * this.values[base + 2]!
+    }
+    return flow > 0 ? energy / flow : undefined
+  }
+
+  private hasMixtures(): boolean {
+    return this.system.units.some(({ kind, connections }) =>
+      connections.some(({ port, base }) => kind.starts[port] === 'mixed' && !this.known(base + 2)),
+    )
   }
 
   private saturated(p: number, slot: number): number {
@@ -295,7 +214,7 @@ export class Starts {
   /** Flows of ordinary size, then shifted as little as it takes for the balances to close. */
   private fillFlows(): void {
     const { system, values } = this
-    const largest = this.mainFlow()
+    const largest = mainFlow(system, values, this.known)
     for (const placed of system.units) {
       for (const { description, base } of placed.connections) {
         if (this.known(base)) continue
@@ -305,22 +224,6 @@ export class Starts {
       }
     }
     balanceFlows(system, values, this.known, bleedShare * largest)
-  }
-
-  /** The largest known flow, else what a known power or heat would take. */
-  private mainFlow(): number {
-    const { system, values } = this
-    let largest = 0
-    for (const base of system.streamBase) {
-      if (this.known(base) && Math.abs(values[base]!) > largest) largest = Math.abs(values[base]!)
-    }
-    if (largest > 0) return largest
-    let power = 0
-    system.variables.forEach(({ description }, index) => {
-      const isPower = description.dimension === 'power' || description.dimension === 'heatFlow'
-      if (isPower && this.known(index)) power = Math.max(power, Math.abs(values[index]!))
-    })
-    return power > 0 ? power / specificPower : 100
   }
 
   /** What equations give outright follows from the first guesses: powers, heats, totals, ratios. */

@@ -30,7 +30,13 @@ export const boiler = defineUnitKind({
       pressure: 'throttles',
       label: 'Spray',
     },
-    steam: { direction: 'out', carries: 'steam', pressure: 'own', label: 'Steam' },
+    steam: {
+      direction: 'out',
+      carries: 'steam',
+      pressure: 'own',
+      designed: ['m', 'p', 'T'],
+      label: 'Steam',
+    },
     blowdown: {
       direction: 'out',
       optional: true,

@@ -25,5 +25,5 @@ export const desuperheater = defineUnitKind({
     { from: 'spray', to: 'outlet', course: 'throttledLine' },
   ],
   passes: [['steam', 'outlet']],
-  starts: { outlet: { as: 'steam' } },
+  starts: { outlet: 'mixed' },
 })

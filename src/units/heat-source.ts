@@ -22,7 +22,7 @@ export const heatSource = defineUnitKind({
   quantities: {
     pressureLossFraction: pressureLossFraction(0.02, [0.005, 0.05]),
     lossConstant,
-    heat: heat('Heat recovered', 'Heat that the stream takes up.'),
+    heat: { ...heat('Heat recovered', 'Heat that the stream takes up.'), designed: true },
   },
   chief: 'heat',
   equations: ({ ports: { inlet, outlet }, quantities: q }) => ({

@@ -31,5 +31,5 @@ export const junction = defineUnitKind({
       course: 'line' as const,
     })),
   passes: [['inlet', 'outlet']],
-  starts: { outlet: { as: 'inlet1' } },
+  starts: { outlet: 'mixed' },
 })

@@ -19,6 +19,8 @@ export interface PortDescription {
    * higher pressure and is throttled on entry. `own`: the kind's equations say.
    */
   readonly pressure: 'equal' | 'throttles' | 'own'
+  /** What a designer gives of the stream that leaves here; the rest follows. */
+  readonly designed?: readonly ('m' | 'p' | 'T')[]
   readonly label: string
 }
 
@@ -46,6 +48,8 @@ export interface QuantityDescription {
   readonly usual?: number
   /** A new unit arrives with this quantity given at its usual value. */
   readonly given?: true
+  /** A designer gives it, though it has no usual value. */
+  readonly designed?: true
   /** The usual range, SI; outside it is a caution, never a refusal. */
   readonly range?: readonly [number, number]
   /** Where the usual value and range come from. */
@@ -172,8 +176,9 @@ export interface ProcessPath {
 
 /**
  * How the enthalpy of what leaves a port is guessed: saturated liquid or dry saturated steam of its
- * pressure, superheated steam, a turbine's expansion, water heated to the unit's saturation, or what
- * comes in at another port.
+ * pressure, superheated steam, a turbine's expansion, water heated to the unit's saturation, a mixture
+ * of all that comes in, or what comes in at another port: as it is, or warmer by a quantity of the
+ * unit (where the unit does not have it, saturated liquid).
  */
 export type Start =
   | 'heated'
@@ -181,7 +186,8 @@ export type Start =
   | 'dry'
   | 'superheated'
   | 'expanded'
-  | { readonly as: string }
+  | 'mixed'
+  | { readonly as: string; readonly warmerBy?: string }
 
 /**
  * Where a unit passes heat on, for the chart of temperature against heat. Port names without number

@@ -26,7 +26,13 @@ export const reheater = defineUnitKind({
       pressure: 'throttles',
       label: 'Spray',
     },
-    outlet: { direction: 'out', carries: 'steam', pressure: 'own', label: 'Outlet' },
+    outlet: {
+      direction: 'out',
+      carries: 'steam',
+      pressure: 'own',
+      designed: ['p', 'T'],
+      label: 'Outlet',
+    },
   },
   quantities: {
     pressureLossFraction: pressureLossFraction(0.08, [0.07, 0.1]),

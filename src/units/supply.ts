@@ -7,7 +7,13 @@ export const supply = defineUnitKind({
   group: 'Edges',
   help: 'What enters the plant from outside: make-up water, steam from a neighbour.',
   ports: {
-    outlet: { direction: 'out', carries: 'any', pressure: 'own', label: 'Outlet' },
+    outlet: {
+      direction: 'out',
+      carries: 'any',
+      pressure: 'own',
+      designed: ['p', 'T'],
+      label: 'Outlet',
+    },
   },
   quantities: {},
   equations: () => ({}),

@@ -331,5 +331,5 @@ export const surfaceHeater = defineUnitKind({
     ],
   },
   passes: [['water', 'outlet']],
-  starts: { drain: 'liquid', outlet: 'heated' },
+  starts: { drain: { as: 'water', warmerBy: 'drainApproach' }, outlet: 'heated' },
 })

@@ -118,9 +118,16 @@ export const turbine = defineUnitKind({
       optional: true,
       carries: 'steam',
       pressure: 'own',
+      designed: ['p'],
       label: 'Bleed',
     },
-    exhaust: { direction: 'out', carries: 'steam', pressure: 'own', label: 'Exhaust' },
+    exhaust: {
+      direction: 'out',
+      carries: 'steam',
+      pressure: 'own',
+      designed: ['p'],
+      label: 'Exhaust',
+    },
   },
   quantities: {
     groupEfficiency: {

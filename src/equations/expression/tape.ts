@@ -25,6 +25,8 @@ export class Tape implements Rows {
   readonly variableCount: number
   /** The row whose evaluation was refused last. */
   failedRow = -1
+  /** Rows evaluated so far, and what else costs as much: a measure of time that is always the same. */
+  work = 0
 
   constructor(parts: {
     values: readonly number[]
@@ -54,6 +56,7 @@ export class Tape implements Rows {
   /** Evaluates rows in order; returns the first outcome that is not fine. */
   evaluate(rows: Int32Array): number {
     const { operations } = this
+    this.work += rows.length
     for (let k = 0; k < rows.length; k++) {
       const row = rows[k]!
       const outcome = operations[row]!.evaluate(this, row)

@@ -12,10 +12,14 @@ const mostWork = 12_000
 const mostDense = 400
 /** Steps aside from points where the linearised block is singular. */
 const mostNudges = 4
+/** Evaluated rows that the factors of a column cost as much as. */
+const workPerColumn = 8
 /** Newton iterations from one start before giving up. */
 const mostIterations = 60
 /** Step length below which the line search gives up. */
 const shortest = 1 / 4096
+/** A flow that shrinks below this part of itself spreads enthalpies no further. */
+const leastDilution = 0.2
 /** Steps below this, relative to the variables' sizes, are close enough to polish. */
 const close = 1e-7
 /** Steps below this are round-off. */
@@ -40,6 +44,8 @@ export class BlockStep implements Step {
   private readonly rows: Int32Array
   private readonly seeds: Int32Array
   private readonly variableSlots: Int32Array
+  /** By place: the place of the flow that carries the variable, or -1. */
+  private readonly carrier: Int32Array
   private readonly bounds: Bounds
   private readonly linear: boolean
   readonly factors: SparseLU
@@ -64,6 +70,7 @@ export class BlockStep implements Step {
     gradient: GradientProgram,
     bounds: Bounds,
     linear: boolean,
+    assigned: ReadonlyMap<number, number> = new Map(),
   ) {
     const n = variables.length
     this.n = n
@@ -78,6 +85,12 @@ export class BlockStep implements Step {
     this.linear = linear
     this.needsGuess = !linear
     const place = new Map(variables.map((index, k) => [index, k]))
+    // What an assigned flow starts from changes in proportion, or nearly.
+    this.carrier = Int32Array.from(variables, (index) => {
+      let flow = bounds.carrier[index]!
+      for (let from = assigned.get(flow); from !== undefined; from = assigned.get(flow)) flow = from
+      return place.get(flow) ?? -1
+    })
     this.columnOf = gradient.entryVariable.map((index) => place.get(index)!)
     this.factors = new SparseLU(n, gradient.entryFirst, this.columnOf)
     this.entries = new Float64Array(this.columnOf.length)
@@ -187,6 +200,7 @@ export class BlockStep implements Step {
   /** Recomputes the scaled factors at the present values; false when they are singular. */
   linearise(tape: Tape): boolean {
     const { n, entries, scaled, columnOf, gradient, sizes, rowScale, residual } = this
+    tape.work += workPerColumn * n
     gradient.evaluate(tape, entries)
     for (let j = 0; j < n; j++) {
       const index = this.variableSlots[j]!
@@ -257,12 +271,24 @@ export class BlockStep implements Step {
     for (let j = 0; j < this.n; j++) {
       const index = this.variableSlots[j]!
       const from = this.start[j]!
-      let to = from + share * this.step[j]!
+      let to = from + share * this.step[j]! * this.dilution(j, share)
       // Going half the way to a bound instead of past it keeps every value inside.
       if (to < lower[index]!) to = from - (from - lower[index]!) / 2
       else if (to > upper[index]!) to = from + (upper[index]! - from) / 2
       tape.values[index] = to
     }
+  }
+
+  /**
+   * Balances are linear in the energy flow m h, not in h: h moves as it must for m h to move along
+   * its straight line.
+   */
+  private dilution(j: number, share: number): number {
+    const flow = this.carrier[j]!
+    if (flow < 0) return 1
+    const before = this.start[flow]!
+    const ratio = (before + share * this.step[flow]!) / before
+    return ratio > leastDilution ? 1 / ratio : ratio > 0 ? 1 / leastDilution : 1
   }
 
   private remember(tape: Tape): void {

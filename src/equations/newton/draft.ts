@@ -31,6 +31,8 @@ interface Division {
   readonly assignments: readonly {
     readonly variable: number
     readonly value: Assignment['value']
+    /** The one variable that it follows from, where the chain has several links. */
+    readonly from?: number
   }[]
   readonly equations: readonly number[]
   readonly variables: readonly number[]
@@ -126,7 +128,20 @@ function draftIteration(
       )
       return variables.length === 1
         ? new ScalarStep(prelude, iterated, seeds[0]!, variables[0]!, gradient, bounds, linear)
-        : new BlockStep(prelude, iterated, seeds, variables, gradient, bounds, linear)
+        : new BlockStep(
+            prelude,
+            iterated,
+            seeds,
+            variables,
+            gradient,
+            bounds,
+            linear,
+            new Map(
+              assignments.flatMap(({ variable, from }) =>
+                from === undefined ? [] : [[variable, from]],
+              ),
+            ),
+          )
     },
   }
 }

@@ -23,8 +23,6 @@ export class Program {
   private readonly guessed: readonly number[]
   private readonly iterated: readonly (readonly number[])[]
   private fresh = true
-  /** Iterations times unknowns, over all solutions so far. */
-  work = 0
 
   constructor(
     equations: readonly Equation[],
@@ -83,7 +81,6 @@ export class Program {
         guess!(this.knownBefore(k), 0, this.guessed)
       }
       const used = this.run(k, choice, guess)
-      this.work += used * this.steps[k]!.size
       if (used > iterations) iterations = used
     }
     this.changed.fill(0)
@@ -94,6 +91,11 @@ export class Program {
   private knownBefore(step: number): (index: number) => boolean {
     const { stepOf, lost } = this
     return (index) => stepOf[index]! < step && lost[index] === 0
+  }
+
+  /** Rows evaluated over all solutions so far. */
+  get work(): number {
+    return this.tape.work
   }
 
   /** Some block may have more than one answer. */
@@ -121,7 +123,12 @@ export class Program {
     const step = this.steps[k]!
     const { variables } = this.blocks[k]!
     const inputs = this.inputs[k]!
-    const restart = guess && ((which: number) => guess(this.knownBefore(k), which, variables))
+    const restart =
+      guess &&
+      ((which: number) => {
+        this.tape.work += this.lost.length
+        guess(this.knownBefore(k), which, variables)
+      })
     let missing = false
     for (let i = 0; i < inputs.length; i++) if (this.lost[inputs[i]!]) missing = true
     const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape, choice, restart)

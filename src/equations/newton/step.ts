@@ -49,6 +49,8 @@ export interface Bounds {
   readonly sensibleUpper: Float64Array
   /** A size that makes changes of different quantities comparable. */
   readonly scale: Float64Array
+  /** The flow that carries the variable (an enthalpy): balances hold their product. Or -1. */
+  readonly carrier: Int32Array
 }
 
 /** Puts the unknowns at another first guess; 0 is the usual one. */
@@ -135,7 +137,10 @@ export class FallbackStep implements Step {
     for (const step of steps) {
       own.values.set(tape.values.subarray(0, own.variableCount))
       for (let k = 0; k < this.start.length; k++) own.values[this.variables[k]!] = this.start[k]!
-      if (step.run(own, choice) !== StepOutcome.solved) continue
+      const before = own.work
+      const outcomeThere = step.run(own, choice)
+      tape.work += own.work - before
+      if (outcomeThere !== StepOutcome.solved) continue
       for (const index of this.variables) tape.values[index] = own.values[index]!
       return StepOutcome.solved
     }

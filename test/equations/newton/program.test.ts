@@ -36,6 +36,7 @@ const wide = (count: number, lower = -1e6, upper = 1e6): Bounds => ({
   sensibleLower: new Float64Array(count).fill(lower),
   sensibleUpper: new Float64Array(count).fill(upper),
   scale: new Float64Array(count).fill(1),
+  carrier: new Int32Array(count).fill(-1),
 })
 
 const letters = ['a', 'b', 'c', 'd', 'e', 'f', 'g'] as const

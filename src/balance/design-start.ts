@@ -1,0 +1,97 @@
+import { Program, StepOutcome } from '../equations/newton/index.ts'
+import { type Design, designOf } from './design.ts'
+import { aimAt } from './design-aim.ts'
+import { boundsOf } from './ranges.ts'
+import { Starts } from './starts.ts'
+import type { System } from './system.ts'
+
+/** A usual range is searched through by the golden section: no two choices lie near each other. */
+const goldenSection = (Math.sqrt(5) - 1) / 2
+
+/** Solves the design of a plant: a sensible answer of its equations to start from. */
+export class DesignStart {
+  readonly design: Design
+  readonly program: Program
+  private readonly plant: System
+
+  private constructor(plant: System, design: Design) {
+    this.plant = plant
+    this.design = design
+    this.program = new Program(
+      plant.equations.map(({ equation }) => equation),
+      design.structure.blocks,
+      plant.variables.length,
+      boundsOf(plant.variables),
+    )
+    for (const v of design.structure.open) this.program.lose(v)
+  }
+
+  /** Undefined where the plant is asked as a designer would ask. */
+  static of(plant: System, open: readonly number[]): DesignStart | undefined {
+    const design = designOf(plant, open)
+    return design && new DesignStart(plant, design)
+  }
+
+  /** The work its solutions have taken so far. */
+  get work(): number {
+    return this.program.work
+  }
+
+  /**
+   * The values of the design, NaN where a result has none; undefined where it does not solve. Choices give it other
+   * numbers.
+   */
+  solve(choice: number): Float64Array | undefined {
+    const { plant, design, program } = this
+    const isGiven = (v: number): boolean => !Number.isNaN(plant.given[v]!)
+    const guess = plant.given.slice()
+    new Starts(plant, guess, isGiven, choice).fill()
+    program.forget()
+    design.system.given.forEach((value, v) => {
+      if (!Number.isNaN(value)) program.set(v, value)
+    })
+    for (const v of design.fixed) {
+      const { range, usual } = plant.variables[v]!.description
+      let value = guess[v]!
+      if (choice === 0) value = usual ?? value
+      else if (range) value = range[0] + ((choice * goldenSection) % 1) * (range[1] - range[0])
+      program.set(v, value)
+    }
+    const { values } = program.tape
+    program.solve((known, other, wanted) => {
+      new Starts(design.system, values, known, other).fill(wanted)
+    })
+    if (!this.isSolved()) return undefined
+    const solved = values.slice(0, plant.variables.length)
+    // A result that only describes may have no value there (a conductance without bound).
+    for (const v of design.released) if (program.lost[v]) solved[v] = Number.NaN
+    return solved
+  }
+
+  /**
+   * Values of a design moved, from the one of this choice, until its results are what the plant is
+   * given; undefined where that does not succeed.
+   */
+  aim(choice: number): Float64Array | undefined {
+    if (this.solve(choice) === undefined) return undefined
+    return aimAt(this, this.plant)
+  }
+
+  /** Whether all that the plant's state hangs on was found. */
+  isSolved(): boolean {
+    const { program, design } = this
+    for (let k = 0; k < design.structure.describingFrom; k++) {
+      if (program.outcomes[k] !== StepOutcome.solved) return false
+    }
+    return true
+  }
+
+  /** Puts its unknowns where they were. */
+  recall(values: Float64Array): void {
+    const { program, design } = this
+    program.forget()
+    for (let v = 0; v < values.length; v++) {
+      if (Number.isNaN(design.system.given[v]!)) program.tape.values[v] = values[v]!
+    }
+  }
+}

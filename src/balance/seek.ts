@@ -1,0 +1,52 @@
+import { mostStarts } from '../equations/newton/index.ts'
+import type { Finding } from './answer.ts'
+import { checkAnswer, isImpossible } from './checks.ts'
+import type { Model } from './model.ts'
+import type { Results } from './results.ts'
+
+/** Rows evaluated in search of another answer. */
+const mostSeeking = 4_000_000
+/** Designs that a plant is led from. */
+const mostDesigns = 6
+
+/**
+ * Ways to an answer when the usual one fails or leads to an impossible one, the best first: each
+ * returns whether it reached an answer.
+ */
+function* attempts(model: Model): Generator<() => boolean> {
+  for (let choice = 0; choice < Math.max(mostStarts, mostDesigns); choice++) {
+    if (choice < mostDesigns) {
+      yield () => model.solveFromDesign(choice)
+      yield () => model.solveByAiming(choice)
+    }
+    if (choice > 0 && choice < mostStarts) yield () => model.solveOtherwise(choice)
+  }
+}
+
+/**
+ * Looks for another answer to a plant that has none yet, or an impossible one. Returns what its
+ * checks find; when there is none, the model is left as it was, or with an impossible answer where
+ * it had none at all.
+ */
+export function seekAnswer(
+  model: Model,
+  results: Results,
+  first: readonly Finding[],
+): readonly Finding[] {
+  if (!model.program.hasChoice) return first
+  const count = model.system.variables.length
+  let kept = model.firstFailure() < 0 ? model.values.slice(0, count) : undefined
+  const allowed = model.work + mostSeeking
+  for (const attempt of attempts(model)) {
+    if (model.work > allowed) break
+    if (!attempt()) continue
+    results.refresh()
+    const checks = checkAnswer(model, results)
+    if (!isImpossible(checks)) return checks
+    kept ??= model.values.slice(0, count)
+  }
+  if (kept === undefined) model.solveOtherwise(0)
+  else model.solveFrom(kept)
+  results.refresh()
+  return checkAnswer(model, results)
+}
