@@ -52,7 +52,7 @@ function LedgerTab() {
             <Mark name="open" /> {missing} short
           </>
         ) : (
-          `${unknowns} = ${equations}`
+          <span className="tab-counts">{`${unknowns} = ${equations}`}</span>
         )}
       </span>
     </>
@@ -91,13 +91,14 @@ const names = {
   report: () => <>Report</>,
 }
 
+/** Why there is no solution: in short, and what is added where there is room. */
 const statusWords = {
-  solved: '',
-  underspecified: 'Not solved: numbers are missing',
-  overspecified: 'Not solved: numbers contradict',
-  infeasible: 'Not possible',
-  notConverged: 'No solution found',
-}
+  solved: ['', ''],
+  underspecified: ['Not solved', ': numbers are missing'],
+  overspecified: ['Not solved', ': numbers contradict'],
+  infeasible: ['Not possible', ''],
+  notConverged: ['No solution found', ''],
+} as const
 
 /** '2 × 10⁻¹⁶', as a print would set it. */
 function Power({ value }: { value: number }) {
@@ -116,14 +117,24 @@ function Closure() {
   const trouble = useBalanceStore((state) => state.trouble)
   if (trouble) return <span className="drawer-state">No balance</span>
   if (!status) return null
-  if (status !== 'solved') return <span className="drawer-state">{statusWords[status]}</span>
+  if (status !== 'solved') {
+    const [short, more] = statusWords[status]
+    return (
+      <span className="drawer-state" title={short + more}>
+        {short}
+        <span className="state-more">{more}</span>
+      </span>
+    )
+  }
   if (!closure) return null
   return (
     <span
       className="drawer-state"
-      title="The worst unit's imbalance, worked out anew from the streams alone."
+      data-closed=""
+      title="Mass and energy close to this: the worst unit's imbalance, worked out anew from the streams alone."
     >
-      Mass and energy close to <Power value={Math.max(closure.mass, closure.energy)} />
+      <span className="state-more">Mass and energy close to </span>
+      <Power value={Math.max(closure.mass, closure.energy)} />
     </span>
   )
 }

@@ -1,5 +1,6 @@
-import { useId, useState } from 'react'
+import { type KeyboardEvent, useId, useState } from 'react'
 import type { QuantityDescription } from '../../src/document.ts'
+import { usePlantStore } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
 import { giveMany } from './give.ts'
 import { fieldUnit, readTyped } from './typed-number.ts'
@@ -13,6 +14,10 @@ interface Props {
   /** One of their values, SI: it chooses the unit. */
   readonly value: number | null
   readonly placeholder: string
+}
+
+function isUndo({ key, ctrlKey, metaKey, shiftKey, altKey }: KeyboardEvent): boolean {
+  return key.toLowerCase() === 'z' && (ctrlKey || metaKey) && !shiftKey && !altKey
 }
 
 /** Gives many quantities the same value at once: one undo step. */
@@ -59,7 +64,9 @@ export function ManyInput({ paths, name, description, value, placeholder }: Prop
         onBlur={commit}
         onKeyDown={(event) => {
           if (!event.ctrlKey && !event.metaKey) event.stopPropagation()
-          if (event.key === 'Enter') commit()
+          // An empty field has nothing of its own to undo: the keys mean the edit just made.
+          if (isUndo(event) && text === '') usePlantStore.getState().undo()
+          else if (event.key === 'Enter') commit()
           else if (event.key === 'Escape') {
             setText('')
             setError(null)

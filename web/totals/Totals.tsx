@@ -37,6 +37,8 @@ const others: readonly Total[] = [
 const table: QuantityTable = plantQuantities
 const dimensionOf = (name: string): Dimension => table[name]?.dimension ?? 'power'
 
+const asking = 'A click shows it in its card; W, or a click with Alt, where it comes from.'
+
 /** Opens the plant's card at a total: there it can be given. */
 function show(name: string): void {
   useSelectionStore.getState().select(['plant'])
@@ -82,7 +84,14 @@ function Chief({ name, label, basis }: Total) {
         {label}
         {basis && <span className="total-basis">{basis}</span>}
       </span>
-      <button type="button" className="total-value" data-state={state} onClick={() => show(name)}>
+      <button
+        type="button"
+        className="total-value"
+        data-state={state}
+        data-path={`plant.${name}`}
+        title={asking}
+        onClick={() => show(name)}
+      >
         {state === 'open' && <Mark name="open" />}
         <span className="quantity" data-state={state}>
           <span className="quantity-value">{text}</span>
@@ -101,7 +110,7 @@ function Other({ name, label }: Total) {
       <span className="total-label" title={table[name]?.help}>
         {label}
       </span>
-      <button type="button" onClick={() => show(name)}>
+      <button type="button" data-path={`plant.${name}`} title={asking} onClick={() => show(name)}>
         <span className="quantity" data-state={state}>
           <span className="quantity-value">{text}</span>
           <span className="quantity-unit">{`\u2009${unit}`}</span>
