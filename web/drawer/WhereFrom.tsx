@@ -1,4 +1,4 @@
-import { useEffect, useRef } from 'react'
+import { useEffect, useRef, useState } from 'react'
 import { describeQuantity, formatQuantity, labelOf, withinSentence } from '../../src/document.ts'
 import type { Origin, Worked } from '../../src/messages.ts'
 import { basisText } from '../number/basis-text.ts'
@@ -17,8 +17,8 @@ import { equationName } from './equation-name.ts'
 import { useWhereFromStore } from './where-from-store.ts'
 import './where-from.css'
 
-/** How many quantities solved together stand there before the rest is told by number. */
-const mostTogether = 24
+/** How many quantities stand there before the rest is asked for. */
+const mostAtFirst = 24
 
 function Trail({ trail, at }: { trail: readonly string[]; at: number }) {
   const layout = useLayout()
@@ -154,12 +154,14 @@ function Statement({ worked, path }: { worked: Worked; path: string }) {
 function Quantities({ title, paths }: { title: string; paths: readonly string[] }) {
   const { follow } = useWhereFromStore.getState()
   const { hover } = useSelectionStore.getState()
+  const [all, setAll] = useState(false)
   if (paths.length === 0) return null
+  const shown = all ? paths : paths.slice(0, mostAtFirst)
   return (
-    <section className="went-in">
+    <section className="went-in" aria-label={title}>
       <h3 className="muted">{title}</h3>
       <ul>
-        {paths.slice(0, mostTogether).map((path) => (
+        {shown.map((path) => (
           <li key={path}>
             <button
               type="button"
@@ -174,8 +176,10 @@ function Quantities({ title, paths }: { title: string; paths: readonly string[] 
           </li>
         ))}
       </ul>
-      {paths.length > mostTogether && (
-        <p className="muted">and {paths.length - mostTogether} more</p>
+      {paths.length > shown.length && (
+        <button type="button" className="remedy-more" onClick={() => setAll(true)}>
+          and {paths.length - shown.length} more
+        </button>
       )}
     </section>
   )
@@ -205,6 +209,7 @@ export function WhereFrom() {
       ref={place}
       className="drawer-scroll where-from"
       aria-label="Where from"
+      data-origin={origin ? path : undefined}
       tabIndex={-1}
       onKeyDown={(event) => {
         if (event.key === 'Escape') close()
@@ -225,7 +230,7 @@ export function WhereFrom() {
       {origin?.how === 'given' && <GivenBasis path={path} />}
       {origin?.worked && <Statement worked={origin.worked} path={path} />}
       {origin && origin.how !== 'given' && (
-        <div className="went-ins">
+        <div key={path} className="went-ins">
           <Quantities title="What went in" paths={origin.inputs} />
           <Quantities title="Solved together with" paths={origin.with} />
         </div>
