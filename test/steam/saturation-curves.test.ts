@@ -2,6 +2,7 @@
 import { expect, test } from 'vitest'
 import { borderPressure13, lowestSaturationPressure } from '../../src/steam/constants.ts'
 import { POINT_SIZE, Point, region1Point, region2Point } from '../../src/steam/if97/point.ts'
+import { saturationSlope, saturationTemperatureOf } from '../../src/steam/if97/saturation-line.ts'
 import { SATURATION_SIZE, Saturation, saturationAtPressure } from '../../src/steam/index.ts'
 
 const record = new Float64Array(SATURATION_SIZE)
@@ -24,11 +25,14 @@ function pressures(): number[] {
 // cancel. A slope of a polynomial through such values keeps two or three digits less.
 test('saturated states are those of the forward equations to their round-off', () => {
   let worst = 0
+  let worstT = 0
   let worstSlope = 0
   for (const p of pressures()) {
     expect(saturationAtPressure(record, 0, p)).toBe(0)
-    const T = record[Saturation.T] as number
-    const slope = record[Saturation.Tp] as number
+    const T = saturationTemperatureOf(p)
+    const slope = saturationSlope(p, T)
+    worstT = Math.max(worstT, Math.abs((record[Saturation.T] as number) / T - 1))
+    worstSlope = Math.max(worstSlope, Math.abs((record[Saturation.Tp] as number) / slope - 1))
     region1Point(liquid, p, T)
     region2Point(vapour, p, T)
     for (const [side, point] of [liquid, vapour].entries()) {
@@ -49,6 +53,7 @@ test('saturated states are those of the forward equations to their round-off', (
       }
     }
   }
+  expect(worstT).toBeLessThan(2e-14)
   expect(worst).toBeLessThan(3e-13)
   expect(worstSlope).toBeLessThan(1e-10)
 })

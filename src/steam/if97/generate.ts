@@ -40,13 +40,19 @@ import {
   functionText,
   idealPart,
   plainSum,
+  SUMS,
   settled,
   sumWithSecondDerivatives,
   sumWithSlopes,
 } from './unroll-sums.ts'
 
 const header = (source: string): string =>
-  `// Generated from the coefficient rows by generate.ts; do not edit. Source: ${source}.\n\n`
+  `// Generated from the coefficient rows by generate.ts; do not edit. Source: ${source}.
+
+// Sums kept in between, see StoredSum in unroll-sums.ts.
+const sums = new Float64Array(${SUMS})
+
+`
 
 function region1File(): string {
   let text = header('IAPWS R7-97(2012), Eqs. (7), (11) and (13)')

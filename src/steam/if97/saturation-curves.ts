@@ -1,13 +1,13 @@
 /**
  * Saturated liquid and dry saturated steam up to 16.529 MPa, from the saturation line with the
  * forward equations of regions 1 and 2 (IAPWS R7-97(2012), Eqs. (7), (15) and (31)). Along the line
- * each property is a smooth function of beta = (p / 1 MPa)^(1/4), the variable of Eq. (31), so a
+ * T and each property is a smooth function of beta = (p / 1 MPa)^(1/4), the variable of Eq. (31), so a
  * short polynomial per step of beta gives it to the round-off of the equations themselves. A
  * polynomial runs through the equations' values at Chebyshev's nodes and is made when its step is
  * first met.
  */
 import { POINT_SIZE, Point, region1Point, region2Point } from './point.ts'
-import { saturationLine, saturationTemperatureOf } from './saturation-line.ts'
+import { saturationTemperatureOf } from './saturation-line.ts'
 
 const { h: ptH, s: ptS, v: ptV } = Point
 
@@ -23,11 +23,11 @@ const FOLLOWING = (FINE - COARSE) * change
 const STEPS = Math.ceil(FOLLOWING + COARSE * 2.1)
 /** Coefficients of one polynomial: degree 8 leaves less than round-off. */
 const TERMS = 9
-/** h', h'', s', s'', v' and p v''. */
-const CURVES = 6
+/** h', h'', s', s'', v', p v'' and T. */
+const CURVES = 7
 const STEP_SIZE = TERMS * CURVES
 
-// The coefficients of a step: those of u^0 of all six curves, of u^1, and so on; u from -1 to 1.
+// The coefficients of a step: those of u^0 of all curves, of u^1, and so on; u from -1 to 1.
 const curves = new Float64Array(STEPS * STEP_SIZE)
 
 /** Coefficients of Chebyshev's polynomials of degree 0 to 8, lowest power first. */
@@ -50,7 +50,6 @@ const vapour = new Float64Array(POINT_SIZE)
  * slots are those of `Saturation` in records.ts.
  */
 export function saturatedStates(record: Float64Array, at: number): void {
-  saturationLine(record, at, at + 1, at + 8)
   const p = record[at] as number
   const beta = Math.sqrt(Math.sqrt(p * 1e-6))
   const fine = beta < change
@@ -61,7 +60,7 @@ export function saturatedStates(record: Float64Array, at: number): void {
   // h'' is never zero
   if (curves[c + 1] === 0) makeCurves(step)
   const u = 2 * (place - step) - 1
-  // Horner's rule for the value and the derivative of the six curves side by side
+  // Horner's rule for the values and the derivatives of the curves side by side
   c += (TERMS - 1) * CURVES
   let hL = curves[c] as number
   let hV = curves[c + 1] as number
@@ -69,41 +68,47 @@ export function saturatedStates(record: Float64Array, at: number): void {
   let sV = curves[c + 3] as number
   let vL = curves[c + 4] as number
   let pvV = curves[c + 5] as number
+  let T = curves[c + 6] as number
   let hLu = 0
   let hVu = 0
-  let sLu = 0
-  let sVu = 0
   let vLu = 0
   let pvVu = 0
+  let Tu = 0
   for (let i = 1; i < TERMS; i++) {
     c -= CURVES
     hLu = hLu * u + hL
     hVu = hVu * u + hV
-    sLu = sLu * u + sL
-    sVu = sVu * u + sV
     vLu = vLu * u + vL
     pvVu = pvVu * u + pvV
+    Tu = Tu * u + T
     hL = hL * u + (curves[c] as number)
     hV = hV * u + (curves[c + 1] as number)
     sL = sL * u + (curves[c + 2] as number)
     sV = sV * u + (curves[c + 3] as number)
     vL = vL * u + (curves[c + 4] as number)
     pvV = pvV * u + (curves[c + 5] as number)
+    T = T * u + (curves[c + 6] as number)
   }
   const perPressure = 1 / p
   // du/dp
   const toPressure = 0.5 * density * beta * perPressure
   const vV = pvV * perPressure
+  const hLp = hLu * toPressure
+  const hVp = hVu * toPressure
+  const perT = 1 / T
+  record[at + 1] = T
   record[at + 2] = hL
   record[at + 3] = hV
   record[at + 4] = sL
   record[at + 5] = sV
   record[at + 6] = vL
   record[at + 7] = vV
-  record[at + 9] = hLu * toPressure
-  record[at + 10] = hVu * toPressure
-  record[at + 11] = sLu * toPressure
-  record[at + 12] = sVu * toPressure
+  record[at + 8] = Tu * toPressure
+  record[at + 9] = hLp
+  record[at + 10] = hVp
+  // dh = T ds + v dp along any path within a region
+  record[at + 11] = (hLp - vL) * perT
+  record[at + 12] = (hVp - vV) * perT
   record[at + 13] = vLu * toPressure
   record[at + 14] = (pvVu * toPressure - vV) * perPressure
   record[at + 15] = 1 / (hV - hL)
@@ -127,6 +132,7 @@ function makeCurves(step: number): void {
       vapour[ptS] as number,
       liquid[ptV] as number,
       (vapour[ptV] as number) * p,
+      T,
     ])
   }
   for (const [j, polynomial] of chebyshev.entries()) {

@@ -117,6 +117,54 @@ class Sum {
 }
 
 /**
+ * A running sum kept in a slot of the array `sums`. What is stored in between keeps the compiler from
+ * putting off all terms of one sum until those of another are through, and from moving hundreds of
+ * terms to the stack and back meanwhile.
+ */
+class StoredSum {
+  private parts: string[] = []
+  private started = false
+  private readonly slot: number
+
+  constructor(slot: number) {
+    this.slot = slot
+  }
+
+  add(part: string): void {
+    this.parts.push(part)
+  }
+
+  /** Stores what has been added since. */
+  flush(body: Body): void {
+    if (this.parts.length === 0) return
+    const [first, ...others] = this.started
+      ? [`(sums[${this.slot}] as number)`, ...this.parts]
+      : this.parts
+    const rest = others.map((part) => (part.startsWith('-') ? ` - ${part.slice(1)}` : ` + ${part}`))
+    body.say(`sums[${this.slot}] = ${first}${rest.join('')}`)
+    this.started = true
+    this.parts = []
+  }
+}
+
+/** Sums that a function keeps: those of nine derivatives. */
+export const SUMS = 9
+type NineSums = [
+  StoredSum,
+  StoredSum,
+  StoredSum,
+  StoredSum,
+  StoredSum,
+  StoredSum,
+  StoredSum,
+  StoredSum,
+  StoredSum,
+]
+
+/** Terms after which the sums are stored. */
+const TERMS_AT_ONCE = 5
+
+/**
  * sum of n x^I y^J with its logarithmic derivatives, in the names f, fx, fxx, fy, fxy, fyy of the
  * body: the sums of t, I t, I^2 t, J t, I J t, J^2 t over the terms t; with `slopes` those of the
  * second derivatives to y as well, fxxy, fxyy, fyyy. Terms of one I are summed first.
@@ -136,15 +184,18 @@ export function sumWithSecondDerivatives(
     y,
     rows.map((row) => row.J),
   )
-  const f = new Sum(body, 'f')
-  const fx = new Sum(body, 'fx')
-  const fxx = new Sum(body, 'fxx')
-  const fy = new Sum(body, 'fy')
-  const fxy = new Sum(body, 'fxy')
-  const fyy = new Sum(body, 'fyy')
-  const fxxy = new Sum(body, 'fxxy')
-  const fxyy = new Sum(body, 'fxyy')
-  const fyyy = new Sum(body, 'fyyy')
+  const names = ['f', 'fx', 'fxx', 'fy', 'fxy', 'fyy', 'fxxy', 'fxyy', 'fyyy']
+  const [f, fx, fxx, fy, fxy, fyy, fxxy, fxyy, fyyy] = [0, 1, 2, 3, 4, 5, 6, 7, 8].map(
+    (slot) => new StoredSum(slot),
+  ) as NineSums
+  const sums = [f, fx, fxx, fy, fxy, fyy, fxxy, fxyy, fyyy]
+  let waiting = 0
+  const store = (terms: number): void => {
+    waiting += terms
+    if (waiting < TERMS_AT_ONCE) return
+    for (const sum of sums) sum.flush(body)
+    waiting = 0
+  }
   for (const [I, group] of byI(rows)) {
     const id = named(I)
     const [first] = group
@@ -159,6 +210,7 @@ export function sumWithSecondDerivatives(
       if (!slopes) {
         fxy.add(scaled(first.J, `u${id}`))
         fyy.add(scaled(first.J, `w${id}`))
+        store(1)
         continue
       }
       body.say(`const v${id} = ${scaled(first.J, `u${id}`)}`)
@@ -168,6 +220,7 @@ export function sumWithSecondDerivatives(
       fxxy.add(scaled(I, `v${id}`))
       fxyy.add(scaled(first.J, `v${id}`))
       fyyy.add(scaled(first.J, `z${id}`))
+      store(1)
       continue
     }
     const [zero, one, two, three] = groupSums(body, group, y, id, slopes)
@@ -196,6 +249,11 @@ export function sumWithSecondDerivatives(
       if (I !== 0) fxyy.add(scaled(I, `r${id}`))
     } else if (two !== '') fyy.add(times(two))
     if (three !== '') fyyy.add(times(three))
+    store(group.length)
+  }
+  for (const sum of sums) sum.flush(body)
+  for (const [slot, name] of names.entries()) {
+    if (slot < 6 || slopes) body.say(`const ${name} = sums[${slot}] as number`)
   }
 }
 

@@ -1,5 +1,8 @@
 // Generated from the coefficient rows by generate.ts; do not edit. Source: IAPWS R7-97(2012), Eqs. (33) and (34).
 
+// Sums kept in between, see StoredSum in unroll-sums.ts.
+const sums = new Float64Array(9)
+
 /**
  * gamma of region 5 and its derivatives, with x = pi, y = tau and logarithm = ln pi: writes gamma,
  * d/dpi, d2/dpi2, d/dtau, d2/dpidtau, d2/dtau2.
@@ -30,14 +33,8 @@ export function region5Potential(g: Float64Array): void {
   b1 += jt1x3
   c1 += 3 * jt1x3
   const p1 = a1 * x
-  let f = p1
   const u1 = p1
-  let fx = u1
-  let fxx = u1
   const q1 = b1 * x
-  let fy = q1
-  let fxy = q1
-  let fyy = c1 * x
   const t2x3 = 0.0000022440037409485 * y3
   let a2 = t2x3
   const jt2x3 = 3 * t2x3
@@ -49,23 +46,29 @@ export function region5Potential(g: Float64Array): void {
   b2 += jt2x9
   c2 += 9 * jt2x9
   const p2 = a2 * x2
-  f += p2
   const u2 = 2 * p2
-  fx += u2
-  fxx += 2 * u2
   const q2 = b2 * x2
-  fy += q2
-  fxy += 2 * q2
-  fyy += c2 * x2
+  sums[0] = p1 + p2
+  sums[1] = u1 + u2
+  sums[2] = u1 + 2 * u2
+  sums[3] = q1 + q2
+  sums[4] = q1 + 2 * q2
+  sums[5] = c1 * x + c2 * x2
   const t3 = 3.7919454822955e-8 * x3 * y7
   const u3 = 3 * t3
   const w3 = 7 * t3
-  f += t3
-  fx += u3
-  fxx += 3 * u3
-  fy += w3
-  fxy += 7 * u3
-  fyy += 7 * w3
+  sums[0] = (sums[0] as number) + t3
+  sums[1] = (sums[1] as number) + u3
+  sums[2] = (sums[2] as number) + 3 * u3
+  sums[3] = (sums[3] as number) + w3
+  sums[4] = (sums[4] as number) + 7 * u3
+  sums[5] = (sums[5] as number) + 7 * w3
+  const f = sums[0] as number
+  const fx = sums[1] as number
+  const fxx = sums[2] as number
+  const fy = sums[3] as number
+  const fxy = sums[4] as number
+  const fyy = sums[5] as number
   const ym1 = 1 / y
   const ym2 = ym1 * ym1
   const ym3 = ym1 * ym2
