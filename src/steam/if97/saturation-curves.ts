@@ -30,18 +30,24 @@ const STEP_SIZE = TERMS * CURVES
 // The coefficients of a step: those of u^0 of all curves, of u^1, and so on; u from -1 to 1.
 const curves = new Float64Array(STEPS * STEP_SIZE)
 
-/** Coefficients of Chebyshev's polynomials of degree 0 to 8, lowest power first. */
-const chebyshev: readonly (readonly number[])[] = chebyshevPolynomials()
-
-function chebyshevPolynomials(): number[][] {
-  const all = [[1], [0, 1]]
-  for (let degree = 2; degree < TERMS; degree++) {
-    const [before, last] = [all[degree - 2] as number[], all[degree - 1] as number[]]
-    all.push([0, ...last].map((value, i) => (i === 0 ? 0 : 2 * value) - (before[i] ?? 0)))
+// Chebyshev's polynomials of degree 0 to 8: their coefficients, lowest power first, and their values
+// at the nodes, the zeros of the next one.
+const chebyshev = new Float64Array(TERMS * TERMS)
+const cosines = new Float64Array(TERMS * TERMS)
+for (let degree = 0; degree < TERMS; degree++) {
+  const at = degree * TERMS
+  for (let i = 0; i < TERMS; i++) {
+    cosines[at + i] = Math.cos((Math.PI * degree * (i + 0.5)) / TERMS)
+    if (degree < 2) chebyshev[at + i] = i === degree ? 1 : 0
+    else {
+      const before = i === 0 ? 0 : (chebyshev[at - TERMS + i - 1] as number)
+      chebyshev[at + i] = 2 * before - (chebyshev[at - 2 * TERMS + i] as number)
+    }
   }
-  return all
 }
 
+// The properties at the nodes of a step.
+const values = new Float64Array(TERMS * CURVES)
 const liquid = new Float64Array(POINT_SIZE)
 const vapour = new Float64Array(POINT_SIZE)
 
@@ -116,35 +122,33 @@ export function saturatedStates(record: Float64Array, at: number): void {
 
 /** The polynomials of one step, from the equations at Chebyshev's nodes. */
 function makeCurves(step: number): void {
-  const first = step * STEP_SIZE
-  const values: number[][] = []
-  for (let i = 0; i < TERMS; i++) {
-    const place = step + 0.5 * (1 + Math.cos((Math.PI * (i + 0.5)) / TERMS))
+  for (let node = 0; node < TERMS; node++) {
+    const place = step + 0.5 + 0.5 * (cosines[TERMS + node] as number)
     const beta = step < FINE * change ? place / FINE : (place - FOLLOWING) / COARSE
-    const p = 1e6 * beta ** 4
+    const p = 1e6 * beta * beta * beta * beta
     const T = saturationTemperatureOf(p)
     region1Point(liquid, p, T)
     region2Point(vapour, p, T)
-    values.push([
-      liquid[ptH] as number,
-      vapour[ptH] as number,
-      liquid[ptS] as number,
-      vapour[ptS] as number,
-      liquid[ptV] as number,
-      (vapour[ptV] as number) * p,
-      T,
-    ])
+    const at = node * CURVES
+    values[at] = liquid[ptH] as number
+    values[at + 1] = vapour[ptH] as number
+    values[at + 2] = liquid[ptS] as number
+    values[at + 3] = vapour[ptS] as number
+    values[at + 4] = liquid[ptV] as number
+    values[at + 5] = (vapour[ptV] as number) * p
+    values[at + 6] = T
   }
-  for (const [j, polynomial] of chebyshev.entries()) {
+  for (let degree = 0; degree < TERMS; degree++) {
     for (let curve = 0; curve < CURVES; curve++) {
       let sum = 0
-      for (const [i, value] of values.entries()) {
-        sum += (value[curve] as number) * Math.cos((Math.PI * j * (i + 0.5)) / TERMS)
+      for (let node = 0; node < TERMS; node++) {
+        sum +=
+          (values[node * CURVES + curve] as number) * (cosines[degree * TERMS + node] as number)
       }
-      const weight = ((j === 0 ? 1 : 2) * sum) / TERMS
-      for (const [power, coefficient] of polynomial.entries()) {
-        const at = first + power * CURVES + curve
-        curves[at] = (curves[at] as number) + weight * coefficient
+      const weight = ((degree === 0 ? 1 : 2) * sum) / TERMS
+      for (let power = degree & 1; power <= degree; power += 2) {
+        const at = step * STEP_SIZE + power * CURVES + curve
+        curves[at] = (curves[at] as number) + weight * (chebyshev[degree * TERMS + power] as number)
       }
     }
   }
