@@ -2,6 +2,7 @@ import { useEffect, useState } from 'react'
 import { formatQuantity } from '../../src/document.ts'
 import { readValue, useBalanceStore } from '../store/balance-store.ts'
 import { readUnitChoice } from '../store/settings-store.ts'
+import { useSolvingStore } from '../store/solving-store.ts'
 import { useConnectingStore } from './connecting-store.ts'
 
 /** How long a balance must stand before it is told, ms: typing and dragging give many. */
@@ -38,13 +39,19 @@ export function ResultAnnouncer() {
   const [text, setText] = useState('')
   useEffect(() => {
     let timer: ReturnType<typeof setTimeout> | undefined
-    const end = useBalanceStore.subscribe((now, then) => {
-      if (now.balance === then.balance && now.stale === then.stale) return
+    const settle = () => {
       clearTimeout(timer)
-      if (!now.stale) timer = setTimeout(() => setText(told()), settling)
+      if (!useSolvingStore.getState().busy) timer = setTimeout(() => setText(told()), settling)
+    }
+    const endBalance = useBalanceStore.subscribe((now, then) => {
+      if (now.balance !== then.balance) settle()
+    })
+    const endBusy = useSolvingStore.subscribe((now, then) => {
+      if (now.busy !== then.busy) settle()
     })
     return () => {
-      end()
+      endBalance()
+      endBusy()
       clearTimeout(timer)
     }
   }, [])

@@ -22,11 +22,23 @@ const rest = 300
 
 const useRest = create<{ readonly count: number }>()(() => ({ count: 0 }))
 
-let timer: ReturnType<typeof setTimeout> | undefined
+let stirred = 0
+let isWaiting = false
 
 function stir(): void {
-  clearTimeout(timer)
-  timer = setTimeout(() => useRest.setState(({ count }) => ({ count: count + 1 })), rest)
+  stirred = performance.now()
+  if (!isWaiting) waitFor(rest)
+}
+
+/** One timer at a time: a busy window sets and clears none. */
+function waitFor(time: number): void {
+  isWaiting = true
+  setTimeout(() => {
+    isWaiting = false
+    const left = stirred + rest - performance.now()
+    if (left > 1) waitFor(left)
+    else useRest.setState(({ count }) => ({ count: count + 1 }))
+  }, time)
 }
 
 useBalanceStore.subscribe(stir)

@@ -2,6 +2,7 @@ import { type KeyboardEvent, useEffect, useId, useRef, useState } from 'react'
 import type { Given, QuantityDescription } from '../../src/document.ts'
 import { usePlantStore } from '../store/plant-store.ts'
 import { useUnitChoice } from '../store/settings-store.ts'
+import { whenShown } from '../store/shown-together.ts'
 import { free, give } from './give.ts'
 import { Mark } from './Mark.tsx'
 import { fieldText, fieldUnit, readTyped, stepOf, typedNote, usualText } from './typed-number.ts'
@@ -63,14 +64,15 @@ export function NumberInput(props: Props) {
   })
 
   useEffect(() => {
-    input.current?.focus()
+    input.current?.focus({ preventScroll: true })
     // A digit typed to open the field is gone on from, not written over.
     if (opener === undefined) input.current?.select()
   }, [opener])
 
   const close = (keepFocus: boolean) => {
     closing.current = true
-    onClose(keepFocus)
+    // With the number that it gave, which is shown with its balance.
+    whenShown(() => onClose(keepFocus && document.activeElement === input.current))
   }
 
   /** `sure`: by Enter, which gives a solved value as it stands; leaving the field does not. */

@@ -52,7 +52,7 @@ function ClosedField({
   const isCurve = given !== undefined && typeof given !== 'number'
 
   useEffect(() => {
-    if (focused) button.current?.focus()
+    if (focused) button.current?.focus({ preventScroll: true })
   }, [focused])
 
   useEffect(() => {

@@ -32,8 +32,6 @@ export interface BalanceState {
   readonly index: Index
   /** Paths that nothing fixes or bounds in the balance shown. */
   readonly open: ReadonlySet<string>
-  /** A newer plant is being solved; what is shown belongs to the one before. */
-  readonly stale: boolean
   /** The solved balance before the last edit, to show what the edit did; null where there is none. */
   readonly before: Snapshot | null
   /** Edits between `before` and the balance shown, and the name of the last. */
@@ -51,7 +49,6 @@ export interface BalanceState {
   clear(): void
   showDome(dome: DomeMessage): void
   showTrouble(message: string | null): void
-  setStale(stale: boolean): void
 }
 
 const nothing: ReadonlySet<string> = new Set()
@@ -100,7 +97,6 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
   dome: null,
   index: noIndex,
   open: nothing,
-  stale: false,
   before: null,
   editsSince: 0,
   lastEdit: '',
@@ -139,9 +135,6 @@ export const useBalanceStore = create<BalanceState>()((set, get) => ({
   },
   showTrouble(message) {
     if (message !== get().trouble) set({ trouble: message })
-  },
-  setStale(stale) {
-    if (stale !== get().stale) set({ stale })
   },
 }))
 

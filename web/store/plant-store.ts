@@ -1,4 +1,4 @@
-import { create } from 'zustand'
+import { createStore } from 'zustand'
 import {
   applyDifference,
   type Case,
@@ -15,6 +15,7 @@ import {
 } from '../../src/document.ts'
 import type { NamesMessage } from '../../src/messages.ts'
 import { type BalanceState, useBalanceStore } from './balance-store.ts'
+import { editWithBalance, shownTogether } from './shown-together.ts'
 
 /** One undo step: a named difference between two states of the plant. */
 export interface Step {
@@ -86,7 +87,7 @@ function caseOf(plant: Plant, layoutId: string, wanted: string | null): string |
 
 const untitled = emptyPlant()
 
-export const usePlantStore = create<PlantState>()((set, get) => {
+const plantStore = createStore<PlantState>()((set, get) => {
   /** Shows `plant` in the layout wanted, or in the nearest that exists. */
   const place = (plant: Plant, wanted: string) => {
     const layoutId = layoutOf(plant, wanted)
@@ -189,6 +190,8 @@ export const usePlantStore = create<PlantState>()((set, get) => {
     },
   }
 })
+
+export const usePlantStore = shownTogether(plantStore)
 
 const noLayout: Layout = {
   id: '',
@@ -326,12 +329,14 @@ export function editGiven(
   options?: EditOptions,
 ): void {
   const one = readShownCase()
-  editLayout(
-    one ? `${one.name}: ${name}` : name,
-    (plant, layoutId) =>
-      one
-        ? setInCase(plant, layoutId, one.id, path, given ?? 'free')
-        : setGiven(plant, layoutId, path, given),
-    options,
+  editWithBalance(() =>
+    editLayout(
+      one ? `${one.name}: ${name}` : name,
+      (plant, layoutId) =>
+        one
+          ? setInCase(plant, layoutId, one.id, path, given ?? 'free')
+          : setGiven(plant, layoutId, path, given),
+      options,
+    ),
   )
 }
