@@ -2,7 +2,7 @@ import type { Locator, Page } from 'playwright-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { solved } from './hands.ts'
 import { openSeven, show } from './seven.ts'
-import { openWindow, type Visit } from './support.ts'
+import { accessibilityFaults, openWindow, type Visit } from './support.ts'
 
 interface Fault {
   readonly name: string
@@ -166,6 +166,7 @@ test('the ledger says the same, shows where it lies, and mends it', async () => 
   await expect.poll(() => ledger.locator('.ledger-line').first().textContent()).toMatch(short)
   await ledger.locator('.ledger-where').click()
   await expect.poll(() => page.locator('.react-flow__node.selected').count()).toBeGreaterThan(0)
+  expect(await accessibilityFaults(page, '.strip, .card, .drawer, .totals')).toEqual([])
   await mend(ledger, 'h5.terminalDifference')
   await page.locator('.card input[data-path="h5.terminalDifference"]').waitFor()
   await page.keyboard.press('Enter')

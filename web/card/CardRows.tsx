@@ -92,32 +92,41 @@ function GivenSide({ entries }: { entries: readonly QuantityEntry[] }) {
   return (
     <>
       <tr className="card-worth-head">
-        <th colSpan={5} scope="colgroup">
-          {isKnown && (
-            <>
-              <WorthTarget />, <WorthUnits entries={entries} />
-            </>
-          )}
-        </th>
+        {isKnown ? (
+          <th colSpan={5} scope="colgroup">
+            <WorthTarget />, <WorthUnits entries={entries} />
+          </th>
+        ) : (
+          <td colSpan={5} />
+        )}
       </tr>
       <tr>
         <th colSpan={3} scope="colgroup" className="card-side">
           Given
         </th>
-        <th
-          scope="col"
-          className="card-worth card-side"
-          title="Everything else given stays as it is."
-        >
-          {isKnown && 'fixed'}
-        </th>
-        <th
-          scope="col"
-          className="card-worth card-side card-worth-frozen"
-          title="The machines and surfaces stay what they are, and follow their laws."
-        >
-          {isKnown && 'frozen'}
-        </th>
+        {isKnown ? (
+          <>
+            <th
+              scope="col"
+              className="card-worth card-side"
+              title="Everything else given stays as it is."
+            >
+              fixed
+            </th>
+            <th
+              scope="col"
+              className="card-worth card-side card-worth-frozen"
+              title="The machines and surfaces stay what they are, and follow their laws."
+            >
+              frozen
+            </th>
+          </>
+        ) : (
+          <>
+            <td className="card-worth" />
+            <td className="card-worth card-worth-frozen" />
+          </>
+        )}
       </tr>
     </>
   )

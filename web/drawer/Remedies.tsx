@@ -86,15 +86,16 @@ export function Remedies({ finding }: { finding: Finding }) {
   return (
     <div className="remedies">
       {shown.map((remedy) => {
+        const { action, path } = remedy
         const value = suggestion(remedy)
-        const [id = ''] = remedy.path.split('.')
+        const name = quantityName(path)
+        const [id = ''] = path.split('.')
         return (
           <button
-            key={`${remedy.action}/${remedy.path}`}
+            key={`${action}/${path}`}
             type="button"
             className="remedy"
-            data-remedy={remedy.path}
-            aria-label={`${remedy.action === 'give' ? 'Give' : 'Free'} ${quantityName(remedy.path)}${value ? `, ${value}` : ''}`}
+            data-remedy={path}
             onClick={() => {
               hover(null)
               apply(remedy)
@@ -104,8 +105,13 @@ export function Remedies({ finding }: { finding: Finding }) {
             onFocus={() => hover(id)}
             onBlur={() => hover(null)}
           >
-            {quantityName(remedy.path)}
-            {value && <span className="remedy-value">{value}</span>}
+            <span className="visually-hidden">
+              {`${action === 'give' ? 'Give' : 'Free'} ${name}${value ? `, ${value}` : ''}`}
+            </span>
+            <span aria-hidden="true">
+              {name}
+              {value && <span className="remedy-value">{value}</span>}
+            </span>
           </button>
         )
       })}

@@ -75,7 +75,8 @@ export function ManyInput({ paths, name, description, value, placeholder }: Prop
           event.preventDefault()
         }}
       />
-      {unit !== '' && <span className="quantity-unit">{unit}</span>}
+      {/* Stands there without a unit too, so that the fields of a card keep one line. */}
+      <span className="quantity-unit">{unit}</span>
       {error !== null && (
         <span id={errorId} className="field-note" data-error="true" role="alert">
           {error}

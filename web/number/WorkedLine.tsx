@@ -22,10 +22,10 @@ function Symbol_({ path }: { path: string }) {
 
 function FigureText({ figure, unit }: Figure) {
   return (
-    <>
+    <span className="worked-figure">
       {figure}
       {unit && <span className="quantity-unit">{`\u2009${unit}`}</span>}
-    </>
+    </span>
   )
 }
 
