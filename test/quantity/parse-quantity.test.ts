@@ -2,6 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
 import type { Dimension } from '../../src/quantity/dimension.ts'
 import { parseQuantity } from '../../src/quantity/parse-quantity.ts'
+import { unitSets } from '../../src/quantity/unit-set.ts'
 import { allUnitsOf, dimensions, fromShown } from '../../src/quantity/units-of-measure.ts'
 
 function read(text: string, dimension: Dimension, unit?: string): number {
@@ -105,6 +106,61 @@ describe('gauge pressure and vacuum', () => {
     expect(Math.abs(result.value - pascal)).toBeLessThan(1)
     expect(result.note).toContain('absolute')
     expect(result.note).toContain('1.01325 bar')
+  })
+
+  // The edges: nothing at all is left at full vacuum, and the atmosphere begins where gauge does.
+  test.each([
+    ['0 barg', 101325],
+    ['0 mmHg vacuum', 101325],
+    ['-1.01325 barg', 0],
+    ['1.01325 bar vacuum', 0],
+    ['101325 Pa vacuum', 0],
+    ['101.325 kPa vac', 0],
+    ['760 Torr vacuum', 0],
+    ['1 atm vacuum', 0],
+    ['0.0001 barg', 101335],
+    ['-101.324 kPag', 1],
+    // 1 psi is 6894.757 Pa, 1 inHg 3386.389 Pa, 1 mmHg 133.3224 Pa (NIST SP 811, B.8).
+    ['-14.69 psig', 101325 - 14.69 * 6894.757],
+    ['29.92 inHg vacuum', 101325 - 29.92 * 3386.389],
+    ['759.9 mmHg vacuum', 101325 - 759.9 * 133.3224],
+    ['3000 psig', 3000 * 6894.757 + 101325],
+  ])('%s, at an edge', (text, pascal) => {
+    const result = parseQuantity(text, 'pressure', 'metric')
+    expect(result).toMatchObject({ outcome: 'value', gauge: true })
+    if (result.outcome !== 'value') return
+    expect(result.value).toBeGreaterThanOrEqual(0)
+    expect(Math.abs(result.value - pascal)).toBeLessThanOrEqual(2e-7 * 101325 + 2e-7 * pascal)
+  })
+
+  test.each(['760.1 mmHg vacuum', '29.93 inHg vacuum', '-14.7 psig', '-1.01326 barg'])(
+    '%s is beyond full vacuum',
+    (text) => {
+      expect(refusal(text, 'pressure')).toMatch(/full vacuum.*1\.01325 bar/)
+    },
+  )
+
+  test('what is typed means the same whatever set is shown', () => {
+    for (const text of ['12 barg', '60 mmHg vac', '180 psi', '0.1 bar', '5 kPa']) {
+      const [first, ...others] = unitSets.map(({ name }) => parseQuantity(text, 'pressure', name))
+      for (const other of others) {
+        expect(other).toMatchObject({ outcome: 'value', value: (first as { value: number }).value })
+      }
+    }
+  })
+
+  test('the note tells the absolute pressure in the unit shown', () => {
+    const note = (text: string, unit: string) => {
+      const result = parseQuantity(text, 'pressure', 'metric', { unit })
+      return result.outcome === 'value' ? result.note : result.message
+    }
+    expect(note('12 barg', 'bar')).toBe(
+      'Gauge pressure, taken as 13.01 bar absolute with the standard atmosphere of 1.01325 bar.',
+    )
+    expect(note('700 mmHg vacuum', 'kPa')).toBe(
+      'Vacuum, taken as 7.999 kPa absolute with the standard atmosphere of 101.325 kPa.',
+    )
+    expect(note('0 psig', 'psia')).toMatch(/^Gauge pressure, taken as 14\.70 psia absolute/)
   })
 
   test('an absolute pressure is not flagged', () => {
