@@ -10,6 +10,8 @@ const done = 1e-7
 const difference = 1e-5
 const longest = 0.3
 const shortest = 1e-3
+/** Rows evaluated before giving up. */
+const mostWork = 250_000
 /** Most quantities that are moved. */
 const mostMoved = 12
 
@@ -44,7 +46,9 @@ export function aimAt(start: DesignStart, plant: System): Float64Array | undefin
   let held = values.slice(0, count)
   let missed = misses()
   let least = norm(missed)
+  const allowed = program.work + mostWork
   for (let iteration = 0; iteration < mostIterations && least > done; iteration++) {
+    if (program.work > allowed) break
     const columns = x.map((_, j) => {
       for (const size of [difference, -difference]) {
         const moved = x.slice()

@@ -5,6 +5,8 @@ import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
 import type { System } from './system.ts'
 
+/** Starts of a block before another design is tried. */
+const fewStarts = 3
 /** A usual range is searched through by the golden section: no two choices lie near each other. */
 const goldenSection = (Math.sqrt(5) - 1) / 2
 
@@ -13,6 +15,7 @@ export class DesignStart {
   readonly design: Design
   readonly program: Program
   private readonly plant: System
+  private last: { readonly choice: number; readonly values: Float64Array | undefined } | undefined
 
   private constructor(plant: System, design: Design) {
     this.plant = plant
@@ -27,8 +30,8 @@ export class DesignStart {
   }
 
   /** Undefined where the plant is asked as a designer would ask. */
-  static of(plant: System, open: readonly number[]): DesignStart | undefined {
-    const design = designOf(plant, open)
+  static of(plant: System, open: readonly number[], variant = 0): DesignStart | undefined {
+    const design = designOf(plant, open, variant)
     return design && new DesignStart(plant, design)
   }
 
@@ -42,6 +45,11 @@ export class DesignStart {
    * numbers.
    */
   solve(choice: number): Float64Array | undefined {
+    if (this.last?.choice !== choice) this.last = { choice, values: this.solveAnew(choice) }
+    return this.last.values
+  }
+
+  private solveAnew(choice: number): Float64Array | undefined {
     const { plant, design, program } = this
     const isGiven = (v: number): boolean => !Number.isNaN(plant.given[v]!)
     const guess = plant.given.slice()
@@ -58,9 +66,12 @@ export class DesignStart {
       program.set(v, value)
     }
     const { values } = program.tape
-    program.solve((known, other, wanted) => {
-      new Starts(design.system, values, known, other).fill(wanted)
-    })
+    program.solve(
+      (known, other, wanted) => {
+        new Starts(design.system, values, known, other).fill(wanted)
+      },
+      { choice, first: 0, most: fewStarts },
+    )
     if (!this.isSolved()) return undefined
     const solved = values.slice(0, plant.variables.length)
     // A result that only describes may have no value there (a conductance without bound).
@@ -73,8 +84,17 @@ export class DesignStart {
    * given; undefined where that does not succeed.
    */
   aim(choice: number): Float64Array | undefined {
-    if (this.solve(choice) === undefined) return undefined
-    return aimAt(this, this.plant)
+    const from = this.solve(choice)
+    if (from === undefined) return undefined
+    this.put(from)
+    this.program.solve()
+    return this.isSolved() ? aimAt(this, this.plant) : undefined
+  }
+
+  /** Gives what it fixes these values. */
+  private put(values: Float64Array): void {
+    for (const v of this.design.fixed) this.program.set(v, values[v]!)
+    this.recall(values)
   }
 
   /** Whether all that the plant's state hangs on was found. */

@@ -37,7 +37,7 @@ const preference = {
   ratio: 2,
   raisedPressure: 2.5,
   temperature: 2.6,
-  mainFlow: 3,
+  mainFlow: 3.25,
   givenFlow: 3.2,
   givenMainFlow: 3.3,
   designedEnthalpy: 3.5,
@@ -58,15 +58,19 @@ const designDimensions: ReadonlySet<string> = new Set([
   'specificHeat',
 ])
 
-/** By variable: the preference. */
-function preferences(system: System): Float64Array {
+/** Ways in which designers differ. */
+export const designVariants = 2
+
+/** By variable: the preference. The second variant lets every flow but the main one follow. */
+function preferences(system: System, variant: number): Float64Array {
   const { variables, units, given } = system
   const rank = new Float64Array(variables.length)
   const isGiven = (v: number): boolean => !Number.isNaN(given[v]!)
   variables.forEach(({ description, isState, path, owner }, v) => {
     const { dimension } = description
     if (isState) {
-      if (dimension === 'massFlow') rank[v] = isGiven(v) ? preference.givenFlow : preference.flow
+      if (dimension === 'massFlow')
+        rank[v] = isGiven(v) && variant === 0 ? preference.givenFlow : preference.flow
       else if (dimension === 'pressure') {
         rank[v] = isGiven(v) ? preference.given : preference.pressure
       } else rank[v] = isGiven(v) ? preference.givenEnthalpy : preference.enthalpy
@@ -112,10 +116,10 @@ function preferences(system: System): Float64Array {
 }
 
 /** The design of a plant; undefined where every given is a designer's already, or none is found. */
-export function designOf(system: System, open: readonly number[]): Design | undefined {
+export function designOf(system: System, open: readonly number[], variant = 0): Design | undefined {
   const { variables, equations } = system
   const count = variables.length
-  const rank = preferences(system)
+  const rank = preferences(system, variant)
   const isOpen = new Uint8Array(count)
   for (const v of open) isOpen[v] = 1
   const isGiven = (v: number): boolean => !Number.isNaN(system.given[v]!)

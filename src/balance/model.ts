@@ -1,5 +1,6 @@
 import { type Guess, Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
+import { designVariants } from './design.ts'
 import { DesignStart } from './design-start.ts'
 import { type Difference, Differences, type Divisor, type Unmet } from './differences.ts'
 import { boundsOf } from './ranges.ts'
@@ -7,8 +8,10 @@ import { Starts } from './starts.ts'
 import { analyse, type Structure } from './structure.ts'
 import { type AssemblyOptions, assemble, type System } from './system.ts'
 
-/** Steps from a design to the plant: how many, and how short they may get. */
-const mostLeads = 24
+/** Starts of a block where the whole plant is tried from several. */
+const fewStarts = 3
+/** Steps from a design to the plant: rows evaluated in all, and how short they may get. */
+const mostLeading = 300_000
 const shortestLead = 1 / 100
 
 /** A layout assembled, analysed and lowered: ready to be solved, again and again as givens change. */
@@ -18,7 +21,7 @@ export class Model {
   readonly program: Program
   readonly options: AssemblyOptions
   private isWarm = false
-  private designStart: DesignStart | null | undefined
+  private readonly designs: (DesignStart | null | undefined)[] = []
   private unfoldedSystem: System | undefined
   private seed: ((path: string) => number | null) | undefined
   private differencesRead: Differences | undefined
@@ -119,7 +122,7 @@ export class Model {
    */
   solveOtherwise(choice: number): boolean {
     this.program.forget()
-    this.program.solve(this.guess, choice)
+    this.program.solve(this.guess, { choice, most: fewStarts })
     this.isWarm = this.firstFailure() < 0
     return this.isWarm
   }
@@ -129,10 +132,11 @@ export class Model {
    * reached an answer.
    */
   solveFromDesign(choice: number): boolean {
-    const start = this.design?.solve(choice)
-    if (start === undefined) return false
+    const [design, numbers] = this.designOf(choice)
+    const start = design?.solve(numbers)
+    if (design === undefined || start === undefined) return false
     const { program, system } = this
-    const { released } = this.design!.design
+    const { released } = design.design
     const put = (share: number): void => {
       for (const v of released) {
         const from = Number.isNaN(start[v]!) ? system.given[v]! : start[v]!
@@ -142,7 +146,8 @@ export class Model {
     let good = start
     let done = 0
     let step = 1
-    for (let tries = 0; done < 1 && step > shortestLead && tries < mostLeads; tries++) {
+    const allowed = this.work + mostLeading
+    while (done < 1 && step > shortestLead && this.work < allowed) {
       const next = Math.min(1, done + step)
       put(next)
       if (this.solveFrom(good)) {
@@ -161,7 +166,8 @@ export class Model {
    * reached an answer.
    */
   solveByAiming(choice: number): boolean {
-    const values = this.design?.aim(choice)
+    const [design, numbers] = this.designOf(choice)
+    const values = design?.aim(numbers)
     return values !== undefined && this.solveFrom(values)
   }
 
@@ -178,14 +184,18 @@ export class Model {
 
   /** Rows evaluated so far: a measure of time that is always the same. */
   get work(): number {
-    return this.program.work + (this.designStart?.work ?? 0)
+    return this.designs.reduce((sum, design) => sum + (design?.work ?? 0), this.program.work)
   }
 
-  private get design(): DesignStart | undefined {
-    if (this.designStart === undefined) {
-      this.designStart = DesignStart.of(this.system, this.structure.open) ?? null
+  /** The design of a choice, and which of its numbers. Variants alternate. */
+  private designOf(choice: number): readonly [design: DesignStart | undefined, choice: number] {
+    const variant = choice % designVariants
+    let design = this.designs[variant]
+    if (design === undefined) {
+      design = DesignStart.of(this.system, this.structure.open, variant) ?? null
+      this.designs[variant] = design
     }
-    return this.designStart ?? undefined
+    return [design ?? undefined, Math.floor(choice / designVariants)]
   }
 
   private readonly guess: Guess = (known, choice, wanted) => {

@@ -1,4 +1,3 @@
-import { mostStarts } from '../equations/newton/index.ts'
 import type { Finding } from './answer.ts'
 import { checkAnswer, isImpossible } from './checks.ts'
 import type { Model } from './model.ts'
@@ -6,20 +5,19 @@ import type { Results } from './results.ts'
 
 /** Rows evaluated in search of another answer. */
 const mostSeeking = 4_000_000
-/** Designs that a plant is led from. */
-const mostDesigns = 6
+
+/** Each of the ways is tried with as many sets of first guesses. */
+const mostChoices = 40
 
 /**
  * Ways to an answer when the usual one fails or leads to an impossible one, the best first: each
  * returns whether it reached an answer.
  */
 function* attempts(model: Model): Generator<() => boolean> {
-  for (let choice = 0; choice < Math.max(mostStarts, mostDesigns); choice++) {
-    if (choice < mostDesigns) {
-      yield () => model.solveFromDesign(choice)
-      yield () => model.solveByAiming(choice)
-    }
-    if (choice > 0 && choice < mostStarts) yield () => model.solveOtherwise(choice)
+  for (let choice = 0; choice < mostChoices; choice++) {
+    yield () => model.solveFromDesign(choice)
+    if (choice > 0) yield () => model.solveOtherwise(choice)
+    yield () => model.solveByAiming(choice)
   }
 }
 

@@ -15,6 +15,8 @@ const specificPower = 1.1e6
 const specificConductance = 1e4
 /** Density of water in pumps, kg/m3, about. */
 const density = 900
+/** By choice: what is known may all belong to small parts of the plant. */
+const flowFactors = [1, 10, 1, 100, 3, 30, 1, 300, 0.3] as const
 /** Main flow of a plant of which nothing is known, kg/s. */
 const usualFlow = 100
 
@@ -32,8 +34,15 @@ export function mainFlow(
   system: System,
   values: Float64Array,
   known: (index: number) => boolean,
+  choice = 0,
 ): number {
   let largest = 0
+  for (const { connections } of system.units) {
+    for (const { description, base } of connections) {
+      if (description.designed?.includes('m') && known(base)) largest = Math.abs(values[base]!)
+    }
+  }
+  if (largest > 0) return largest
   for (const base of system.streamBase) {
     if (known(base)) largest = Math.max(largest, Math.abs(values[base]!))
   }
@@ -48,7 +57,7 @@ export function mainFlow(
     else if (dimension === 'conductance' && kind?.passes) flow = size / specificConductance
     if (Number.isFinite(flow)) largest = Math.max(largest, flow)
   })
-  return largest > 0 ? largest : usualFlow
+  return (largest > 0 ? largest : usualFlow) * flowFactors[choice % flowFactors.length]!
 }
 
 /**

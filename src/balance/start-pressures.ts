@@ -34,8 +34,8 @@ export class StartPressures {
       let changed = false
       for (const placed of system.units) {
         const ports = placed.connections
-        const isBarrier = placed.kind.raisesPressure === true || placed.kind.shaft === 'driving'
-        if (isBarrier !== crossing) continue
+        const isMachine = placed.kind.raisesPressure === true || placed.kind.shaft === 'driving'
+        if (isMachine !== crossing || this.drops(placed)) continue
         const own = system.indexOf.get(`${placed.unit.id}.pressure`)
         if (crossing) {
           changed = this.cross(placed, isDone, put) || changed
@@ -64,9 +64,18 @@ export class StartPressures {
       }
       return changed
     }
-    // What is throttled on entry arrives somewhat above: a hint for want of a better one.
+    // What is throttled arrives somewhat above: a hint for want of a better one.
     const spreadThrottled = (): boolean => {
-      for (const { connections } of system.units) {
+      for (const placed of system.units) {
+        const { connections } = placed
+        if (this.drops(placed)) {
+          const [inlet, outlet] = connections
+          if (inlet === undefined || outlet === undefined) continue
+          if (isDone(inlet.base + 1) === isDone(outlet.base + 1)) continue
+          if (isDone(inlet.base + 1)) put(outlet.base + 1, values[inlet.base + 1]! / throttledRatio)
+          else put(inlet.base + 1, values[outlet.base + 1]! * throttledRatio)
+          return true
+        }
         const inside = connections.find(({ description }) => description.pressure === 'equal')
         if (inside === undefined || !isDone(inside.base + 1)) continue
         for (const { description, base } of connections) {
@@ -98,6 +107,16 @@ export class StartPressures {
     for (let pass = 0; pass < 2 * most; pass++) {
       if (!spread(false) && !spread(true) && !spreadThrottled()) break
     }
+  }
+
+  /** Nothing given keeps the pressures before and behind it near each other. */
+  private drops({ kind, unit }: PlacedUnit): boolean {
+    return (
+      kind.dropsPressure?.((name) => {
+        const index = this.system.indexOf.get(`${unit.id}.${name}`)
+        return index !== undefined && this.known(index)
+      }) ?? false
+    )
   }
 
   private livePressure(isDone: (index: number) => boolean): number {

@@ -35,6 +35,8 @@ const waterEnthalpies = [1e5, 1.2e6] as const
 const steamEnthalpies = [2.3e6, 3.5e6] as const
 /** Specific heat of water, J/(kg K). */
 const waterHeat = 4200
+/** Volume of water over the efficiency of a pump, m3/kg. */
+const compressionVolume = 1.3e-3
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
 
@@ -99,7 +101,8 @@ export class Starts {
     system.variables.forEach(({ description }, index) => {
       if (this.known(index) || description.dimension !== 'pressure') return
       const p =
-        values[index]! * 10 ** (pressureScatter * (1 + this.choice / 3) * this.scatter(index))
+        values[index]! *
+        10 ** (pressureScatter * (1 + (this.choice % 10) / 3) * this.scatter(index))
       values[index] = Math.min(90e6, Math.max(700, p))
     })
   }
@@ -157,12 +160,23 @@ export class Starts {
       if (warmerBy === undefined) return saturated
       return Math.min(saturated, h + this.values[warmerBy]! * waterHeat)
     }
+    if (start === 'compressed') return this.compressed(placed, p, done)
     if (start === 'mixed') return this.mixed(placed) ?? this.saturated(p, Saturation.hL)
     if (start === 'dry') return this.saturated(p, Saturation.hV)
     if (start === 'superheated') return superheatedEnthalpy
-    if (start === 'expanded') return this.expanded(placed, p)
+    if (start === 'expanded') return this.expanded(placed, p, done)
     if (start === 'heated') return this.heated(placed, p)
     return this.saturated(p, Saturation.hL)
+  }
+
+  private compressed(placed: PlacedUnit, p: number, done: Uint8Array): number {
+    const inlet = placed.connections.find(({ description }) => description.direction === 'in')
+    if (inlet === undefined || !(this.known(inlet.base + 2) || done[inlet.base + 2])) {
+      return this.saturated(p, Saturation.hL)
+    }
+    const { values } = this
+    const rise = Math.max(0, p - values[inlet.base + 1]!) * compressionVolume
+    return values[inlet.base + 2]! + rise
   }
 
   /** What comes in, mixed in the proportions of the flows. */
@@ -200,11 +214,12 @@ export class Starts {
     return outcome === Outcome.fine ? this.result[0]! : this.saturation[Saturation.hL]!
   }
 
-  private expanded(placed: PlacedUnit, p: number): number {
+  private expanded(placed: PlacedUnit, p: number, done: Uint8Array): number {
     const inlet = placed.connections.find((port) => port.description.direction === 'in')
     if (inlet === undefined) return 2.8e6
     const p1 = this.values[inlet.base + 1]!
-    const h1 = this.known(inlet.base + 2) ? this.values[inlet.base + 2]! : superheatedEnthalpy
+    const hasStart = this.known(inlet.base + 2) || done[inlet.base + 2] === 1
+    const h1 = hasStart ? this.values[inlet.base + 2]! : superheatedEnthalpy
     if (stateAtPressureEnthalpy(this.state, 0, p1, h1) !== Outcome.fine) return 2.8e6
     const outcome = enthalpyAtPressureEntropy(this.result, 0, p, this.state[State.s]!)
     if (outcome !== Outcome.fine) return 2.8e6
@@ -214,7 +229,7 @@ export class Starts {
   /** Flows of ordinary size, then shifted as little as it takes for the balances to close. */
   private fillFlows(): void {
     const { system, values } = this
-    const largest = mainFlow(system, values, this.known)
+    const largest = mainFlow(system, values, this.known, this.choice)
     for (const placed of system.units) {
       for (const { description, base } of placed.connections) {
         if (this.known(base)) continue

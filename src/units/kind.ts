@@ -177,7 +177,7 @@ export interface ProcessPath {
 /**
  * How the enthalpy of what leaves a port is guessed: saturated liquid or dry saturated steam of its
  * pressure, superheated steam, a turbine's expansion, water heated to the unit's saturation, a mixture
- * of all that comes in, or what comes in at another port: as it is, or warmer by a quantity of the
+ * of all that comes in, water brought to a higher pressure, or what comes in at another port: as it is, or warmer by a quantity of the
  * unit (where the unit does not have it, saturated liquid).
  */
 export type Start =
@@ -187,6 +187,7 @@ export type Start =
   | 'superheated'
   | 'expanded'
   | 'mixed'
+  | 'compressed'
   | { readonly as: string; readonly warmerBy?: string }
 
 /**
@@ -317,6 +318,8 @@ export interface UnitKind<
   controlled?(shape: Shape): readonly number[]
   /** Holds the pressure behind it, whatever comes in, with these quantities given. */
   holdsPressure?(isGiven: (quantity: string) => boolean): boolean
+  /** Leaves at any pressure below the one it receives, with these quantities given. */
+  dropsPressure?(isGiven: (quantity: string) => boolean): boolean
   readonly secondLaw: SecondLawRole
   readonly paths: (shape: Shape) => readonly ProcessPath[]
   /** Absent: passes no heat on from stream to stream. */

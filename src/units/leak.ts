@@ -36,6 +36,7 @@ export const leak = defineUnitKind({
     ),
   }),
   freezing: () => [{ quantity: 'flowConstant', frees: [], freesFlow: true }],
+  dropsPressure: () => true,
   secondLaw: 'adiabatic',
   paths: () => [{ from: 'inlet', to: 'outlet', course: 'isenthalp' }],
   passes: [['inlet', 'outlet']],

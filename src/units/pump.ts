@@ -122,5 +122,5 @@ export const pump = defineUnitKind({
   paths: () => [{ from: 'suction', to: 'discharge', course: 'compression' }],
   raisesPressure: true,
   passes: [['suction', 'discharge']],
-  starts: { discharge: { as: 'suction' } },
+  starts: { discharge: 'compressed' },
 })

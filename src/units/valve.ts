@@ -37,6 +37,7 @@ export const valve = defineUnitKind({
     energyBalance: equal(outlet.h, inlet.h),
   }),
   holdsPressure: (isGiven) => !isGiven('pressureDrop') && !isGiven('pressureLossFraction'),
+  dropsPressure: (isGiven) => !isGiven('pressureDrop') && !isGiven('pressureLossFraction'),
   secondLaw: 'adiabatic',
   paths: () => [{ from: 'inlet', to: 'outlet', course: 'isenthalp' }],
   passes: [['inlet', 'outlet']],

@@ -4,8 +4,6 @@ import { solveSingular } from './rank.ts'
 import { Factors, SparseLU } from './sparse-lu.ts'
 import { type Bounds, type Restart, type Step, StepOutcome, stepOutcome } from './step.ts'
 
-/** Starts tried before giving up. */
-export const mostStarts = 10
 /** Iterations times unknowns before no further start is tried. */
 const mostWork = 12_000
 /** A singular block larger than this is not looked into. */
@@ -114,14 +112,17 @@ export class BlockStep implements Step {
     this.remember(tape)
     this.origin.set(this.start)
     let first: number = StepOutcome.notConverged
-    const starts = restart === undefined ? 1 : mostStarts
+    const starts = restart?.most ?? 1
     // Sensible answers are looked for first, from several starts; then any answer at all.
     for (let attempt = 0; attempt < 2 * starts; attempt++) {
       if (this.iterations * this.n > mostWork) break
       const isSensible = attempt < starts
       this.recall(tape)
-      const which = (attempt + choice) % starts
-      if (which > 0) restart?.(which)
+      const turn = attempt % starts
+      if (restart !== undefined) {
+        const which = turn === 0 ? restart.first : choice + turn
+        if (which > 0) restart.at(which)
+      }
       const outcome = this.iterate(
         tape,
         isSensible ? bounds.sensibleLower : bounds.lower,
@@ -150,6 +151,10 @@ export class BlockStep implements Step {
     this.upper = upper
     this.clamp(tape)
     let outcome = tape.evaluate(this.rows)
+    // A start may stand just where an equation has no value (equal enthalpies in a divisor).
+    for (let side = 1; outcome !== Outcome.fine && side <= mostNudges && !this.linear; side++) {
+      outcome = this.nudge(tape, side)
+    }
     if (outcome !== Outcome.fine) return stepOutcome(outcome)
     let previous = Number.POSITIVE_INFINITY
     let polishing = false

@@ -1,4 +1,3 @@
-export { mostStarts } from './block.ts'
 export type { Block } from './draft.ts'
 export { GradientProgram } from './gradient.ts'
 export { type Guess, Program } from './program.ts'

@@ -2,6 +2,17 @@ import { type Equation, type Tape, TapeBuilder, variablesOf } from '../expressio
 import { type Block, draftStep } from './draft.ts'
 import { type Bounds, type Step, StepOutcome } from './step.ts'
 
+/** Starts of a block that are tried before giving up. */
+const mostStarts = 10
+
+/** Which of the first guesses blocks start from: `first`, then those after the choice. */
+export interface Starting {
+  readonly choice?: number
+  readonly first?: number
+  /** How many a block tries. */
+  readonly most?: number
+}
+
 /**
  * A structure ready to be solved: blocks in order, lowered into one tape. Explicit equations are
  * assigned, the others iterated block by block.
@@ -71,7 +82,7 @@ export class Program {
    * Returns the number of Newton iterations of the hardest block. `guess` is called once before
    * the first block that iterates, with a test of which variables are known by then.
    */
-  solve(guess?: Guess, choice = 0): number {
+  solve(guess?: Guess, { choice = 0, first = choice, most = mostStarts }: Starting = {}): number {
     let iterations = 0
     let guessed = guess === undefined
     for (let k = 0; k < this.steps.length; k++) {
@@ -80,7 +91,7 @@ export class Program {
         guessed = true
         guess!(this.knownBefore(k), 0, this.guessed)
       }
-      const used = this.run(k, choice, guess)
+      const used = this.run(k, choice, guess && { first, most, guess })
       if (used > iterations) iterations = used
     }
     this.changed.fill(0)
@@ -119,16 +130,22 @@ export class Program {
     return false
   }
 
-  private run(k: number, choice: number, guess: Guess | undefined): number {
+  private run(
+    k: number,
+    choice: number,
+    from: { readonly first: number; readonly most: number; readonly guess: Guess } | undefined,
+  ): number {
     const step = this.steps[k]!
     const { variables } = this.blocks[k]!
     const inputs = this.inputs[k]!
-    const restart =
-      guess &&
-      ((which: number) => {
+    const restart = from && {
+      first: from.first,
+      most: from.most,
+      at: (which: number) => {
         this.tape.work += this.lost.length
-        guess(this.knownBefore(k), which, variables)
-      })
+        from.guess(this.knownBefore(k), which, variables)
+      },
+    }
     let missing = false
     for (let i = 0; i < inputs.length; i++) if (this.lost[inputs[i]!]) missing = true
     const outcome = missing ? StepOutcome.inputMissing : step.run(this.tape, choice, restart)

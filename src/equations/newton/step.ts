@@ -53,8 +53,14 @@ export interface Bounds {
   readonly carrier: Int32Array
 }
 
-/** Puts the unknowns at another first guess; 0 is the usual one. */
-export type Restart = (choice: number) => void
+/** First guesses that an iteration may start from: the usual one, 0, and as many others as wanted. */
+export interface Restart {
+  /** How many are tried: `first`, then those that follow the choice. */
+  readonly most: number
+  readonly first: number
+  /** Puts the unknowns there. */
+  at(choice: number): void
+}
 
 export interface Step {
   /**
