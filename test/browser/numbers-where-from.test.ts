@@ -1,5 +1,5 @@
 import { readFileSync } from 'node:fs'
-import type { Page } from 'playwright-core'
+import type { Locator, Page } from 'playwright-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { checkLine } from '../balance/check-line.ts'
 import { solved } from './hands.ts'
@@ -119,6 +119,21 @@ test('a total below the chart tells where it comes from', async () => {
   await expect.poll(() => heading().textContent()).toBe('Heat input')
   await page.keyboard.press('Escape')
   await expect.poll(() => place().count()).toBe(0)
+  await isBackAtStart()
+})
+
+test('a number on the canvas and in a table tells where it comes from', async () => {
+  const asks = async (number: Locator, path: string): Promise<void> => {
+    await number.click({ modifiers: ['Alt'] })
+    await expect.poll(async () => (await readPlace()).path).toBe(path)
+    await page.keyboard.press('Escape')
+    await expect.poll(() => place().count()).toBe(0)
+  }
+  await asks(page.locator('.canvas [data-path="h6.heat"]'), 'h6.heat')
+  await page.getByRole('tab', { name: 'State points', exact: true }).click()
+  await asks(page.locator('[data-table="states"] td[data-path="main.h"]'), 'main.h')
+  await asks(page.locator('[data-table="states"] td[data-path="main.v"]'), 'main.v')
+  await page.keyboard.press('Escape')
   await isBackAtStart()
 })
 

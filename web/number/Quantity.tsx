@@ -25,13 +25,15 @@ interface TextProps {
   readonly showUnit?: boolean
   /** The state is said in words beside it. */
   readonly silent?: boolean
+  /** Whose number it is, where nothing around it says so: there 'where from' is asked. */
+  readonly path?: string
 }
 
 /** A number at hand, drawn so that one glance shows whether it went in or came out. */
-export function QuantityText({ number, showUnit = true, silent = false }: TextProps) {
+export function QuantityText({ number, showUnit = true, silent = false, path }: TextProps) {
   const { state, text, unit } = number
   return (
-    <span className="quantity" data-state={state}>
+    <span className="quantity" data-state={state} data-path={path}>
       {state === 'open' && <Mark name="open" spoken={!silent} />}
       {state === 'conflicting' && <Mark name="error" spoken={!silent} />}
       <span className="quantity-value">{text}</span>
@@ -49,5 +51,5 @@ interface Props {
 
 /** A number of the plant with its unit, showing at a glance whether it went in or came out. */
 export function Quantity({ path, dimension, showUnit = true }: Props) {
-  return <QuantityText number={useNumberText(path, dimension)} showUnit={showUnit} />
+  return <QuantityText number={useNumberText(path, dimension)} showUnit={showUnit} path={path} />
 }

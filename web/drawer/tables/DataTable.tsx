@@ -89,6 +89,7 @@ const Row = memo(function Row({ row, columns, texts, place, swatch, chosen }: Ro
   const { owner } = row
   const layout = useLayout()
   const hovered = useHovered(owner)
+  const known = useBalanceStore((state) => state.index.paths)
   const { select, hover } = useSelectionStore.getState()
   const shown = texts.split('\t')
   return (
@@ -125,6 +126,7 @@ const Row = memo(function Row({ row, columns, texts, place, swatch, chosen }: Ro
             key={column.id}
             className={classOf(column, i)}
             title={column.id === 'basis' ? text : undefined}
+            data-path={known.has(path) ? path : undefined}
           >
             {described ? (
               <QuantityField
