@@ -92,7 +92,8 @@ function entropyForm(out: Float64Array, at: number): number {
   const p = asked[0] as number
   const s = asked[1] as number
   if (!(p >= lowestPressure && p <= highestPressure)) return refusePressure(p)
-  if (!Number.isFinite(s)) return refuse(s > 0 ? Outcome.entropyHigh : Outcome.entropyLow, s, 0)
+  if (s === Number.POSITIVE_INFINITY) return refuseHighEntropy()
+  if (!Number.isFinite(s)) return refuseEntropy()
   if (p >= critical) return denseEntropy(out, at, SUPERCRITICAL)
   if (p < leastSaturation) return steamEntropy(out, at)
   const slot = cachedSaturation(p)
@@ -234,8 +235,7 @@ function hotEntropy(out: Float64Array, at: number): number {
   const s = asked[1] as number
   if (p > highestPressure5) {
     region2Point(point, p, highestTemperature25)
-    const most = point[ptS] as number
-    if (s > most * (1 + 1e-12)) return refuse(Outcome.entropyHigh, s, most)
+    if (s > (point[ptS] as number) * (1 + 1e-12)) return refuseHighEntropy()
     return write(out, at, point[ptH] as number, point[ptV] as number, highestTemperature25)
   }
   sidesOfBorder25(p)
@@ -253,6 +253,12 @@ function hotEntropy(out: Float64Array, at: number): number {
     if (T === 2400 && step > 0) break
     T = Math.min(2400, Math.max(1000, T + step))
   }
-  region5Point(point, p, highestTemperature)
-  return refuse(Outcome.entropyHigh, s, point[ptS] as number)
+  return refuseHighEntropy()
+}
+
+function refuseHighEntropy(): number {
+  const p = asked[0] as number
+  if (p > highestPressure5) region2Point(point, p, highestTemperature25)
+  else region5Point(point, p, highestTemperature)
+  return refuse(Outcome.entropyHigh, asked[1] as number, point[ptS] as number)
 }

@@ -186,12 +186,20 @@ function solve(record: Float64Array, at: number): number {
   return Outcome.fine
 }
 
+/** A pressure out of range, or an enthalpy that is no number or infinite. */
 function refuseAsked(): number {
   const p = asked[askP] as number
   const h = asked[askH] as number
   if (!(p >= least)) return refuse(Outcome.pressureLow, p, least)
   if (p > most) return refuse(Outcome.pressureHigh, p, most)
-  return refuse(h > 0 ? Outcome.enthalpyHigh : Outcome.enthalpyLow, h, 0)
+  if (h > 0) {
+    if (p > highestPressure5) region2Point(point, p, border25)
+    else region5Point(point, p, highestTemperature)
+    return refuse(Outcome.enthalpyHigh, h, point[ptH] as number)
+  }
+  if (p < leastSaturation) region2Point(point, p, coldest)
+  else region1Point(point, p, coldest)
+  return refuse(Outcome.enthalpyLow, h, point[ptH] as number)
 }
 
 /** The guess: the temperature that the record's state foretells; 0 when it is of another region. */

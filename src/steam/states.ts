@@ -132,8 +132,13 @@ function stateAtEnthalpyEntropy(h: number, s: number): SteamState | SteamRange {
     }
     p = next
   }
-  // Bracketing through the refused part ends where no state is: h lies beyond the isentrope's ends.
-  if (bestP === 0) return range(refuse(code === 0 ? Outcome.entropyHigh : code, s, s))
+  // No pressure has this entropy: the refusal at the end of the range that comes nearest says why.
+  if (bestP === 0) {
+    bestP = code === Outcome.entropyLow ? highestPressure : lowestPressure
+    code = enthalpyAtPressureEntropy(result, 0, bestP, s)
+    if (code !== Outcome.fine) return range(code)
+    best = Number.POSITIVE_INFINITY
+  }
   if (best > 1e-9 * Math.max(Math.abs(h), 1e5) && best > 0) {
     enthalpyAtPressureEntropy(result, 0, bestP, s)
     const limit = result[0] as number

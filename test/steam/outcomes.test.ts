@@ -21,6 +21,7 @@ import {
   saturationAtTemperature,
   saturationPressure,
   saturationTemperature,
+  state,
   stateAtPressureEnthalpy,
 } from '../../src/steam/index.ts'
 
@@ -180,20 +181,31 @@ describe('enthalpy, entropy, volume', () => {
       const limit = limitOf(p, T)
       expectRefusal(() => stateAtPressureEnthalpy(record, 0, p, h), code, 'enthalpy', h, limit)
     }
-    expectRefusal(
-      () => stateAtPressureEnthalpy(record, 0, 1e5, Number.NaN),
-      Outcome.enthalpyLow,
-      'enthalpy',
-      Number.NaN,
-      null,
-    )
-    expectRefusal(
-      () => stateAtPressureEnthalpy(record, 0, 1e5, Number.POSITIVE_INFINITY),
-      Outcome.enthalpyHigh,
-      'enthalpy',
-      Number.POSITIVE_INFINITY,
-      null,
-    )
+    for (const [p, h, code, T] of [
+      [1e5, Number.NaN, Outcome.enthalpyLow, 273.15],
+      [100, Number.NEGATIVE_INFINITY, Outcome.enthalpyLow, 273.15],
+      [1e5, Number.POSITIVE_INFINITY, Outcome.enthalpyHigh, 2273.15],
+      [80e6, Number.POSITIVE_INFINITY, Outcome.enthalpyHigh, 1073.15],
+    ] as const) {
+      const limit = limitOf(p, T)
+      expectRefusal(() => stateAtPressureEnthalpy(record, 0, p, h), code, 'enthalpy', h, limit)
+    }
+    for (const [p, T, s, code] of [
+      [1e5, 273.15, Number.NEGATIVE_INFINITY, Outcome.entropyLow],
+      [1e5, 2273.15, Number.POSITIVE_INFINITY, Outcome.entropyHigh],
+      [80e6, 1073.15, Number.POSITIVE_INFINITY, Outcome.entropyHigh],
+    ] as const) {
+      const found = state({ p, T })
+      const limit = found.outcome === 'state' ? found.s : null
+      expectRefusal(() => enthalpyAtPressureEntropy(out, 0, p, s), code, 'entropy', s, limit)
+    }
+    // no pressure has this entropy: the limit is that of the thinnest, hottest steam
+    const hottest = state({ p: 1, T: 2273.15 })
+    const found = state({ h: 3e6, s: 2e4 })
+    expect(found).toMatchObject({ outcome: 'range', quantity: 'entropy', value: 2e4 })
+    if (found.outcome === 'range' && hottest.outcome === 'state') {
+      expect(Math.abs(found.limit / hottest.s - 1)).toBeLessThan(1e-12)
+    }
     for (const [p, s, code] of [
       [1e5, -200, Outcome.entropyLow],
       [100, 5000, Outcome.entropyLow],

@@ -13,7 +13,7 @@ const vapour = new Float64Array(POINT_SIZE)
 function pressures(): number[] {
   const all: number[] = []
   const most = borderPressure13 / lowestSaturationPressure
-  for (let i = 0; i <= 4000; i++) all.push(lowestSaturationPressure * most ** (i / 4000))
+  for (let i = 0; i <= 2000; i++) all.push(lowestSaturationPressure * most ** (i / 2000))
   for (let step = 11; step <= 129; step++) {
     const p = 1e6 * (step / 64) ** 4
     all.push(p * (1 - 1e-13), p, p * (1 + 1e-13))
@@ -24,11 +24,12 @@ function pressures(): number[] {
 // The sums of regions 1 and 2 keep 1e-15 at low pressures and 1e-13 near 16 MPa, where large terms
 // cancel. A slope of a polynomial through such values keeps two or three digits less.
 test('saturated states are those of the forward equations to their round-off', () => {
+  let refused = 0
   let worst = 0
   let worstT = 0
   let worstSlope = 0
   for (const p of pressures()) {
-    expect(saturationAtPressure(record, 0, p)).toBe(0)
+    refused += saturationAtPressure(record, 0, p)
     const T = saturationTemperatureOf(p)
     const slope = saturationSlope(p, T)
     worstT = Math.max(worstT, Math.abs((record[Saturation.T] as number) / T - 1))
@@ -53,6 +54,7 @@ test('saturated states are those of the forward equations to their round-off', (
       }
     }
   }
+  expect(refused).toBe(0)
   expect(worstT).toBeLessThan(2e-14)
   expect(worst).toBeLessThan(3e-13)
   expect(worstSlope).toBeLessThan(1e-10)
