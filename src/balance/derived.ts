@@ -12,10 +12,11 @@ import {
   derivedUnitQuantities,
   stageGroupQuantities,
 } from '../units/derived-quantities.ts'
-import type { TotalName, UnitNumbers } from '../units/kind.ts'
+import type { TotalName } from '../units/kind.ts'
 import type { PlacedUnit } from './placed-unit.ts'
 import type { Results } from './results.ts'
 import type { Balance } from './solve.ts'
+import { solvedUnit } from './solved-unit.ts'
 import { streamResults } from './states.ts'
 
 /** What enters or leaves the plant as a whole, or is lost within. */
@@ -149,9 +150,11 @@ function ambientState(T: number, p: number): Ambient {
 }
 
 const width = streamResults.length
-const [atM, atP, atH, atS] = (['m', 'p', 'h', 's'] as const).map((name) =>
-  streamResults.indexOf(name),
-) as [number, number, number, number]
+const [atM, atH, atS] = (['m', 'h', 's'] as const).map((name) => streamResults.indexOf(name)) as [
+  number,
+  number,
+  number,
+]
 
 /** Exergy of streams, units and stage groups, and the plant's account; SI. */
 export function derivedOf(balance: Balance, names: DerivedNames): Derived {
@@ -389,27 +392,13 @@ function groupValues(
   values: Float64Array,
   start: number,
 ): number {
-  const { kind, shape, streams, unit } = placed
+  const { kind } = placed
   const count = groupCount(placed)
   if (!kind.stageGroups || count === 0) return start
-  const numbers: UnitNumbers = {
-    shape,
-    port(name) {
-      const id = streams.get(name)
-      const k = id === undefined ? undefined : results.placeOf.get(id)
-      if (k === undefined) return undefined
-      const all = results.states.values
-      return {
-        m: all[k * width + atM] as number,
-        p: all[k * width + atP] as number,
-        h: all[k * width + atH] as number,
-      }
-    },
-    quantity: (name) => results.value(`${unit.id}.${name}`) ?? Number.NaN,
-  }
   const end = start + count * groupNames.length
   values.fill(Number.NaN, start, end)
   let at = start
+  const numbers = solvedUnit(placed, results)
   for (const group of kind.stageGroups(numbers).slice(0, count)) {
     const { inletPressure: p1, inletEnthalpy: h1, outletPressure: p2, outletEnthalpy: h2 } = group
     let T1 = Number.NaN

@@ -1,4 +1,5 @@
 import type { Finding, Status } from './answer.ts'
+import { kindCautions } from './cautions.ts'
 import { checkAnswer, isImpossible } from './checks.ts'
 import { diagnose } from './diagnosis.ts'
 import type { Model } from './model.ts'
@@ -44,7 +45,11 @@ export function solve(model: Model, results: Results = new Results(model), seek 
     model,
     results,
     status,
-    findings: [...diagnosis.findings, ...checks],
+    findings: [
+      ...diagnosis.findings,
+      ...checks,
+      ...(status === 'solved' ? kindCautions(model, results) : []),
+    ],
     closure: status === 'solved' ? results.closure() : null,
     undetermined,
     unbounded,

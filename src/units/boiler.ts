@@ -11,7 +11,8 @@ import {
   pressureLoss,
   pressureLossFraction,
 } from './common.ts'
-import { defineUnitKind, type Shape } from './kind.ts'
+import { type Caution, defineUnitKind, type Shape } from './kind.ts'
+import { carriedMoisture, drynessOf, isAboveCritical, moistureOf } from './wetness.ts'
 
 const withBlowdown = (shape: Shape): boolean => (shape.streams.blowdown ?? 0) > 0
 
@@ -111,6 +112,39 @@ export const boiler = defineUnitKind({
         ]
       : []),
   ],
+  cautions: ({ port }) => {
+    const found: Caution[] = []
+    const moisture = moistureOf(port('steam'))
+    if (moisture > carriedMoisture) {
+      found.push({
+        code: 'wet-steam',
+        quantities: ['steam.x', 'steam.T'],
+        message: 'its steam holds {0} of moisture, where it should be dry.',
+        values: [[moisture, 'ratio']],
+        advice: 'Give a higher steam temperature, or check its flow and heat.',
+      })
+    }
+    const entering = drynessOf(port('feedwater'))
+    if (entering >= 0) {
+      found.push({
+        code: 'boiling-feedwater',
+        quantities: ['feedwater.T', 'feedwater.x', 'feedwater.p'],
+        message: 'the feedwater arrives boiling, dryness {0}.',
+        values: [[entering, 'dryness']],
+        advice: 'Raise its pressure, or heat it less.',
+      })
+    }
+    if (port('blowdown') && isAboveCritical(port('steam'))) {
+      found.push({
+        code: 'above-critical',
+        quantities: ['steam.p', 'blowdown.m'],
+        message: 'it has a blowdown although its steam is at {0}, where no drum can be.',
+        values: [[port('steam')?.p ?? Number.NaN, 'pressure']],
+        advice: 'Take the blowdown away.',
+      })
+    }
+    return found
+  },
   secondLaw: 'fired',
   paths: (shape) => [
     { from: 'feedwater', to: 'steam', course: 'line' },

@@ -2,6 +2,7 @@ import { equal, massBalance, minus, times } from '../equations/expression/index.
 import { heat, pressureLoss, pressureLossFraction } from './common.ts'
 import { transfer } from './heat-transfer.ts'
 import { defineUnitKind } from './kind.ts'
+import { changesPhase } from './wetness.ts'
 
 export const heatExchanger = defineUnitKind({
   name: 'heatExchanger',
@@ -72,6 +73,17 @@ export const heatExchanger = defineUnitKind({
   freezing: () => [
     { quantity: 'conductance', frees: ['heat', 'hotEndDifference', 'coldEndDifference'] },
   ],
+  cautions: ({ port }) =>
+    (['hot', 'cold'] as const)
+      .filter((side) => changesPhase(port(side), port(`${side}Outlet`)))
+      .map((side) => ({
+        code: 'change-of-phase',
+        quantities: [`${side}Outlet.T`, `${side}Outlet.x`, `${side}.x`],
+        message: `its ${side} side boils or condenses inside, where one logarithmic mean does not hold.`,
+        values: [],
+        advice:
+          'Use a surface heater, whose zones are told apart, or keep that side off saturation.',
+      })),
   secondLaw: 'adiabatic',
   paths: () => [
     { from: 'hot', to: 'hotOutlet', course: 'line' },

@@ -1,6 +1,7 @@
 import { equal, isConstant, massBalance, minus, times } from '../equations/expression/index.ts'
 import { commonPractice, heat } from './common.ts'
 import { defineUnitKind } from './kind.ts'
+import { drynessOf } from './wetness.ts'
 
 export const heatUser = defineUnitKind({
   name: 'heatUser',
@@ -39,6 +40,20 @@ export const heatUser = defineUnitKind({
     }
   },
   totals: ({ quantities: q }) => ({ processHeat: q.heat }),
+  cautions: ({ port }) => {
+    const x = drynessOf(port('condensate'))
+    return x > 0
+      ? [
+          {
+            code: 'steam-returned',
+            quantities: ['condensate.T', 'condensate.x'],
+            message: 'what returns as condensate is still steam, dryness {0}.',
+            values: [[x, 'dryness']],
+            advice: 'Give a lower condensate temperature, or more heat delivered.',
+          },
+        ]
+      : []
+  },
   secondLaw: 'delivers',
   paths: () => [{ from: 'steam', to: 'condensate', course: 'line' }],
   starts: { condensate: 'liquid' },

@@ -225,6 +225,20 @@ export interface UnitNumbers {
   quantity(name: string): number
 }
 
+/** What a kind sees by itself in its solved numbers that is unusual or unwise, though it can be. */
+export interface Caution {
+  readonly code: string
+  /** What a user would look at first leads: own quantities by name, those of streams as `port.quantity`. */
+  readonly quantities: readonly string[]
+  /** What is so, after the unit's name; `{0}`, `{1}` ... stand for the values in the reader's units. */
+  readonly message: string
+  readonly values: readonly (readonly [number, Dimension])[]
+  /** What to do. */
+  readonly advice: string
+  /** A caution unless it is worth no more than a remark. */
+  readonly severity?: 'remark'
+}
+
 /** What works between two ports of a machine, SI. */
 export interface StageGroup {
   readonly flow: number
@@ -324,6 +338,8 @@ export interface UnitKind<
   readonly paths: (shape: Shape) => readonly ProcessPath[]
   /** Absent: passes no heat on from stream to stream. */
   readonly heatPassage?: HeatPassage
+  /** What is unusual in a solved unit; absent: nothing that it could see. */
+  cautions?(unit: UnitNumbers): readonly Caution[]
   /** What the machine consists of, in the direction of the flow. */
   stageGroups?(unit: UnitNumbers): readonly StageGroup[]
   /** First guesses of what leaves: where an iteration starts when nothing better is known. */

@@ -9,7 +9,8 @@ import {
 } from '../equations/expression/index.ts'
 import { subcooling, vapourEnthalpy } from '../steam/operations.ts'
 import { commonPractice, energy } from './common.ts'
-import { defineUnitKind, type PortExpressions, type Shape } from './kind.ts'
+import { type Caution, defineUnitKind, type PortExpressions, type Shape } from './kind.ts'
+import { drynessOf } from './wetness.ts'
 
 const withVent = (shape: Shape): boolean => (shape.streams.vent ?? 0) > 0
 
@@ -132,6 +133,22 @@ export const mixingHeater = defineUnitKind({
     meaningless: [],
     frees: ['subcooling'],
     idlePorts: ['steam'],
+  },
+  cautions: ({ shape, port }) => {
+    const found: Caution[] = []
+    for (let k = 1; k <= (shape.streams.water ?? 0); k++) {
+      const x = drynessOf(port(`water${k}`))
+      if (x > 1e-6) {
+        found.push({
+          code: 'water-flashes',
+          quantities: [`water${k}.T`, 'pressure'],
+          message: `water ${k} arrives hotter than its saturation and flashes, dryness {0}.`,
+          values: [[x, 'dryness']],
+          advice: 'Raise its pressure, or heat the water less before it.',
+        })
+      }
+    }
+    return found
   },
   secondLaw: 'adiabatic',
   paths: (shape) => [

@@ -10,6 +10,10 @@ import {
 import { enthalpyAtEntropy, saturationPressureAt } from '../steam/operations.ts'
 import { commonPractice } from './common.ts'
 import { defineUnitKind } from './kind.ts'
+import { drynessOf } from './wetness.ts'
+
+/** Net positive suction head that the least demanding condensate pumps need: common practice, m. */
+const leastHead = 1
 
 /** Standard acceleration of free fall, m/s2 (CGPM 1901). */
 const g = 9.80665
@@ -118,6 +122,36 @@ export const pump = defineUnitKind({
     ),
   }),
   totals: ({ quantities: q }) => ({ pumpPower: q.power, electricPower: q.electricPower }),
+  cautions: ({ port, quantity }) => {
+    const x = drynessOf(port('suction'))
+    if (x > 1e-6) {
+      return [
+        {
+          code: 'pump-takes-steam',
+          quantities: ['suction.x', 'suction.T', 'suction.p'],
+          message: 'it takes in water with steam in it, dryness {0}.',
+          values: [[x, 'dryness']],
+          advice: 'Condense or cool what it takes in, or raise its pressure.',
+        },
+      ]
+    }
+    const head = quantity('npshAvailable')
+    return head < leastHead
+      ? [
+          {
+            code: 'suction-head',
+            quantities: ['npshAvailable', 'suctionHeight', 'suction.T'],
+            message: 'only {0} of suction head is left above boiling; pumps need {1} at the least.',
+            values: [
+              [head, 'length'],
+              [leastHead, 'length'],
+            ],
+            advice:
+              "Raise the vessel before it, cool the water, or take the maker's figure for this pump.",
+          },
+        ]
+      : []
+  },
   secondLaw: 'adiabatic',
   paths: () => [{ from: 'suction', to: 'discharge', course: 'compression' }],
   raisesPressure: true,

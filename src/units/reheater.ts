@@ -10,6 +10,7 @@ import {
   pressureLossFraction,
 } from './common.ts'
 import { defineUnitKind } from './kind.ts'
+import { moistureOf } from './wetness.ts'
 
 export const reheater = defineUnitKind({
   name: 'reheater',
@@ -54,6 +55,20 @@ export const reheater = defineUnitKind({
   }),
   totals: ({ quantities: q }) => ({ heatInput: q.heat, fuelHeat: q.fuelHeat }),
   freezing: () => [{ quantity: 'lossConstant', frees: ['pressureLossFraction'] }],
+  cautions: ({ port }) => {
+    const moisture = moistureOf(port('outlet'))
+    return moisture > 0
+      ? [
+          {
+            code: 'wet-steam',
+            quantities: ['outlet.x', 'outlet.T'],
+            message: 'the steam leaves with {0} of moisture, where it should be superheated.',
+            values: [[moisture, 'ratio']],
+            advice: 'Give a higher outlet temperature, or spray less.',
+          },
+        ]
+      : []
+  },
   secondLaw: 'fired',
   paths: (shape) => [
     { from: 'inlet', to: 'outlet', course: 'line' },

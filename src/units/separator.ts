@@ -2,6 +2,7 @@ import { equal, massBalance, plus, times } from '../equations/expression/index.t
 import { liquidEnthalpy, moisture } from '../steam/operations.ts'
 import { commonPractice, energy, pressureLoss, pressureLossFraction } from './common.ts'
 import { defineUnitKind } from './kind.ts'
+import { moistureOf } from './wetness.ts'
 
 export const separator = defineUnitKind({
   name: 'separator',
@@ -41,6 +42,18 @@ export const separator = defineUnitKind({
     ),
     drainState: equal(drain.h, liquidEnthalpy(drain.p)),
   }),
+  cautions: ({ port }) =>
+    moistureOf(port('inlet')) === 0
+      ? [
+          {
+            code: 'nothing-to-separate',
+            quantities: ['inlet.x', 'inlet.T'],
+            message: 'the steam arrives dry, so that there is nothing to separate.',
+            values: [],
+            advice: 'Leave it out, or check the state before it.',
+          },
+        ]
+      : [],
   secondLaw: 'adiabatic',
   paths: () => [
     { from: 'inlet', to: 'steam', course: 'line' },

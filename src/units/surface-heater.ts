@@ -16,7 +16,19 @@ import {
 } from '../steam/operations.ts'
 import { commonPractice, energy, heat, one, pressureLoss, pressureLossFraction } from './common.ts'
 import { mixedEnthalpy, transfer } from './heat-transfer.ts'
-import { defineUnitKind, type FreezeRule, type QuantityDescription, type Shape } from './kind.ts'
+import {
+  type Caution,
+  defineUnitKind,
+  type FreezeRule,
+  type QuantityDescription,
+  type Shape,
+} from './kind.ts'
+import { drynessOf, moistureOf } from './wetness.ts'
+
+/** Pressure that a cascaded drain has left for valve and height: common practice, Pa. */
+const leastHead = 2e4
+/** Part of a drain that may flash in the shell: common practice. */
+const mostFlashing = 0.2
 
 const has =
   (option: string) =>
@@ -305,6 +317,53 @@ export const surfaceHeater = defineUnitKind({
     ],
     frees: [],
     idlePorts: ['steam'],
+  },
+  cautions: ({ shape, port }) => {
+    const found: Caution[] = []
+    const drain = port('drain')
+    const shell = drain?.p ?? Number.NaN
+    for (let k = 1; k <= (shape.streams.drainInlet ?? 0); k++) {
+      const entering = port(`drain${k}`)
+      if (!entering || !(entering.m > 0)) continue
+      if (entering.p - shell < leastHead) {
+        found.push({
+          code: 'drain-head',
+          quantities: [`drain${k}.p`, 'pressure'],
+          message: `drain ${k} arrives only {0} above the shell; below {1} it may not flow at part load.`,
+          values: [
+            [entering.p - shell, 'pressureDifference'],
+            [leastHead, 'pressureDifference'],
+          ],
+          advice: 'Lead it to a heater of lower pressure, or pump it forward.',
+        })
+      }
+      const flashing = drynessOf({ p: shell, h: entering.h })
+      if (flashing > mostFlashing) {
+        found.push({
+          code: 'drain-flashing',
+          quantities: [`drain${k}.T`, `drain${k}.p`, 'pressure'],
+          message: `{0} of drain ${k} flashes to steam in the shell; above {1} it needs a flash vessel of its own.`,
+          values: [
+            [flashing, 'ratio'],
+            [mostFlashing, 'ratio'],
+          ],
+          advice: 'Cool the drain before it leaves its heater, or lead it through a flash vessel.',
+        })
+      }
+    }
+    if (withDesuperheater(shape)) {
+      const wet = moistureOf(port('steam1'))
+      if (wet > 0) {
+        found.push({
+          code: 'wet-steam',
+          quantities: ['steam1.x', 'steam1.T'],
+          message: 'wet steam, {0} of moisture, comes to its desuperheating zone.',
+          values: [[wet, 'ratio']],
+          advice: 'Take the zone away, or bleed from where the steam is superheated.',
+        })
+      }
+    }
+    return found
   },
   secondLaw: 'adiabatic',
   paths: (shape) => [
