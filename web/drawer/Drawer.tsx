@@ -4,6 +4,7 @@ import { Mark } from '../number/Mark.tsx'
 import { ReportTab } from '../report/ReportTab.tsx'
 import { useBalanceStore } from '../store/balance-store.ts'
 import { type DrawerTab, drawerTabs, useSettingsStore } from '../store/settings-store.ts'
+import { useSolvingStore } from '../store/solving-store.ts'
 import { Icon } from '../strip/Icon.tsx'
 import { Findings, useFindings } from './Findings.tsx'
 import { Givens } from './Givens.tsx'
@@ -115,6 +116,9 @@ function Closure() {
   const closure = useBalanceStore((state) => state.balance?.closure ?? null)
   const status = useBalanceStore((state) => state.balance?.status)
   const trouble = useBalanceStore((state) => state.trouble)
+  const slow = useSolvingStore((state) => state.slow)
+  // What is shown belongs to the plant before the edit.
+  if (slow) return <span className="drawer-state">Solving …</span>
   if (trouble) return <span className="drawer-state">No balance</span>
   if (!status) return null
   if (status !== 'solved') {
