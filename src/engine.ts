@@ -14,6 +14,7 @@ import { type Balance, solve } from './balance/solve.ts'
 import type {
   Answer,
   BalanceMessage,
+  DomeMessage,
   NamesMessage,
   QuestionRequest,
   Request,
@@ -25,13 +26,14 @@ import { mainSteam, solveAtEqual } from './review/equal-basis.ts'
 /** Answers the window's requests; keeps the last model, so that an edit of a value solves warm. */
 export interface Engine {
   answer(request: Request): Answer[]
+  /** The two-phase dome, the same for every plant. */
+  dome(): DomeMessage
 }
 
 /** `clock` tells the time in ms. */
 export function createEngine(clock: () => number = Date.now): Engine {
   let kept: { model: Model; results: Results; signature: string; number: number } | undefined
   let counter = 0
-  let domeSent = false
   let namesSent = 0
   let names: DerivedNames = { paths: [], account: [] }
   const questions = new Questions()
@@ -76,10 +78,6 @@ export function createEngine(clock: () => number = Date.now): Engine {
           },
         ]
       }
-      if (!domeSent) {
-        domeSent = true
-        answers.push({ type: 'dome', points: domePoints(), dryness: drynessLines() })
-      }
       try {
         let balance: Balance
         let number: number
@@ -116,6 +114,7 @@ export function createEngine(clock: () => number = Date.now): Engine {
       }
       return answers
     },
+    dome: () => ({ type: 'dome', points: domePoints(), dryness: drynessLines() }),
   }
 }
 
