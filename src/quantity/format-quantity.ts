@@ -55,7 +55,7 @@ export function formatQuantity(
 function withDigits(shown: number, unit: UnitOfMeasure, digits: 'shown' | 'given'): string {
   const wanted = decimalsOf(shown, unit, digits)
   const isGiven = digits === 'given'
-  const decimals = isGiven ? decimalsOfGiven(shown, wanted) : wanted
+  const decimals = isGiven ? decimalsOfGiven(shown, wanted, unit) : wanted
   if (decimals === undefined) return withPower(shown)
   const fixed = shown.toFixed(decimals)
   if (Number(fixed) === 0) return isGiven && shown !== 0 ? withPower(shown) : zero(unit, decimals)
@@ -78,13 +78,24 @@ function decimalsOf(shown: number, { digits }: UnitOfMeasure, kind: 'shown' | 'g
   return Math.min(digits.most, Math.max(0, digits.significant - 1 - Number(exponent)))
 }
 
+/**
+ * What a conversion may round off a value, relative, and of the shift of its scale: a few roundings of
+ * double precision. Were it more, values given in another unit would be taken for long ones by chance.
+ */
+const conversionRounds = 1e-13
+const shiftRounds = 1e-15
+
 /** Decimals enough for all of a given value, or those of any value where no end is in sight. */
-function decimalsOfGiven(shown: number, wanted: number): number | undefined {
+function decimalsOfGiven(
+  shown: number,
+  wanted: number,
+  { shift = 0 }: UnitOfMeasure,
+): number | undefined {
   if (shown === 0) return wanted
   const before = Math.max(0, Math.floor(Math.log10(Math.abs(shown))) + 1)
   for (let decimals = wanted; decimals <= 12; decimals++) {
     const rest = Math.abs(Number(shown.toFixed(decimals)) - shown)
-    if (rest <= 1e-10 * Math.abs(shown)) {
+    if (rest <= conversionRounds * Math.abs(shown) + shiftRounds * shift) {
       return before + decimals <= mostGivenDigits || decimals === wanted ? decimals : wanted
     }
   }

@@ -55,6 +55,22 @@ describe('the digits a value deserves', () => {
     expect(metric(1 / 3, 'massFlow', given)).toBe('0.3333 kg/s')
   })
 
+  test('a value given in another unit has the digits of any value', () => {
+    const inUs = (value: number, dimension: Dimension) =>
+      formatQuantity(value, dimension, 'us', { digits: 'given' }).text
+    expect(inUs(6.2e5, 'pressure')).toBe('89.92')
+    for (let tenths = 1; tenths < 1000; tenths++) {
+      const bar = inUs(tenths * 1e4, 'pressure').replace(/\D/g, '')
+      expect(bar.length, `${tenths / 10} bar`).toBeLessThanOrEqual(5)
+      // Tenths of a kelvin are hundredths of a degree Fahrenheit: these have an end.
+      const degrees = inUs(273.15 + tenths / 10, 'temperature')
+      expect(Number(degrees)).toBeCloseTo(32 + 0.18 * tenths, 8)
+      expect(metric(273.15 + tenths / 1000, 'temperature', { digits: 'given' })).toBe(
+        `${(tenths / 1000).toFixed(3).replace(/0{1,2}$/, '')} °C`,
+      )
+    }
+  })
+
   test('a column keeps its unit, a change its sign', () => {
     expect(metric(76.2e3, 'power', { unit: 'MW' })).toBe('0.076 MW')
     expect(metric(1.5, 'temperatureDifference', { signed: true })).toBe('+1.5 K')
