@@ -22,4 +22,3 @@ export {
 export { stateAtPressureEnthalpy, stateAtRequest, stateRequest } from './state.ts'
 export { type StatePair, state } from './states.ts'
 export type { SteamRange, SteamSeveral, SteamState } from './steam-state.ts'
-export { warmUp } from './warm-up.ts'

@@ -130,6 +130,18 @@ function denseSide(record: Float64Array, at: number, shift: number): void {
   record[base + satVLp] = -v * v * rhoP
 }
 
+/** Fills the saturation record whose p (Pa), known to have a saturation state, is in its first slot. */
+export function fillSaturation(record: Float64Array, at: number): void {
+  const p = record[at] as number
+  if (p <= pressure13) {
+    saturatedStates(record, at)
+    return
+  }
+  // region 3 takes its time: many streams share a pressure
+  const slot = cachedSaturation(p)
+  for (let i = 0; i < saturationSize; i++) record[at + i] = cache[slot + i] as number
+}
+
 /**
  * Fills a saturation record from a pressure (Pa). Returns at once when the record already holds it.
  * Refused outside 611.213 Pa <= p < 22.064 MPa.
@@ -138,8 +150,8 @@ export function saturationAtPressure(record: Float64Array, at: number, p: number
   if (record[at] === p) return Outcome.fine
   const code = checkSaturationPressure(p)
   if (code !== Outcome.fine) return code
-  const slot = cachedSaturation(p)
-  for (let i = 0; i < SATURATION_SIZE; i++) record[at + i] = cache[slot + i] as number
+  record[at] = p
+  fillSaturation(record, at)
   return Outcome.fine
 }
 

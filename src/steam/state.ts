@@ -22,8 +22,8 @@ import {
   region5TemperatureAtEnthalpy,
 } from './if97/temperature-at-enthalpy.ts'
 import { Outcome, refuse } from './outcome.ts'
-import { SATURATION_SIZE, Saturation, State } from './records.ts'
-import { cachedSaturation, saturationCache } from './saturation.ts'
+import { Saturation, State } from './records.ts'
+import { fillSaturation } from './saturation.ts'
 import {
   asked as fillAsked,
   fillBeside,
@@ -74,8 +74,6 @@ const most = highestPressure
 const coldest = lowestTemperature
 const border25 = highestTemperature25
 const border13 = borderTemperature13
-const saturationSize = SATURATION_SIZE
-const cache = saturationCache
 
 /** p (Pa) and h (J/kg) of the state asked for, see `stateAtRequest`. */
 export const stateRequest: Float64Array = asked
@@ -157,10 +155,8 @@ function takeSaturation(record: Float64Array, at: number): void {
   const p = asked[askP] as number
   const saturation = at + atSaturation
   if (record[saturation] === p) return
-  const slot = cachedSaturation(p)
-  for (let i = 0; i < saturationSize; i++) {
-    record[saturation + i] = cache[slot + i] as number
-  }
+  record[saturation] = p
+  fillSaturation(record, saturation)
 }
 
 function solve(record: Float64Array, at: number): number {
@@ -175,11 +171,12 @@ function solve(record: Float64Array, at: number): number {
   takeSaturation(record, at)
   const saturation = at + atSaturation
   const hL = record[saturation + satHL] as number
-  if (h < hL - bandAround(hL)) {
-    return p > pressure13 ? dense(record, at, LIQUID) : liquid(record, at, 1)
-  }
   const hV = record[saturation + satHV] as number
-  if (h > hV + bandAround(hV)) {
+  if (h < hL) {
+    if (h < hL - bandAround(hL)) {
+      return p > pressure13 ? dense(record, at, LIQUID) : liquid(record, at, 1)
+    }
+  } else if (h > hV && h > hV + bandAround(hV)) {
     return p > pressure13 ? dense(record, at, VAPOUR) : steam(record, at, 1)
   }
   fillWet(record, at)
