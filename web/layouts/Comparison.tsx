@@ -1,4 +1,4 @@
-import { useMemo } from 'react'
+import { type ReactNode, useMemo } from 'react'
 import {
   type Case,
   compareLayouts,
@@ -7,6 +7,7 @@ import {
   formatQuantity,
   type Given,
   type Layout,
+  withinSentence,
 } from '../../src/document.ts'
 import { givenText } from '../number/give.ts'
 import { useBalanceStore, valueInSnapshot } from '../store/balance-store.ts'
@@ -28,7 +29,7 @@ const bases = [
 /** Value of a choice: layout and case in one. */
 const keyOf = (layoutId: string, caseId: string | null): string => `${layoutId}/${caseId ?? ''}`
 
-function Choose() {
+function Choose({ children }: { readonly children?: ReactNode }) {
   const layouts = usePlantStore((state) => state.plant.layouts)
   const shownLayout = usePlantStore((state) => state.layoutId)
   const shownCase = usePlantStore((state) => state.caseId)
@@ -79,6 +80,7 @@ function Choose() {
           ))}
         </select>
       </label>
+      {children}
     </div>
   )
 }
@@ -191,7 +193,9 @@ function Differences({
               const known = describeQuantity(first, path)
               return (
                 <tr key={path}>
-                  <th scope="row">{known ? `${known.ownerLabel}, ${known.label}` : path}</th>
+                  <th scope="row">
+                    {known ? `${known.ownerLabel}, ${withinSentence(known.label)}` : path}
+                  </th>
                   <td>{words(here, path)}</td>
                   <td>{words(there, path)}</td>
                 </tr>
@@ -207,11 +211,11 @@ function Differences({
 function Ghosting() {
   const ghost = useGhostStore((state) => state.ghost)
   return (
-    <p className="muted">
+    <span className="muted">
       {ghost
         ? `${ghost.label} lies as a ghost under the charts.`
         : 'The other is not solved: there is no ghost of it.'}
-    </p>
+    </span>
   )
 }
 
@@ -253,7 +257,9 @@ export function Comparison() {
   const caseIn = (one: Layout, id: string | null) => one.cases.find((found) => found.id === id)
   return (
     <div className="compare">
-      <Choose />
+      <Choose>
+        <Ghosting />
+      </Choose>
       {trouble && <p role="alert">{trouble}</p>}
       {other && other.balance.status !== 'solved' && (
         <p role="alert">
@@ -261,7 +267,6 @@ export function Comparison() {
           {other.balance.findings[0]?.message ?? other.balance.status}
         </p>
       )}
-      <Ghosting />
       <div className="compare-parts">
         <section className="compare-part" aria-label="Differences of the balances">
           <table className="compare-table">

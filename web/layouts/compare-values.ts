@@ -24,6 +24,19 @@ export interface ValueGroup {
 /** Values that differ by less than this part of the larger are the same. */
 const same = 1e-7
 
+/** What is asked first of two plants; the other totals after. */
+const chief = ['netPower', 'unitHeatRate', 'netTurbineHeatRate', 'unitEfficiency', 'fuelHeat'].map(
+  (name) => `plant.${name}`,
+)
+
+function ofPlant(): readonly QuantityEntry[] {
+  const all = quantitiesOfPlant()
+  return [
+    ...chief.flatMap((path) => all.find((entry) => entry.path === path) ?? []),
+    ...all.filter(({ path }) => !chief.includes(path)),
+  ]
+}
+
 type Read = (path: string) => number | null
 
 /**
@@ -44,7 +57,7 @@ export function compareValues(
         second: reads[1](path),
       }))
       .filter(({ first, second }) => differ(first, second))
-  const groups: ValueGroup[] = [{ name: 'Plant', rows: rowsOf(quantitiesOfPlant()) }]
+  const groups: ValueGroup[] = [{ name: 'Plant', rows: rowsOf(ofPlant()) }]
   const seen = new Set<string>()
   for (const layout of layouts) {
     for (const unit of layout.units) {
