@@ -1,5 +1,5 @@
 import { Program, StepOutcome } from '../equations/newton/index.ts'
-import { type Design, designOf } from './design.ts'
+import { type Design, designOf, designVariants } from './design.ts'
 import { aimAt } from './design-aim.ts'
 import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
@@ -33,6 +33,17 @@ export class DesignStart {
   static of(plant: System, open: readonly number[], variant = 0): DesignStart | undefined {
     const design = designOf(plant, open, variant)
     return design && new DesignStart(plant, design)
+  }
+
+  /** Those of all variants of the design that differ. */
+  static variantsOf(plant: System, open: readonly number[]): DesignStart[] {
+    const starts: DesignStart[] = []
+    for (let variant = 0; variant < designVariants; variant++) {
+      const design = designOf(plant, open, variant)
+      const isNew = !starts.some((start) => isSame(start.design.fixed, design?.fixed ?? []))
+      if (design !== undefined && isNew) starts.push(new DesignStart(plant, design))
+    }
+    return starts
   }
 
   /** The work its solutions have taken so far. */
@@ -114,4 +125,8 @@ export class DesignStart {
       if (Number.isNaN(design.system.given[v]!)) program.tape.values[v] = values[v]!
     }
   }
+}
+
+function isSame(some: readonly number[], others: readonly number[]): boolean {
+  return some.length === others.length && some.every((v) => others.includes(v))
 }

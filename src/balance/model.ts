@@ -1,6 +1,5 @@
 import { type Guess, Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
-import { designVariants } from './design.ts'
 import { DesignStart } from './design-start.ts'
 import { type Difference, Differences, type Divisor, type Unmet } from './differences.ts'
 import { boundsOf } from './ranges.ts'
@@ -21,7 +20,7 @@ export class Model {
   readonly program: Program
   readonly options: AssemblyOptions
   private isWarm = false
-  private readonly designs: (DesignStart | null | undefined)[] = []
+  private designs: readonly DesignStart[] | undefined
   private unfoldedSystem: System | undefined
   private seed: ((path: string) => number | null) | undefined
   private differencesRead: Differences | undefined
@@ -184,18 +183,14 @@ export class Model {
 
   /** Rows evaluated so far: a measure of time that is always the same. */
   get work(): number {
-    return this.designs.reduce((sum, design) => sum + (design?.work ?? 0), this.program.work)
+    return (this.designs ?? []).reduce((sum, { work }) => sum + work, this.program.work)
   }
 
-  /** The design of a choice, and which of its numbers. Variants alternate. */
+  /** The design of a choice, and which of its numbers. Variants alternate where they differ. */
   private designOf(choice: number): readonly [design: DesignStart | undefined, choice: number] {
-    const variant = choice % designVariants
-    let design = this.designs[variant]
-    if (design === undefined) {
-      design = DesignStart.of(this.system, this.structure.open, variant) ?? null
-      this.designs[variant] = design
-    }
-    return [design ?? undefined, Math.floor(choice / designVariants)]
+    this.designs ??= DesignStart.variantsOf(this.system, this.structure.open)
+    const { length } = this.designs
+    return [this.designs[choice % length], Math.floor(choice / Math.max(1, length))]
   }
 
   private readonly guess: Guess = (known, choice, wanted) => {

@@ -67,6 +67,8 @@ export function boundsOf(variables: readonly SystemVariable[]): Bounds {
 export function ordinaryValue({ description }: SystemVariable): number {
   if (description.usual !== undefined) return description.usual
   if (description.range !== undefined) return (description.range[0] + description.range[1]) / 2
+  // A part of something: a share, a loss.
+  if (description.dimension === 'ratio') return 0.1
   const [lower, , scale] = ranges[description.dimension]
   return Math.max(lower, scale)
 }

@@ -4,7 +4,7 @@ import type { Model } from './model.ts'
 import type { Results } from './results.ts'
 
 /** Rows evaluated in search of another answer. */
-const mostSeeking = 4_000_000
+const mostSeeking = 6_000_000
 
 /** Each of the ways is tried with as many sets of first guesses. */
 const mostChoices = 40

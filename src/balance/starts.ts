@@ -37,6 +37,8 @@ const steamEnthalpies = [2.3e6, 3.5e6] as const
 const waterHeat = 4200
 /** Volume of water over the efficiency of a pump, m3/kg. */
 const compressionVolume = 1.3e-3
+/** Make-up and the like, J/kg. */
+const coldEnthalpy = 1e5
 /** Group efficiency while none is known. */
 const expansionEfficiency = 0.85
 
@@ -161,6 +163,7 @@ export class Starts {
       return Math.min(saturated, h + this.values[warmerBy]! * waterHeat)
     }
     if (start === 'compressed') return this.compressed(placed, p, done)
+    if (start === 'cold') return coldEnthalpy
     if (start === 'mixed') return this.mixed(placed) ?? this.saturated(p, Saturation.hL)
     if (start === 'dry') return this.saturated(p, Saturation.hV)
     if (start === 'superheated') return superheatedEnthalpy

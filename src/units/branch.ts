@@ -25,7 +25,6 @@ export const branch = defineUnitKind({
       symbol: 'm/m',
       dimension: 'ratio',
       help: 'Flow of this outlet as a part of what comes in.',
-      usual: 0.1,
       possible: { least: 0, most: 1 },
       step: 0.01,
       each: { port: 'outlet', extra: 0 },

@@ -175,8 +175,8 @@ export interface ProcessPath {
 }
 
 /**
- * How the enthalpy of what leaves a port is guessed: saturated liquid or dry saturated steam of its
- * pressure, superheated steam, a turbine's expansion, water heated to the unit's saturation, a mixture
+ * How the enthalpy of what leaves a port is guessed: cold water, saturated liquid or dry saturated
+ * steam of its pressure, superheated steam, a turbine's expansion, water heated to the unit's saturation, a mixture
  * of all that comes in, water brought to a higher pressure, or what comes in at another port: as it is, or warmer by a quantity of the
  * unit (where the unit does not have it, saturated liquid).
  */
@@ -186,6 +186,7 @@ export type Start =
   | 'dry'
   | 'superheated'
   | 'expanded'
+  | 'cold'
   | 'mixed'
   | 'compressed'
   | { readonly as: string; readonly warmerBy?: string }

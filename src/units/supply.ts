@@ -19,5 +19,5 @@ export const supply = defineUnitKind({
   equations: () => ({}),
   secondLaw: 'edge',
   paths: () => [],
-  starts: { outlet: 'liquid' },
+  starts: { outlet: 'cold' },
 })

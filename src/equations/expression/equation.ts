@@ -150,11 +150,19 @@ export function assignmentOf(
         : [unknowns[1], unknowns[0]]
   for (const target of order) {
     const value = solveFor(equation, target)
-    if (value === undefined) continue
+    if (value === undefined || mayVanish(value)) continue
     const from = target === unknowns[0] ? unknowns[1] : unknowns[0]
     if (isLinearIn(value, from) || isGentle(value)) return { variable: target, from, value }
   }
   return undefined
+}
+
+/** Whether an operation that is zero over part of its range takes part: it may stand in a divisor. */
+function mayVanish(value: Expression): boolean {
+  return (
+    value.kind === 'application' &&
+    (value.operation.vanishes === true || value.operands.some(mayVanish))
+  )
 }
 
 function isGentle(value: Expression): boolean {

@@ -80,6 +80,8 @@ export interface Operation {
    * is flat there, its inverse is not (a subcooling of 0 says nothing of h inside the dome).
    */
   readonly solveFor?: number
+  /** Is exactly zero over part of its range: nothing is to be divided by it. */
+  readonly vanishes?: true
   /** Has a value and a modest slope over its whole range, so that it may be assigned, not iterated. */
   readonly gentle?: true
   /**

@@ -89,7 +89,7 @@ export class Program {
       if (!this.fresh && !this.isTouched(k) && this.outcomes[k] === StepOutcome.solved) continue
       if (!guessed && this.steps[k]!.needsGuess) {
         guessed = true
-        guess!(this.knownBefore(k), 0, this.guessed)
+        guess!(this.knownBefore(k), first, this.guessed)
       }
       const used = this.run(k, choice, guess && { first, most, guess })
       if (used > iterations) iterations = used
