@@ -1,4 +1,4 @@
-import { type KeyboardEvent, memo, type ReactNode, useMemo, useRef } from 'react'
+import { type KeyboardEvent, memo, type ReactNode, useMemo } from 'react'
 import { describeQuantity, type UnitOfMeasure } from '../../../src/document.ts'
 import { QuantityField } from '../../number/QuantityField.tsx'
 import { useBalanceStore } from '../../store/balance-store.ts'
@@ -194,7 +194,6 @@ export function DataTable({ build, empty, groups, streams }: Props) {
   const table = useMemo(() => build({ layout, names, balance }), [build, layout, names, balance])
   const places = useShownColumns(table)
   const sorting = useSorting(table.name)
-  const box = useRef<HTMLDivElement>(null)
 
   const lines = useMemo<readonly Line[]>(() => {
     if (sorting || !groups) return sorted(table, sorting).map((row) => ({ type: 'row', row }))
@@ -207,7 +206,7 @@ export function DataTable({ build, empty, groups, streams }: Props) {
       }),
     ])
   }, [table, sorting, groups])
-  const [first, end] = useVisibleRows(box, lines.length, rowHeight)
+  const [box, first, end] = useVisibleRows(lines.length, rowHeight)
 
   if (table.rows.length === 0) return <p className="drawer-empty">{empty}</p>
   const columns = places.map((i) => table.columns[i] as TableColumn)
