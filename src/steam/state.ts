@@ -176,7 +176,7 @@ function solve(record: Float64Array, at: number): number {
     if (h < hL - bandAround(hL)) {
       return p > pressure13 ? dense(record, at, LIQUID) : liquid(record, at, 1)
     }
-  } else if (h > hV && h > hV + bandAround(hV)) {
+  } else if (h > hV + saturationBand * hV) {
     return p > pressure13 ? dense(record, at, VAPOUR) : steam(record, at, 1)
   }
   fillWet(record, at)

@@ -199,7 +199,7 @@ for (const each of samples) {
   cold(each)(COUNT)
   const whenMoved = time(moving(each, 1e-3, -1e-3))
   const whenPlain = time(plain(each), COUNT, 11)
-  const ratio = whenPlain.median / whenCold.median
+  const ratio = whenPlain.least / whenCold.least
   row(each.name, [whenWarm, whenMoved, whenCold, whenPlain, ratio])
 }
 
