@@ -124,6 +124,7 @@ const drynessOperation: Operation = {
 /** Moisture of the state at (p, h): 1 - x where it is wet, 0 where it is dry, 1 at most. */
 const moistureOperation: Operation = {
   name: 'moisture',
+  vanishes: true,
   reads: stateOperation,
   evaluate(tape, row) {
     const k = tape.first[row]!
