@@ -247,7 +247,8 @@ test('a plant with three heaters is drawn, given its numbers and solved by keybo
         })
         .toBe(true)
       const texts = await row.locator('.cell-number').allTextContents()
-      return texts.slice(0, 4).map(numberIn)
+      // Each begins with its name for those who hear it.
+      return texts.slice(0, 4).map((text) => numberIn(text.replace(/^.*: /, '')))
     }
     // m, p, T, h of steam, water in and water out of each heater: mass and energy by hand.
     for (const [steam, inlet, outlet] of [
