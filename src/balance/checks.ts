@@ -28,12 +28,27 @@ export function checkAnswer(model: Model, results: Results): Finding[] {
     ...curveChecks(model, results, wording),
     ...idleChecks(model.system.layout, wording),
   ]
-  return findings.map((finding) =>
-    finding.severity === 'error'
-      ? { ...finding, remedies: remediesFor(model, finding.quantities) }
-      : finding,
-  )
+  const causes = findings.filter((finding) => isOfGiven(model, finding))
+  return findings
+    .filter(
+      (finding) => causes.length === 0 || finding.severity !== 'error' || causes.includes(finding),
+    )
+    .map((finding) =>
+      finding.severity === 'error'
+        ? { ...finding, remedies: remediesFor(model, finding.quantities) }
+        : finding,
+    )
 }
+
+/** A given that cannot be: what else cannot be follows from it, and would only hide it. */
+function isOfGiven({ system }: Model, { severity, code, quantities }: Finding): boolean {
+  if (severity !== 'error' || !ownValueCodes.includes(code)) return false
+  const index = system.indexOf.get(quantities[0] ?? '')
+  return index !== undefined && !Number.isNaN(system.given[index]!)
+}
+
+/** Findings of one quantity's own value. */
+const ownValueCodes: readonly string[] = ['impossible-value', 'reversed-flow']
 
 /** Whether an answer with these findings cannot be. */
 export function isImpossible(checks: readonly Finding[]): boolean {

@@ -167,3 +167,16 @@ test.each([
   expect(answer.status).toBe('infeasible')
   expect(answer.errors[0]!.message).toMatch(limit)
 })
+
+test.each([
+  ['main.m', -40, 'reversed-flow'],
+  ['t.groupEfficiency1', 1.4, 'impossible-value'],
+] as const)(
+  '%s given as %d is said alone, not hidden among what follows from it',
+  (path, value, code) => {
+    const { errors, status } = answerOf(changed(cycle, { set: { [path]: value } }))
+    expect(status).toBe('infeasible')
+    expect(errors.map((one) => [one.code, one.quantities[0]])).toEqual([[code, path]])
+    expect(errors[0]?.remedies?.[0]?.path).toBe(path)
+  },
+)
