@@ -149,7 +149,7 @@ async function isSound(): Promise<void> {
 
 test.for(faults)('$name: mended through its remedy alone', async (fault) => {
   await spoil(fault)
-  await expect.poll(() => trouble().textContent()).toMatch(fault.said)
+  await expect.poll(() => trouble().textContent(), { timeout: 30_000 }).toMatch(fault.said)
   await mend(trouble(), fault.remedy)
   // A remedy that gives leaves the field open, with the value that it had.
   if (fault.said === short) {

@@ -7,6 +7,20 @@ import { useBalanceStore } from '../store/balance-store.ts'
 /** Why the plant is not solved, and what to click, where the hand is: one number too many or too few. */
 export function CardTrouble() {
   const balance = useBalanceStore((state) => state.balance)
+  const trouble = useBalanceStore((state) => state.trouble)
+  if (trouble) {
+    // The balance that is still there belongs to the plant before: what it asks for is no remedy.
+    return (
+      <div className="card-trouble" role="status">
+        <div className="card-trouble-line" data-mark="error">
+          <Mark name="error" />
+          <strong>No balance</strong>
+          <span>{trouble}</span>
+          <TakeBack />
+        </div>
+      </div>
+    )
+  }
   if (!balance || balance.status === 'solved') return null
   if (balance.status === 'underspecified' || balance.status === 'overspecified') {
     return (

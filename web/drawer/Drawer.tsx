@@ -37,7 +37,7 @@ const bodies = {
 }
 
 function LedgerTab() {
-  const ledger = useBalanceStore((state) => state.balance?.ledger)
+  const ledger = useBalanceStore(({ trouble, balance }) => (trouble ? undefined : balance?.ledger))
   if (!ledger) return <>Ledger</>
   const { unknowns, equations, missing, excess } = ledger
   return (

@@ -16,8 +16,9 @@ function givensBehind({ remedies }: Finding): number {
   return remedies?.length || Number.MAX_SAFE_INTEGER
 }
 
+/** None while there is trouble: those that are still there belong to the plant before. */
 export function useFindings(): readonly Finding[] {
-  return useBalanceStore((state) => state.balance?.findings ?? none)
+  return useBalanceStore((state) => (state.trouble ? none : (state.balance?.findings ?? none)))
 }
 
 function FindingLine({ finding }: { finding: Finding }) {

@@ -24,18 +24,23 @@ function Where({ finding }: { finding: Finding }) {
 export function Ledger() {
   const balance = useBalanceStore((state) => state.balance)
   const trouble = useBalanceStore((state) => state.trouble)
-  if (!balance) return <p className="drawer-empty">{trouble ?? 'No balance yet.'}</p>
-  const { blocks, iterations } = balance.ledger
-  const isStuck = balance.status === 'infeasible' || balance.status === 'notConverged'
-  return (
-    <div className="drawer-scroll ledger">
-      {trouble && (
+  if (trouble) {
+    return (
+      <div className="drawer-scroll ledger">
         <div className="ledger-line" data-mark="error">
           <Mark name="error" />
           <strong>No balance</strong>
           <span>{trouble}</span>
+          <TakeBack />
         </div>
-      )}
+      </div>
+    )
+  }
+  if (!balance) return <p className="drawer-empty">No balance yet.</p>
+  const { blocks, iterations } = balance.ledger
+  const isStuck = balance.status === 'infeasible' || balance.status === 'notConverged'
+  return (
+    <div className="drawer-scroll ledger">
       {ledgerLines(balance).map((line, i) => (
         <div
           // biome-ignore lint/suspicious/noArrayIndexKey: the lines have no name of their own.

@@ -42,7 +42,8 @@ export interface Patience {
   readonly superseded: number
 }
 
-const usualPatience: Patience = { answer: 5_000, start: 20_000, superseded: 1_000 }
+// An impossible plant is searched longest, and a machine may be slow or busy: stopped is what hangs.
+const usualPatience: Patience = { answer: 20_000, start: 30_000, superseded: 1_000 }
 
 interface Running<Mark> {
   readonly request: SolveRequest
