@@ -15,7 +15,7 @@ export function givensBehind(model: Model, paths: readonly string[], most: numbe
   const found: string[] = []
   const seen = new Set<number>()
   const seenBlocks = new Set<number>()
-  let layer = paths.flatMap((path) => startsOf(model, path))
+  let layer = paths.flatMap((path) => variablesBehind(model, path))
   while (layer.length > 0 && found.length < most) {
     const next: number[] = []
     for (const index of layer) {
@@ -37,7 +37,7 @@ export function givensBehind(model: Model, paths: readonly string[], most: numbe
 }
 
 /** Variables behind a path; a further quantity of a stream's state follows from p and h. */
-function startsOf(model: Model, path: string): number[] {
+export function variablesBehind(model: Model, path: string): number[] {
   const { indexOf } = model.system
   const index = indexOf.get(path)
   if (index !== undefined) return [index]

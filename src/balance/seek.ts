@@ -1,5 +1,6 @@
 import type { Finding } from './answer.ts'
 import { checkAnswer, isImpossible } from './checks.ts'
+import { variablesBehind } from './givens-behind.ts'
 import type { Model } from './model.ts'
 import type { Results } from './results.ts'
 
@@ -31,7 +32,7 @@ export function seekAnswer(
   results: Results,
   first: readonly Finding[],
 ): readonly Finding[] {
-  if (!model.program.hasChoice) return first
+  if (!mayDiffer(model, first)) return first
   const count = model.system.variables.length
   let kept = model.firstFailure() < 0 ? model.values.slice(0, count) : undefined
   const allowed = model.work + mostSeeking
@@ -47,4 +48,16 @@ export function seekAnswer(
   else model.solveFrom(kept)
   results.refresh()
   return checkAnswer(model, results)
+}
+
+/** Whether another answer could be free of each of these faults: none of them follows from givens alone. */
+function mayDiffer(model: Model, findings: readonly Finding[]): boolean {
+  const { program, structure } = model
+  const failed = model.firstFailure()
+  if (failed >= 0) return program.hasChoiceBehind(structure.blocks[failed]!.variables)
+  return findings.every(({ severity, quantities }) => {
+    if (severity !== 'error') return true
+    const behind = quantities.flatMap((path) => variablesBehind(model, path))
+    return behind.length === 0 || program.hasChoiceBehind(behind)
+  })
 }

@@ -44,14 +44,18 @@ export function faultOf(balance: Balance): string | undefined {
   return notANumber(balance) ?? missedEquation(balance.model) ?? openPlant(balance)
 }
 
+const shown = ['m', 'p', 'h', 'T', 's', 'v'] as const
+
 /** In every status: what has no value is null, never NaN or infinite without being said so. */
-export function notANumber({ model, results }: Balance): string | undefined {
+export function notANumber({ model, results, status }: Balance): string | undefined {
   const { states } = results
   const { lost } = model.program
   for (let k = 0; k < states.phases.length; k++) {
     const base = model.system.streamBase[k]!
     const known = !lost[base] && !lost[base + 1] && !lost[base + 2]
-    for (const name of ['m', 'p', 'h', 'T', 's', 'v'] as const) {
+    // An answer that cannot be may hold a state for which there are no properties.
+    const names = status === 'solved' ? shown : shown.slice(0, 3)
+    for (const name of names) {
       if (known && !Number.isFinite(states.get(k, name))) return 'not a number'
     }
   }

@@ -109,9 +109,18 @@ export class Program {
     return this.tape.work
   }
 
-  /** Some block may have more than one answer. */
-  get hasChoice(): boolean {
-    return this.steps.some((step) => step.needsGuess)
+  /** Whether some block that these variables hang on, step by step, may have more than one answer. */
+  hasChoiceBehind(variables: readonly number[]): boolean {
+    const seen = new Uint8Array(this.steps.length)
+    const stack = [...variables]
+    while (stack.length > 0) {
+      const k = this.stepOf[stack.pop()!]!
+      if (k < 0 || seen[k]) continue
+      seen[k] = 1
+      if (this.steps[k]!.needsGuess) return true
+      stack.push(...this.inputs[k]!)
+    }
+    return false
   }
 
   /** Solves everything again at the next call, whatever has changed. */
