@@ -55,6 +55,11 @@ export function isImpossible(checks: readonly Finding[]): boolean {
   return checks.some((finding) => finding.severity === 'error')
 }
 
+/** Whether a given itself cannot be, so that no other answer helps. */
+export function isOfGivens(model: Model, checks: readonly Finding[]): boolean {
+  return checks.some((finding) => isOfGiven(model, finding))
+}
+
 /** Givens on which an impossible number depends, nearest first: one of them is to be changed. */
 function remediesFor(model: Model, quantities: readonly string[]): Remedy[] {
   return givensBehind(model, quantities, mostRemedies).map((path) => ({ action: 'give', path }))

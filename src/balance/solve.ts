@@ -1,6 +1,6 @@
 import type { Finding, Status } from './answer.ts'
 import { kindCautions } from './cautions.ts'
-import { checkAnswer, isImpossible } from './checks.ts'
+import { checkAnswer, isImpossible, isOfGivens } from './checks.ts'
 import { diagnose } from './diagnosis.ts'
 import type { Model } from './model.ts'
 import { type Closure, Results } from './results.ts'
@@ -26,7 +26,12 @@ export function solve(model: Model, results: Results = new Results(model), seek 
   const iterations = model.solve()
   results.refresh()
   let checks: readonly Finding[] = checkAnswer(model, results)
-  if (seek && isSquare(model) && (model.firstFailure() >= 0 || isImpossible(checks))) {
+  if (
+    seek &&
+    isSquare(model) &&
+    (model.firstFailure() >= 0 || isImpossible(checks)) &&
+    !isOfGivens(model, checks)
+  ) {
     checks = seekAnswer(model, results, checks)
   }
   const diagnosis = diagnose(model)
