@@ -298,7 +298,7 @@ describe.each([
           expect(writePlant(back.plant, catalogue)).toBe(text)
         }
       }),
-      { numRuns: 30 },
+      { numRuns: 10 },
     )
   })
 
@@ -327,7 +327,7 @@ describe.each([
         expect(applyDifference(start, whole)).toEqual(plant)
         expect(equalParts(applyDifference(plant, invertDifference(whole)), start)).toBe(true)
       }),
-      { numRuns: 30 },
+      { numRuns: 10 },
     )
   })
 })
