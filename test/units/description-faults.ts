@@ -3,8 +3,7 @@ import type { QuantityDescription } from '../../src/units/kind.ts'
 
 /** What is missing or wrong in what a kind says of a quantity. */
 export function descriptionFaults(name: string, description: QuantityDescription): string[] {
-  const { label, symbol, dimension, help, usual, given, designed, range, basis, possible, step } =
-    description
+  const { label, symbol, dimension, help, usual, given, range, basis, possible, step } = description
   const faults: string[] = []
   const check = (isRight: boolean, what: string): void => {
     if (!isRight) faults.push(`${name}: ${what}`)
@@ -13,8 +12,7 @@ export function descriptionFaults(name: string, description: QuantityDescription
   check(symbol !== undefined && /^\S{1,6}$/.test(symbol), `symbol '${symbol}'`)
   check(dimensions.includes(dimension), `dimension '${dimension}'`)
   check(/^[A-Z].*\.$/.test(help) && !/[.!?]\s/.test(help), `help is no sentence: '${help}'`)
-  const isSet = usual !== undefined || range !== undefined || given || designed
-  check(!isSet || (step !== undefined && step > 0), 'no step, though it is set by hand')
+  check(isReadOff(name, description) || (step !== undefined && step > 0), 'no step')
   check(!given || usual !== undefined, 'arrives given, at no value')
   const isWithoutRange = range === undefined && (!given || usual === 0)
   // Of what usually is nought (fixed losses) there is no usual range: it goes with the size.
@@ -28,6 +26,13 @@ export function descriptionFaults(name: string, description: QuantityDescription
   }
   check(usual === undefined || isPossible(usual, possible), `usual ${usual} is impossible`)
   return faults
+}
+
+/** Constants of the hardware and what follows from a turbine's states: nobody sets them by steps. */
+function isReadOff(name: string, { dimension, given, designed, usual }: QuantityDescription) {
+  if (given || designed || usual !== undefined) return false
+  if (dimension === 'lossConstant' || dimension === 'flowConstant') return true
+  return ['exhaustVolumeFlow', 'groupEndEnthalpy', 'bleedSteam'].includes(name)
 }
 
 function isPossible(value: number, possible: QuantityDescription['possible'] = {}): boolean {
