@@ -275,3 +275,24 @@ test('steam in the tubes: live steam condenses on the shell of a reheater', () =
   const mean = lmtd(live.T - saturation(1e6).T, 15)
   expect((at('u.conductance') * mean) / at('u.heat')).toBeCloseTo(1, 9)
 })
+
+test.each([
+  ['a flow of steam', 'steam1.m'],
+  ['a conductance', 'u.conductance'],
+])('%s of 0 leaves the water as it came, but for its pressure loss', (_, zero) => {
+  const { at } = solvedAnswerOf(
+    changed(
+      alone(
+        ['surfaceHeater', { pressureLossFraction: 0.02 }],
+        { water: { p: 9e6, T: 430, m: 120 }, steam1: { p: shell, T: 640 } },
+        { outlet: {}, drain: {} },
+      ),
+      { set: { [zero]: 0 } },
+    ),
+  )
+  expect(at('outlet.h') / water).toBeCloseTo(1, 12)
+  expect(at('steam1.m')).toBeCloseTo(0, 12)
+  expect(at('u.conductance')).toBeCloseTo(0, 12)
+  expect(at('u.heat')).toBeCloseTo(0, 12)
+  expect(at('drain.h') / liquid).toBeCloseTo(1, 12)
+})

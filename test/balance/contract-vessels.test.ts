@@ -295,3 +295,91 @@ test('condenser: cooling water and conductance given, the pressure follows', () 
   expect(at('c.coolingRise')).toBeCloseTo(at('c.heat') / capacity, 9)
   expect(at('exhaust.p')).toBe(at('c.pressure'))
 })
+
+describe('where nothing is to be done', () => {
+  const exchanger = (name: string) =>
+    alone(
+      ['heatExchanger', { hotLossFraction: 0.03, coldLossFraction: 0.01, [name]: 0 }],
+      { hot: { p: 1e6, T: 440, m: 20 }, cold: { p: 2e6, T: 320, m: 35 } },
+      { hotOutlet: {}, coldOutlet: {} },
+    )
+
+  test.each(['heat', 'conductance'])(
+    'an exchanger with a %s of 0 passes both streams on',
+    (name) => {
+      const { at } = solvedAnswerOf(exchanger(name))
+      expect(at('u.heat')).toBe(0)
+      expect(at('u.conductance')).toBe(0)
+      for (const side of ['hot', 'cold']) expect(at(`${side}Outlet.h`)).toBe(at(`${side}.h`))
+    },
+  )
+
+  test('a desuperheater without spray passes the steam on, and one that need not cool takes none', () => {
+    const streams = { steam: { p: 2e6, T: 680, m: 40 }, spray: { p: 6e6, T: 410 } }
+    const dry = { ...streams, spray: { ...streams.spray, m: 0 } }
+    expect(
+      solvedAnswerOf(alone(['desuperheater'], dry, { outlet: {} })).at('outlet.T'),
+    ).toBeCloseTo(680, 8)
+    const same = alone(['desuperheater'], streams, { outlet: { T: 680 } })
+    expect(solvedAnswerOf(same).at('spray.m')).toBeCloseTo(0, 8)
+  })
+
+  test('a vessel into which water comes saturated at its pressure flashes nothing', () => {
+    const { at } = solvedAnswerOf(
+      alone(
+        ['flashVessel', { pressure: 1e6 }],
+        { inlet1: { p: 1e6, x: 0, m: 2 } },
+        { steam: {}, water: {} },
+      ),
+    )
+    expect(at('steam.m')).toBeCloseTo(0, 10)
+    expect(at('water.m')).toBeCloseTo(2, 10)
+  })
+
+  test('a tight gland lets nothing through, and what it does not let through keeps its enthalpy', () => {
+    const { at } = solvedAnswerOf({
+      units: {
+        from: ['supply'],
+        br: ['branch'],
+        u: ['leak', { flowConstant: 0 }],
+        to: ['offtake'],
+        lost: ['offtake'],
+      },
+      streams: {
+        all: ['from.outlet', 'br.inlet', { p: 1e6, T: 500, m: 10 }],
+        on: ['br.outlet1', 'to.inlet'],
+        past: ['br.outlet2', 'u.inlet'],
+        out: ['u.outlet', 'lost.inlet', { p: 1e5 }],
+      },
+    })
+    expect(at('out.m')).toBe(0)
+    expect(at('out.h')).toBe(at('all.h'))
+    expect(at('on.m')).toBe(10)
+  })
+})
+
+describe('spray', () => {
+  const fired = { pressureLossFraction: 0.05, efficiency: 0.9 }
+  const boiler = (pressure: number) =>
+    alone(
+      ['boiler', fired],
+      { feedwater: { p: 13e6, T: 500 }, spray: { p: pressure, T: 450, m: 3 } },
+      { steam: { T: 813, m: 100 } },
+    )
+  const reheater = (pressure: number) =>
+    alone(
+      ['reheater', fired],
+      { inlet: { p: 3e6, T: 600, m: 80 }, spray: { p: pressure, T: 400, m: 1 } },
+      { outlet: { T: 813 } },
+    )
+
+  test.each([
+    ['boiler', boiler, 0.95 * 13e6],
+    ['reheater', reheater, 0.95 * 3e6],
+  ] as const)('of a %s arrives at no less than the pressure of the steam', (_, unit, least) => {
+    expect(solvedAnswerOf(unit(least)).at('spray.p')).toBe(least)
+    const answer = answerOf(unit(0.99 * least))
+    expect(answer.status).toBe('infeasible')
+    expect(answer.errors.flatMap(({ quantities }) => quantities)).toContain('spray.p')
+  })
+})

@@ -1,5 +1,4 @@
 import type { Given } from '../../src/document.ts'
-import { kinds } from '../../src/units/index.ts'
 import { numberedPort, type UnitKind } from '../../src/units/kind.ts'
 import type { LayoutParts, ShaftParts } from '../published/build-layout.ts'
 
@@ -257,5 +256,3 @@ function usualGivens(
   }
   return given
 }
-
-export const benches: readonly Bench[] = kinds.flatMap((kind) => benchesOf(kind))

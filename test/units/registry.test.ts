@@ -1,3 +1,4 @@
+import { isDeepStrictEqual } from 'node:util'
 import { beforeAll, describe, expect, test } from 'vitest'
 import { Model } from '../../src/balance/model.ts'
 import { type Balance, solve } from '../../src/balance/solve.ts'
@@ -225,8 +226,8 @@ describe.each(kinds.map((kind) => [kind.name, kind] as const))('%s', (name, kind
       const text = writePlant(plant)
       const read = readPlant(text)
       if (read.outcome === 'unusable') return [read.message]
-      expect(read.plant).toEqual(plant)
       return [
+        ...(isDeepStrictEqual(read.plant, plant) ? [] : ['is read as another plant']),
         ...read.repairs.map(({ message }) => message),
         ...(writePlant(read.plant) === text ? [] : ['is written in another way the second time']),
       ]
