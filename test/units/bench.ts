@@ -46,10 +46,10 @@ const settings: Readonly<Record<string, Setting>> = {
   turbine: {
     // The last group always ends wet; of two bleeds the first is dry and the second wet.
     streams: ({ bleed = 0 }) => ({
-      inlet: { p: 6e6, T: 723, m: 100 },
+      inlet: { p: 6e6, T: 773, m: 100 },
       ...(bleed === 1 && { bleed1: { p: 1e5, m: 6 } }),
       ...(bleed === 2 && { bleed1: { p: 1e6, m: 8 }, bleed2: { p: 1e5, m: 6 } }),
-      exhaust: { p: 7e3 },
+      exhaust: { p: 1e4 },
     }),
     given: () => ({ exhaustArea: 5 }),
   },
