@@ -145,7 +145,7 @@ describe('equal enthalpy rise is near the optimum', () => {
     const equal = efficiencyOf(equalParts(3))
     let [parts, best] = [equalParts(3), equal]
     // One heater after the other is moved while that helps, by ever smaller steps.
-    for (const step of [0.04, 0.02, 0.01]) {
+    for (const step of [0.04, 0.015]) {
       for (let k = 0; k < 3; k++) {
         for (const move of [-step, step]) {
           const moved = parts.map((part, i) => (i === k ? part + move : part))

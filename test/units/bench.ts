@@ -165,10 +165,10 @@ export function benchesOf(kind: UnitKind): readonly Bench[] {
       return optional ? [0, 1] : [1]
     }),
   )
-  const extremes = [numbers[0]!, numbers.at(-1)!]
-  // With no option and with all of them every number of streams, else the fewest and the most.
+  const most = [numbers.at(-1)!]
+  // With no option and with all of them every number of streams, else as many as there are.
   const numbersFor = (chosen: readonly boolean[]) =>
-    chosen.every((one) => one === chosen[0]) ? numbers : extremes
+    chosen.every((one) => one === chosen[0]) ? numbers : most
   return choices.flatMap((chosen) =>
     numbersFor(chosen).flatMap((counts) =>
       drives.map((isDriven) => {

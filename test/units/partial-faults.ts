@@ -1,6 +1,5 @@
 import type { SystemEquation, SystemVariable } from '../../src/balance/system.ts'
 import {
-  type Expression,
   iteratedResidual,
   Outcome,
   residual,
@@ -29,7 +28,10 @@ export function partialFaults(
   const forms = equations.flatMap(({ owner, key, equation }) => {
     const size = [builder.lower(equation.left), builder.lower(equation.right)]
     const stands = { name: `${owner}.${key}`, slot: builder.lower(residual(equation)), size }
-    const iterated: Expression = iteratedResidual(equation)
+    const iterated = iteratedResidual(equation)
+    // Where there is no other form, it is the same difference of the two sides.
+    const [left, right] = iterated.kind === 'application' ? iterated.operands : []
+    if (left === equation.left && right === equation.right) return [stands]
     return [stands, { name: `${stands.name}, iterated`, slot: builder.lower(iterated), size }]
   })
   const seeds = forms.map(({ slot }) => slot)
