@@ -50,14 +50,30 @@ export function seekAnswer(
   return checkAnswer(model, results)
 }
 
+/** Codes of findings that name all that they follow from. */
+const namesAll: ReadonlySet<string> = new Set([
+  'reversed-flow',
+  'pressure-rises',
+  'entry-below-unit',
+  'impossible-value',
+])
+
 /** Whether another answer could be free of each of these faults: none of them follows from givens alone. */
 function mayDiffer(model: Model, findings: readonly Finding[]): boolean {
-  const { program, structure } = model
+  const { program, structure, system } = model
   const failed = model.firstFailure()
   if (failed >= 0) return program.hasChoiceBehind(structure.blocks[failed]!.variables)
-  return findings.every(({ severity, quantities }) => {
+  return findings.every(({ severity, code, quantities, where }) => {
     if (severity !== 'error') return true
     const behind = quantities.flatMap((path) => variablesBehind(model, path))
-    return behind.length === 0 || program.hasChoiceBehind(behind)
+    // Other faults hang on every state around their unit, not only on what they name.
+    if (!namesAll.has(code)) {
+      for (const id of where) {
+        for (const { base } of system.unitOf.get(id)?.connections ?? []) {
+          behind.push(base, base + 1, base + 2)
+        }
+      }
+    }
+    return program.hasChoiceBehind(behind)
   })
 }
