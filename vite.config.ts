@@ -95,8 +95,8 @@ export default defineConfig({
           environment: 'node',
           include: ['test/browser/**/*.test.ts'],
           globalSetup: ['test/browser/preview.ts'],
-          // Each file drives a browser of its own; two at once make both slow on a small machine.
-          fileParallelism: false,
+          // Each file drives a browser of its own, which waits as often as it works.
+          maxWorkers: 2,
           testTimeout: 60_000,
           hookTimeout: 60_000,
           // A condition comes true when the machine has time for it.

@@ -19,6 +19,7 @@ import './print.css'
 import { moveUnits } from '../../src/document.ts'
 import { editLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
+import { useUnitChoice } from '../store/settings-store.ts'
 import { Announcer, ResultAnnouncer } from './Announcer.tsx'
 import { CanvasControls } from './CanvasControls.tsx'
 import { ConnectionPreview } from './ConnectionPreview.tsx'
@@ -77,6 +78,10 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
   // A finger on bare paper moves the sheet, a mouse draws a box of selection.
   const [touch, setTouch] = useState(() => window.matchMedia('(pointer: coarse)').matches)
 
+  const units = useUnitChoice()
+  /** The whole sheet is in view, and stays so while the user moves nothing. */
+  const whole = useRef(true)
+
   useEffect(() => followPlant(), [])
   useEffect(() => (box.current ? preparePrinting(box.current) : undefined), [])
 
@@ -84,6 +89,7 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
     (duration = 0) => {
       const canvas = box.current?.getBoundingClientRect()
       if (!canvas) return
+      whole.current = true
       // Texts grow as the sheet shrinks: they are set for the new zoom before it is fitted for good.
       useCanvasStore.getState().setZoom(fitted(canvas).zoom)
       void flow.setViewport(fitted(canvas), { duration })
@@ -112,6 +118,14 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
     const frame = requestAnimationFrame(() => showWhole())
     return () => cancelAnimationFrame(frame)
   }, [opened, layoutId, showWhole])
+
+  // Numbers in other units may need more room.
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the units are what it waits for
+  useEffect(() => {
+    if (!whole.current) return
+    const frame = requestAnimationFrame(() => showWhole())
+    return () => cancelAnimationFrame(frame)
+  }, [units, showWhole])
 
   useCanvasCommands(showWhole)
 
@@ -161,6 +175,9 @@ function Flow({ onOpenExample, onOpenFile }: Props) {
         onEdgeDoubleClick={renameItem}
         onPaneClick={clearSelection}
         onViewportChange={onViewportChange}
+        onMoveStart={(event) => {
+          if (event) whole.current = false
+        }}
         snapToGrid
         snapGrid={snapGrid}
         nodesConnectable={false}

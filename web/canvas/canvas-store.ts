@@ -3,6 +3,7 @@ import { kindOf, type Layout } from '../../src/document.ts'
 import { textWidth } from '../chart/measure-text.ts'
 import { readLayout, usePlantStore } from '../store/plant-store.ts'
 import { useSelectionStore } from '../store/selection-store.ts'
+import { useSettingsStore } from '../store/settings-store.ts'
 import { drawnAlike } from './drawn-alike.ts'
 import { around, grown, type Point, type Size } from './geometry.ts'
 import {
@@ -18,6 +19,7 @@ import { drawSheet, emptySheet, generatorBox, type Sheet } from './sheet.ts'
 import type { PlacedUnit } from './standing.ts'
 import { useTagPlaces } from './tag-places.ts'
 import { type TagChoice, useTagStore } from './tag-store.ts'
+import { usualFigure, usualPart } from './usual-texts.ts'
 
 interface CanvasState {
   readonly sheet: Sheet
@@ -108,29 +110,28 @@ export function followPlant(): () => void {
   }
   const endTags = useTagStore.subscribe(setTexts)
   const endPlaces = useTagPlaces.subscribe(setTexts)
+  const endUnits = useSettingsStore.subscribe((now, then) => {
+    if (now.unitSet !== then.unitSet || now.unitOverrides !== then.unitOverrides) setTexts()
+  })
   return () => {
     endPlant()
     endTags()
+    endUnits()
     endPlaces()
     shownLayout = null
   }
 }
 
-/** Rooms for numbers are kept at their usual width, so that nothing moves because a digit changed. */
-const usualFigure = '00.00 MW'
-const usualParts: Readonly<Record<string, string>> = {
-  p: '000.0 bar',
-  T: '000.0 °C',
-  h: '0000.0 kJ/kg',
-  m: '000.0 kg/s',
-}
-
-function labelShapes(label: string, figure: boolean, scale: number): LabelRequest['shapes'] {
+function labelShapes(
+  label: string,
+  figure: string | undefined,
+  scale: number,
+): LabelRequest['shapes'] {
   const size = textSize * scale
   const line = lineHeight * scale
   const name = textWidth(label, size)
-  const number = figure ? textWidth(usualFigure, size) : 0
-  if (!figure) return [{ arrangement: 'stacked', size: { width: name, height: line } }]
+  const number = figure === undefined ? 0 : textWidth(figure, size)
+  if (figure === undefined) return [{ arrangement: 'stacked', size: { width: name, height: line } }]
   const shapes: { arrangement: Arrangement; size: { width: number; height: number } }[] = [
     { arrangement: 'stacked', size: { width: Math.max(name, number), height: 2 * line } },
     { arrangement: 'beside', size: { width: name + number + 8 * scale, height: line } },
@@ -144,6 +145,11 @@ function labelShapes(label: string, figure: boolean, scale: number): LabelReques
     })
   }
   return shapes
+}
+
+function figureOf(layout: Layout, { id, kind }: PlacedUnit): string | undefined {
+  const chief = kindOf(kind)?.chief
+  return chief === undefined ? undefined : usualFigure(layout, `${id}.${chief}`)
 }
 
 function texts(
@@ -172,7 +178,7 @@ function texts(
       ...(unit.symbol.inside ? { inside: (size: Size) => insideOf(unit, size) } : {}),
       shapes: labelShapes(
         unit.label,
-        zoom >= figuresFrom && kindOf(unit.kind)?.chief !== undefined,
+        zoom >= figuresFrom ? figureOf(layout, unit) : undefined,
         scale,
       ),
       anchors: Object.values(unit.anchors),
@@ -188,7 +194,7 @@ function texts(
       shapes: [
         {
           arrangement: 'stacked',
-          size: { width: textWidth(usualFigure, textSize * scale), height: line },
+          size: { width: textWidth(usualFigure(layout), textSize * scale), height: line },
         },
       ],
       anchors: [],
@@ -312,7 +318,7 @@ function tagRequests(layout: Layout, sheet: Sheet, scale: number) {
   const choice: TagChoice = useTagStore.getState()
   if (choice.which === 'none' || choice.quantities.length === 0) return []
   const size = textSize * scale
-  const parts = choice.quantities.map((name) => textWidth(usualParts[name] ?? '000.0 bar', size))
+  const parts = choice.quantities.map((name) => textWidth(usualPart(name), size))
   const line = lineHeight * scale
   const column = Math.max(...parts)
   const shapes = [1, 2, 3, 4].flatMap((lines) => {

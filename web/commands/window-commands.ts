@@ -1,4 +1,4 @@
-import { emptyPlant } from '../../src/document.ts'
+import { emptyPlant, unitSets } from '../../src/document.ts'
 import { openAsNew } from '../files/keeping.ts'
 import { chooseFile, saveFile } from '../files/plant-file.ts'
 import { usePlantStore } from '../store/plant-store.ts'
@@ -158,6 +158,16 @@ export const windowCommands: readonly Command[] = [
       group: 'View',
       checked: () => settings().theme === theme,
       run: () => settings().change({ theme }),
+    }),
+  ),
+  ...unitSets.map(
+    ({ name, label, sample }): Command => ({
+      id: `units-${name}`,
+      name: `Units: ${label} (${sample})`,
+      group: 'View',
+      hidden: true,
+      checked: () => settings().unitSet === name,
+      run: () => settings().change({ unitSet: name }),
     }),
   ),
   {
