@@ -18,9 +18,11 @@ const mostMoved = 12
 /**
  * Moves what a design fixes until its results are what the plant is given: Newton's method with
  * differences in these few quantities, every step a solution of the design. It passes from one
- * sensible plant to the next, and so finds answers that are sensible, too. The design must be solved.
+ * sensible plant to the next, and so finds answers that are sensible, too. Starts at the design's answer
+ * of this choice; undefined where it has none, or nothing comes of it.
  */
-export function aimAt(start: DesignStart, plant: System): Float64Array | undefined {
+export function aimAt(start: DesignStart, plant: System, choice: number): Float64Array | undefined {
+  if (!start.standAt(choice)) return undefined
   const { program } = start
   const { fixed, released } = start.design
   const { values } = program.tape

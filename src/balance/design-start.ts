@@ -1,6 +1,5 @@
 import { Program, StepOutcome } from '../equations/newton/index.ts'
 import { type Design, designOf, designVariants } from './design.ts'
-import { aimAt } from './design-aim.ts'
 import { boundsOf } from './ranges.ts'
 import { Starts } from './starts.ts'
 import type { System } from './system.ts'
@@ -90,22 +89,14 @@ export class DesignStart {
     return solved
   }
 
-  /**
-   * Values of a design moved, from the one of this choice, until its results are what the plant is
-   * given; undefined where that does not succeed.
-   */
-  aim(choice: number): Float64Array | undefined {
-    const from = this.solve(choice)
-    if (from === undefined) return undefined
-    this.put(from)
-    this.program.solve()
-    return this.isSolved() ? aimAt(this, this.plant) : undefined
-  }
-
-  /** Gives what it fixes these values. */
-  private put(values: Float64Array): void {
+  /** Stands at its answer of this choice, from where it can be moved on; false where it has none. */
+  standAt(choice: number): boolean {
+    const values = this.solve(choice)
+    if (values === undefined) return false
     for (const v of this.design.fixed) this.program.set(v, values[v]!)
     this.recall(values)
+    this.program.solve()
+    return this.isSolved()
   }
 
   /** Whether all that the plant's state hangs on was found. */

@@ -1,5 +1,6 @@
 import { type Guess, Program, StepOutcome } from '../equations/newton/index.ts'
 import type { Layout } from '../plant/document.ts'
+import { aimAt } from './design-aim.ts'
 import { DesignStart } from './design-start.ts'
 import { type Difference, Differences, type Divisor, type Unmet } from './differences.ts'
 import { boundsOf } from './ranges.ts'
@@ -166,7 +167,7 @@ export class Model {
    */
   solveByAiming(choice: number): boolean {
     const [design, numbers] = this.designOf(choice)
-    const values = design?.aim(numbers)
+    const values = design && aimAt(design, this.system, numbers)
     return values !== undefined && this.solveFrom(values)
   }
 
