@@ -84,6 +84,8 @@ export default defineConfig({
           include: ['test/**/*.test.{ts,tsx}'],
           exclude: ['test/browser/**'],
           setupFiles: ['test/fixed-seed.ts'],
+          // Most of the time would go into loading the same modules for each file anew.
+          isolate: false,
           // A slow machine is no fault; what hangs still ends.
           testTimeout: 120_000,
         },
