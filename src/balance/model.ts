@@ -101,8 +101,9 @@ export class Model {
     if (this.isWarm) {
       const iterations = this.program.solve()
       if (this.firstFailure() < 0) return iterations
-      this.program.forget()
     }
+    // All of it: first guesses go over what is solved, too.
+    this.program.forget()
     const iterations = this.program.solve(this.guess)
     this.isWarm = this.firstFailure() < 0
     return iterations
