@@ -1,12 +1,13 @@
 import { readdirSync, readFileSync } from 'node:fs'
 import { expect, test } from 'vitest'
-import type { Figure, Origin, Piece } from '../../src/balance/answer.ts'
+import type { Origin } from '../../src/balance/answer.ts'
 import { Model } from '../../src/balance/model.ts'
 import type { Results } from '../../src/balance/results.ts'
 import { solve } from '../../src/balance/solve.ts'
 import { whereFrom } from '../../src/balance/where-from.ts'
 import { type Layout, readPlant } from '../../src/document.ts'
-import { printed, reckon } from './reckon.ts'
+import { checkLine } from './check-line.ts'
+import { printed } from './reckon.ts'
 
 const folders = ['public/examples', 'test/reference/cases']
 const files = folders.flatMap((folder) =>
@@ -58,36 +59,6 @@ test.for(solved)('$name: net power is traced to givens and constants alone', (on
   }
 })
 
-/** Half a unit of the last digit that a figure shows. */
-function half(figure: string): number {
-  const [mantissa = '', power] = figure.replace(/\u202f/g, '').split(' × 10')
-  const exponent = Number(
-    (power ?? '⁰')
-      .replace('⁻', '-')
-      .replace(/[⁰¹²³⁴⁵⁶⁷⁸⁹]/g, (one) => String('⁰¹²³⁴⁵⁶⁷⁸⁹'.indexOf(one))),
-  )
-  return 0.5 * 10 ** (exponent - (mantissa.split('.')[1]?.length ?? 0))
-}
-
-/** Reckoned from its own figures, a line comes to its result, to half a unit of its last digit. */
-function check(pieces: readonly Piece[], result: Figure, where: string): void {
-  const text = printed(pieces)
-  if (text.includes('curve(')) return
-  const wanted = reckon(result.figure, '').value
-  for (const side of text.split(' = ').length > 1 && !/[(,] ?\w+ = /.test(text)
-    ? text.split(' = ')
-    : [text]) {
-    const { value, size } = reckon(side, result.unit)
-    const inUnit = result.unit === '%' ? value * 100 : value
-    // What is nought but for rounding is measured by the figures that it comes from.
-    const allowed =
-      result.figure === '0' ? 1e-6 * size : half(result.figure) * (1 + 1e-6) + 1e-9 * size
-    expect(Math.abs(inUnit - wanted), `${where}: ${result.figure} = ${side}`).toBeLessThanOrEqual(
-      allowed,
-    )
-  }
-}
-
 test.for(
   solved.flatMap((one) => (['si', 'metric', 'us'] as const).map((units) => ({ ...one, units }))),
 )('$name: every line agrees with its own figures, $units', { timeout: 120_000 }, (one) => {
@@ -98,9 +69,9 @@ test.for(
     if (origin.how === 'given' || origin.how === 'open') continue
     expect(origin.worked, path).toBeDefined()
     const { figures, steps, result } = origin.worked as NonNullable<Origin['worked']>
-    check(figures, result, path)
+    checkLine(printed(figures), result, path)
     steps.forEach((step, k) => {
-      check(step.figures, step.result, `${path}, step ${k + 1}`)
+      checkLine(printed(step.figures), step.result, `${path}, step ${k + 1}`)
     })
     lines += 1 + steps.length
   }
